@@ -1,0 +1,323 @@
+// Made from schemas/sheet.schema.json by `npm run types`; do not edit.
+
+/**
+ * A pin's label as printed on the board: a number, or text such as A0 or GP26.
+ */
+export type Pin = number | string;
+/**
+ * One reading a sensor, leftmost first, in counts of the board's converter as the firmware reads it: 0 to 1023 on uno and nano, 0 to 4095 on pico and esp32. [counts]
+ *
+ * @minItems 2
+ * @maxItems 16
+ *
+ * Items: One sensor's reading. [counts]
+ */
+export type Counts = number[];
+
+/**
+ * One small line-tracking vehicle and how it is to drive: the only input of the design.
+ */
+export interface Sheet {
+  /**
+   * Where editors find this schema; a copy is written beside every sheet.
+   */
+  $schema?: string;
+  /**
+   * Version of this file format.
+   */
+  sheetVersion: 1;
+  /**
+   * Names the firmware folder and sketch: a letter first, then letters, digits, hyphen or underscore, 40 characters at most.
+   */
+  name: string;
+  /**
+   * The controller board and the language of the firmware.
+   */
+  target: {
+    /**
+     * The controller board: uno and nano take Arduino C++, pico and esp32 take MicroPython.
+     */
+    board: 'uno' | 'nano' | 'pico' | 'esp32';
+    /**
+     * The language of the firmware. It follows from the board.
+     */
+    language: 'arduino' | 'micropython';
+  };
+  /**
+   * The tape or paint that the vehicle follows.
+   */
+  line: {
+    /**
+     * Whether the line is lighter or darker than the ground.
+     */
+    polarity: 'light-on-dark' | 'dark-on-light';
+    /**
+     * Width of the line, across it. [mm]
+     */
+    widthMm: number;
+    /**
+     * Centre-line radius of the tightest bend on any lane. [mm]
+     */
+    tightestRadiusMm: number;
+    /**
+     * Longest break in the line that is to be crossed straight on; 0 if there is none. [mm]
+     */
+    longestGapMm?: number;
+    /**
+     * Whether lanes cross each other.
+     */
+    crossings?: boolean;
+  };
+  /**
+   * The row of reflectance sensors ahead of the axle, listed left to right in driving direction.
+   */
+  sensors: {
+    /**
+     * analog: a voltage that follows the reflection. digital: one level over line, the other over ground.
+     */
+    kind: 'analog' | 'digital';
+    /**
+     * Number of sensors in the row.
+     */
+    count: number;
+    /**
+     * Centre to centre between neighbouring sensors of an evenly spaced row. [mm]
+     */
+    pitchMm?: number;
+    /**
+     * Instead of a spacing: each sensor's distance left of the centre line, leftmost first, right of it negative. [mm]
+     *
+     * @minItems 2
+     * @maxItems 16
+     *
+     * Items: Distance left of the centre line. [mm]
+     */
+    positionsMm?: number[];
+    /**
+     * Distance from the wheel axle forward to the row of sensors. [mm]
+     */
+    aheadOfAxleMm: number;
+    /**
+     * Radius of the patch of floor that one sensor sees. [mm]
+     */
+    spotRadiusMm?: number;
+    /**
+     * Board label of each sensor's pin, leftmost sensor first.
+     *
+     * @minItems 2
+     * @maxItems 16
+     */
+    pins: Pin[];
+    /**
+     * Digital sensors only: the level of the pin while the sensor is over the line.
+     */
+    lineLevel?: 'high' | 'low';
+    /**
+     * How the readings over ground and over line become known.
+     */
+    calibration?: {
+      /**
+       * stored: the readings below are used. sweep: after the button the vehicle turns the bar across the line and measures them.
+       */
+      mode: 'stored' | 'sweep';
+      ground?: Counts;
+      line?: Counts;
+    };
+  };
+  /**
+   * Two driven wheels on one axle, their motors and the motor driver.
+   */
+  drive: {
+    /**
+     * Distance between the middles of the two driven tyres. [mm]
+     */
+    trackWidthMm: number;
+    /**
+     * Diameter of the driven wheels, tyre included. [mm]
+     */
+    wheelDiameterMm: number;
+    /**
+     * Mass of the vehicle as it drives, battery and load included. [kg]
+     */
+    massKg?: number;
+    /**
+     * Friction coefficient of tyre on floor: the tangent of the angle at which the vehicle, wheels blocked, starts to slide on a tilted board of the same floor. [1]
+     */
+    gripCoefficient: number;
+    /**
+     * Figures of one drive motor with its gearbox, from its data sheet.
+     */
+    motor: {
+      /**
+       * Speed of the output shaft without load at the rated voltage. [rpm]
+       */
+      noLoadRpm: number;
+      /**
+       * Voltage at which the data sheet states the no-load speed. [V]
+       */
+      ratedVoltageV: number;
+      /**
+       * Time in which wheel speed reaches 63 % of a step, on the floor with the vehicle's load. [ms]
+       */
+      timeConstantMs: number;
+      /**
+       * Duty cycle at which the wheels just begin to turn on the floor. [%]
+       */
+      startDutyPercent?: number;
+      /**
+       * Current of one motor, blocked, at the rated voltage. [A]
+       */
+      stallCurrentA?: number;
+    };
+    /**
+     * How the board drives the two motors.
+     */
+    driver: {
+      /**
+       * pwm-dir: one PWM and one direction pin a motor. pwm-in-in: one PWM and two direction pins. dual-pwm: two PWM pins.
+       */
+      scheme: 'pwm-dir' | 'pwm-in-in' | 'dual-pwm';
+      left: MotorPins;
+      right: MotorPins;
+      /**
+       * A pin's label as printed on the board: a number, or text such as A0 or GP26.
+       */
+      standbyPin?: number | string;
+    };
+    /**
+     * Factor on each wheel's commanded duty, for a vehicle that pulls to one side.
+     */
+    trim?: {
+      /**
+       * Factor on the left wheel's duty. [%]
+       */
+      leftPercent?: number;
+      /**
+       * Factor on the right wheel's duty. [%]
+       */
+      rightPercent?: number;
+    };
+  };
+  /**
+   * The battery, as it arrives at the motor driver.
+   */
+  power: {
+    /**
+     * Battery voltage for which the vehicle is designed. [V]
+     */
+    nominalV: number;
+    /**
+     * Battery voltage freshly charged. [V]
+     */
+    fullV: number;
+    /**
+     * Battery voltage at which the vehicle is taken out of use. [V]
+     */
+    emptyV: number;
+  };
+  /**
+   * How the sensors become wheel speeds.
+   */
+  control: {
+    /**
+     * pid: feedback on the measured offset. rules: a table with one action for each sensor state.
+     */
+    kind: 'pid' | 'rules';
+  };
+  /**
+   * How fast each kind of bend is driven.
+   */
+  speeds: {
+    /**
+     * auto: computed from grip, motor, view and control limits. Or a list, each class for bends of at least its radius.
+     */
+    classes:
+      | 'auto'
+      | {
+          /**
+           * Short name of the class.
+           */
+          name: string;
+          /**
+           * The class serves bends of at least this centre-line radius. [mm]
+           */
+          minRadiusMm: number;
+          /**
+           * Speed of the axle's middle in such bends. [m/s]
+           */
+          speedMps: number;
+        }[];
+    /**
+     * Share of perturbed rehearsals that must finish. [%]
+     */
+    finishTargetPercent?: number;
+  };
+  /**
+   * How a run begins and ends.
+   */
+  start: {
+    /**
+     * A pin's label as printed on the board: a number, or text such as A0 or GP26.
+     */
+    buttonPin: number | string;
+    /**
+     * Time between pressing the button and the first motion. [s]
+     */
+    countdownS?: number;
+    /**
+     * The vehicle stops after this time in any case. [s]
+     */
+    runLimitS?: number;
+  };
+  /**
+   * What the vehicle reports while it drives.
+   */
+  telemetry?: {
+    /**
+     * off: nothing is sent.
+     */
+    mode: 'off';
+  };
+  /**
+   * How far the real vehicle may differ from the figures above, either way.
+   */
+  tolerances?: {
+    /**
+     * Spread of each motor's speed at a given duty. [%]
+     */
+    motorGainPercent?: number;
+    /**
+     * Spread of the motor time constant. [%]
+     */
+    timeConstantPercent?: number;
+    /**
+     * Spread of the grip coefficient: dust, wear, damp. [%]
+     */
+    gripPercent?: number;
+  };
+}
+/**
+ * Pins of one motor: pwm and dir; or pwm, in1 and in2; or in1 and in2, as the driver scheme has them.
+ */
+export interface MotorPins {
+  /**
+   * A pin's label as printed on the board: a number, or text such as A0 or GP26.
+   */
+  pwm?: number | string;
+  /**
+   * A pin's label as printed on the board: a number, or text such as A0 or GP26.
+   */
+  dir?: number | string;
+  /**
+   * A pin's label as printed on the board: a number, or text such as A0 or GP26.
+   */
+  in1?: number | string;
+  /**
+   * A pin's label as printed on the board: a number, or text such as A0 or GP26.
+   */
+  in2?: number | string;
+  /**
+   * Set if this wheel turns backward when told to go forward.
+   */
+  inverted?: boolean;
+}

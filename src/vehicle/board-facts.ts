@@ -1,0 +1,61 @@
+/** The shape of board facts: what a board's pins can do. The facts themselves are data, one file a board. */
+
+export type BoardId = 'uno' | 'nano' | 'pico' | 'esp32';
+
+/** What one pin of a board can do. */
+export interface PinFacts {
+  /** Label printed on the board, in canonical spelling: "5", "A0", "GP26". */
+  label: string;
+  /** Other accepted spellings, e.g. "D5", or "14" for A0. */
+  aliases: readonly string[];
+  /** Number or expression by which the firmware's language names it (Arduino: 5 or A0; MicroPython: 26). */
+  code: string;
+  /** Can be a digital input. */
+  input: boolean;
+  /** Can be a digital output. */
+  output: boolean;
+  /** Has an internal pull-up. */
+  pullUp: boolean;
+  /** PWM timer or slice/channel number, where the pin can do PWM. */
+  pwm?: { timer: number; channel: string };
+  /** Analog channel, where the pin can read a voltage. */
+  adc?: { channel: number };
+  /** Can raise an external interrupt. */
+  interrupt: boolean;
+  /** Why the pin must not be used at all (serial console, flash memory), else absent. */
+  reserved?: string;
+  /** Why the pin is better left free, or what to watch when using it. */
+  caution?: string;
+}
+
+/** One board, from its data sheet. */
+export interface BoardFacts {
+  id: BoardId;
+  title: string;
+  language: 'arduino' | 'micropython';
+  chip: string;
+  /** Where the facts come from. */
+  sources: readonly string[];
+  clockHz: number;
+  /** Logic level, V; an analog input must not exceed it. */
+  logicV: number;
+  /** Largest reading of the converter as the firmware reads it, counts. */
+  adcMaxCount: number;
+  /** Time of one analog reading as the firmware does it, s. */
+  adcReadS: number;
+  /** Time of one digital reading, s. */
+  digitalReadS: number;
+  /** Time for the control arithmetic, worst case, s. */
+  computeS: number;
+  /** Sample period of the control loop, s. */
+  samplePeriodS: number;
+  /** PWM frequency as the firmware sets it up, Hz (the lowest over the board's timers). */
+  pwmHz: number;
+  /** Steps of PWM duty from off to full. */
+  pwmSteps: number;
+  flashBytes?: number;
+  ramBytes?: number;
+  /** The timer that the millisecond clock uses; PWM on it is allowed but it must not be retimed. */
+  clockTimer?: number;
+  pins: readonly PinFacts[];
+}
