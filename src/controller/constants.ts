@@ -1,0 +1,203 @@
+/**
+ * The integers that make up one controller. The design computes them, the twin runs on them and the
+ * firmware prints them: there is no second copy of any of these numbers.
+ *
+ * Scales (a value of 1 stands for):
+ *   offset        1/64 mm      left of the bar's centre is positive
+ *   coverage      1/256        256 = the sensor's spot lies wholly on the line
+ *   curvature     1/256 per m  left turns are positive
+ *   speed (model) 1/64 mm/s
+ *   wheel speed   1 mm/s
+ *   duty          1/4096       4096 = full
+ *   distance      sum of model speeds over samples: 1/64 mm/s times one sample period
+ */
+
+/** Offset units in one metre. */
+export const OFFSET_PER_M = 64_000;
+/** Coverage of a sensor that lies wholly on the line. */
+export const FULL_COVERAGE = 256;
+/** Curvature units in 1/m. */
+export const CURVATURE_PER_INV_M = 256;
+/** Model speed units in one m/s. */
+export const SPEED_PER_MPS = 64_000;
+/** Duty of a motor at full voltage. */
+export const FULL_DUTY = 4096;
+/** Extra bits of the filtered input over the input. */
+export const FILTER_BITS = 4;
+/** Bits of the filter and model coefficients. */
+export const COEFFICIENT_BITS = 15;
+/** Bits of the calibration gain. */
+export const CALIBRATION_BITS = 12;
+/** Bits of the half track width. */
+export const TRACK_BITS = 16;
+/** Bits of the duty slope. */
+export const SLOPE_BITS = 12;
+/** Bits of a rule table's wheel-speed fractions: 64 = base speed. */
+export const FRACTION_BITS = 6;
+/** Bits of the rule table's curvature factor. */
+export const RULE_CURVATURE_BITS = 4;
+/** Bits of the edge table's values: 1024 = half the distance between two sensors. */
+export const EDGE_BITS = 10;
+/** Bits of coverage between two entries of the edge table; the table has (512 >> 5) + 1 entries. */
+export const EDGE_STEP_BITS = 5;
+/** Entries of the edge table. */
+export const EDGE_ENTRIES = 17;
+/** How much faster than the motor the speed model closes a small speed error, as a shift. */
+export const SPEED_GAIN_BITS = 2;
+
+/** Bits dropped from a speed difference before it meets the motor model's coefficient. */
+export const SPEED_MODEL_BITS = 4;
+
+/** Where in the course of following a line the controller is. */
+export const PHASE = { follow: 0, crossing: 1, gap: 2, search: 3, stopped: 4 } as const;
+export type Phase = (typeof PHASE)[keyof typeof PHASE];
+
+export interface SensingConstants {
+  sensorCount: number;
+  digital: boolean;
+  /** Digital sensors: level of the pin over the line. */
+  lineLevelHigh: boolean;
+  /** Readings over ground, counts; leftmost first. Unused for digital sensors. */
+  ground: readonly number[];
+  /** Coverage per count above ground, negative where the line reads lower, in 1/2^CALIBRATION_BITS. */
+  gain: readonly number[];
+  /** sensorCount + 1 places: half way between neighbours, with one beyond each end; offset units. */
+  gapMiddle: readonly number[];
+  /** Half the distance between neighbours, same indices; offset units. */
+  gapHalf: readonly number[];
+  /** Where an edge lies between two sensors, by the sum of their coverages; EDGE_ENTRIES values. */
+  edgeTable: readonly number[];
+  /** Coverage from which a sensor counts as on the line. */
+  highCoverage: number;
+  /** Coverage of an end sensor from which a line just outside the bar is still measured. */
+  lowCoverage: number;
+  /** Half the line width, offset units. */
+  halfLine: number;
+  /** Sum of coverages from which the bar lies on a crossing. */
+  wideCoverage: number;
+  /** Width of line reaching an end of the bar from which it is taken for a corner, offset units. */
+  cornerWidth: number;
+}
+
+export interface ClassConstants {
+  name: string;
+  /** Curvature demand from which this class is taken, curvature units; 0 for the first class. */
+  enterCurvature: number;
+  /** Curvature demand below which this class may be left again, curvature units. */
+  keepCurvature: number;
+  /** Speed of the class, model speed units. */
+  speed: number;
+  /** Proportional gain: curvature units per input unit, in 1/2^gainBits. */
+  proportional: number;
+  /** Derivative gain on the high-passed input, in 1/2^gainBits per 1/2^FILTER_BITS input unit. */
+  derivative: number;
+}
+
+export interface SteeringConstants {
+  /** Bits of the gains. */
+  gainBits: number;
+  /** Coefficient of the derivative filter, in 1/2^COEFFICIENT_BITS. */
+  derivativeFilter: number;
+  /** Coefficient of the filter on the curvature demand that picks the speed class. */
+  demandFilter: number;
+  /** Coefficient of the filter that remembers the curvature to hold over gaps and crossings. */
+  holdFilter: number;
+  /** Largest curvature commanded. */
+  curvatureLimit: number;
+  /** Curvature of the search for a lost line. */
+  searchCurvature: number;
+}
+
+export interface DriveConstants {
+  /** Half the track width in m, in 1/2^TRACK_BITS. */
+  halfTrack: number;
+  /** Largest turn rate, mrad/s. */
+  turnLimit: number;
+  /** Wheel speed at full duty, mm/s. */
+  wheelLimit: number;
+  /** Wheel speed up to which a wheel is left without duty, mm/s. */
+  wheelDead: number;
+  /** Motor model: share of a speed difference that a wheel makes up in one sample, 1/2^COEFFICIENT_BITS. */
+  motorStep: number;
+  /** Wheel speed command above the present speed when speeding up, model speed units. */
+  leadUp: number;
+  /** Wheel speed command below the present speed when braking, model speed units. */
+  leadDown: number;
+  /** Speed during the search for a lost line, model speed units. */
+  searchSpeed: number;
+  /** Duty at which each wheel begins to turn. */
+  startDutyLeft: number;
+  startDutyRight: number;
+  /** Duty per mm/s above that, in 1/2^SLOPE_BITS. */
+  slopeLeft: number;
+  slopeRight: number;
+}
+
+export interface MemoryConstants {
+  /** Offset beyond which a vanished line has left by that side rather than ended in a gap. */
+  sideOffset: number;
+  /** Distance over which a vanished line is taken for a gap. */
+  gapDistance: number;
+  /** Distance over which a crossing may last. */
+  crossingDistance: number;
+  /** Samples that the search for a lost line may last. */
+  searchSamples: number;
+  /** Distance after a corner was seen within which a vanished line is looked for on the corner's side. */
+  cornerDistance: number;
+  /** Distance out of a bend before a faster class is taken. */
+  releaseDistance: number;
+}
+
+/** One action for each run of sensors on the line, from sensor `first` to sensor `last`. */
+export interface RuleConstants {
+  /** Curvature per wheel-speed difference, in 1/2^RULE_CURVATURE_BITS. */
+  curvatureFactor: number;
+  /** Left wheel fractions by runIndex(first, last, sensorCount), 1/2^FRACTION_BITS of base speed. */
+  left: readonly number[];
+  /** Right wheel fractions, same indices. */
+  right: readonly number[];
+}
+
+/** The turn of the bar across the line, for calibration by sweep. */
+export interface SweepConstants {
+  /** Duties of the two wheels' turn on the spot, 1/4096; the other wheel turns backward. */
+  dutyLeft: number;
+  dutyRight: number;
+  /** Samples of the first turn to the left; then twice as many to the right. */
+  turnSamples: number;
+  /** Samples that the turn back to the line may last. */
+  returnSamples: number;
+  /** Offset within which the line counts as found again, offset units. */
+  centreOffset: number;
+  /** Least contrast of a sensor, counts. */
+  minSpan: number;
+}
+
+/** Everything the controller needs. */
+export interface ControllerConstants {
+  kind: 'pid' | 'rules';
+  samplePeriodUs: number;
+  /** Samples from the button to the first motion. */
+  countdownSamples: number;
+  /** Samples that a run may last. */
+  runLimitSamples: number;
+  /** Present with calibration by sweep only. */
+  sweep?: SweepConstants;
+  sensing: SensingConstants;
+  steering: SteeringConstants;
+  drive: DriveConstants;
+  memory: MemoryConstants;
+  classes: readonly ClassConstants[];
+  /** Present with kind `rules` only. */
+  rules?: RuleConstants;
+}
+
+/**
+ * Place of the run of sensors `first`..`last` in the rule arrays: the runs in lexical order.
+ *
+ * @param first 0-based, leftmost sensor of the run
+ * @param last 0-based, at least `first`
+ */
+export function runIndex(first: number, last: number, sensorCount: number): number {
+  return first * sensorCount - ((first * (first - 1)) >> 1) + (last - first);
+}

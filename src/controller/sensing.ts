@@ -1,0 +1,189 @@
+/**
+ * From raw readings to the line's offset at the bar: the integer arithmetic that the firmware repeats.
+ *
+ * Each reading becomes a coverage 0..256. Neighbouring sensors on the line form a run. The edge of the
+ * line at an end of the run lies between a covered and an uncovered sensor; the sum of their two
+ * coverages says where (edge table). Two edges give the centre; where one lies outside the bar, the
+ * other and the line width do.
+ */
+import {
+  CALIBRATION_BITS,
+  EDGE_BITS,
+  EDGE_STEP_BITS,
+  FULL_COVERAGE,
+  type SensingConstants,
+} from './constants.js';
+
+/** Position of an edge beside the middle of its gap, offset units; `sum` of coverages 0..512. */
+export function edgeShift(constants: SensingConstants, halfGap: number, sum: number): number {
+  const table = constants.edgeTable;
+  const index = sum >> EDGE_STEP_BITS;
+  const low = table[index] as number;
+  if (index >= table.length - 1) return (halfGap * low) >> EDGE_BITS;
+  const part = sum & ((1 << EDGE_STEP_BITS) - 1);
+  const value = low + ((((table[index + 1] as number) - low) * part) >> EDGE_STEP_BITS);
+  return (halfGap * value) >> EDGE_BITS;
+}
+
+export class Sensing {
+  /** Coverage of each sensor, 0..256; with rules 0 or 256. */
+  readonly coverage: Int32Array;
+  /** What `centre` saw of `reach`. */
+  private seenReach = 0;
+  /** Whether the line is under the bar. */
+  found = false;
+  /** Whether the bar lies on a crossing. */
+  wide = false;
+  /** Offset of the line's centre at the bar, offset units; valid while `found`. */
+  offset = 0;
+  /** End of the bar that a too wide line reaches, as at a corner: 1 left, -1 right, 0 none. */
+  reach = 0;
+  /** The run of sensors taken for the line. */
+  first = 0;
+  last = 0;
+
+  constructor(
+    private readonly constants: SensingConstants,
+    private readonly binary: boolean,
+  ) {
+    this.coverage = new Int32Array(constants.sensorCount);
+  }
+
+  /** Turns one set of readings (counts, or 0 and 1 from digital sensors) into coverages; returns their sum. */
+  private cover(counts: Int32Array): number {
+    const { sensorCount, digital, lineLevelHigh, ground, gain, highCoverage } = this.constants;
+    let total = 0;
+    for (let i = 0; i < sensorCount; i++) {
+      let value: number;
+      if (digital) {
+        value = ((counts[i] as number) !== 0) === lineLevelHigh ? FULL_COVERAGE : 0;
+      } else {
+        value = (((counts[i] as number) - (ground[i] as number)) * (gain[i] as number)) >> CALIBRATION_BITS;
+        if (value < 0) value = 0;
+        if (value > FULL_COVERAGE) value = FULL_COVERAGE;
+        if (this.binary) value = value >= highCoverage ? FULL_COVERAGE : 0;
+      }
+      this.coverage[i] = value;
+      total += value;
+    }
+    return total;
+  }
+
+  /** Centre of the line whose run of sensors is first..last, offset units. */
+  private centre(first: number, last: number): number {
+    const { sensorCount, gapMiddle, gapHalf, halfLine, cornerWidth } = this.constants;
+    const coverage = this.coverage;
+    let leftEdge = 0;
+    let rightEdge = 0;
+    if (first > 0) {
+      const sum = (coverage[first - 1] as number) + (coverage[first] as number);
+      leftEdge = (gapMiddle[first] as number) + edgeShift(this.constants, gapHalf[first] as number, sum);
+    }
+    if (last < sensorCount - 1) {
+      const sum = (coverage[last] as number) + (coverage[last + 1] as number);
+      rightEdge =
+        (gapMiddle[last + 1] as number) - edgeShift(this.constants, gapHalf[last + 1] as number, sum);
+    }
+    this.seenReach = 0;
+    if (first > 0 && last < sensorCount - 1) return (leftEdge + rightEdge) >> 1;
+    if (first > 0) {
+      if (leftEdge - (gapMiddle[sensorCount] as number) > cornerWidth) this.seenReach = -1;
+      return leftEdge - halfLine;
+    }
+    if (last < sensorCount - 1) {
+      if ((gapMiddle[0] as number) - rightEdge > cornerWidth) this.seenReach = 1;
+      return rightEdge + halfLine;
+    }
+    return 0;
+  }
+
+  /** With no sensor on the line: a line just beyond an end of the bar still half covers the end sensor. */
+  private findBeyondEnds(): void {
+    const { sensorCount, gapMiddle, gapHalf, halfLine, lowCoverage } = this.constants;
+    const left = this.coverage[0] as number;
+    const right = this.coverage[sensorCount - 1] as number;
+    if (left >= lowCoverage && left >= right) {
+      const shift = edgeShift(this.constants, gapHalf[0] as number, FULL_COVERAGE + left);
+      this.found = true;
+      this.offset = (gapMiddle[0] as number) - shift + halfLine;
+      this.first = this.last = 0;
+    } else if (right >= lowCoverage) {
+      const shift = edgeShift(this.constants, gapHalf[sensorCount] as number, FULL_COVERAGE + right);
+      this.found = true;
+      this.offset = (gapMiddle[sensorCount] as number) + shift - halfLine;
+      this.first = this.last = sensorCount - 1;
+    }
+  }
+
+  /** Feedback: of several runs, the one nearest to the last offset is the line. */
+  private takeNearestRun(): void {
+    const { sensorCount, highCoverage } = this.constants;
+    const before = this.offset;
+    let nearest = 0;
+    let i = 0;
+    while (i < sensorCount) {
+      if ((this.coverage[i] as number) < highCoverage) {
+        i++;
+        continue;
+      }
+      const first = i;
+      while (i < sensorCount && (this.coverage[i] as number) >= highCoverage) i++;
+      const offset = this.centre(first, i - 1);
+      const distance = offset > before ? offset - before : before - offset;
+      if (!this.found || distance < nearest) {
+        this.found = true;
+        nearest = distance;
+        this.offset = offset;
+        this.reach = this.seenReach;
+        this.first = first;
+        this.last = i - 1;
+      }
+    }
+    if (!this.found) this.findBeyondEnds();
+  }
+
+  /** Rules: of several runs the widest is the line; between equally wide ones, the span of all of them. */
+  private takeWidestRun(): void {
+    const { sensorCount } = this.constants;
+    let widest = 0;
+    let i = 0;
+    while (i < sensorCount) {
+      if (this.coverage[i] === 0) {
+        i++;
+        continue;
+      }
+      const first = i;
+      while (i < sensorCount && this.coverage[i] !== 0) i++;
+      const width = i - first;
+      if (width > widest) {
+        widest = width;
+        this.first = first;
+        this.last = i - 1;
+        this.found = true;
+      } else if (width === widest) {
+        this.last = i - 1;
+      }
+    }
+    if (!this.found) return;
+    this.offset = this.centre(this.first, this.last);
+    this.reach = this.seenReach;
+  }
+
+  /** Reads one set of counts. */
+  read(counts: Int32Array): void {
+    const total = this.cover(counts);
+    this.found = false;
+    this.reach = 0;
+    this.wide = total >= this.constants.wideCoverage;
+    if (this.wide) return;
+    if (this.binary) this.takeWidestRun();
+    else this.takeNearestRun();
+  }
+
+  /** Forgets the last offset. */
+  reset(): void {
+    this.offset = 0;
+    this.found = this.wide = false;
+    this.first = this.last = this.reach = 0;
+  }
+}

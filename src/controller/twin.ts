@@ -1,0 +1,242 @@
+/**
+ * The twin: the controller in integers, the reference that the firmware equals bit for bit.
+ *
+ * One step, once a sample period: readings -> offset at the bar -> phase -> curvature -> speed class ->
+ * wheel speeds -> duties. The steering command is a curvature (turn per metre driven), so that one tuning
+ * serves neighbouring speeds. Vehicle speed is not measured: a first-order model of the motors, driven by the
+ * very command that the wheels get, stands in for it. The duty inverts the motors' dead zone and speed line.
+ *
+ * Only additions, products, comparisons and arithmetic right shifts are used; these agree in C++, Python and
+ * JavaScript. No intermediate leaves 32 bits (design/intervals.ts shows it for each sheet).
+ */
+import {
+  COEFFICIENT_BITS,
+  type ControllerConstants,
+  FILTER_BITS,
+  FRACTION_BITS,
+  FULL_DUTY,
+  PHASE,
+  type Phase,
+  RULE_CURVATURE_BITS,
+  SLOPE_BITS,
+  SPEED_GAIN_BITS,
+  SPEED_MODEL_BITS,
+  TRACK_BITS,
+  runIndex,
+} from './constants.js';
+import { Sensing } from './sensing.js';
+
+const INT16_MAX = 32767;
+
+function clamp(value: number, limit: number): number {
+  if (value > limit) return limit;
+  if (value < -limit) return -limit;
+  return value;
+}
+
+export class Twin {
+  readonly sensing: Sensing;
+  phase: Phase = PHASE.follow;
+  /** Index of the speed class in force; 0 is the fastest. */
+  classIndex = 0;
+  /** Curvature command, curvature units. */
+  curvature = 0;
+  /** Modelled vehicle speed, model speed units. */
+  speed = 0;
+  /** Duties, -4096..4096; positive drives forward. */
+  dutyLeft = 0;
+  dutyRight = 0;
+
+  /** Low-passed input, FILTER_BITS more bits. */
+  private filtered = 0;
+  /** Low-passed curvature demand and held curvature, FILTER_BITS more bits. */
+  private demand = 0;
+  private held = 0;
+  /** Distance driven in this phase. */
+  private travelled = 0;
+  /** Samples spent searching. */
+  private searched = 0;
+  /** Side on which the line was last seen: 1 left, -1 right. */
+  private side = 1;
+  /** Distance yet to go before a faster class. */
+  private release = 0;
+  /** Distance yet to go in which a vanished line is taken for a corner, and to which side. */
+  private corner = 0;
+  private cornerSide = 1;
+
+  constructor(readonly constants: ControllerConstants) {
+    this.sensing = new Sensing(constants.sensing, constants.kind === 'rules');
+  }
+
+  /** Whether the line is lost for good: motors off, and so until the next start. */
+  get stopped(): boolean {
+    return this.phase === PHASE.stopped;
+  }
+
+  /** Puts the controller into the state at the start of a run. */
+  start(): void {
+    this.sensing.reset();
+    this.phase = PHASE.follow;
+    this.classIndex = this.constants.classes.length - 1;
+    this.curvature = this.speed = this.dutyLeft = this.dutyRight = 0;
+    this.filtered = this.demand = this.held = 0;
+    this.travelled = this.searched = 0;
+    this.side = 1;
+    this.release = this.corner = 0;
+    this.cornerSide = 1;
+  }
+
+  /**
+   * One sample period.
+   *
+   * @param counts one reading a sensor, leftmost first: counts, or 0 and 1 from digital sensors
+   */
+  step(counts: Int32Array): void {
+    if (this.phase === PHASE.stopped) return;
+    this.sensing.read(counts);
+    const before = this.phase;
+    this.updatePhase();
+    if (this.stopped) {
+      this.dutyLeft = this.dutyRight = this.speed = 0;
+      return;
+    }
+    if (this.phase === PHASE.follow) this.steer(before !== PHASE.follow);
+    else if (this.phase === PHASE.search)
+      this.curvature = this.side * this.constants.steering.searchCurvature;
+    else this.curvature = this.held >> FILTER_BITS;
+    this.pickClass();
+    this.drive();
+  }
+
+  private updatePhase(): void {
+    const { memory } = this.constants;
+    if (this.corner > 0) this.corner -= this.speed;
+    if (this.sensing.wide) {
+      this.corner = 0;
+      this.enter(PHASE.crossing);
+      if (this.travelled > memory.crossingDistance) this.enter(PHASE.search);
+    } else if (this.sensing.found) {
+      this.enter(PHASE.follow);
+      const offset = this.sensing.offset;
+      if (offset !== 0) this.side = offset > 0 ? 1 : -1;
+      if (this.sensing.reach !== 0) {
+        this.corner = memory.cornerDistance;
+        this.cornerSide = this.sensing.reach;
+      }
+    } else if (this.phase === PHASE.follow || this.phase === PHASE.crossing) {
+      const offset = this.sensing.offset;
+      const bySide = offset > memory.sideOffset || offset < -memory.sideOffset;
+      if (this.corner > 0) this.side = this.cornerSide;
+      this.enter(bySide || this.corner > 0 ? PHASE.search : PHASE.gap);
+    } else if (this.phase === PHASE.gap) {
+      if (this.travelled > memory.gapDistance) this.enter(PHASE.search);
+    } else if (this.searched >= memory.searchSamples) {
+      this.enter(PHASE.stopped);
+    }
+    this.travelled += this.speed;
+    if (this.phase === PHASE.search) this.searched++;
+    else this.searched = 0;
+  }
+
+  private enter(phase: Phase): void {
+    if (phase === this.phase) return;
+    this.phase = phase;
+    this.travelled = 0;
+  }
+
+  /** Curvature from the measured offset: proportional plus filtered derivative. */
+  private steer(regained: boolean): void {
+    const { steering, classes } = this.constants;
+    const gains = classes[this.classIndex]!;
+    const input = clamp(this.input(), INT16_MAX);
+    if (regained) this.filtered = input << FILTER_BITS;
+    const change = clamp((input << FILTER_BITS) - this.filtered, INT16_MAX);
+    this.filtered += (change * steering.derivativeFilter) >> COEFFICIENT_BITS;
+    const sum = (input * gains.proportional + change * gains.derivative) >> steering.gainBits;
+    this.curvature = clamp(sum, steering.curvatureLimit);
+    const heldChange = (this.curvature << FILTER_BITS) - this.held;
+    this.held += (clamp(heldChange, INT16_MAX) * steering.holdFilter) >> COEFFICIENT_BITS;
+  }
+
+  /** What is steered on: the offset, or with rules the curvature that the table asks for. */
+  private input(): number {
+    const { rules, sensing } = this.constants;
+    if (rules === undefined) return this.sensing.offset;
+    const index = runIndex(this.sensing.first, this.sensing.last, sensing.sensorCount);
+    const difference = (rules.right[index] as number) - (rules.left[index] as number);
+    return (difference * rules.curvatureFactor) >> RULE_CURVATURE_BITS;
+  }
+
+  /** Slower at once when the demand for curvature rises, faster again by distance out of the bend. */
+  private pickClass(): void {
+    const { classes, steering, memory } = this.constants;
+    const size = this.curvature < 0 ? -this.curvature : this.curvature;
+    const demandChange = clamp((size << FILTER_BITS) - this.demand, INT16_MAX);
+    this.demand += (demandChange * steering.demandFilter) >> COEFFICIENT_BITS;
+    const demand = this.demand >> FILTER_BITS;
+    let entered = 0;
+    let kept = 0;
+    for (let i = 1; i < classes.length; i++) {
+      if (demand >= classes[i]!.enterCurvature) entered = i;
+      if (demand >= classes[i]!.keepCurvature) kept = i;
+    }
+    if (entered > this.classIndex) {
+      this.classIndex = entered;
+      this.release = memory.releaseDistance;
+    } else if (kept < this.classIndex) {
+      this.release -= this.speed;
+      if (this.release <= 0) {
+        this.classIndex = kept;
+        this.release = memory.releaseDistance;
+      }
+    } else {
+      this.release = memory.releaseDistance;
+    }
+  }
+
+  /** From speed class and curvature to duties; the wheel difference is kept when a wheel saturates. */
+  private drive(): void {
+    const { drive, classes } = this.constants;
+    const target = this.phase === PHASE.search ? drive.searchSpeed : classes[this.classIndex]!.speed;
+    let lead = (target - this.speed) << SPEED_GAIN_BITS;
+    if (lead > drive.leadUp) lead = drive.leadUp;
+    if (lead < -drive.leadDown) lead = -drive.leadDown;
+    const base = this.base((this.speed + lead) >> 6);
+
+    const turn = clamp(((this.speed >> 6) * this.curvature) >> 8, drive.turnLimit);
+    const half = (turn * drive.halfTrack) >> TRACK_BITS;
+    let left = base - half;
+    let right = base + half;
+    const outer = left > right ? left : right;
+    if (outer > drive.wheelLimit) {
+      left -= outer - drive.wheelLimit;
+      right -= outer - drive.wheelLimit;
+    }
+    left = clamp(left, drive.wheelLimit);
+    right = clamp(right, drive.wheelLimit);
+
+    const middle = (left + right) << 5;
+    const lag = (middle - this.speed) >> SPEED_MODEL_BITS;
+    this.speed += (lag * drive.motorStep) >> (COEFFICIENT_BITS - SPEED_MODEL_BITS);
+    if (this.speed < 0) this.speed = 0;
+    this.dutyLeft = this.duty(left, drive.startDutyLeft, drive.slopeLeft);
+    this.dutyRight = this.duty(right, drive.startDutyRight, drive.slopeRight);
+  }
+
+  /** Wheel speed for both wheels, mm/s; a rule's mean fraction scales it. */
+  private base(speed: number): number {
+    const { rules, sensing } = this.constants;
+    if (rules === undefined || this.phase !== PHASE.follow) return speed;
+    const index = runIndex(this.sensing.first, this.sensing.last, sensing.sensorCount);
+    const sum = (rules.left[index] as number) + (rules.right[index] as number);
+    return (speed * sum) >> (FRACTION_BITS + 1);
+  }
+
+  private duty(wheelSpeed: number, startDuty: number, slope: number): number {
+    const size = wheelSpeed < 0 ? -wheelSpeed : wheelSpeed;
+    if (size <= this.constants.drive.wheelDead) return 0;
+    let duty = startDuty + ((size * slope) >> SLOPE_BITS);
+    if (duty > FULL_DUTY) duty = FULL_DUTY;
+    return wheelSpeed < 0 ? -duty : duty;
+  }
+}

@@ -1,0 +1,73 @@
+/** What the design finds for one vehicle: the numbers of `derive`, and the controller that is rendered. */
+import type { ControllerConstants } from '../controller/constants.js';
+import type { Vehicle } from '../vehicle/vehicle.js';
+
+/** One share of the delay between the floor and the motors, s. */
+export interface DelayShare {
+  name: string;
+  delayS: number;
+  source: string;
+}
+
+/** Loop robustness; the worst over the tolerance box unless said otherwise. */
+export interface Margins {
+  /** Factor by which the loop gain may rise. */
+  gainMargin: number;
+  phaseMarginDeg: number;
+  /** Maximum sensitivity, max |1/(1+L)|. */
+  ms: number;
+}
+
+/** Speed limits of a class, m/s. */
+export interface SpeedLimits {
+  motor: number;
+  grip: number;
+  view: number;
+  control: number;
+}
+
+export interface DesignedClass {
+  name: string;
+  /** Smallest radius of the class, m; Infinity is never used: the straight class carries the largest radius. */
+  minRadiusM: number;
+  speedMps: number;
+  limits: SpeedLimits;
+  limitedBy: keyof SpeedLimits | 'sheet' | 'finish';
+  gains: {
+    /** Curvature per offset, 1/m^2. */
+    proportionalPerM2: number;
+    derivativeTimeS: number;
+    filterTimeS: number;
+  };
+  plant: { lookaheadM: number; speedMps: number; lagS: number; delayS: number; samplePeriodS: number };
+  /** From lateral error (m) to commanded turn rate (rad/s), polynomials in z^-1. */
+  controller: { numerator: number[]; denominator: number[]; samplePeriodS: number };
+  /** At the nominal vehicle. */
+  margins: Margins;
+  /** Worst over the tolerance box. */
+  worstMargins: Margins;
+}
+
+/** One state of the bar and what is done in it. */
+export interface RuleRow {
+  /** One bit a sensor, the leftmost sensor highest. */
+  state: number;
+  kind: 'line' | 'edge' | 'wide' | 'none' | 'split' | 'impossible';
+  /** Offsets of the line's centre that cause this state, m; absent when no single line does. */
+  fromM?: number;
+  toM?: number;
+  /** Wheel speeds as fractions of base speed. */
+  left: number;
+  right: number;
+}
+
+export interface Design {
+  vehicle: Vehicle;
+  delay: { shares: DelayShare[]; totalS: number };
+  classes: DesignedClass[];
+  /** All 2^n states; present with rules. */
+  rules?: RuleRow[];
+  controller: ControllerConstants;
+  /** What the person should know: assumptions, bends that are too tight, limits that bind. */
+  remarks: string[];
+}
