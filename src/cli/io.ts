@@ -32,6 +32,8 @@ export interface Io {
 /** Erases the line that the cursor is in and returns to its start (ECMA-48: EL, CR). */
 const CLEAR_LINE = '\r\u001b[2K';
 const PLAIN_COLUMNS = 80;
+/** We have looked at the stream ourselves; Node would look at stdout only. */
+const UNASKED = { validateStream: false };
 
 function takesColor(stream: NodeJS.WriteStream, environment: NodeJS.ProcessEnv): boolean {
   return stream.isTTY && !environment['NO_COLOR'] && environment['TERM'] !== 'dumb';
@@ -77,8 +79,8 @@ export function processIo(
     isTerminalErr: err.isTTY,
     color,
     columns: out.isTTY ? out.columns : PLAIN_COLUMNS,
-    style: (format, text) => (color ? styleText(format, text) : text),
-    styleErr: (format, text) => (colorErr ? styleText(format, text) : text),
+    style: (format, text) => (color ? styleText(format, text, UNASKED) : text),
+    styleErr: (format, text) => (colorErr ? styleText(format, text, UNASKED) : text),
   };
 }
 
