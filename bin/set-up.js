@@ -5,9 +5,10 @@
 import { spawnSync } from 'node:child_process';
 import { createHash } from 'node:crypto';
 import { existsSync, mkdirSync, readFileSync, readdirSync, rmSync, writeFileSync } from 'node:fs';
-import { delimiter, join } from 'node:path';
+import { join } from 'node:path';
 import { fileURLToPath, pathToFileURL } from 'node:url';
 import { withLock } from './lock.js';
+import { howToInstall, missingTools } from './toolchain.js';
 
 export const root = fileURLToPath(new URL('..', import.meta.url));
 const at = (...parts) => join(root, ...parts);
@@ -102,17 +103,6 @@ export async function build() {
   });
 }
 
-/** The packages of bin/toolchain.json that this machine lacks. */
-export function missingTools() {
-  const { packages } = JSON.parse(readFileSync(at('bin', 'toolchain.json'), 'utf8'));
-  const folders = (process.env.PATH ?? '').split(delimiter);
-  const isThere = (tool) => {
-    if (tool.file) return existsSync(tool.file);
-    return folders.some((folder) => existsSync(join(folder, tool.command)));
-  };
-  return packages.filter((tool) => !isThere(tool)).map((tool) => tool.name);
-}
-
 /** How this process may install system packages: as root, through a sudo that asks for nothing, or not at all. */
 function installer() {
   if (spawnSync('apt-get', ['--version']).status !== 0) return undefined;
@@ -130,8 +120,9 @@ export async function toolchain() {
       if (missing.length === 0) return;
       say(`installing ${missing.join(' ')} (apt-get)`);
       const apt = (...args) => {
-        const [command, ...rest] = [...prefix, 'apt-get', '-qq', '-o', 'Dpkg::Use-Pty=0', ...args];
-        return run(command, rest, { env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive' } });
+        const quiet = ['env', 'DEBIAN_FRONTEND=noninteractive', 'apt-get', '-qq', '-o', 'Dpkg::Use-Pty=0'];
+        const [command, ...rest] = [...prefix, ...quiet, ...args];
+        return run(command, rest);
       };
       const install = () => apt('install', '-y', '--no-install-recommends', ...missing);
       return install() || (apt('update') && install());
@@ -139,11 +130,7 @@ export async function toolchain() {
   }
   const missing = missingTools();
   if (missing.length === 0) return;
-  throw new SetUpError(
-    `missing tools: ${missing.join(', ')}. On Debian or Ubuntu, type: ` +
-      `sudo apt-get update && sudo apt-get install ${missing.join(' ')}`,
-    5,
-  );
+  throw new SetUpError(howToInstall(missing), 5);
 }
 
 /** Runs the steps in order; a step that cannot be done ends the process with one line that says what to type. */

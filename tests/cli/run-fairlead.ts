@@ -22,10 +22,9 @@ export function startFairlead(
   words: readonly string[],
   { environment = {}, folder = ROOT }: Surroundings = {},
 ) {
-  const { DEBUG: _debug, ...inherited } = process.env;
   return spawn(process.execPath, [ENTRY, ...words], {
     cwd: folder,
-    env: { ...inherited, ...environment },
+    env: { ...process.env, DEBUG: '', ...environment },
     stdio: ['ignore', 'pipe', 'pipe'],
   });
 }
