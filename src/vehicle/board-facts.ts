@@ -16,10 +16,13 @@ export interface PinFacts {
   output: boolean;
   /** Has an internal pull-up. */
   pullUp: boolean;
-  /** PWM timer or slice/channel number, where the pin can do PWM. */
+  /**
+   * PWM timer or slice, and its channel, where the pin can do PWM. Pins with the same timer and channel carry the
+   * same signal, except for channel "routed": the chip then connects any free channel to the pin.
+   */
   pwm?: { timer: number; channel: string };
-  /** Analog channel, where the pin can read a voltage. */
-  adc?: { channel: number };
+  /** Converter (where the chip has several), its channel and what to watch, where the pin can read a voltage. */
+  adc?: { unit?: number; channel: number; caution?: string };
   /** Can raise an external interrupt. */
   interrupt: boolean;
   /** Why the pin must not be used at all (serial console, flash memory), else absent. */
@@ -51,9 +54,13 @@ export interface BoardFacts {
   samplePeriodS: number;
   /** PWM frequency as the firmware sets it up, Hz (the lowest over the board's timers). */
   pwmHz: number;
-  /** Steps of PWM duty from off to full. */
+  /** PWM frequency of each timer as the firmware leaves it, Hz, where the board's timers are fixed to pins. */
+  timerPwmHz?: Readonly<Record<number, number>>;
+  /** Steps of PWM duty from off to full, as the firmware's language counts them. */
   pwmSteps: number;
+  /** Program memory that the firmware may fill, bytes. */
   flashBytes?: number;
+  /** Data memory of the chip, bytes. */
   ramBytes?: number;
   /** The timer that the millisecond clock uses; PWM on it is allowed but it must not be retimed. */
   clockTimer?: number;

@@ -1,0 +1,70 @@
+/**
+ * How values appear in messages. Everything that comes from outside goes through `quote` or `printable`, so that no
+ * control sequence reaches a terminal.
+ */
+
+const MAX_QUOTED = 60;
+
+// Controls, lone surrogates, line and paragraph separators, marks that change text direction, byte order mark.
+const UNPRINTABLE = /[\p{Cc}\p{Cs}\p{Zl}\p{Zp}\p{Bidi_Control}\u{feff}]/gu;
+
+/** Text with control characters written as \uXXXX. */
+export function printable(text: string): string {
+  return text.replace(
+    UNPRINTABLE,
+    (character) => `\\u${character.charCodeAt(0).toString(16).padStart(4, '0')}`,
+  );
+}
+
+/** Untrusted text in double quotes, control characters escaped, cut to a readable length. */
+export function quote(text: string): string {
+  const characters = [...text.slice(0, 2 * MAX_QUOTED)];
+  const cut = text.length > characters.join('').length || characters.length > MAX_QUOTED;
+  return printable(`"${characters.slice(0, MAX_QUOTED).join('')}${cut ? '...' : ''}"`);
+}
+
+/** A number for a message: whole numbers as they are, others to at most four significant digits. */
+export function rounded(value: number): string {
+  return Number.isInteger(value) ? String(value) : String(Number(value.toPrecision(4)));
+}
+
+/** A number with its unit; "1" stands for none. */
+export function withUnit(value: number, unit: string | undefined): string {
+  return unit === undefined || unit === '1' ? rounded(value) : `${rounded(value)} ${unit}`;
+}
+
+/** What a value is, in words: numbers with their unit, text in quotes, the rest by kind. */
+export function describeValue(value: unknown, unit?: string): string {
+  if (typeof value === 'number')
+    return unit === undefined || unit === '1' ? String(value) : `${String(value)} ${unit}`;
+  if (typeof value === 'string') return quote(value);
+  if (Array.isArray(value))
+    return value.length === 1 ? 'a list of 1 entry' : `a list of ${value.length} entries`;
+  if (typeof value === 'object' && value !== null) return 'an object';
+  return String(value);
+}
+
+/** "a, b or c". */
+export function joinOr(words: readonly string[]): string {
+  return joinWith(words, 'or');
+}
+
+/** "a, b and c". */
+export function joinAnd(words: readonly string[]): string {
+  return joinWith(words, 'and');
+}
+
+function joinWith(words: readonly string[], last: string): string {
+  if (words.length < 2) return words.join('');
+  return `${words.slice(0, -1).join(', ')} ${last} ${words.at(-1)}`;
+}
+
+/** JSON pointer (RFC 6901) from its parts. */
+export function pointerTo(...parts: readonly (string | number)[]): string {
+  return parts.map((part) => `/${String(part).replaceAll('~', '~0').replaceAll('/', '~1')}`).join('');
+}
+
+/** "1 sensor", "6 sensors". */
+export function counted(count: number, noun: string): string {
+  return `${count} ${noun}${count === 1 ? '' : 's'}`;
+}

@@ -1,0 +1,95 @@
+/**
+ * The ATmega328P as Uno and Nano wire it: pins, timers, converter, and the timing of generated C++.
+ *
+ * Sources: Atmel 8271H, ATmega328P data sheet (converter p. 241, timers, port functions); the Arduino AVR core's
+ * variants/standard/pins_arduino.h (pin numbers, PWM timers, interrupts), cores/arduino/wiring.c (timer set-up) and
+ * boards.txt (memory left by the boot loader).
+ *
+ * Converter as the firmware sets it up: prescaler 32 gives 16 MHz / 32 = 500 kHz, a conversion takes 13 clocks = 26 us.
+ * That is faster than the 200 kHz for full resolution; what is lost in the lowest bits is far below sensor noise.
+ * PWM: timer 0 runs fast PWM, 16 MHz / (64 * 256) = 976.6 Hz; timers 1 and 2 run phase-correct,
+ * 16 MHz / (64 * 510) = 490.2 Hz.
+ */
+import type { BoardFacts, PinFacts } from '../board-facts.js';
+
+const CLOCK_HZ = 16e6;
+const TIMER_PRESCALER = 64;
+
+const PWM_OUTPUTS: Readonly<Record<number, { timer: number; channel: string }>> = {
+  3: { timer: 2, channel: 'B' },
+  5: { timer: 0, channel: 'B' },
+  6: { timer: 0, channel: 'A' },
+  9: { timer: 1, channel: 'A' },
+  10: { timer: 1, channel: 'B' },
+  11: { timer: 2, channel: 'A' },
+};
+
+const SERIAL = 'it carries the serial link to the computer, by which the firmware is loaded';
+const I2C = 'it is also a line of the I2C bus, so no I2C part can be added later';
+const LED = "the board's LED and its resistor hang on it, and it flickers while the boot loader runs";
+
+function digitalPin(number: number): PinFacts {
+  const pwm = PWM_OUTPUTS[number];
+  return {
+    label: String(number),
+    aliases: [`D${number}`],
+    code: String(number),
+    input: true,
+    output: true,
+    pullUp: true,
+    interrupt: number === 2 || number === 3,
+    ...(pwm ? { pwm } : {}),
+    ...(number <= 1 ? { reserved: SERIAL } : {}),
+    ...(number === 13 ? { caution: LED } : {}),
+  };
+}
+
+/** A0 to A5 are whole port pins; A6 and A7, where the package has them, lead to the converter only. */
+function analogPin(channel: number): PinFacts {
+  const portPin = channel <= 5;
+  return {
+    label: `A${channel}`,
+    aliases: [String(14 + channel), `D${14 + channel}`],
+    code: `A${channel}`,
+    input: portPin,
+    output: portPin,
+    pullUp: portPin,
+    interrupt: false,
+    adc: { channel },
+    ...(channel === 4 || channel === 5 ? { caution: I2C } : {}),
+  };
+}
+
+const DIGITAL_PINS = Array.from({ length: 14 }, (_, number) => digitalPin(number));
+
+/** Pins 0 to 13 and A0 up to the given number of analog pins. */
+export function atmega328pPins(analogCount: number): readonly PinFacts[] {
+  return [...DIGITAL_PINS, ...Array.from({ length: analogCount }, (_, channel) => analogPin(channel))];
+}
+
+const FAST_PWM_HZ = CLOCK_HZ / (TIMER_PRESCALER * 256);
+const PHASE_CORRECT_PWM_HZ = CLOCK_HZ / (TIMER_PRESCALER * 510);
+
+/** What Uno and Nano have in common. */
+export const atmega328p = {
+  language: 'arduino',
+  chip: 'ATmega328P',
+  clockHz: CLOCK_HZ,
+  logicV: 5,
+  adcMaxCount: 1023,
+  // 26 us of conversion and the call around it.
+  adcReadS: 30e-6,
+  digitalReadS: 5e-6,
+  computeS: 400e-6,
+  samplePeriodS: 2e-3,
+  timerPwmHz: { 0: FAST_PWM_HZ, 1: PHASE_CORRECT_PWM_HZ, 2: PHASE_CORRECT_PWM_HZ },
+  pwmHz: PHASE_CORRECT_PWM_HZ,
+  pwmSteps: 255,
+  ramBytes: 2048,
+  clockTimer: 0,
+} as const satisfies Partial<BoardFacts>;
+
+export const ATMEGA328P_SOURCES = [
+  'Atmel 8271H, ATmega328P data sheet',
+  'Arduino AVR core: variants/standard/pins_arduino.h, cores/arduino/wiring.c, boards.txt',
+] as const;

@@ -1,0 +1,15 @@
+/**
+ * Nano (with the ATmega328P): as the Uno, with two more analog inputs, A6 and A7, and a larger boot loader.
+ * Facts and sources: atmega328p.ts; variants/eightanaloginputs/pins_arduino.h for the number of analog inputs.
+ */
+import type { BoardFacts } from '../board-facts.js';
+import { ATMEGA328P_SOURCES, atmega328p, atmega328pPins } from './atmega328p.js';
+
+export const nano: BoardFacts = {
+  ...atmega328p,
+  id: 'nano',
+  title: 'Nano',
+  sources: [...ATMEGA328P_SOURCES, 'Arduino AVR core: variants/eightanaloginputs/pins_arduino.h'],
+  flashBytes: 30720,
+  pins: atmega328pPins(8),
+};
