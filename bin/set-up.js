@@ -23,7 +23,7 @@ export class SetUpError extends Error {
 }
 
 /** Runs a program with its output on our stderr, so that stdout stays free for the job itself. */
-function run(command, args, options = {}) {
+function run([command, ...args], options = {}) {
   const result = spawnSync(command, args, { cwd: root, stdio: ['ignore', 2, 2], ...options });
   return result.status === 0;
 }
@@ -53,10 +53,8 @@ export async function dependencies() {
     if (dependenciesAreCurrent()) return;
     say('installing packages (npm ci)');
     const npm = process.env.npm_execpath ? [process.execPath, process.env.npm_execpath] : ['npm'];
-    const args = ['ci', '--no-audit', '--no-fund', '--loglevel=error'];
-    if (
-      !run(npm[0], [...npm.slice(1), ...args], { shell: npm.length === 1 && process.platform === 'win32' })
-    ) {
+    const shell = npm.length === 1 && process.platform === 'win32';
+    if (!run([...npm, 'ci', '--no-audit', '--no-fund', '--loglevel=error'], { shell })) {
       throw new SetUpError('npm ci failed (it needs the package registry). Type: npm ci', 5);
     }
   });
@@ -92,9 +90,8 @@ export async function build() {
     if (buildIsCurrent(digest)) return;
     say('building (tsc)');
     rmSync(digestFile, { force: true });
-    if (
-      !run(process.execPath, [at('node_modules', 'typescript', 'bin', 'tsc'), '-p', 'tsconfig.build.json'])
-    ) {
+    const tsc = at('node_modules', 'typescript', 'bin', 'tsc');
+    if (!run([process.execPath, tsc, '-p', 'tsconfig.build.json'])) {
       throw new SetUpError('the sources do not compile (see above)', 1);
     }
     mkdirSync(at('dist'), { recursive: true });
@@ -119,13 +116,12 @@ export async function toolchain() {
       const missing = missingTools();
       if (missing.length === 0) return;
       say(`installing ${missing.join(' ')} (apt-get)`);
-      const apt = (...args) => {
-        const quiet = ['env', 'DEBIAN_FRONTEND=noninteractive', 'apt-get', '-qq', '-o', 'Dpkg::Use-Pty=0'];
-        const [command, ...rest] = [...prefix, ...quiet, ...args];
-        return run(command, rest);
-      };
-      const install = () => apt('install', '-y', '--no-install-recommends', ...missing);
-      return install() || (apt('update') && install());
+      const apt = [...prefix, 'env', 'DEBIAN_FRONTEND=noninteractive', 'apt-get', '-qq'];
+      const install = [...apt, 'install', '-y', '--no-install-recommends', ...missing];
+      // A fresh machine has no package lists yet: then the first try fails, and not worth telling.
+      if (run(install, { stdio: 'ignore' })) return;
+      run([...apt, 'update']);
+      run(install);
     });
   }
   const missing = missingTools();
