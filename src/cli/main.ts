@@ -31,6 +31,9 @@ Exit codes: 0 done, 1 a defect of fairlead, 2 bad input, 3 no design meets the s
 4 generated files differ from the sheet or were edited, 5 a needed tool is missing.
 `;
 
+/** Options of the program itself. */
+const FOR_PROGRAM = new Set(['-h', '--help', '--version']);
+
 /** Exits of commander that are no failures. */
 const SHOWN = new Set(['commander.helpDisplayed', 'commander.help', 'commander.version']);
 
@@ -40,7 +43,7 @@ async function buildProgram(words: readonly string[], io: Io, wantsJson: boolean
       'Turns the description of a small line-tracking vehicle into firmware that is proven before it is flashed.',
     )
     .version(VERSION, '--version', 'print the version')
-    .helpOption('--help', 'print this help')
+    .helpOption('-h, --help', 'print this help')
     .helpCommand(false)
     .addHelpText('after', EXAMPLES)
     .exitOverride()
@@ -60,9 +63,7 @@ async function buildProgram(words: readonly string[], io: Io, wantsJson: boolean
 
 /** What a bare `fairlead` does: the questionnaire where somebody can answer, else the demo. */
 function withDefaultCommand(words: readonly string[], io: Io): string[] {
-  const asksForProgram = words.some(
-    (word) => !word.startsWith('-') || word === '--help' || word === '--version',
-  );
+  const asksForProgram = words.some((word) => !word.startsWith('-') || FOR_PROGRAM.has(word));
   if (asksForProgram) return [...words];
   return [io.isTerminalIn && io.isTerminalOut ? 'survey' : 'demo', ...words];
 }
