@@ -89,6 +89,8 @@ export interface ClassConstants {
   speed: number;
   /** Proportional gain: curvature units per input unit, in 1/2^gainBits. */
   proportional: number;
+  /** Coefficient of the derivative filter, in 1/2^COEFFICIENT_BITS. */
+  derivativeFilter: number;
   /** Derivative gain on the high-passed input, in 1/2^gainBits per 1/2^FILTER_BITS input unit. */
   derivative: number;
 }
@@ -96,8 +98,6 @@ export interface ClassConstants {
 export interface SteeringConstants {
   /** Bits of the gains. */
   gainBits: number;
-  /** Coefficient of the derivative filter, in 1/2^COEFFICIENT_BITS. */
-  derivativeFilter: number;
   /** Coefficient of the filter on the curvature demand that picks the speed class. */
   demandFilter: number;
   /** Coefficient of the filter that remembers the curvature to hold over gaps and crossings. */

@@ -151,7 +151,7 @@ export class Twin {
     const input = clamp(this.input(), INT16_MAX);
     if (regained) this.filtered = input << FILTER_BITS;
     const change = clamp((input << FILTER_BITS) - this.filtered, INT16_MAX);
-    this.filtered += (change * steering.derivativeFilter) >> COEFFICIENT_BITS;
+    this.filtered += (change * gains.derivativeFilter) >> COEFFICIENT_BITS;
     const sum = (input * gains.proportional + change * gains.derivative) >> steering.gainBits;
     this.curvature = clamp(sum, steering.curvatureLimit);
     const heldChange = (this.curvature << FILTER_BITS) - this.held;

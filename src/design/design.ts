@@ -1,5 +1,6 @@
 /** What the design finds for one vehicle: the numbers of `derive`, and the controller that is rendered. */
 import type { ControllerConstants } from '../controller/constants.js';
+import type { SteeringGains } from './steering-loop.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 
 /** One share of the delay between the floor and the motors, s. */
@@ -33,12 +34,7 @@ export interface DesignedClass {
   speedMps: number;
   limits: SpeedLimits;
   limitedBy: keyof SpeedLimits | 'sheet' | 'finish';
-  gains: {
-    /** Curvature per offset, 1/m^2. */
-    proportionalPerM2: number;
-    derivativeTimeS: number;
-    filterTimeS: number;
-  };
+  gains: SteeringGains;
   plant: { lookaheadM: number; speedMps: number; lagS: number; delayS: number; samplePeriodS: number };
   /** From lateral error (m) to commanded turn rate (rad/s), polynomials in z^-1. */
   controller: { numerator: number[]; denominator: number[]; samplePeriodS: number };
@@ -52,7 +48,7 @@ export interface DesignedClass {
 export interface RuleRow {
   /** One bit a sensor, the leftmost sensor highest. */
   state: number;
-  kind: 'line' | 'edge' | 'wide' | 'none' | 'split' | 'impossible';
+  kind: 'line' | 'wide' | 'none' | 'split' | 'impossible';
   /** Offsets of the line's centre that cause this state, m; absent when no single line does. */
   fromM?: number;
   toM?: number;
@@ -65,8 +61,6 @@ export interface Design {
   vehicle: Vehicle;
   delay: { shares: DelayShare[]; totalS: number };
   classes: DesignedClass[];
-  /** All 2^n states; present with rules. */
-  rules?: RuleRow[];
   controller: ControllerConstants;
   /** What the person should know: assumptions, bends that are too tight, limits that bind. */
   remarks: string[];

@@ -1,0 +1,73 @@
+/**
+ * What the sensor bar sees: how far to the side the line is still measured, and what a bend asks for.
+ *
+ * Geometry of steady driving on a circle of radius R with the bar L ahead of the axle: if the line lies y to
+ * the inner side at the bar, the axle runs on a circle of radius rho = y + sqrt(R^2 - L^2). With the axle on
+ * the line itself (rho = R), y = R - sqrt(R^2 - L^2).
+ */
+import { FULL_COVERAGE } from '../controller/constants.js';
+import type { Vehicle } from '../vehicle/vehicle.js';
+import { segmentShare } from './edge-table.js';
+
+/** Covered share of a spot whose centre is `offsetM` beside the middle of a line. */
+export function lineShare(offsetM: number, lineWidthM: number, spotRadiusM: number): number {
+  return (
+    segmentShare((lineWidthM / 2 - offsetM) / spotRadiusM) -
+    segmentShare((-lineWidthM / 2 - offsetM) / spotRadiusM)
+  );
+}
+
+/** Distance between neighbouring sensors, mean, m. */
+export function meanPitchM(positionsM: readonly number[]): number {
+  const first = positionsM[0] as number;
+  const last = positionsM[positionsM.length - 1] as number;
+  return (first - last) / (positionsM.length - 1);
+}
+
+/** Least of the largest coverage of any sensor, wherever between the end sensors the line lies, 0..1. */
+export function weakestPeak(vehicle: Vehicle): number {
+  const { positionsM, spotRadiusM } = vehicle.bar;
+  let weakest = 1;
+  for (let i = 1; i < positionsM.length; i++) {
+    const half = ((positionsM[i - 1] as number) - (positionsM[i] as number)) / 2;
+    weakest = Math.min(weakest, lineShare(half, vehicle.line.widthM, spotRadiusM));
+  }
+  return weakest;
+}
+
+/** Coverage 0..256 from which a sensor counts as on the line: half, or less where the line can slip between two. */
+export function highCoverage(vehicle: Vehicle): number {
+  const weakest = Math.round(weakestPeak(vehicle) * FULL_COVERAGE);
+  return Math.max(16, Math.min(FULL_COVERAGE / 2, weakest >> 1));
+}
+
+/** Distance from a sensor to the line's middle at which the sensor just counts as on the line, m. */
+export function switchingDistanceM(vehicle: Vehicle): number {
+  const threshold = highCoverage(vehicle) / FULL_COVERAGE;
+  const { widthM } = vehicle.line;
+  const { spotRadiusM } = vehicle.bar;
+  let low = 0;
+  let high = widthM / 2 + spotRadiusM;
+  for (let i = 0; i < 50; i++) {
+    const middle = (low + high) / 2;
+    if (lineShare(middle, widthM, spotRadiusM) >= threshold) low = middle;
+    else high = middle;
+  }
+  return (low + high) / 2;
+}
+
+/** Largest offset of the line's middle that is still measured, m. */
+export function viewM(vehicle: Vehicle): number {
+  const outermost = vehicle.bar.positionsM[0] as number;
+  return outermost + switchingDistanceM(vehicle);
+}
+
+/** Offset of the line at the bar with the axle on a bend of radius R, m; NaN if the bar reaches beyond it. */
+export function bendOffsetM(radiusM: number, aheadM: number): number {
+  return radiusM - Math.sqrt(radiusM * radiusM - aheadM * aheadM);
+}
+
+/** Curvature of the axle's path, 1/m, while the line of a bend of radius R lies `offsetM` to the inner side at the bar. */
+export function axleCurvature(radiusM: number, aheadM: number, offsetM: number): number {
+  return 1 / (offsetM + Math.sqrt(radiusM * radiusM - aheadM * aheadM));
+}

@@ -1,0 +1,32 @@
+/**
+ * The delay from the floor to the motors, itemised from what the generated firmware does in a sample.
+ *
+ * The sensors are read one after the other at the start of the sample, so that a reading is on average half
+ * a scan older than the end of the scan; then the arithmetic runs; a new duty takes effect on average half a
+ * PWM period after it is written. The hold over one sample is part of the sampled plant, not of this delay.
+ */
+import type { Vehicle } from '../vehicle/vehicle.js';
+import type { DelayShare } from './design.js';
+
+export function delayBudget(vehicle: Vehicle): { shares: DelayShare[]; totalS: number } {
+  const { board, bar } = vehicle;
+  const count = bar.positionsM.length;
+  const readS = bar.kind === 'analog' ? board.adcReadS : board.digitalReadS;
+  const shares: DelayShare[] = [
+    {
+      name: 'scan',
+      delayS: (count * readS) / 2,
+      source: `half of ${count} ${bar.kind} readings one after the other`,
+    },
+    { name: 'compute', delayS: board.computeS, source: 'control arithmetic, worst case of the board' },
+    { name: 'pwm', delayS: 0.5 / board.pwmHz, source: 'half a PWM period until the new duty acts' },
+  ];
+  return { shares, totalS: shares.reduce((sum, share) => sum + share.delayS, 0) };
+}
+
+/** Time from the first reading of a sample to the new duty, s. */
+export function outputDelayS(vehicle: Vehicle): number {
+  const { board, bar } = vehicle;
+  const readS = bar.kind === 'analog' ? board.adcReadS : board.digitalReadS;
+  return bar.positionsM.length * readS + board.computeS;
+}

@@ -1,0 +1,126 @@
+/**
+ * Gain margin, phase margin and maximum sensitivity of a loop from its frequency response.
+ *
+ *   gain margin   1/|L| where L crosses the negative real axis, the least above 1; Infinity without one
+ *   phase margin  180 deg + arg L where |L| = 1, the least; Infinity without a crossover
+ *   Ms            max |1 / (1 + L)|
+ *
+ * A grid finds the crossings and the peak, bisection and golden section refine them: a grid alone reads
+ * the peak too low. Source: Astrom and Murray, Feedback Systems, chapter 10.
+ */
+import type { Margins } from './design.js';
+
+/** Frequency response: [real, imaginary] at a frequency in rad/s. */
+export type Response = (frequencyRadS: number) => [number, number];
+
+const GRID_POINTS = 160;
+const REFINEMENTS = 44;
+
+/** Margins, and whether the loop crosses the negative real axis beyond -1. */
+export interface LoopScan extends Margins {
+  /**
+   * Whether |L| > 1 at a crossing of the negative real axis, or L comes in from below it. A loop of two
+   * integrators with a lead, such as the lane loop, is stable exactly when this is false (Nyquist).
+   */
+  beyondMinusOne: boolean;
+}
+
+/** Zero of `f` between `low` and `high`, where its signs differ. */
+function bisect(f: (w: number) => number, low: number, high: number): number {
+  let a = low;
+  let b = high;
+  const rising = f(a) < 0;
+  for (let i = 0; i < REFINEMENTS; i++) {
+    const middle = Math.sqrt(a * b);
+    if (f(middle) < 0 === rising) a = middle;
+    else b = middle;
+  }
+  return Math.sqrt(a * b);
+}
+
+/** Largest value of `f` between `low` and `high`, where it has one peak. */
+function peak(f: (w: number) => number, low: number, high: number): number {
+  const ratio = (Math.sqrt(5) - 1) / 2;
+  let a = low;
+  let b = high;
+  let c = b - ratio * (b - a);
+  let d = a + ratio * (b - a);
+  let fc = f(c);
+  let fd = f(d);
+  for (let i = 0; i < REFINEMENTS; i++) {
+    if (fc > fd) {
+      b = d;
+      d = c;
+      fd = fc;
+      c = b - ratio * (b - a);
+      fc = f(c);
+    } else {
+      a = c;
+      c = d;
+      fc = fd;
+      d = a + ratio * (b - a);
+      fd = f(d);
+    }
+  }
+  return Math.max(fc, fd);
+}
+
+/**
+ * Margins of a loop.
+ *
+ * @param loop response of the open loop, negative feedback understood
+ * @param lowestRadS lowest frequency looked at, rad/s
+ * @param highestRadS highest frequency looked at, rad/s; the Nyquist frequency of a sampled loop
+ */
+export function scanLoop(loop: Response, lowestRadS: number, highestRadS: number): LoopScan {
+  const size = (w: number) => Math.hypot(...loop(w));
+  const imaginary = (w: number) => loop(w)[1];
+  const sensitivity = (w: number) => {
+    const [re, im] = loop(w);
+    return 1 / Math.hypot(1 + re, im);
+  };
+  const step = Math.pow(highestRadS / lowestRadS, 1 / (GRID_POINTS - 1));
+  let gainMargin = Infinity;
+  let phaseMarginDeg = Infinity;
+  let highestSensitivity = 0;
+  let peakAt = lowestRadS;
+  let before = lowestRadS;
+  let [reBefore, imBefore] = loop(before);
+  let beyondMinusOne = reBefore < -1 && imBefore > 0;
+  for (let i = 0; i < GRID_POINTS; i++) {
+    const w = i === GRID_POINTS - 1 ? highestRadS : lowestRadS * Math.pow(step, i);
+    const [re, im] = loop(w);
+    if (i > 0) {
+      if (imBefore < 0 !== im < 0 && reBefore < 0 && re < 0) {
+        const at = size(bisect(imaginary, before, w));
+        if (at < 1) gainMargin = Math.min(gainMargin, 1 / at);
+        else beyondMinusOne = true;
+      }
+      if (Math.hypot(reBefore, imBefore) > 1 !== Math.hypot(re, im) > 1) {
+        const [cr, ci] = loop(bisect((x) => size(x) - 1, before, w));
+        const margin = (Math.atan2(-ci, -cr) * 180) / Math.PI;
+        phaseMarginDeg = Math.min(phaseMarginDeg, Math.abs(margin));
+      }
+    }
+    const s = 1 / Math.hypot(1 + re, im);
+    if (s > highestSensitivity) {
+      highestSensitivity = s;
+      peakAt = w;
+    }
+    [before, reBefore, imBefore] = [w, re, im];
+  }
+  const low = Math.max(lowestRadS, peakAt / step);
+  const high = Math.min(highestRadS, peakAt * step);
+  return {
+    gainMargin,
+    phaseMarginDeg,
+    ms: Math.max(highestSensitivity, peak(sensitivity, low, high)),
+    beyondMinusOne,
+  };
+}
+
+/** Margins of a loop; see scanLoop. */
+export function marginsOf(loop: Response, lowestRadS: number, highestRadS: number): Margins {
+  const { gainMargin, phaseMarginDeg, ms } = scanLoop(loop, lowestRadS, highestRadS);
+  return { gainMargin, phaseMarginDeg, ms };
+}

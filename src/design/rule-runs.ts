@@ -1,0 +1,90 @@
+/**
+ * The rule table: what each run of sensors on the line implies and what the wheels then do.
+ *
+ * A sensor is on the line while its distance to the line's middle is at most h (bar-view.ts). So the run of
+ * sensors a..b, and no other, is on the line exactly while the middle x lies in
+ *
+ *   max(p_a - h, p_(b+1) + h)  <=  x  <=  min(p_b + h, p_(a-1) - h)
+ *
+ * with the positions p falling from left to right. Runs whose interval is empty no single line can cause;
+ * they are answered from the edges that they show. The action for an offset x is the curvature
+ * kappa(x) = kp x, as wheel speeds 1 - kappa b / 2 and 1 + kappa b / 2 in units of base speed. Mirror images
+ * get mirrored actions because the formula is odd in x.
+ */
+import { FRACTION_BITS, type SensingConstants } from '../controller/constants.js';
+import { Sensing } from '../controller/sensing.js';
+import { OFFSET_PER_M } from '../controller/constants.js';
+import type { Vehicle } from '../vehicle/vehicle.js';
+import { switchingDistanceM } from './bar-view.js';
+
+/** Offsets of the line's middle that put exactly the sensors first..last on the line; undefined if none do. */
+export function runInterval(vehicle: Vehicle, first: number, last: number): [number, number] | undefined {
+  const { positionsM } = vehicle.bar;
+  const h = switchingDistanceM(vehicle);
+  const at = (i: number) => positionsM[i];
+  const next = at(last + 1);
+  const previous = at(first - 1);
+  const from = Math.max((at(first) as number) - h, next === undefined ? -Infinity : next + h);
+  const to = Math.min((at(last) as number) + h, previous === undefined ? Infinity : previous - h);
+  return from < to ? [from, to] : undefined;
+}
+
+/** Action of one run: the offset it stands for and the wheels' fractions of base speed. */
+export interface RunAction {
+  first: number;
+  last: number;
+  /** Offsets that cause the run, m; undefined when no single line does. */
+  interval: [number, number] | undefined;
+  offsetM: number;
+  left: number;
+  right: number;
+}
+
+const LARGEST_FRACTION = 127;
+
+/** Wheel fractions in 1/2^FRACTION_BITS for a curvature: the difference first, the mean below 1 if it must be. */
+function fractionsFor(curvaturePerM: number, trackM: number): { left: number; right: number } {
+  const unit = 1 << FRACTION_BITS;
+  const half = Math.min(LARGEST_FRACTION, Math.round(Math.abs((curvaturePerM * trackM) / 2) * unit));
+  const outer = Math.min(LARGEST_FRACTION, unit + half);
+  const inner = outer - 2 * half;
+  return curvaturePerM > 0 ? { left: inner, right: outer } : { left: outer, right: inner };
+}
+
+/**
+ * Actions of all runs, in the order of the firmware's rule table (runIndex).
+ *
+ * @param proportionalPerM2 curvature per offset, 1/m^2
+ */
+export function runActions(
+  vehicle: Vehicle,
+  sensing: SensingConstants,
+  proportionalPerM2: number,
+): RunAction[] {
+  const count = sensing.sensorCount;
+  const actions: RunAction[] = [];
+  for (let first = 0; first < count; first++) {
+    for (let last = first; last < count; last++) {
+      const interval = runInterval(vehicle, first, last);
+      const offsetM = interval ? (interval[0] + interval[1]) / 2 : shownOffsetM(sensing, first, last);
+      actions.push({
+        first,
+        last,
+        interval,
+        offsetM,
+        ...fractionsFor(proportionalPerM2 * offsetM, vehicle.drive.trackM),
+      });
+    }
+  }
+  return actions;
+}
+
+/** Offset that the firmware's own edge arithmetic finds for a run, m. */
+function shownOffsetM(sensing: SensingConstants, first: number, last: number): number {
+  const bar = new Sensing({ ...sensing, digital: true, lineLevelHigh: true, wideCoverage: Infinity }, true);
+  const levels = Int32Array.from({ length: sensing.sensorCount }, (_, i) =>
+    i >= first && i <= last ? 1 : 0,
+  );
+  bar.read(levels);
+  return bar.offset / OFFSET_PER_M;
+}

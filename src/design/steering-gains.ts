@@ -1,0 +1,186 @@
+/**
+ * Steering gains of one speed class: the law that keeps the margins over the whole tolerance box.
+ *
+ * The proportional gain comes from geometry. With kappa = kp y, the axle stays on a bend of radius R if
+ * kp = 1 / (R y) with y the line's offset at the bar there; for wide bends this tends to 2 / L^2. Where that
+ * offset would be too near the end of the bar, kp is larger and the axle cuts the bend. The derivative time
+ * is the one with the least worst Ms; the derivative filter is as fast as the noise at the motors allows.
+ */
+import type { Vehicle } from '../vehicle/vehicle.js';
+import { axleCurvature, bendOffsetM, meanPitchM, viewM } from './bar-view.js';
+import { delayBudget } from './delay.js';
+import type { Margins } from './design.js';
+import type { LanePlant } from './lane-plant.js';
+import { type SteeringGains, controllerOf, loopMargins } from './steering-loop.js';
+
+/** What every corner of the tolerance box must keep. */
+export const LEAST_MARGINS: Margins = { gainMargin: 2, phaseMarginDeg: 33, ms: 1.8 };
+
+/** Share of the view in which the line must lie in a steady bend; the rest is for entering it. */
+const STEADY_VIEW_SHARE = 0.7;
+/** Largest share of the wheel-speed range that one step of measurement noise may ask for through the gains. */
+const NOISE_SHARE = 0.25;
+/** Uncertainty of a measured offset: share of the pitch, analog and digital sensors. */
+const OFFSET_NOISE_SHARE = { analog: 0.03, digital: 0.5 } as const;
+/** Fastest derivative filter: two samples. */
+const FASTEST_FILTER_SAMPLES = 2;
+/** Steps of the golden-section search for the derivative time. */
+const SEARCH_STEPS = 9;
+
+/** One corner of the tolerance box: factors on speed and on the time constant. */
+export interface Corner {
+  gain: number;
+  lag: number;
+}
+
+/** Corners of the tolerance box, the nominal vehicle first. Battery and motor spread act on speed alike. */
+export function toleranceCorners(vehicle: Vehicle): Corner[] {
+  const { tolerance, power } = vehicle;
+  const slow = ((1 - tolerance.motorGain) * power.emptyV) / power.nominalV;
+  const fast = ((1 + tolerance.motorGain) * power.fullV) / power.nominalV;
+  const corners: Corner[] = [{ gain: 1, lag: 1 }];
+  for (const gain of [slow, fast])
+    for (const lag of [1 - tolerance.lag, 1 + tolerance.lag]) corners.push({ gain, lag });
+  return corners;
+}
+
+/** The lane plant of a vehicle at a speed, in one corner. */
+export function lanePlantOf(vehicle: Vehicle, speedMps: number, corner: Corner): LanePlant {
+  return {
+    lookaheadM: vehicle.bar.aheadM,
+    speedMps: speedMps * corner.gain,
+    lagS: vehicle.drive.lagS * corner.lag,
+    delayS: delayBudget(vehicle).totalS,
+    samplePeriodS: vehicle.board.samplePeriodS,
+  };
+}
+
+/** Margins of a law at one corner of the box; speed factors act on loop gain through the speed itself. */
+export function marginsAt(vehicle: Vehicle, speedMps: number, gains: SteeringGains, corner: Corner): Margins {
+  const plant = lanePlantOf(vehicle, speedMps, corner);
+  return loopMargins(plant, controllerOf(gains, plant.speedMps, plant.samplePeriodS));
+}
+
+/** Worst of each margin over the corners of the box. */
+export function worstMargins(
+  vehicle: Vehicle,
+  speedMps: number,
+  gains: SteeringGains,
+  corners: readonly Corner[] = toleranceCorners(vehicle),
+): Margins {
+  const worst: Margins = { gainMargin: Infinity, phaseMarginDeg: Infinity, ms: 0 };
+  for (const corner of corners) {
+    const found = marginsAt(vehicle, speedMps, gains, corner);
+    worst.gainMargin = Math.min(worst.gainMargin, found.gainMargin);
+    worst.phaseMarginDeg = Math.min(worst.phaseMarginDeg, found.phaseMarginDeg);
+    worst.ms = Math.max(worst.ms, found.ms);
+  }
+  return worst;
+}
+
+/** Whether margins are at least those required. */
+export function keeps(margins: Margins): boolean {
+  return (
+    margins.gainMargin >= LEAST_MARGINS.gainMargin &&
+    margins.phaseMarginDeg >= LEAST_MARGINS.phaseMarginDeg &&
+    margins.ms <= LEAST_MARGINS.ms
+  );
+}
+
+/** Proportional gain that keeps the line of a bend well under the bar, 1/m^2: [least, wanted]. */
+export function proportionalRange(vehicle: Vehicle, radiusM: number): [number, number] {
+  const { aheadM } = vehicle.bar;
+  const radius = Math.max(radiusM, aheadM * 1.02);
+  const kept = STEADY_VIEW_SHARE * viewM(vehicle);
+  const least = axleCurvature(radius, aheadM, kept) / kept;
+  const offset = bendOffsetM(radius, aheadM);
+  const onLine = offset < kept ? 1 / (radius * offset) : least;
+  return [least, Math.max(least, onLine)];
+}
+
+/** Law with a given derivative time; its filter is as fast as noise allows. */
+function lawWith(
+  vehicle: Vehicle,
+  speedMps: number,
+  proportional: number,
+  derivativeTimeS: number,
+): SteeringGains {
+  const { bar, drive, board } = vehicle;
+  const reading = vehicle.control.kind === 'rules' ? 'digital' : bar.kind;
+  const noiseM = OFFSET_NOISE_SHARE[reading] * meanPitchM(bar.positionsM);
+  const perUnit = speedMps * (drive.trackM / 2) * proportional * noiseM;
+  const allowed = (NOISE_SHARE * drive.topSpeedMps) / perUnit - 1;
+  const fastest = 1 - Math.exp(-1 / FASTEST_FILTER_SAMPLES);
+  // ratio kd / kp = Td a / h must not pass what noise allows
+  const ratioPerCoefficient = derivativeTimeS / board.samplePeriodS;
+  const coefficient =
+    ratioPerCoefficient > 0 ? Math.min(fastest, Math.max(allowed, 0) / ratioPerCoefficient) : fastest;
+  return {
+    proportionalPerM2: proportional,
+    derivativeTimeS: coefficient > 0 ? derivativeTimeS : 0,
+    filterCoefficient: coefficient > 0 ? coefficient : fastest,
+  };
+}
+
+/** The law with the least worst Ms for a given proportional gain and speed. */
+export function bestLaw(
+  vehicle: Vehicle,
+  speedMps: number,
+  proportional: number,
+): { gains: SteeringGains; worst: Margins } {
+  const law = (time: number) => lawWith(vehicle, speedMps, proportional, time);
+  const outer = toleranceCorners(vehicle).slice(1);
+  const cost = (time: number) => worstMargins(vehicle, speedMps, law(time), outer).ms;
+  const ratio = (Math.sqrt(5) - 1) / 2;
+  let low = 0;
+  let high = 2.5 * vehicle.drive.lagS;
+  let c = high - ratio * (high - low);
+  let d = low + ratio * (high - low);
+  let fc = cost(c);
+  let fd = cost(d);
+  for (let i = 0; i < SEARCH_STEPS; i++) {
+    if (fc <= fd) {
+      [high, d, fd] = [d, c, fc];
+      c = high - ratio * (high - low);
+      fc = cost(c);
+    } else {
+      [low, c, fc] = [c, d, fd];
+      d = low + ratio * (high - low);
+      fd = cost(d);
+    }
+  }
+  const gains = law(fc <= fd ? c : d);
+  return { gains, worst: worstMargins(vehicle, speedMps, gains) };
+}
+
+/** Whether a law for the class keeps the margins at a speed. */
+export function lawExists(vehicle: Vehicle, speedMps: number, radiusM: number): boolean {
+  const [least, wanted] = proportionalRange(vehicle, radiusM);
+  return [...new Set([wanted, least])].some((gain) => keeps(bestLaw(vehicle, speedMps, gain).worst));
+}
+
+/** The law of a class at a speed: the largest wanted proportional gain that keeps the margins, if any does. */
+export function designLaw(
+  vehicle: Vehicle,
+  speedMps: number,
+  radiusM: number,
+): { gains: SteeringGains; worst: Margins } | undefined {
+  const [least, wanted] = proportionalRange(vehicle, radiusM);
+  const full = bestLaw(vehicle, speedMps, wanted);
+  if (keeps(full.worst)) return full;
+  let found = bestLaw(vehicle, speedMps, least);
+  if (!keeps(found.worst)) return undefined;
+  let low = least;
+  let high = wanted;
+  for (let i = 0; i < 5; i++) {
+    const middle = Math.sqrt(low * high);
+    const tried = bestLaw(vehicle, speedMps, middle);
+    if (keeps(tried.worst)) {
+      found = tried;
+      low = middle;
+    } else {
+      high = middle;
+    }
+  }
+  return found;
+}
