@@ -42,6 +42,8 @@ export const EDGE_BITS = 10;
 export const EDGE_STEP_BITS = 5;
 /** Entries of the edge table. */
 export const EDGE_ENTRIES = 17;
+/** Bits of a class's speed slope. */
+export const SPEED_SLOPE_BITS = 4;
 /** How much faster than the motor the speed model closes a small speed error, as a shift. */
 export const SPEED_GAIN_BITS = 2;
 
@@ -81,12 +83,12 @@ export interface SensingConstants {
 
 export interface ClassConstants {
   name: string;
-  /** Curvature demand from which this class is taken, curvature units; 0 for the first class. */
-  enterCurvature: number;
-  /** Curvature demand below which this class may be left again, curvature units. */
-  keepCurvature: number;
-  /** Speed of the class, model speed units. */
+  /** Largest curvature of the class, 1 / its smallest radius, curvature units. */
+  curvature: number;
+  /** Speed at that curvature, model speed units. */
   speed: number;
+  /** Speed gained per curvature unit below that, in 1/2^SPEED_SLOPE_BITS; 0 where one speed serves the whole class. */
+  speedSlope: number;
   /** Proportional gain: curvature units per input unit, in 1/2^gainBits. */
   proportional: number;
   /** Coefficient of the derivative filter, in 1/2^COEFFICIENT_BITS. */
@@ -144,7 +146,7 @@ export interface MemoryConstants {
   searchSamples: number;
   /** Distance after a corner was seen within which a vanished line is looked for on the corner's side. */
   cornerDistance: number;
-  /** Distance out of a bend before a faster class is taken. */
+  /** Distance out of a bend before the vehicle speeds up. */
   releaseDistance: number;
 }
 

@@ -21,6 +21,7 @@ import {
   SLOPE_BITS,
   SPEED_GAIN_BITS,
   SPEED_MODEL_BITS,
+  SPEED_SLOPE_BITS,
   TRACK_BITS,
   runIndex,
 } from './constants.js';
@@ -58,7 +59,8 @@ export class Twin {
   private searched = 0;
   /** Side on which the line was last seen: 1 left, -1 right. */
   private side = 1;
-  /** Distance yet to go before a faster class. */
+  /** Curvature of the bend that the vehicle is in, curvature units, and distance yet to go until it is over. */
+  private bend = 0;
   private release = 0;
   /** Distance yet to go in which a vanished line is taken for a corner, and to which side. */
   private corner = 0;
@@ -77,12 +79,12 @@ export class Twin {
   start(): void {
     this.sensing.reset();
     this.phase = PHASE.follow;
-    this.classIndex = this.constants.classes.length - 1;
+    this.classIndex = 0;
     this.curvature = this.speed = this.dutyLeft = this.dutyRight = 0;
     this.filtered = this.demand = this.held = 0;
     this.travelled = this.searched = 0;
     this.side = 1;
-    this.release = this.corner = 0;
+    this.bend = this.release = this.corner = 0;
     this.cornerSide = 1;
   }
 
@@ -171,34 +173,35 @@ export class Twin {
   private pickClass(): void {
     const { classes, steering, memory } = this.constants;
     const size = this.curvature < 0 ? -this.curvature : this.curvature;
-    const demandChange = clamp((size << FILTER_BITS) - this.demand, INT16_MAX);
-    this.demand += (demandChange * steering.demandFilter) >> COEFFICIENT_BITS;
-    const demand = this.demand >> FILTER_BITS;
-    let entered = 0;
-    let kept = 0;
-    for (let i = 1; i < classes.length; i++) {
-      if (demand >= classes[i]!.enterCurvature) entered = i;
-      if (demand >= classes[i]!.keepCurvature) kept = i;
-    }
-    if (entered > this.classIndex) {
-      this.classIndex = entered;
+    const change = clamp((size << FILTER_BITS) - this.demand, INT16_MAX);
+    this.demand += (change * steering.demandFilter) >> COEFFICIENT_BITS;
+    const last = classes.length - 1;
+    let demand = this.demand >> FILTER_BITS;
+    if (demand > classes[last]!.curvature) demand = classes[last]!.curvature;
+    if (demand >= this.bend) {
+      this.bend = demand;
       this.release = memory.releaseDistance;
-    } else if (kept < this.classIndex) {
-      this.release -= this.speed;
-      if (this.release <= 0) {
-        this.classIndex = kept;
-        this.release = memory.releaseDistance;
-      }
     } else {
-      this.release = memory.releaseDistance;
+      this.release -= this.speed;
+      if (this.release <= 0) this.bend = demand;
     }
+    let index = 0;
+    while (index < last && this.bend > classes[index]!.curvature) index++;
+    this.classIndex = index;
+  }
+
+  /** Speed for the bend that the vehicle is in, model speed units. */
+  private targetSpeed(): number {
+    const { classes, drive } = this.constants;
+    if (this.phase === PHASE.search) return drive.searchSpeed;
+    const { curvature, speed, speedSlope } = classes[this.classIndex]!;
+    return speed + (((curvature - this.bend) * speedSlope) >> SPEED_SLOPE_BITS);
   }
 
   /** From speed class and curvature to duties; the wheel difference is kept when a wheel saturates. */
   private drive(): void {
-    const { drive, classes } = this.constants;
-    const target = this.phase === PHASE.search ? drive.searchSpeed : classes[this.classIndex]!.speed;
-    let lead = (target - this.speed) << SPEED_GAIN_BITS;
+    const { drive } = this.constants;
+    let lead = (this.targetSpeed() - this.speed) << SPEED_GAIN_BITS;
     if (lead > drive.leadUp) lead = drive.leadUp;
     if (lead < -drive.leadDown) lead = -drive.leadDown;
     const base = this.base((this.speed + lead) >> 6);

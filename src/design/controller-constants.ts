@@ -13,6 +13,7 @@ import {
   RULE_CURVATURE_BITS,
   SLOPE_BITS,
   SPEED_PER_MPS,
+  SPEED_SLOPE_BITS,
   type SteeringConstants,
   type SweepConstants,
   TRACK_BITS,
@@ -84,13 +85,18 @@ function classConstants(
 ): ClassConstants[] {
   return classes.map((designed, i) => {
     const gains = realGains(vehicle, designed, tableGain);
+    const curvature = curvatureUnits(1 / designed.minRadiusM);
+    const speed = speedUnits(designed.speedMps);
     const wider = classes[i - 1];
-    const enter = wider ? curvatureUnits(choice.ENTER_SHARE / wider.minRadiusM) : 0;
+    const stepped = wider === undefined || vehicle.speeds.classes !== 'auto';
+    const slope = stepped
+      ? 0
+      : (speedUnits(wider.speedMps) - speed) / (curvature - curvatureUnits(1 / wider.minRadiusM));
     return {
       name: designed.name,
-      enterCurvature: enter,
-      keepCurvature: Math.round(enter * choice.KEEP_SHARE),
-      speed: speedUnits(designed.speedMps),
+      curvature,
+      speed,
+      speedSlope: Math.round(slope * (1 << SPEED_SLOPE_BITS)),
       derivativeFilter: coefficientOf(designed.gains.filterCoefficient),
       proportional: Math.round(gains.proportional * (1 << bits)),
       derivative: Math.min(INT16_MAX, Math.round(gains.derivative * (1 << bits))),
@@ -98,11 +104,7 @@ function classConstants(
   });
 }
 
-function steeringConstants(
-  vehicle: Vehicle,
-  classes: readonly DesignedClass[],
-  bits: number,
-): SteeringConstants {
+function steeringConstants(vehicle: Vehicle, bits: number): SteeringConstants {
   const period = vehicle.board.samplePeriodS;
   return {
     gainBits: bits,

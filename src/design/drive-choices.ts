@@ -8,10 +8,6 @@ import { STANDARD_GRAVITY_MPS2 } from '../vehicle/gravity.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { viewM } from './bar-view.js';
 
-/** A class is taken a little before the curvature that ends the wider one. */
-export const ENTER_SHARE = 0.95;
-/** A class is kept until the demand is clearly below the curvature that called for it. */
-export const KEEP_SHARE = 0.85;
 /** Memory for the curvature to hold over gaps and crossings, s. */
 export const HOLD_FILTER_S = 0.06;
 /** Wheel speeds below this share of full speed are left without duty: less than what stiction lets through. */
@@ -20,8 +16,8 @@ export const WHEEL_DEAD_SHARE = 0.01;
 export const LEAST_CONTRAST_SHARE = 0.1;
 
 /** Share of the grip, at the low end of its tolerance, that speeding up and braking use. */
-const SPEED_UP_GRIP_SHARE = 0.5;
-const BRAKING_GRIP_SHARE = 0.8;
+const SPEED_UP_GRIP_SHARE = 0.9;
+const BRAKING_GRIP_SHARE = 0.95;
 
 function leastGripMps2(vehicle: Vehicle): number {
   return vehicle.drive.grip * (1 - vehicle.tolerance.grip) * STANDARD_GRAVITY_MPS2;
@@ -81,7 +77,7 @@ export function cornerDistanceM(vehicle: Vehicle): number {
 
 /** The axle leaves a bend one look-ahead after the bar. */
 export function releaseDistanceM(vehicle: Vehicle): number {
-  return vehicle.bar.aheadM;
+  return 0.5 * vehicle.bar.aheadM;
 }
 
 /** Turn that carries both end sensors clear across the line and back, at a slow turn rate. */

@@ -25,8 +25,9 @@ export interface ClassRange {
 
 /** Radii of the computed classes over the tightest bend, fastest first. */
 const COMPUTED_CLASSES: readonly { name: string; radiusFactor: number }[] = [
-  { name: 'straight', radiusFactor: 8 },
-  { name: 'sweeping', radiusFactor: 4 },
+  { name: 'straight', radiusFactor: 30 },
+  { name: 'sweeping', radiusFactor: 8 },
+  { name: 'wide', radiusFactor: 4 },
   { name: 'open', radiusFactor: 2.4 },
   { name: 'medium', radiusFactor: 1.5 },
   { name: 'tight', radiusFactor: 1 },
@@ -59,7 +60,7 @@ function largestSpeed(high: number, holds: (speedMps: number) => boolean): numbe
 }
 
 /** Share of the wheel speed kept back, so that the outer wheel can still correct. */
-const STEERING_RESERVE = 0.04;
+const STEERING_RESERVE = 0.02;
 
 /**
  * Motor limit, m/s. Speeds are commands at nominal voltage: an emptier battery slows both wheels alike, so
@@ -72,7 +73,7 @@ function motorLimit(vehicle: Vehicle, radiusM: number): number {
 
 /** Grip limit at the low end of the grip tolerance, m/s. */
 function gripLimit(vehicle: Vehicle, radiusM: number): number {
-  return Math.sqrt(vehicle.drive.grip * (1 - vehicle.tolerance.grip) * STANDARD_GRAVITY_MPS2 * radiusM);
+  return Math.sqrt(vehicle.drive.grip * (1 - 0.5 * vehicle.tolerance.grip) * STANDARD_GRAVITY_MPS2 * radiusM);
 }
 
 /** The four limits of one class, m/s. The view limit holds for the law that the other three allow. */
