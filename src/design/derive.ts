@@ -13,10 +13,10 @@ const NOMINAL = { gain: 1, lag: 1 };
 
 /** One class: the limits, the speed, and the law for that speed. */
 function designClass(vehicle: Vehicle, range: ClassRange): DesignedClass {
-  const limits = speedLimits(vehicle, range.minRadiusM);
+  const limits = speedLimits(vehicle, range);
   const binding = bindingLimit(limits);
   const speedMps = range.speedMps ?? limits[binding];
-  const law = speedMps > 0 ? designLaw(vehicle, speedMps, range.minRadiusM) : undefined;
+  const law = speedMps > 0 ? designLaw(vehicle, speedMps, range.lawRadiusM) : undefined;
   if (law === undefined) {
     throw new FairleadError('No design meets the sheet.', {
       exitCode: EXIT.noDesign,

@@ -39,7 +39,7 @@ function bisect(f: (w: number) => number, low: number, high: number): number {
 }
 
 /** Largest value of `f` between `low` and `high`, where it has one peak. */
-function peak(f: (w: number) => number, low: number, high: number): number {
+function peak(f: (w: number) => number, low: number, high: number, refinements = REFINEMENTS): number {
   const ratio = (Math.sqrt(5) - 1) / 2;
   let a = low;
   let b = high;
@@ -47,7 +47,7 @@ function peak(f: (w: number) => number, low: number, high: number): number {
   let d = a + ratio * (b - a);
   let fc = f(c);
   let fd = f(d);
-  for (let i = 0; i < REFINEMENTS; i++) {
+  for (let i = 0; i < refinements; i++) {
     if (fc > fd) {
       b = d;
       d = c;
@@ -117,6 +117,36 @@ export function scanLoop(loop: Response, lowestRadS: number, highestRadS: number
     ms: Math.max(highestSensitivity, peak(sensitivity, low, high)),
     beyondMinusOne,
   };
+}
+
+/** Points of the coarse grid that a search may use; the peak is refined after it. */
+const COARSE_POINTS = 56;
+const COARSE_REFINEMENTS = 14;
+
+/** Ms of a lane loop on a coarse grid, for searches; Infinity where the loop is unstable. */
+export function quickPeak(loop: Response, lowestRadS: number, highestRadS: number): number {
+  const step = Math.pow(highestRadS / lowestRadS, 1 / (COARSE_POINTS - 1));
+  let highest = 0;
+  let peakAt = lowestRadS;
+  let reBefore = -1;
+  let imBefore = -1;
+  let sizeBefore = Infinity;
+  for (let i = 0, w = lowestRadS; i < COARSE_POINTS; i++, w *= step) {
+    const [re, im] = loop(Math.min(w, highestRadS));
+    const size = re * re + im * im;
+    // a crossing of the negative real axis with |L| > 1 on both sides of it, or from the start on
+    const crosses = imBefore < 0 !== im < 0 && reBefore < 0 && re < 0;
+    if (crosses && size > 1 && sizeBefore > 1) return Infinity;
+    const s = 1 / ((1 + re) * (1 + re) + im * im);
+    if (s > highest) [highest, peakAt] = [s, w];
+    [reBefore, imBefore, sizeBefore] = [re, im, size];
+  }
+  const sensitivity = (w: number) => {
+    const [re, im] = loop(w);
+    return 1 / ((1 + re) * (1 + re) + im * im);
+  };
+  const top = peak(sensitivity, peakAt / step, Math.min(highestRadS, peakAt * step), COARSE_REFINEMENTS);
+  return Math.sqrt(Math.max(highest, top));
 }
 
 /** Margins of a loop; see scanLoop. */

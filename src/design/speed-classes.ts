@@ -21,6 +21,8 @@ export interface ClassRange {
   minRadiusM: number;
   /** Speed set in the sheet, m/s. */
   speedMps?: number;
+  /** Radius for which the law is designed, m; the tightest bend's for the reserve. */
+  lawRadiusM: number;
 }
 
 /** Radii of the computed classes over the tightest bend, fastest first. */
@@ -39,10 +41,15 @@ const BISECTIONS = 7;
 /** The classes of a vehicle, largest radius first. */
 export function classRanges(vehicle: Vehicle): ClassRange[] {
   const { classes } = vehicle.speeds;
-  if (classes !== 'auto') return [...classes].sort((a, b) => b.minRadiusM - a.minRadiusM);
+  if (classes !== 'auto') {
+    const given = classes.map((each) => ({ ...each, lawRadiusM: each.minRadiusM }));
+    return given.sort((a, b) => b.minRadiusM - a.minRadiusM);
+  }
+  const tightest = vehicle.line.tightestRadiusM;
   return COMPUTED_CLASSES.map(({ name, radiusFactor }) => ({
     name,
-    minRadiusM: radiusFactor * vehicle.line.tightestRadiusM,
+    minRadiusM: radiusFactor * tightest,
+    lawRadiusM: Math.max(1, radiusFactor) * tightest,
   }));
 }
 
@@ -77,10 +84,11 @@ function gripLimit(vehicle: Vehicle, radiusM: number): number {
 }
 
 /** The four limits of one class, m/s. The view limit holds for the law that the other three allow. */
-export function speedLimits(vehicle: Vehicle, radiusM: number): SpeedLimits {
+export function speedLimits(vehicle: Vehicle, range: ClassRange): SpeedLimits {
   const top = vehicle.drive.topSpeedMps;
-  const motor = motorLimit(vehicle, radiusM);
-  const grip = gripLimit(vehicle, radiusM);
+  const motor = motorLimit(vehicle, range.minRadiusM);
+  const grip = gripLimit(vehicle, range.minRadiusM);
+  const radiusM = range.lawRadiusM;
   const control = largestSpeed(top, (v) => lawExists(vehicle, v, radiusM));
   const law = designLaw(vehicle, Math.min(motor, grip, control), radiusM);
   const view = law ? largestSpeed(top, (v) => entryHolds(vehicle, law.gains, v, radiusM)) : 0;

@@ -11,7 +11,7 @@ import { axleCurvature, bendOffsetM, meanPitchM, viewM } from './bar-view.js';
 import { delayBudget } from './delay.js';
 import type { Margins } from './design.js';
 import type { LanePlant } from './lane-plant.js';
-import { type SteeringGains, controllerOf, loopMargins } from './steering-loop.js';
+import { type SteeringGains, controllerOf, loopMargins, loopPeak } from './steering-loop.js';
 
 /** What every corner of the tolerance box must keep. */
 export const LEAST_MARGINS: Margins = { gainMargin: 2, phaseMarginDeg: 33, ms: 1.8 };
@@ -62,14 +62,9 @@ export function marginsAt(vehicle: Vehicle, speedMps: number, gains: SteeringGai
 }
 
 /** Worst of each margin over the corners of the box. */
-export function worstMargins(
-  vehicle: Vehicle,
-  speedMps: number,
-  gains: SteeringGains,
-  corners: readonly Corner[] = toleranceCorners(vehicle),
-): Margins {
+export function worstMargins(vehicle: Vehicle, speedMps: number, gains: SteeringGains): Margins {
   const worst: Margins = { gainMargin: Infinity, phaseMarginDeg: Infinity, ms: 0 };
-  for (const corner of corners) {
+  for (const corner of toleranceCorners(vehicle)) {
     const found = marginsAt(vehicle, speedMps, gains, corner);
     worst.gainMargin = Math.min(worst.gainMargin, found.gainMargin);
     worst.phaseMarginDeg = Math.min(worst.phaseMarginDeg, found.phaseMarginDeg);
@@ -130,7 +125,11 @@ export function bestLaw(
 ): { gains: SteeringGains; worst: Margins } {
   const law = (time: number) => lawWith(vehicle, speedMps, proportional, time);
   const outer = toleranceCorners(vehicle).slice(1);
-  const cost = (time: number) => worstMargins(vehicle, speedMps, law(time), outer).ms;
+  const plants = outer.map((corner) => lanePlantOf(vehicle, speedMps, corner));
+  const cost = (time: number) => {
+    const gains = law(time);
+    return Math.max(...plants.map((p) => loopPeak(p, controllerOf(gains, p.speedMps, p.samplePeriodS))));
+  };
   const ratio = (Math.sqrt(5) - 1) / 2;
   let low = 0;
   let high = 2.5 * vehicle.drive.lagS;
@@ -153,10 +152,20 @@ export function bestLaw(
   return { gains, worst: worstMargins(vehicle, speedMps, gains) };
 }
 
+/** Proportional gains that are tried, as shares of the wanted one, and steps that refine the largest that holds. */
+const TRIED_SHARES = [1, 0.75, 0.55, 0.4, 0.3, 0.2];
+const REFINING_STEPS = 3;
+
+/** Proportional gains that serve a bend, 1/m^2, largest first. */
+function triedGains(vehicle: Vehicle, radiusM: number): number[] {
+  const [least, wanted] = proportionalRange(vehicle, radiusM);
+  const tried = TRIED_SHARES.map((share) => share * wanted).filter((gain) => gain > least);
+  return least < (TRIED_SHARES.at(-1) as number) * wanted ? tried : [...tried, least];
+}
+
 /** Whether a law for the class keeps the margins at a speed. */
 export function lawExists(vehicle: Vehicle, speedMps: number, radiusM: number): boolean {
-  const [least, wanted] = proportionalRange(vehicle, radiusM);
-  return [...new Set([wanted, least])].some((gain) => keeps(bestLaw(vehicle, speedMps, gain).worst));
+  return triedGains(vehicle, radiusM).some((gain) => keeps(bestLaw(vehicle, speedMps, gain).worst));
 }
 
 /** The law of a class at a speed: the largest wanted proportional gain that keeps the margins, if any does. */
@@ -165,22 +174,21 @@ export function designLaw(
   speedMps: number,
   radiusM: number,
 ): { gains: SteeringGains; worst: Margins } | undefined {
-  const [least, wanted] = proportionalRange(vehicle, radiusM);
-  const full = bestLaw(vehicle, speedMps, wanted);
-  if (keeps(full.worst)) return full;
-  let found = bestLaw(vehicle, speedMps, least);
-  if (!keeps(found.worst)) return undefined;
-  let low = least;
-  let high = wanted;
-  for (let i = 0; i < 5; i++) {
-    const middle = Math.sqrt(low * high);
-    const tried = bestLaw(vehicle, speedMps, middle);
-    if (keeps(tried.worst)) {
-      found = tried;
-      low = middle;
-    } else {
-      high = middle;
+  let above: number | undefined;
+  for (const gain of triedGains(vehicle, radiusM)) {
+    let found = bestLaw(vehicle, speedMps, gain);
+    if (!keeps(found.worst)) {
+      above = gain;
+      continue;
     }
+    let low = gain;
+    for (let i = 0; above !== undefined && i < REFINING_STEPS; i++) {
+      const middle = Math.sqrt(low * above);
+      const tried = bestLaw(vehicle, speedMps, middle);
+      if (keeps(tried.worst)) [found, low] = [tried, middle];
+      else above = middle;
+    }
+    return found;
   }
-  return found;
+  return undefined;
 }

@@ -14,7 +14,7 @@
  */
 import type { Margins } from './design.js';
 import { type LanePlant, type SampledLanePlant, plantResponse, samplePlant } from './lane-plant.js';
-import { scanLoop } from './margins.js';
+import { type Response, quickPeak, scanLoop } from './margins.js';
 
 /** Gains of the law in physical units. */
 export interface SteeringGains {
@@ -67,14 +67,24 @@ function controllerResponse(controller: SampledController, frequencyRadS: number
 /** Lowest frequency at which a lane loop is looked at, as a share of 1 / lag: far below any crossover. */
 const LOWEST_SHARE = 0.01;
 
-/** Margins of the loop of plant and controller; an unstable loop has none of them. */
-export function loopMargins(plant: LanePlant, controller: SampledController): Margins {
-  const sampled = samplePlant(plant);
-  const loop = (w: number): [number, number] => {
+/** Open loop of plant and controller. */
+function openLoop(sampled: SampledLanePlant, controller: SampledController): Response {
+  return (w) => {
     const [gr, gi] = plantResponse(sampled, w);
     const [cr, ci] = controllerResponse(controller, w);
     return [gr * cr - gi * ci, gr * ci + gi * cr];
   };
+}
+
+/** Ms of the loop, for searches: coarse grid, refined peak; Infinity where the loop is unstable. */
+export function loopPeak(plant: LanePlant, controller: SampledController): number {
+  const loop = openLoop(samplePlant(plant), controller);
+  return quickPeak(loop, LOWEST_SHARE / plant.lagS, Math.PI / plant.samplePeriodS);
+}
+
+/** Margins of the loop of plant and controller; an unstable loop has none of them. */
+export function loopMargins(plant: LanePlant, controller: SampledController): Margins {
+  const loop = openLoop(samplePlant(plant), controller);
   const { beyondMinusOne, ...margins } = scanLoop(
     loop,
     LOWEST_SHARE / plant.lagS,
