@@ -1,7 +1,7 @@
 /**
  * The least lap time that physics allows: a point that keeps to the centre line, limited by grip and motors.
  *
- * Limits at speed v on curvature k, with grip mu g (g = 9.80665 m/s^2, the standard value, CGPM 1901):
+ * Limits at speed v on curvature k, with grip mu g:
  *   lateral      v^2 |k| <= mu g
  *   outer wheel  v (1 + |k| b/2) <= top speed, b the track width
  *   speeding up  a <= sqrt((mu g)^2 - (v^2 k)^2)  and  a <= (top - v)/lag
@@ -13,14 +13,16 @@
  *
  * A corner has no speed at which a point could pass it: the point stops there and turns on the spot. Both wheels then run the
  * distance D = |turn| b/2, from rest to rest at full duty and full reverse duty; with v' = (+-top - v)/lag that takes
- *   2 lag artanh sqrt(1 - exp(-D/(top lag))).
+ *   D/top + 2 lag ln(1 + sqrt(1 - exp(-D/(top lag)))).
  */
+import { STANDARD_GRAVITY_MPS2 } from '../vehicle/gravity.js';
 import type { Lane } from './lane.js';
 
-export const STANDARD_GRAVITY_MPS2 = 9.80665;
-
 /** Longest distance between two grid points, m. */
-const GRID_M = 0.002;
+const GRID_M = 0.001;
+
+/** Times that the grid is halved towards a stop, where speed grows like the root of distance. */
+const HALVINGS = 10;
 
 export interface BoundSetup {
   lane: Lane;
@@ -53,6 +55,7 @@ export function lapBound(setup: BoundSetup): Bound {
   const gripMps2 = setup.grip * STANDARD_GRAVITY_MPS2;
   const grid = makeGrid(lane, setup.endM ?? lane.lengthM);
   const cells = grid.curvature.length;
+  const cellM = (i: number): number => grid.sM[i + 1]! - grid.sM[i]!;
 
   const limit = new Float64Array(cells + 1).fill(topSpeedMps ** 2);
   grid.curvature.forEach((k, i) => {
@@ -75,22 +78,19 @@ export function lapBound(setup: BoundSetup): Bound {
   for (let lap = 0; lap < (standing ? 1 : 2); lap++) {
     if (lap > 0) square[0] = Math.min(square[0]!, square[cells]!);
     for (let i = 0; i < cells; i++) {
-      square[i + 1] = Math.min(
-        square[i + 1]!,
-        step(square[i]!, grid.curvature[i]!, grid.lengthM[i]!, speedUp),
-      );
+      square[i + 1] = Math.min(square[i + 1]!, step(square[i]!, grid.curvature[i]!, cellM(i), speedUp));
     }
   }
   for (let lap = 0; lap < (standing ? 1 : 2); lap++) {
     if (lap > 0) square[cells] = Math.min(square[0]!, square[cells]!);
     for (let i = cells - 1; i >= 0; i--) {
-      square[i] = Math.min(square[i]!, step(square[i + 1]!, grid.curvature[i]!, grid.lengthM[i]!, brake));
+      square[i] = Math.min(square[i]!, step(square[i + 1]!, grid.curvature[i]!, cellM(i), brake));
     }
   }
 
   const speedMps = square.map(Math.sqrt);
   let lapS = grid.turnsRad.reduce((sum, turnRad) => sum + turnOnSpotS(turnRad, setup), 0);
-  grid.lengthM.forEach((lengthM, i) => (lapS += (2 * lengthM) / (speedMps[i]! + speedMps[i + 1]!)));
+  for (let i = 0; i < cells; i++) lapS += (2 * cellM(i)) / (speedMps[i]! + speedMps[i + 1]!);
   return { lapS, sM: grid.sM, speedMps };
 }
 
@@ -111,12 +111,15 @@ export function turnOnSpotS(
   motor: Pick<BoundSetup, 'topSpeedMps' | 'lagS' | 'trackM'>,
 ): number {
   const distanceM = (Math.abs(turnRad) * motor.trackM) / 2;
-  return 2 * motor.lagS * Math.atanh(Math.sqrt(-Math.expm1(-distanceM / (motor.topSpeedMps * motor.lagS))));
+  const { topSpeedMps, lagS } = motor;
+  return (
+    distanceM / topSpeedMps + 2 * lagS * Math.log1p(Math.sqrt(-Math.expm1(-distanceM / (topSpeedMps * lagS))))
+  );
 }
 
 interface BoundGrid {
+  /** Arc lengths of the grid points, one more than there are cells. */
   sM: Float64Array;
-  lengthM: Float64Array;
   /** |k| of each cell, 1/m. */
   curvature: Float64Array;
   /** Grid points at which the lane turns on the spot. */
@@ -125,28 +128,32 @@ interface BoundGrid {
 }
 
 function makeGrid(lane: Lane, endM: number): BoundGrid {
+  const corners = lane.corners.filter((corner) => corner.sM < endM || (lane.closed && corner.before === 0));
   const sM = [0];
-  const lengthM: number[] = [];
   const curvature: number[] = [];
   const starts: number[] = [];
   for (const piece of lane.pieces) {
-    starts.push(lengthM.length);
+    starts.push(curvature.length);
     const pieceM = Math.min(piece.lengthM, endM - piece.startM);
     if (pieceM <= 0) continue;
-    // Two at least, so that a point that stops at both ends of a short piece moves in between.
-    const cells = Math.max(2, Math.ceil(pieceM / GRID_M));
-    for (let i = 1; i <= cells; i++) {
-      sM.push(piece.startM + (pieceM * i) / cells);
-      lengthM.push(pieceM / cells);
+    for (const along of gridAlong(pieceM)) {
+      sM.push(piece.startM + along);
       curvature.push(Math.abs(piece.curvaturePerM));
     }
   }
-  const corners = lane.corners.filter((corner) => corner.sM < endM || (lane.closed && corner.before === 0));
   return {
     sM: Float64Array.from(sM),
-    lengthM: Float64Array.from(lengthM),
     curvature: Float64Array.from(curvature),
-    stops: corners.map((corner) => starts[corner.before] ?? lengthM.length),
+    stops: corners.map((corner) => starts[corner.before] ?? curvature.length),
     turnsRad: corners.map((corner) => corner.turnRad),
   };
+}
+
+/** Grid points on a piece, its start left out: even, and finer and finer towards both ends. */
+function gridAlong(lengthM: number): number[] {
+  const cells = Math.max(2, Math.ceil(lengthM / GRID_M));
+  const cellM = lengthM / cells;
+  const fine = Array.from({ length: HALVINGS }, (_, i) => cellM / 2 ** (HALVINGS - i));
+  const even = Array.from({ length: cells - 1 }, (_, i) => cellM * (i + 1));
+  return [...fine, ...even, ...fine.map((x) => lengthM - x).reverse(), lengthM];
 }

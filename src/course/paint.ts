@@ -3,14 +3,15 @@
  *
  * A strip is a straight or an arc of at most a quarter turn, of constant width w. A round spot of radius r whose centre lies the
  * signed distance d from the strip's centre line sees the share A((w/2 - d)/r) - A((-w/2 - d)/r), where A(u) is the share of a
- * unit disc that lies below the height u. With the chord at height t having the length 2 sqrt(1 - t^2),
+ * unit disc on one side of the chord at u. With the chord at height t having the length 2 sqrt(1 - t^2),
  *   A(u) = (1/pi) integral from -1 to u of 2 sqrt(1 - t^2) dt = 1/2 + (u sqrt(1 - u^2) + asin u)/pi,   |u| <= 1,
- * 0 below -1 and 1 above 1. Exact for a straight edge; on an edge of radius R the error is below r/(2 R) of the area.
+ * 0 below -1 and 1 above 1. Exact for a straight edge; an edge of radius R changes it by at most 2 r/(3 pi R).
  * Where a strip ends in bare floor, the same A fades it out along the strip. Where it continues in the next strip it ends sharply,
  * and the next one takes over. Strips that overlap count as the one that covers most.
  *
  * A strip is found by a uniform grid: each cell lists the strips that a spot centred in it could touch.
  */
+import { discShare } from '../vehicle/sensor-bar.js';
 import { alongArc, type Pose } from './arc.js';
 import { makeGrid, type Grid } from './strip-grid.js';
 
@@ -39,13 +40,6 @@ const F = {
   length: 13,
   size: 14,
 } as const;
-
-/** Share of a unit disc below the height u. */
-export function discShareBelow(u: number): number {
-  if (u >= 1) return 1;
-  if (u <= -1) return 0;
-  return 0.5 + (u * Math.sqrt(1 - u * u) + Math.asin(u)) / Math.PI;
-}
 
 /** Strips in the making; arcs are cut into pieces of at most a quarter turn. */
 export class StripTable {
@@ -166,11 +160,10 @@ function stripShare(s: Float64Array, at: number, xM: number, yM: number, r: numb
     sideM = Math.abs(Math.sqrt(cx * cx + cy * cy) - radius);
   }
   if (sideM >= halfM + r) return 0;
-  let share =
-    sideM <= halfM - r ? 1 : discShareBelow((halfM - sideM) / r) - discShareBelow((-halfM - sideM) / r);
+  let share = sideM <= halfM - r ? 1 : discShare((halfM - sideM) / r) - discShare((-halfM - sideM) / r);
   let along = 1;
-  if (!joined0) along += discShareBelow(afterStart / r) - 1;
-  if (!joined1) along += discShareBelow(beforeEnd / r) - 1;
+  if (!joined0) along += discShare(afterStart / r) - 1;
+  if (!joined1) along += discShare(beforeEnd / r) - 1;
   share *= along;
   return share > 0 ? share : 0;
 }

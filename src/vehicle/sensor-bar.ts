@@ -12,7 +12,7 @@ export function evenPositions(count: number, pitch: number): number[] {
 }
 
 /** Share of a unit disc left of the chord at `u`, 0 to 1. */
-function discShare(u: number): number {
+export function discShare(u: number): number {
   if (u <= -1) return 0;
   if (u >= 1) return 1;
   return 0.5 + (u * Math.sqrt(1 - u * u) + Math.asin(u)) / Math.PI;
