@@ -77,7 +77,7 @@ export interface Sheet {
      */
     kind: 'analog' | 'digital';
     /**
-     * Number of sensors in the row.
+     * Number of sensors in the row. [1]
      */
     count: number;
     /**

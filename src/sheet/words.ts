@@ -1,26 +1,12 @@
-/**
- * How values appear in messages. Everything that comes from outside goes through `quote` or `printable`, so that no
- * control sequence reaches a terminal.
- */
+/** How values appear in messages. */
 
 const MAX_QUOTED = 60;
 
-// Controls, lone surrogates, line and paragraph separators, marks that change text direction, byte order mark.
-const UNPRINTABLE = /[\p{Cc}\p{Cs}\p{Zl}\p{Zp}\p{Bidi_Control}\u{feff}]/gu;
-
-/** Text with control characters written as \uXXXX. */
-export function printable(text: string): string {
-  return text.replace(
-    UNPRINTABLE,
-    (character) => `\\u${character.charCodeAt(0).toString(16).padStart(4, '0')}`,
-  );
-}
-
-/** Untrusted text in double quotes, control characters escaped, cut to a readable length. */
+/** Text from outside in double quotes, escaped as in JSON, cut to a readable length. */
 export function quote(text: string): string {
-  const characters = [...text.slice(0, 2 * MAX_QUOTED)];
-  const cut = text.length > characters.join('').length || characters.length > MAX_QUOTED;
-  return printable(`"${characters.slice(0, MAX_QUOTED).join('')}${cut ? '...' : ''}"`);
+  // The cut may not fall inside a surrogate pair.
+  const start = text.slice(0, MAX_QUOTED).replace(/[\ud800-\udbff]$/, '');
+  return JSON.stringify(start.length < text.length ? `${start}...` : text);
 }
 
 /** A number for a message: whole numbers as they are, others to at most four significant digits. */

@@ -1,0 +1,50 @@
+/**
+ * Fills in what a sheet leaves out. The values come from the schema and stand nowhere else.
+ *
+ * For a field that has to be given, the schema's `default` is only what the questionnaire proposes; for one that may be
+ * left out it is what then holds. An object left out whole is filled from its own default and then field by field.
+ */
+import { SCHEMAS, resolved, type SchemaNode } from './schema.js';
+import type { MotorPins, Sheet } from './sheet-types.js';
+
+type Filled<T, Given extends keyof T = never> = Required<Omit<T, Given>> & Pick<T, Given>;
+type Motor = Filled<MotorPins, 'pwm' | 'dir' | 'in1' | 'in2'>;
+type Drive = Sheet['drive'];
+
+/** A sheet with every default filled in. What has none stays optional. */
+export interface ResolvedSheet extends Required<Sheet> {
+  line: Required<Sheet['line']>;
+  sensors: Filled<Sheet['sensors'], 'pitchMm' | 'positionsMm'>;
+  drive: Omit<Required<Drive>, 'motor' | 'driver' | 'trim'> & {
+    motor: Required<Drive['motor']>;
+    driver: Omit<Drive['driver'], 'left' | 'right'> & { left: Motor; right: Motor };
+    trim: Required<NonNullable<Drive['trim']>>;
+  };
+  speeds: Required<Sheet['speeds']>;
+  start: Required<Sheet['start']>;
+  tolerances: Required<NonNullable<Sheet['tolerances']>>;
+}
+
+/**
+ * One of two ways to say where the sensors are. The other may be given, and a spacing is to be measured, not assumed: so
+ * its default is a proposal only.
+ */
+const NEVER_FILLED = ['pitchMm'];
+
+/** A copy of the sheet with every default filled in. `sheet` has to fit the schema. */
+export function withDefaults(sheet: Sheet): ResolvedSheet {
+  return filled(SCHEMAS.sheet, SCHEMAS.sheet, sheet) as ResolvedSheet;
+}
+
+function filled(root: SchemaNode, node: SchemaNode, value: unknown): unknown {
+  const { properties } = resolved(root, node);
+  if (!properties || typeof value !== 'object' || value === null) return structuredClone(value);
+  const given = value as Readonly<Record<string, unknown>>;
+  const entries = Object.entries(properties).flatMap(([key, child]): [string, unknown][] => {
+    const field = resolved(root, child);
+    const proposal = NEVER_FILLED.includes(key) ? undefined : field.default;
+    const found = Object.hasOwn(given, key) ? given[key] : proposal;
+    return found === undefined ? [] : [[key, filled(root, field, found)]];
+  });
+  return Object.fromEntries(entries);
+}
