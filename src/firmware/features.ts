@@ -1,0 +1,42 @@
+/** What one vehicle has, as the controller's constants say it. */
+import { type ControllerConstants, FULL_COVERAGE } from '../controller/constants.js';
+
+/** What this vehicle has; the templates' only conditions. */
+export interface Features {
+  analog: boolean;
+  digital: boolean;
+  pid: boolean;
+  rules: boolean;
+  /** Calibration by sweep; else the readings are stored. */
+  sweep: boolean;
+  stored: boolean;
+  /** Every sensor is either on or off the line: digital ones, or the rule table's view of analog ones. */
+  binary: boolean;
+  graded: boolean;
+  /** Lanes cross, and the bar can tell. */
+  crossings: boolean;
+  /** The board has an LED that this vehicle does not use otherwise. */
+  led: boolean;
+}
+
+/**
+ * What the controller's constants say the vehicle has.
+ *
+ * @param led whether the board has an LED that the vehicle leaves free
+ */
+export function featuresOf(controller: ControllerConstants, led: boolean): Features {
+  const { sensing, sweep, kind } = controller;
+  const binary = sensing.digital || kind === 'rules';
+  return {
+    analog: !sensing.digital,
+    digital: sensing.digital,
+    pid: kind === 'pid',
+    rules: kind === 'rules',
+    sweep: sweep !== undefined,
+    stored: !sensing.digital && sweep === undefined,
+    binary,
+    graded: !binary,
+    crossings: sensing.wideCoverage <= sensing.sensorCount * FULL_COVERAGE,
+    led,
+  };
+}

@@ -1,0 +1,89 @@
+/**
+ * From a design to the text of every firmware file: view model -> templates -> formatter.
+ *
+ * Templates hold no arithmetic and branch only on booleans of the view model; a name that the view model lacks is an
+ * error (strict), so is a helper that is not one of ours (knownHelpersOnly). Numbers and user text pass through one
+ * helper each. The same sheet and version give the same bytes: no date, host name or path enters a view model.
+ */
+import { readFile } from 'node:fs/promises';
+import Handlebars from 'handlebars';
+import type { Design } from '../design/design.js';
+import { comment } from './comments.js';
+import { formatCode } from './format.js';
+import { type IntegerType, type Language, literal } from './literals.js';
+
+/** Whose file it is once it is written: the tool's, or the user's own, which is never overwritten. */
+export type Owner = 'tool' | 'user';
+
+export interface RenderedFile {
+  /** Relative to the output folder, with forward slashes: "tray-cart/constants.h". */
+  path: string;
+  text: string;
+  owner: Owner;
+}
+
+/** One file that a language may write; the template is `templates/<folder>/<template>.hbs`. */
+export interface TemplateFile {
+  template: string;
+  path: string;
+  owner: Owner;
+  /** Whether this vehicle needs the file. */
+  wanted: boolean;
+}
+
+/** What one language makes of a design. */
+export interface Rendering {
+  /** Folder below templates/. */
+  folder: 'arduino' | 'micropython';
+  language: Language;
+  files: readonly TemplateFile[];
+  view: object;
+}
+
+/** The sheet's identity, as the files' headers carry it. */
+export interface SheetIdentity {
+  /** SHA-256 of the sheet's bytes, hexadecimal. */
+  digest: string;
+}
+
+const TEMPLATES = new URL('../../templates/', import.meta.url);
+
+function engineFor(language: Language): typeof Handlebars {
+  const engine = Handlebars.create();
+  engine.registerHelper('literal', (value: number, type: IntegerType) => literal(value, type, language));
+  engine.registerHelper('comment', (text: string) => comment(text, language));
+  return engine;
+}
+
+const COMPILE_OPTIONS: CompileOptions = {
+  noEscape: true,
+  strict: true,
+  knownHelpersOnly: true,
+  knownHelpers: { literal: true, comment: true },
+};
+
+/** Fills in one rendering's templates; files that the vehicle does not need are left out. */
+export async function fillTemplates(rendering: Rendering): Promise<RenderedFile[]> {
+  const engine = engineFor(rendering.language);
+  const files: RenderedFile[] = [];
+  for (const { template, path, owner, wanted } of rendering.files) {
+    if (!wanted) continue;
+    const url = new URL(`${rendering.folder}/${template}.hbs`, TEMPLATES);
+    const filled = engine.compile(await readFile(url, 'utf8'), COMPILE_OPTIONS)(rendering.view);
+    files.push({ path, owner, text: await formatCode(filled, path, rendering.language) });
+  }
+  return files;
+}
+
+async function renderingOf(sheet: SheetIdentity, design: Design): Promise<Rendering> {
+  if (design.vehicle.language === 'arduino') {
+    const { arduinoRendering } = await import('./view-arduino.js');
+    return arduinoRendering(sheet, design);
+  }
+  throw new Error(`There are no templates for ${design.vehicle.language}.`);
+}
+
+/** The firmware of one vehicle, the manifest excepted. */
+export async function renderFirmware(sheet: SheetIdentity, design: Design): Promise<RenderedFile[]> {
+  return fillTemplates(await renderingOf(sheet, design));
+}
