@@ -21,7 +21,7 @@ import {
 import { mToMm } from '../sheet/units.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { meanPitchM } from './bar-view.js';
-import type { DesignedClass } from './design.js';
+import type { ClassSettings } from './design.js';
 import * as choice from './drive-choices.js';
 import { runActions } from './rule-runs.js';
 import { sensingConstants } from './sensing-constants.js';
@@ -49,7 +49,7 @@ function distanceUnits(distanceM: number, samplePeriodS: number): number {
 }
 
 /** Curvature per offset that the rule table holds, 1/m^2: that of the tightest bend. */
-export function tableGainPerM2(vehicle: Vehicle, classes: readonly DesignedClass[]): number {
+export function tableGainPerM2(vehicle: Vehicle, classes: readonly ClassSettings[]): number {
   const reach = vehicle.line.tightestRadiusM * (1 + 1e-9);
   const tightest = classes.find((designed) => designed.minRadiusM <= reach) ?? classes[classes.length - 1]!;
   return tightest.gains.proportionalPerM2;
@@ -58,7 +58,7 @@ export function tableGainPerM2(vehicle: Vehicle, classes: readonly DesignedClass
 /** Gains of one class as real numbers in the firmware's input and curvature units. */
 function realGains(
   vehicle: Vehicle,
-  designed: DesignedClass,
+  designed: ClassSettings,
   tableGain: number,
 ): { proportional: number; derivative: number } {
   const { proportionalPerM2, derivativeTimeS, filterCoefficient } = designed.gains;
@@ -79,7 +79,7 @@ function gainBits(gains: readonly { proportional: number; derivative: number }[]
 
 function classConstants(
   vehicle: Vehicle,
-  classes: readonly DesignedClass[],
+  classes: readonly ClassSettings[],
   tableGain: number,
   bits: number,
 ): ClassConstants[] {
@@ -169,7 +169,7 @@ function sweepConstants(vehicle: Vehicle, drive: DriveConstants): SweepConstants
 /** The controller of a design. */
 export function controllerConstants(
   vehicle: Vehicle,
-  classes: readonly DesignedClass[],
+  classes: readonly ClassSettings[],
 ): ControllerConstants {
   const tableGain = tableGainPerM2(vehicle, classes);
   const bits = gainBits(classes.map((designed) => realGains(vehicle, designed, tableGain)));

@@ -24,9 +24,7 @@ export function delayBudget(vehicle: Vehicle): { shares: DelayShare[]; totalS: n
   return { shares, totalS: shares.reduce((sum, share) => sum + share.delayS, 0) };
 }
 
-/** Time from the first reading of a sample to the new duty, s. */
-export function outputDelayS(vehicle: Vehicle): number {
-  const { board, bar } = vehicle;
-  const readS = bar.kind === 'analog' ? board.adcReadS : board.digitalReadS;
-  return bar.positionsM.length * readS + board.computeS;
+/** The delay with which the twin is rehearsed: the budget, within one sample, s. */
+export function twinDelayS(vehicle: Vehicle): number {
+  return Math.min(delayBudget(vehicle).totalS, 0.99 * vehicle.board.samplePeriodS);
 }

@@ -2,57 +2,83 @@
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { controllerConstants } from './controller-constants.js';
 import { delayBudget } from './delay.js';
-import type { Design, DesignedClass } from './design.js';
+import type { ClassSettings, Design, DesignedClass, SpeedLimits } from './design.js';
+import { Proving, type SpeedScale } from './proving.js';
 import { type ClassRange, bindingLimit, classRanges, speedLimits } from './speed-classes.js';
 import { designLaw, lanePlantOf, marginsAt, worstMargins } from './steering-gains.js';
-import { controllerOf } from './steering-loop.js';
-import { EXIT, FairleadError } from '../sheet/problem.js';
+import { type SteeringGains, controllerOf } from './steering-loop.js';
+import { EXIT, FairleadError, type Problem } from '../sheet/problem.js';
 import { mToMm } from '../sheet/units.js';
 
 const NOMINAL = { gain: 1, lag: 1 };
 
-/** One class: the limits, the speed, and the law for that speed. */
-function designClass(vehicle: Vehicle, range: ClassRange): DesignedClass {
+/** One class before its speed is proven: its limits and its law. */
+interface ClassBase {
+  range: ClassRange;
+  limits: SpeedLimits;
+  /** Speed that the limits or the sheet allow, m/s. */
+  allowedMps: number;
+  gains: SteeringGains;
+}
+
+function noDesign(range: ClassRange, speedMps: number, limits: SpeedLimits): FairleadError {
+  const radiusMm = Math.round(mToMm(range.minRadiusM));
+  const problem: Problem = {
+    pointer: range.speedMps === undefined ? '/line/tightestRadiusMm' : '/speeds/classes',
+    message: `class ${range.name}: no steering keeps its margins on bends of ${radiusMm} mm radius at ${speedMps.toFixed(2)} m/s.`,
+    got: `${speedMps.toFixed(2)} m/s`,
+    allowed: `control limit ${limits.control.toFixed(2)} m/s, view limit ${limits.view.toFixed(2)} m/s`,
+    fix: 'Move the sensor bar further ahead, make it wider, take motors with a smaller time constant, or lower the speed.',
+  };
+  return new FairleadError('No design meets the sheet.', { exitCode: EXIT.noDesign, problems: [problem] });
+}
+
+function classBase(vehicle: Vehicle, range: ClassRange): ClassBase {
   const limits = speedLimits(vehicle, range);
-  const binding = bindingLimit(limits);
-  const speedMps = range.speedMps ?? limits[binding];
-  const law = speedMps > 0 ? designLaw(vehicle, speedMps, range.lawRadiusM) : undefined;
-  if (law === undefined) {
-    throw new FairleadError('No design meets the sheet.', {
-      exitCode: EXIT.noDesign,
-      problems: [
-        {
-          pointer: range.speedMps === undefined ? '/line/tightestRadiusMm' : '/speeds/classes',
-          message: `class ${range.name}: no steering keeps its margins on a bend of ${Math.round(mToMm(range.minRadiusM))} mm radius at ${speedMps.toFixed(2)} m/s.`,
-          got: `control limit ${limits.control.toFixed(2)} m/s, view limit ${limits.view.toFixed(2)} m/s`,
-          fix: 'Move the sensor bar further ahead, make it wider, take motors with a smaller time constant, or lower the speed.',
-        },
-      ],
-    });
-  }
+  const allowedMps = range.speedMps ?? limits[bindingLimit(limits)];
+  const law = allowedMps > 0 ? designLaw(vehicle, allowedMps, range.lawRadiusM) : undefined;
+  if (law === undefined) throw noDesign(range, allowedMps, limits);
+  return { range, limits, allowedMps, gains: law.gains };
+}
+
+/** A class at the speed that a scale leaves it. */
+function settingsAt({ range, allowedMps, gains }: ClassBase, scale: SpeedScale): ClassSettings {
+  const given = range.speedMps !== undefined;
+  const speedMps = given ? allowedMps : Math.min(scale.top, scale.share * allowedMps);
+  return { name: range.name, minRadiusM: range.minRadiusM, speedMps, gains };
+}
+
+function limitedBy({ range, allowedMps, limits }: ClassBase, speedMps: number): DesignedClass['limitedBy'] {
+  if (range.speedMps !== undefined) return 'sheet';
+  return speedMps < allowedMps ? 'finish' : bindingLimit(limits);
+}
+
+function designedClass(vehicle: Vehicle, base: ClassBase, settings: ClassSettings): DesignedClass {
+  const { speedMps, gains } = settings;
   const plant = lanePlantOf(vehicle, speedMps, NOMINAL);
   return {
-    name: range.name,
-    minRadiusM: range.minRadiusM,
-    speedMps,
-    limits,
-    limitedBy: range.speedMps === undefined ? binding : 'sheet',
-    gains: law.gains,
+    ...settings,
+    limits: base.limits,
+    limitedBy: limitedBy(base, speedMps),
     plant,
-    controller: controllerOf(law.gains, speedMps, plant.samplePeriodS),
-    margins: marginsAt(vehicle, speedMps, law.gains, NOMINAL),
-    worstMargins: worstMargins(vehicle, speedMps, law.gains),
+    controller: controllerOf(gains, speedMps, plant.samplePeriodS),
+    margins: marginsAt(vehicle, speedMps, gains, NOMINAL),
+    worstMargins: worstMargins(vehicle, speedMps, gains),
   };
 }
 
 /** Designs the controller of a vehicle; throws FairleadError with exit code 3 when nothing meets the sheet. */
 export function deriveDesign(vehicle: Vehicle): Design {
-  const classes = classRanges(vehicle).map((range) => designClass(vehicle, range));
+  const bases = classRanges(vehicle).map((range) => classBase(vehicle, range));
+  const settings = (scale: SpeedScale) => bases.map((base) => settingsAt(base, scale));
+  const controllerAt = (scale: SpeedScale) => controllerConstants(vehicle, settings(scale));
+  const proven = new Proving(vehicle).best(controllerAt);
+  const scale = proven ?? { top: vehicle.drive.topSpeedMps, share: 1 };
   return {
     vehicle,
     delay: delayBudget(vehicle),
-    classes,
-    controller: controllerConstants(vehicle, classes),
-    remarks: [],
+    classes: settings(scale).map((each, i) => designedClass(vehicle, bases[i]!, each)),
+    controller: controllerAt(scale),
+    remarks: proven ? [] : ['not proven'],
   };
 }

@@ -27,14 +27,19 @@ export interface SpeedLimits {
   control: number;
 }
 
-export interface DesignedClass {
+/** What the controller needs of a speed class. */
+export interface ClassSettings {
   name: string;
-  /** Smallest radius of the class, m; Infinity is never used: the straight class carries the largest radius. */
+  /** Smallest radius of the class, m. */
   minRadiusM: number;
   speedMps: number;
-  limits: SpeedLimits;
-  limitedBy: keyof SpeedLimits | 'sheet' | 'finish';
   gains: SteeringGains;
+}
+
+export interface DesignedClass extends ClassSettings {
+  limits: SpeedLimits;
+  /** The least limit; `finish` where perturbed rehearsals asked for less, `sheet` where the speed is given. */
+  limitedBy: keyof SpeedLimits | 'sheet' | 'finish';
   plant: { lookaheadM: number; speedMps: number; lagS: number; delayS: number; samplePeriodS: number };
   /** From lateral error (m) to commanded turn rate (rad/s), polynomials in z^-1. */
   controller: { numerator: number[]; denominator: number[]; samplePeriodS: number };
