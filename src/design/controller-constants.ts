@@ -191,7 +191,7 @@ export function controllerConstants(
     constants.sweep = sweepConstants(vehicle, drive);
   }
   if (vehicle.control.kind === 'rules') {
-    const actions = runActions(vehicle, sensing, tableGain);
+    const actions = runActions(vehicle, tableGain);
     const perDifference = CURVATURE_PER_INV_M / (vehicle.drive.trackM * (1 << FRACTION_BITS));
     constants.rules = {
       curvatureFactor: Math.round(perDifference * (1 << RULE_CURVATURE_BITS)),

@@ -11,9 +11,7 @@
  * kappa(x) = kp x, as wheel speeds 1 - kappa b / 2 and 1 + kappa b / 2 in units of base speed. Mirror images
  * get mirrored actions because the formula is odd in x.
  */
-import { FRACTION_BITS, type SensingConstants } from '../controller/constants.js';
-import { Sensing } from '../controller/sensing.js';
-import { OFFSET_PER_M } from '../controller/constants.js';
+import { FRACTION_BITS } from '../controller/constants.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { switchingDistanceM } from './bar-view.js';
 
@@ -56,17 +54,13 @@ function fractionsFor(curvaturePerM: number, trackM: number): { left: number; ri
  *
  * @param proportionalPerM2 curvature per offset, 1/m^2
  */
-export function runActions(
-  vehicle: Vehicle,
-  sensing: SensingConstants,
-  proportionalPerM2: number,
-): RunAction[] {
-  const count = sensing.sensorCount;
+export function runActions(vehicle: Vehicle, proportionalPerM2: number): RunAction[] {
+  const count = vehicle.bar.positionsM.length;
   const actions: RunAction[] = [];
   for (let first = 0; first < count; first++) {
     for (let last = first; last < count; last++) {
       const interval = runInterval(vehicle, first, last);
-      const offsetM = interval ? (interval[0] + interval[1]) / 2 : shownOffsetM(sensing, first, last);
+      const offsetM = interval ? (interval[0] + interval[1]) / 2 : shownOffsetM(vehicle, first, last);
       actions.push({
         first,
         last,
@@ -79,12 +73,17 @@ export function runActions(
   return actions;
 }
 
-/** Offset that the firmware's own edge arithmetic finds for a run, m. */
-function shownOffsetM(sensing: SensingConstants, first: number, last: number): number {
-  const bar = new Sensing({ ...sensing, digital: true, lineLevelHigh: true, wideCoverage: Infinity }, true);
-  const levels = Int32Array.from({ length: sensing.sensorCount }, (_, i) =>
-    i >= first && i <= last ? 1 : 0,
-  );
-  bar.read(levels);
-  return bar.offset / OFFSET_PER_M;
+/**
+ * Offset that the edges of a run show, m: each edge half way between the last sensor on the line and the next
+ * one beside it; with an edge outside the bar, the other one and the line width.
+ */
+function shownOffsetM(vehicle: Vehicle, first: number, last: number): number {
+  const { positionsM } = vehicle.bar;
+  const edge = (i: number) => ((positionsM[i - 1] as number) + (positionsM[i] as number)) / 2;
+  const leftEdge = first > 0 ? edge(first) : undefined;
+  const rightEdge = last < positionsM.length - 1 ? edge(last + 1) : undefined;
+  const halfLine = vehicle.line.widthM / 2;
+  if (leftEdge !== undefined && rightEdge !== undefined) return (leftEdge + rightEdge) / 2;
+  if (leftEdge !== undefined) return leftEdge - halfLine;
+  return rightEdge === undefined ? 0 : rightEdge + halfLine;
 }

@@ -146,3 +146,8 @@ export function closedLoopRadius(plant: SampledLanePlant, controller: SampledCon
   }
   return Math.exp(log);
 }
+
+/** Time constant of the derivative filter, s. */
+export function filterTimeS(gains: SteeringGains, samplePeriodS: number): number {
+  return -samplePeriodS / Math.log1p(-gains.filterCoefficient);
+}

@@ -1,0 +1,28 @@
+/** `fairlead derive SHEET`: the numbers of the design, with their units and where each comes from. */
+import type { Command } from 'commander';
+import type { Io } from './io.js';
+
+interface DeriveOptions {
+  json?: boolean;
+}
+
+export function register(program: Command, io: Io): void {
+  program
+    .command('derive')
+    .description('the numbers of the design: gains, margins, rule table, speed classes and what limits each')
+    .argument('<sheet>', 'build sheet')
+    .option('--json', 'print one JSON document')
+    .addHelpText('after', '\nExample:\n  fairlead derive examples/tray-cart/tray-cart.json\n')
+    .action(async (file: string, options: DeriveOptions) => {
+      const [{ loadSheet }, { designFor }, { designJson }, { designText }] = await Promise.all([
+        import('../sheet/load.js'),
+        import('../pipeline.js'),
+        import('../report/design-json.js'),
+        import('../report/design-text.js'),
+      ]);
+      const { sheet } = await loadSheet(file);
+      const design = designFor(sheet);
+      if (options.json) io.json(designJson(design));
+      else io.stdout(designText(design));
+    });
+}

@@ -1,0 +1,43 @@
+/** The design as `derive --json` gives it. */
+import type { Design, Margins } from '../design/design.js';
+import { stateTable } from '../design/state-table.js';
+import { mToMm } from '../sheet/units.js';
+
+/** JSON has no infinity: a margin that nothing bounds is null. */
+function marginsJson({ gainMargin, phaseMarginDeg, ms }: Margins) {
+  const finite = (value: number) => (Number.isFinite(value) ? value : null);
+  return { gainMargin: finite(gainMargin), phaseMarginDeg: finite(phaseMarginDeg), ms: finite(ms) };
+}
+
+export function designJson(design: Design) {
+  const { vehicle, classes, controller } = design;
+  return {
+    ok: true,
+    name: vehicle.name,
+    control: controller.kind,
+    delay: design.delay,
+    classes: classes.map((each) => ({
+      name: each.name,
+      minRadiusMm: mToMm(each.minRadiusM),
+      speedMps: each.speedMps,
+      limitedBy: each.limitedBy,
+      limitsMps: each.limits,
+      gains: each.gains,
+      plant: each.plant,
+      controller: each.controller,
+      margins: marginsJson(each.margins),
+      worstMargins: marginsJson(each.worstMargins),
+    })),
+    rules: controller.rules
+      ? stateTable(vehicle, controller).map(({ state, kind, left, right, fromM, toM }) => ({
+          state,
+          kind,
+          left,
+          right,
+          ...(fromM === undefined || toM === undefined ? {} : { fromMm: mToMm(fromM), toMm: mToMm(toM) }),
+        }))
+      : [],
+    firmware: controller,
+    remarks: design.remarks,
+  };
+}

@@ -1,0 +1,93 @@
+/** The design as a person reads it: each number with its unit and where it comes from. */
+import { OFFSET_PER_M, SPEED_PER_MPS } from '../controller/constants.js';
+import type { Design, DesignedClass } from '../design/design.js';
+import { LEAST_MARGINS } from '../design/steering-gains.js';
+import { filterTimeS } from '../design/steering-loop.js';
+import { viewM } from '../design/bar-view.js';
+import { mToMm, sToMs } from '../sheet/units.js';
+import { ruleLines } from './rule-text.js';
+import { table } from './text-table.js';
+
+const LIMIT_REASONS: Readonly<Record<DesignedClass['limitedBy'], string>> = {
+  motor: 'outer wheel at full duty',
+  grip: 'grip at the low end of its tolerance',
+  view: 'line still under the bar on entry',
+  control: 'steering margins over the tolerance box',
+  finish: 'perturbed rehearsals of the twin',
+  sheet: 'given in the sheet',
+};
+
+function speedTable(classes: readonly DesignedClass[]): string {
+  const rows = classes.map((each) => [
+    each.name,
+    mToMm(each.minRadiusM).toFixed(0),
+    each.speedMps.toFixed(2),
+    ...(['motor', 'grip', 'view', 'control'] as const).map((limit) => each.limits[limit].toFixed(2)),
+    LIMIT_REASONS[each.limitedBy],
+  ]);
+  const head = ['class', 'radius from, mm', 'speed, m/s', 'motor', 'grip', 'view', 'control', 'limited by'];
+  return table([head, ...rows]);
+}
+
+function lawTable(classes: readonly DesignedClass[]): string {
+  const rows = classes.map(({ name, gains, plant, margins, worstMargins }) => [
+    name,
+    gains.proportionalPerM2.toFixed(0),
+    sToMs(gains.derivativeTimeS).toFixed(0),
+    sToMs(filterTimeS(gains, plant.samplePeriodS)).toFixed(1),
+    ...[margins, worstMargins].flatMap((each) => [
+      each.gainMargin.toFixed(1),
+      each.phaseMarginDeg.toFixed(0),
+      each.ms.toFixed(2),
+    ]),
+  ]);
+  const head = ['class', 'kp, 1/m^2', 'Td, ms', 'Tf, ms', 'GM', 'PM, deg', 'Ms', 'worst GM', 'PM, deg', 'Ms'];
+  return table([head, ...rows]);
+}
+
+function vehicleLines(design: Design): string {
+  const { vehicle, controller } = design;
+  const { drive, bar, line } = vehicle;
+  const rows = [
+    [
+      'top speed',
+      `${drive.topSpeedMps.toFixed(3)} m/s`,
+      'pi x wheel diameter x no-load speed x nominal / rated voltage',
+    ],
+    ['view', `${mToMm(viewM(vehicle)).toFixed(1)} mm to each side`, 'outermost sensor, line width and spot'],
+    ['tightest bend', `${mToMm(line.tightestRadiusM).toFixed(0)} mm`, 'sheet'],
+    ['look-ahead', `${mToMm(bar.aheadM).toFixed(0)} mm`, 'sheet'],
+    ['sample period', `${sToMs(vehicle.board.samplePeriodS).toFixed(1)} ms`, vehicle.board.title],
+    ...design.delay.shares.map(({ name, delayS, source }) => [
+      `delay: ${name}`,
+      `${sToMs(delayS).toFixed(2)} ms`,
+      source,
+    ]),
+    ['delay in all', `${sToMs(design.delay.totalS).toFixed(2)} ms`, 'without the hold of one sample'],
+    ['search speed', `${(controller.drive.searchSpeed / SPEED_PER_MPS).toFixed(2)} m/s`, 'for a lost line'],
+    [
+      'side memory from',
+      `${mToMm(controller.memory.sideOffset / OFFSET_PER_M).toFixed(1)} mm`,
+      'beyond: left by the side, not a gap',
+    ],
+  ];
+  return table(rows);
+}
+
+/** The whole text of `fairlead derive`. */
+export function designText(design: Design): string {
+  const { vehicle, classes, controller } = design;
+  const required = `Required in every corner of the tolerance box: gain margin ${LEAST_MARGINS.gainMargin}, phase margin ${LEAST_MARGINS.phaseMarginDeg} deg, Ms ${LEAST_MARGINS.ms} at most.`;
+  const parts = [
+    `${vehicle.name}: ${controller.kind === 'rules' ? 'rule table' : 'feedback (PD)'} on ${vehicle.board.title}`,
+    vehicleLines(design),
+    'Speed classes (speeds and limits in m/s at nominal voltage)',
+    speedTable(classes),
+    'Steering: curvature = kp (offset + Td d offset/dt), derivative filtered with Tf',
+    lawTable(classes),
+    required,
+    ...ruleLines(design),
+    ...design.remarks.map((remark) => `Note: ${remark}`),
+  ];
+  return `${parts.join('\n\n')}\n`;
+}

@@ -1,0 +1,40 @@
+/** The rule table as a strip of the bar for each state, for reading and annotating. */
+import type { Design, RuleRow } from '../design/design.js';
+import { stateTable } from '../design/state-table.js';
+import { mToMm } from '../sheet/units.js';
+import { table } from './text-table.js';
+
+/** States up to this number of sensors are printed one by one; beyond, only those that a line causes. */
+const FULL_PRINT_SENSORS = 6;
+
+/** The bar as characters, leftmost sensor first: # on the line, . off it. */
+function strip(state: number, sensorCount: number): string {
+  return state.toString(2).padStart(sensorCount, '0').replaceAll('1', '#').replaceAll('0', '.');
+}
+
+function interval({ fromM, toM }: RuleRow): string {
+  return fromM === undefined || toM === undefined
+    ? ''
+    : `${mToMm(fromM).toFixed(1)} to ${mToMm(toM).toFixed(1)}`;
+}
+
+/** Paragraphs about the rule table; none without rules. */
+export function ruleLines(design: Design): string[] {
+  const { vehicle, controller } = design;
+  if (controller.rules === undefined) return [];
+  const count = controller.sensing.sensorCount;
+  const all = stateTable(vehicle, controller);
+  const shown = count <= FULL_PRINT_SENSORS ? all : all.filter((row) => row.kind === 'line');
+  const rows = shown.map((row) => [
+    strip(row.state, count),
+    row.kind,
+    interval(row),
+    row.left.toFixed(3),
+    row.right.toFixed(3),
+  ]);
+  const rest = all.length - shown.length;
+  return [
+    `Rule table: ${all.length} states, wheel speeds as fractions of base speed${rest > 0 ? ` (${rest} states without a single line are in --json)` : ''}`,
+    table([['bar', 'kind', 'offset, mm', 'left', 'right'], ...rows]),
+  ];
+}
