@@ -99,6 +99,7 @@ function problemOf(root: SchemaNode, error: ErrorObject): Problem {
   const fix =
     numberInText(error, branch) ??
     nearestChoice(error, branch) ??
+    keysToWrite(error, branch) ??
     field.fix ??
     branch.fix ??
     field.description;

@@ -5,9 +5,6 @@
  */
 import { joinOr, quote } from './words.js';
 
-/** Standard acceleration of free fall, m/s^2 (3rd CGPM, 1901). */
-export const STANDARD_GRAVITY = 9.80665;
-
 export const mmToM = (mm: number): number => mm / 1000;
 export const mToMm = (m: number): number => m * 1000;
 export const msToS = (ms: number): number => ms / 1000;

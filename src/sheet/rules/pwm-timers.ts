@@ -1,0 +1,57 @@
+import type { BoardFacts, PinFacts } from '../../vehicle/board-facts.js';
+import { listPins } from '../../vehicle/boards.js';
+import type { Problem } from '../problem.js';
+import { joinAnd, withUnit } from '../words.js';
+import type { SheetRule } from './rule.js';
+
+export const rule: SheetRule = {
+  name: 'pwm-timers',
+  level: 'note',
+  why: 'On boards whose timers are fixed to pins, the timer decides the PWM frequency, and one of them also keeps the time.',
+  check({ sheet, board, uses }) {
+    const { timerPwmHz } = board;
+    if (timerPwmHz === undefined) return [];
+    const outputs = uses.flatMap(({ pointer, pin, role }) =>
+      role === 'PWM output' && pin?.pwm ? [{ pointer, label: pin.label, timer: pin.pwm.timer }] : [],
+    );
+    const first = outputs[0];
+    if (first === undefined) return [];
+    const notes: Problem[] = [];
+    const onClock = outputs.filter(({ timer }) => timer === board.clockTimer);
+    if (onClock[0]) {
+      const labels = joinAnd(onClock.map(({ label }) => label));
+      const message = `PWM on ${labels} comes from timer ${onClock[0].timer}, which also drives the millisecond clock: its frequency stays at ${withUnit(timerPwmHz[onClock[0].timer] ?? board.pwmHz, 'Hz')}.`;
+      notes.push({
+        pointer: onClock[0].pointer,
+        message,
+        fix: 'Leave it so if the whine does not matter; never retime it.',
+      });
+    }
+    const timers = [...new Set(outputs.map(({ timer }) => timer))].sort();
+    const frequencies = new Set(timers.map((timer) => timerPwmHz[timer]));
+    // Four PWM pins need two timers; they then only have to agree in frequency.
+    const needsTwo = sheet.drive.driver.scheme === 'dual-pwm';
+    if (timers.length > 1 && (frequencies.size > 1 || !needsTwo)) {
+      const each = timers.map(
+        (timer) => `timer ${timer} (${withUnit(timerPwmHz[timer] ?? board.pwmHz, 'Hz')})`,
+      );
+      const message = `The motors' PWM comes from ${joinAnd(each)}, so the two wheels may answer a little differently.`;
+      const fix = needsTwo
+        ? `Take pins of equal frequency: ${listPins(board.pins.filter((pin) => isOffClock(pin, board)))}.`
+        : `Put both motors on one timer, such as that of pins ${pinsOfOneTimer(board)}.`;
+      notes.push({ pointer: '/drive/driver', message, fix });
+    }
+    return notes;
+  },
+};
+
+function isOffClock(pin: PinFacts, board: BoardFacts): boolean {
+  return pin.pwm !== undefined && pin.pwm.timer !== board.clockTimer;
+}
+
+/** The lowest timer that does not keep the time, by its pins. */
+function pinsOfOneTimer(board: BoardFacts): string {
+  const pins = board.pins.filter((pin) => isOffClock(pin, board));
+  const timer = Math.min(...pins.flatMap((pin) => pin.pwm?.timer ?? []));
+  return listPins(pins.filter((pin) => pin.pwm?.timer === timer));
+}

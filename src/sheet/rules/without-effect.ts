@@ -1,0 +1,21 @@
+import type { Problem } from '../problem.js';
+import type { SheetRule } from './rule.js';
+
+export const rule: SheetRule = {
+  name: 'without-effect',
+  level: 'note',
+  why: 'A value that nothing reads was perhaps meant for something else.',
+  check({ given }) {
+    const { kind, calibration, lineLevel } = given.sensors;
+    const notes: Problem[] = [];
+    if (kind === 'digital' && calibration !== undefined) {
+      const message = 'Digital sensors have no readings to calibrate, so the calibration has no effect.';
+      notes.push({ pointer: '/sensors/calibration', message, fix: 'Remove it, or write "kind": "analog".' });
+    }
+    if (kind === 'analog' && lineLevel !== undefined) {
+      const message = 'The level over the line is for digital sensors, so it has no effect.';
+      notes.push({ pointer: '/sensors/lineLevel', message, fix: 'Remove it, or write "kind": "digital".' });
+    }
+    return notes;
+  },
+};

@@ -1,0 +1,130 @@
+/** From a checked sheet to the vehicle in SI units. The last place where millimetres, percent and rpm occur. */
+import type { BoardFacts, PinFacts } from '../vehicle/board-facts.js';
+import { BOARDS, findPin } from '../vehicle/boards.js';
+import { DRIVERS } from '../vehicle/drivers.js';
+import type { MotorWiring, Vehicle } from '../vehicle/vehicle.js';
+import type { ResolvedSheet } from './defaults.js';
+import { positionsOf } from './positions.js';
+import { topSpeedMps } from './top-speed.js';
+import { mmToM, msToS, percentToFraction } from './units.js';
+
+/** Readings of a typical sensor, as shares of the converter's range: over the darker and over the lighter surface. */
+const TYPICAL_DARK = 0.12;
+const TYPICAL_LIGHT = 0.82;
+
+/**
+ * The vehicle that a sheet describes.
+ *
+ * `sheet` has passed `checkSheet`; on any other an Error is thrown, which is then a defect of ours. Speed classes come out
+ * tightest first. A digital sensor reads 0 over ground and 1 over the line, whatever its level.
+ */
+export function toVehicle(sheet: ResolvedSheet): Vehicle {
+  const board = BOARDS[sheet.target.board];
+  const { line, drive, speeds, start, tolerances } = sheet;
+  return {
+    name: sheet.name,
+    board,
+    language: board.language,
+    line: {
+      polarity: line.polarity,
+      widthM: mmToM(line.widthMm),
+      tightestRadiusM: mmToM(line.tightestRadiusMm),
+      longestGapM: mmToM(line.longestGapMm),
+      crossings: line.crossings,
+    },
+    bar: barOf(sheet, board),
+    drive: {
+      trackM: mmToM(drive.trackWidthMm),
+      wheelDiameterM: mmToM(drive.wheelDiameterMm),
+      massKg: drive.massKg,
+      grip: drive.gripCoefficient,
+      topSpeedMps: topSpeedMps(sheet),
+      lagS: msToS(drive.motor.timeConstantMs),
+      startDuty: percentToFraction(drive.motor.startDutyPercent),
+      stallCurrentA: drive.motor.stallCurrentA,
+      ...wiringOf(sheet, board),
+      trimLeft: percentToFraction(drive.trim.leftPercent),
+      trimRight: percentToFraction(drive.trim.rightPercent),
+    },
+    power: { ...sheet.power },
+    control: { kind: sheet.control.kind },
+    speeds: {
+      classes: classesOf(speeds.classes),
+      finishTarget: percentToFraction(speeds.finishTargetPercent),
+    },
+    start: {
+      button: pinOf(board, start.buttonPin),
+      countdownS: start.countdownS,
+      runLimitS: start.runLimitS,
+    },
+    tolerance: {
+      motorGain: percentToFraction(tolerances.motorGainPercent),
+      lag: percentToFraction(tolerances.timeConstantPercent),
+      grip: percentToFraction(tolerances.gripPercent),
+    },
+  };
+}
+
+function pinOf(board: BoardFacts, label: number | string): PinFacts {
+  const pin = findPin(board, label);
+  if (pin === undefined) throw new Error(`${board.title} has no pin ${label}; the sheet was not checked`);
+  return pin;
+}
+
+function barOf(sheet: ResolvedSheet, board: BoardFacts): Vehicle['bar'] {
+  const { sensors } = sheet;
+  const positions = positionsOf(sheet);
+  if (positions === undefined)
+    throw new Error('the sensor positions are contradictory; the sheet was not checked');
+  return {
+    kind: sensors.kind,
+    positionsM: positions.map(mmToM),
+    aheadM: mmToM(sensors.aheadOfAxleMm),
+    spotRadiusM: mmToM(sensors.spotRadiusMm),
+    pins: sensors.pins.map((label) => pinOf(board, label)),
+    lineLevel: sensors.lineLevel,
+    calibration: calibrationOf(sheet, board),
+  };
+}
+
+function calibrationOf(sheet: ResolvedSheet, board: BoardFacts): Vehicle['bar']['calibration'] {
+  const { kind, count, calibration } = sheet.sensors;
+  const all = (reading: number): number[] => Array.from({ length: count }, () => reading);
+  if (kind === 'digital') return { mode: 'stored', ground: all(0), line: all(1) };
+  const dark = Math.round(TYPICAL_DARK * board.adcMaxCount);
+  const light = Math.round(TYPICAL_LIGHT * board.adcMaxCount);
+  const [ground, line] = sheet.line.polarity === 'light-on-dark' ? [dark, light] : [light, dark];
+  return {
+    mode: calibration.mode,
+    ground: calibration.ground ?? all(ground),
+    line: calibration.line ?? all(line),
+  };
+}
+
+function wiringOf(
+  sheet: ResolvedSheet,
+  board: BoardFacts,
+): Pick<Vehicle['drive'], 'scheme' | 'left' | 'right' | 'standby'> {
+  const { driver } = sheet.drive;
+  const side = (pins: ResolvedSheet['drive']['driver']['left']): MotorWiring => {
+    const wiring: MotorWiring = { inverted: pins.inverted };
+    for (const { key } of DRIVERS[driver.scheme].motorPins) {
+      const label = pins[key];
+      if (label !== undefined) wiring[key] = pinOf(board, label);
+    }
+    return wiring;
+  };
+  return {
+    scheme: driver.scheme,
+    left: side(driver.left),
+    right: side(driver.right),
+    ...(driver.standbyPin === undefined ? {} : { standby: pinOf(board, driver.standbyPin) }),
+  };
+}
+
+function classesOf(classes: ResolvedSheet['speeds']['classes']): Vehicle['speeds']['classes'] {
+  if (classes === 'auto') return classes;
+  return classes
+    .map(({ name, minRadiusMm, speedMps }) => ({ name, minRadiusM: mmToM(minRadiusMm), speedMps }))
+    .sort((a, b) => a.minRadiusM - b.minRadiusM);
+}
