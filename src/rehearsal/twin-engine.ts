@@ -1,0 +1,99 @@
+/**
+ * Rehearses the controller itself, the twin of the firmware's arithmetic.
+ *
+ * One sample period: the sensors are read at its start; scanning and computing take `delayS`, during which the duties of the
+ * period before stay on; then the new ones take over. Duties are rounded to the steps of the board's PWM.
+ */
+import type { Engine, RunResult, RunSetup } from './engine.js';
+import { Plant } from './plant.js';
+import { RunMonitor } from './run-monitor.js';
+import type { ControlState } from './trace-recorder.js';
+
+/** Duty that means full, as controllers give it. */
+const FULL_DUTY = 4096;
+
+/** Longest step of the plant between two looks of the observer, s. */
+const LOOK_S = 2e-3;
+
+/** A controller that can be stepped once a sample period. */
+export interface ControlStep {
+  /** @param counts one reading a sensor, leftmost first: counts, or pin levels 0 and 1 of digital sensors */
+  step(counts: Int32Array): void;
+  /** -4096 (full reverse) to 4096. */
+  readonly dutyLeft: number;
+  readonly dutyRight: number;
+  readonly classIndex: number;
+  readonly phase: number;
+  /** The controller has given up and keeps the motors off. */
+  readonly stopped: boolean;
+}
+
+export interface TwinTiming {
+  samplePeriodS: number;
+  /** From reading the sensors to the new duties, s; above 0 and below the sample period. */
+  delayS: number;
+  /** PWM steps from off to full. */
+  pwmSteps: number;
+}
+
+export class TwinEngine implements Engine {
+  readonly name = 'twin';
+
+  /** @param makeControl makes a controller in its initial state, about to drive off */
+  constructor(
+    private readonly makeControl: () => ControlStep,
+    private readonly timing: TwinTiming,
+  ) {
+    if (!(timing.delayS > 0 && timing.delayS < timing.samplePeriodS)) {
+      throw new RangeError(
+        `A delay of ${timing.delayS} s does not fit into a sample period of ${timing.samplePeriodS} s.`,
+      );
+    }
+  }
+
+  async run(setup: RunSetup): Promise<RunResult> {
+    return this.runNow(setup);
+  }
+
+  /** The same without a promise. */
+  runNow(setup: RunSetup): RunResult {
+    const { samplePeriodS, delayS, pwmSteps } = this.timing;
+    const control = this.makeControl();
+    const plant = new Plant(setup.plant, setup.lane);
+    const monitor = new RunMonitor(plant, setup);
+    const counts = new Int32Array(plant.sensorCount);
+    const state: ControlState = { dutyLeft: 0, dutyRight: 0, classIndex: -1, phase: -1 };
+
+    while (!monitor.ended) {
+      plant.readCounts(counts);
+      control.step(counts);
+      drive(plant, monitor, state, delayS, false);
+      state.dutyLeft = inPwmSteps(control.dutyLeft, pwmSteps);
+      state.dutyRight = inPwmSteps(control.dutyRight, pwmSteps);
+      state.classIndex = control.classIndex;
+      state.phase = control.phase;
+      drive(plant, monitor, state, samplePeriodS - delayS, control.stopped);
+    }
+    return monitor.result();
+  }
+}
+
+/** A duty, -1 to 1, as the PWM can give it: the same steps forward and in reverse. */
+function inPwmSteps(duty: number, pwmSteps: number): number {
+  return (Math.sign(duty) * Math.round((Math.abs(duty) / FULL_DUTY) * pwmSteps)) / pwmSteps;
+}
+
+/** Lets time pass with constant duties, in steps that the plant can take. */
+function drive(
+  plant: Plant,
+  monitor: RunMonitor,
+  state: ControlState,
+  timeS: number,
+  stopped: boolean,
+): void {
+  const steps = Math.ceil(timeS / LOOK_S - 1e-9);
+  for (let i = 0; i < steps && !monitor.ended; i++) {
+    plant.step(state.dutyLeft, state.dutyRight, timeS / steps);
+    monitor.observe(state, stopped);
+  }
+}
