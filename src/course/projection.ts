@@ -35,25 +35,49 @@ export function makeProjection(): Projection {
   return { sM: 0, lateralM: 0, headingRad: 0, piece: 0 };
 }
 
+/** Fields of one piece in the flat table. */
+const F = {
+  start: 0,
+  length: 1,
+  curvature: 2,
+  x: 3,
+  y: 4,
+  heading: 5,
+  cosHeading: 6,
+  sinHeading: 7,
+  size: 8,
+} as const;
+
 /** Finds places on one lane. */
 export class Projector {
-  private readonly count: number;
-  private readonly cosHeading: Float64Array;
-  private readonly sinHeading: Float64Array;
-  private bestSquare = 0;
+  private readonly table: Float64Array;
+  private readonly last: number;
+  private bestSquare = 0.5;
 
   /**
    * @param pieces all of positive length, one behind the other
    * @param lengthM length of the lane, m
    */
   constructor(
-    private readonly pieces: readonly ProjectedPiece[],
+    pieces: readonly ProjectedPiece[],
     private readonly lengthM: number,
     private readonly closed: boolean,
   ) {
-    this.count = pieces.length;
-    this.cosHeading = Float64Array.from(pieces, (piece) => Math.cos(piece.headingRad));
-    this.sinHeading = Float64Array.from(pieces, (piece) => Math.sin(piece.headingRad));
+    this.last = pieces.length - 1;
+    this.table = Float64Array.from(
+      pieces.flatMap(({ startM, lengthM: pieceM, curvaturePerM, xM, yM, headingRad }) => {
+        return [
+          startM,
+          pieceM,
+          curvaturePerM,
+          xM,
+          yM,
+          headingRad,
+          Math.cos(headingRad),
+          Math.sin(headingRad),
+        ];
+      }),
+    );
   }
 
   /**
@@ -62,24 +86,24 @@ export class Projector {
    * @param nearM arc length around which to look, `WINDOW_M` to either side, m
    */
   project(xM: number, yM: number, nearM: number, out: Projection): void {
-    const last = this.count - 1;
+    const { last, table } = this;
     const lapM = this.closed ? Math.floor(nearM / this.lengthM) * this.lengthM : 0;
     const near = this.closed ? nearM - lapM : Math.min(this.lengthM, Math.max(0, nearM));
     let middle = Math.min(out.piece, last);
-    while (middle > 0 && this.pieces[middle]!.startM > near) middle--;
-    while (middle < last && this.pieces[middle + 1]!.startM <= near) middle++;
+    while (middle > 0 && table[middle * F.size]! > near) middle--;
+    while (middle < last && table[(middle + 1) * F.size]! <= near) middle++;
 
     this.bestSquare = Infinity;
     this.offer(middle, xM, yM, near, lapM, out);
     let back = 0;
-    for (let i = middle; back + this.pieces[i]!.startM > near - WINDOW_M;) {
+    for (let i = middle; back + table[i * F.size]! > near - WINDOW_M;) {
       if (i === 0 && !this.closed) break;
       if (i === 0) back -= this.lengthM;
       i = i === 0 ? last : i - 1;
       this.offer(i, xM, yM, near - back, lapM + back, out);
     }
     let on = 0;
-    for (let i = middle; on + this.pieces[i]!.startM + this.pieces[i]!.lengthM < near + WINDOW_M;) {
+    for (let i = middle; on + table[i * F.size]! + table[i * F.size + F.length]! < near + WINDOW_M;) {
       if (i === last && !this.closed) break;
       if (i === last) on += this.lengthM;
       i = i === last ? 0 : i + 1;
@@ -89,15 +113,17 @@ export class Projector {
 
   /** Writes the nearest place on one piece if none nearer was written before. */
   private offer(index: number, xM: number, yM: number, near: number, lapM: number, out: Projection): void {
-    const piece = this.pieces[index]!;
-    const from = Math.max(0, near - WINDOW_M - piece.startM);
-    const to = Math.min(piece.lengthM, near + WINDOW_M - piece.startM);
+    const { table } = this;
+    const at = index * F.size;
+    const startM = table[at]!;
+    const from = Math.max(0, near - WINDOW_M - startM);
+    const to = Math.min(table[at + F.length]!, near + WINDOW_M - startM);
     if (from > to) return;
-    const dx = xM - piece.xM;
-    const dy = yM - piece.yM;
-    const ahead = dx * this.cosHeading[index]! + dy * this.sinHeading[index]!;
-    const left = dy * this.cosHeading[index]! - dx * this.sinHeading[index]!;
-    const k = piece.curvaturePerM;
+    const dx = xM - table[at + F.x]!;
+    const dy = yM - table[at + F.y]!;
+    const ahead = dx * table[at + F.cosHeading]! + dy * table[at + F.sinHeading]!;
+    const left = dy * table[at + F.cosHeading]! - dx * table[at + F.sinHeading]!;
+    const k = table[at + F.curvature]!;
     let s = ahead;
     let lateralM = left;
     if (k !== 0) {
@@ -117,9 +143,9 @@ export class Projector {
     }
     if (square >= this.bestSquare) return;
     this.bestSquare = square;
-    out.sM = lapM + piece.startM + s;
+    out.sM = lapM + startM + s;
     out.lateralM = lateralM;
-    out.headingRad = piece.headingRad + k * s;
+    out.headingRad = table[at + F.heading]! + k * s;
     out.piece = index;
   }
 }
