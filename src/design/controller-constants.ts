@@ -23,6 +23,7 @@ import type { Vehicle } from '../vehicle/vehicle.js';
 import { meanPitchM } from './bar-view.js';
 import type { ClassSettings } from './design.js';
 import * as choice from './drive-choices.js';
+import type { SteeringGains } from './steering-loop.js';
 import { runActions } from './rule-runs.js';
 import { sensingConstants } from './sensing-constants.js';
 
@@ -69,6 +70,25 @@ function realGains(
       : (proportionalPerM2 * CURVATURE_PER_INV_M) / OFFSET_PER_M;
   const ratio = (derivativeTimeS * filterCoefficient) / vehicle.board.samplePeriodS;
   return { proportional: perUnit, derivative: (perUnit * ratio) / (1 << FILTER_BITS) };
+}
+
+/** The gains that the firmware's integers of one class stand for. */
+export function firmwareGains(
+  vehicle: Vehicle,
+  constants: ControllerConstants,
+  index: number,
+  tableGain: number,
+): SteeringGains {
+  const { proportional, derivative, derivativeFilter } = constants.classes[index]!;
+  const one = 1 << constants.steering.gainBits;
+  const perUnit = vehicle.control.kind === 'rules' ? tableGain : OFFSET_PER_M / CURVATURE_PER_INV_M;
+  const filterCoefficient = derivativeFilter / (1 << COEFFICIENT_BITS);
+  const ratio = (derivative * (1 << FILTER_BITS)) / proportional;
+  return {
+    proportionalPerM2: (proportional / one) * perUnit,
+    derivativeTimeS: (ratio * vehicle.board.samplePeriodS) / filterCoefficient,
+    filterCoefficient,
+  };
 }
 
 /** Largest number of bits with which every gain still fits a 16-bit integer. */

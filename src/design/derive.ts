@@ -1,6 +1,6 @@
 /** The design: from the SI vehicle to speed classes, laws and the controller that is rendered. */
 import type { Vehicle } from '../vehicle/vehicle.js';
-import { controllerConstants } from './controller-constants.js';
+import { controllerConstants, firmwareGains, tableGainPerM2 } from './controller-constants.js';
 import { delayBudget } from './delay.js';
 import type { ClassSettings, Design, DesignedClass, SpeedLimits } from './design.js';
 import { Proving, type SpeedScale } from './proving.js';
@@ -11,6 +11,9 @@ import { EXIT, FairleadError, type Problem } from '../sheet/problem.js';
 import { mToMm } from '../sheet/units.js';
 
 const NOMINAL = { gain: 1, lag: 1 };
+
+const UNPROVEN =
+  'Perturbed rehearsals on the proving lane (straights into the tightest bend, S-bends, gap, crossing) miss the finish target even at a quarter of full speed. Widen the bar, move it further ahead, or lower the tolerances by measuring.';
 
 /** One class before its speed is proven: its limits and its law. */
 interface ClassBase {
@@ -53,11 +56,18 @@ function limitedBy({ range, allowedMps, limits }: ClassBase, speedMps: number): 
   return speedMps < allowedMps ? 'finish' : bindingLimit(limits);
 }
 
-function designedClass(vehicle: Vehicle, base: ClassBase, settings: ClassSettings): DesignedClass {
-  const { speedMps, gains } = settings;
+/** A class with the law that the firmware's integers stand for, and its margins. */
+function designedClass(
+  vehicle: Vehicle,
+  base: ClassBase,
+  settings: ClassSettings,
+  gains: SteeringGains,
+): DesignedClass {
+  const { speedMps } = settings;
   const plant = lanePlantOf(vehicle, speedMps, NOMINAL);
   return {
     ...settings,
+    gains,
     limits: base.limits,
     limitedBy: limitedBy(base, speedMps),
     plant,
@@ -74,11 +84,11 @@ export function deriveDesign(vehicle: Vehicle): Design {
   const controllerAt = (scale: SpeedScale) => controllerConstants(vehicle, settings(scale));
   const proven = new Proving(vehicle).best(controllerAt);
   const scale = proven ?? { top: vehicle.drive.topSpeedMps, share: 1 };
-  return {
-    vehicle,
-    delay: delayBudget(vehicle),
-    classes: settings(scale).map((each, i) => designedClass(vehicle, bases[i]!, each)),
-    controller: controllerAt(scale),
-    remarks: proven ? [] : ['not proven'],
-  };
+  const chosen = settings(scale);
+  const controller = controllerAt(scale);
+  const tableGain = tableGainPerM2(vehicle, chosen);
+  const classes = chosen.map((each, i) =>
+    designedClass(vehicle, bases[i]!, each, firmwareGains(vehicle, controller, i, tableGain)),
+  );
+  return { vehicle, delay: delayBudget(vehicle), classes, controller, remarks: proven ? [] : [UNPROVEN] };
 }
