@@ -12,7 +12,7 @@ const CLANG_FORMAT_STYLE = JSON.stringify({
   ColumnLimit: LINE_WIDTH,
   DerivePointerAlignment: false,
   AllowShortFunctionsOnASingleLine: 'Empty',
-  AllowShortLoopsOnASingleLine: false,
+  AllowShortLoopsOnASingleLine: true,
   IncludeBlocks: 'Preserve',
   SortIncludes: 'Never',
   ReflowComments: false,

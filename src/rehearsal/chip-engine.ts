@@ -1,0 +1,106 @@
+/**
+ * Rehearses the compiled firmware itself on an emulated ATmega328P, wired to the plant.
+ *
+ * In steps of 128 us the chip runs, then the plant with the duties that the pins gave. Analog sensors are sampled when the
+ * converter starts; digital ones put their levels on their pins after each step. The start button is pressed once, after the
+ * firmware has had time to see it released. The run begins, for plant and observer, when a motor is first driven: start-up and
+ * countdown are not the rehearsal's subject.
+ */
+import type { Design } from '../design/design.js';
+import { type SheetIdentity, renderFirmware } from '../firmware/render.js';
+import type { Vehicle } from '../vehicle/vehicle.js';
+import { Atmega328p, CLOCK_HZ } from './chip-atmega328p.js';
+import { type ChipImage, buildSketch } from './chip-build.js';
+import { ChipMotors, pinNumber } from './chip-motors.js';
+import type { Engine, RunResult, RunSetup } from './engine.js';
+import { Plant } from './plant.js';
+import { RunMonitor } from './run-monitor.js';
+import type { ControlState } from './trace-recorder.js';
+
+const STEP_CYCLES = 2048;
+const STEP_S = STEP_CYCLES / CLOCK_HZ;
+/** The button: pressed, and released again, s after power-on. */
+const PRESS_S = 0.1;
+const RELEASE_S = 0.25;
+/** Time beyond the countdown in which the firmware has to set off, s. */
+const SET_OFF_S = 2;
+/** Motors undriven for so long: the firmware has stopped. A braking or slow vehicle drives them at least every few samples. */
+const STOPPED_S = 0.15;
+
+/** One run: chip, plant and observer together. */
+class ChipRun {
+  private readonly plant: Plant;
+  private readonly monitor: RunMonitor;
+  private readonly motors: ChipMotors;
+  private readonly chip: Atmega328p;
+  private readonly sensorPins: readonly number[];
+  private readonly buttonPin: number;
+
+  constructor(
+    image: ChipImage,
+    private readonly vehicle: Vehicle,
+    setup: RunSetup,
+  ) {
+    this.plant = new Plant(setup.plant, setup.lane);
+    this.monitor = new RunMonitor(this.plant, setup);
+    this.motors = new ChipMotors(vehicle, STEP_CYCLES);
+    const sensorOfChannel = new Map(vehicle.bar.pins.map((pin, i) => [pin.adc?.channel, i]));
+    this.sensorPins = vehicle.bar.kind === 'digital' ? vehicle.bar.pins.map(pinNumber) : [];
+    this.buttonPin = pinNumber(vehicle.start.button);
+    this.chip = new Atmega328p(image.program, {
+      sample: (channel) => {
+        const sensor = sensorOfChannel.get(channel);
+        return sensor === undefined ? 0 : this.plant.count(sensor);
+      },
+      pinsChanged: () => this.motors.look(this.chip),
+    });
+  }
+
+  private step(index: number): void {
+    const timeS = index * STEP_S;
+    this.chip.setPin(this.buttonPin, !(timeS >= PRESS_S && timeS < RELEASE_S));
+    this.sensorPins.forEach((pin, i) => this.chip.setPin(pin, this.plant.count(i) === 1));
+    this.chip.runTo((index + 1) * STEP_CYCLES);
+    this.motors.endStep(this.chip);
+  }
+
+  run(): RunResult {
+    const { plant, monitor, motors, chip } = this;
+    const state: ControlState = { dutyLeft: 0, dutyRight: 0, classIndex: -1, phase: -1 };
+    const setOffBy = (RELEASE_S + this.vehicle.start.countdownS + SET_OFF_S) / STEP_S;
+    let index = 0;
+    while (motors.lastDriven < 0 && index < setOffBy) this.step(index++);
+    while (!monitor.ended) {
+      this.step(index++);
+      state.dutyLeft = motors.dutyLeft;
+      state.dutyRight = motors.dutyRight;
+      plant.step(state.dutyLeft, state.dutyRight, STEP_S);
+      monitor.observe(state, chip.cycles - motors.lastDriven > STOPPED_S * CLOCK_HZ);
+    }
+    return monitor.result();
+  }
+}
+
+export class ChipEngine implements Engine {
+  readonly name = 'chip';
+
+  constructor(
+    readonly image: ChipImage,
+    private readonly vehicle: Vehicle,
+  ) {}
+
+  async run(setup: RunSetup): Promise<RunResult> {
+    return new ChipRun(this.image, this.vehicle, setup).run();
+  }
+}
+
+/**
+ * Renders and compiles a design's firmware for the chip.
+ *
+ * @throws FairleadError with exit code 5 when a tool is missing
+ */
+export async function chipEngine(sheet: SheetIdentity, design: Design): Promise<ChipEngine> {
+  const { vehicle } = design;
+  const image = await buildSketch(await renderFirmware(sheet, design), vehicle.board.id);
+  return new ChipEngine(image, vehicle);
+}
