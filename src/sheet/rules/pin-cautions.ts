@@ -1,3 +1,4 @@
+import { cautionsOf } from '../../vehicle/pin-roles.js';
 import type { Problem } from '../problem.js';
 import { joinAnd } from '../words.js';
 import type { PinUse, SheetRule } from './rule.js';
@@ -9,11 +10,8 @@ export const rule: SheetRule = {
   check({ uses }) {
     const groups = new Map<string, PinUse[]>();
     for (const use of uses) {
-      const { pin, role } = use;
-      const cautions = [pin?.caution, role === 'analog sensor' ? pin?.adc?.caution : undefined];
-      for (const caution of cautions) {
-        if (caution !== undefined) groups.set(caution, [...(groups.get(caution) ?? []), use]);
-      }
+      const cautions = use.pin === undefined ? [] : cautionsOf(use.pin, use.role);
+      for (const caution of cautions) groups.set(caution, [...(groups.get(caution) ?? []), use]);
     }
     return [...groups].flatMap(([caution, group]): Problem[] => {
       const [first] = group;

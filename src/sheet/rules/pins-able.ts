@@ -1,6 +1,7 @@
 import { listPins } from '../../vehicle/boards.js';
+import { isAble, type PinRole } from '../../vehicle/pin-roles.js';
 import type { Problem } from '../problem.js';
-import { isAble, type PinRole, type SheetRule } from './rule.js';
+import type { SheetRule } from './rule.js';
 
 const LACK: Readonly<Record<PinRole, string>> = {
   'analog sensor': 'cannot read a voltage',
@@ -16,7 +17,7 @@ export const rule: SheetRule = {
   why: 'Not every pin can read a voltage, do PWM, drive an output or hold a button up.',
   check({ board, uses }) {
     return uses.flatMap(({ pointer, pin, role, what }): Problem[] => {
-      if (pin === undefined || isAble(pin, role)) return [];
+      if (pin === undefined || pin.reserved !== undefined || isAble(pin, role)) return [];
       const able = board.pins.filter((each) => each.reserved === undefined && isAble(each, role));
       const free = able.filter((each) => uses.every((use) => use.pin !== each));
       const fix =

@@ -1,4 +1,5 @@
 import { listPins } from '../../vehicle/boards.js';
+import { sharedOutput } from '../../vehicle/pin-roles.js';
 import type { Problem } from '../problem.js';
 import type { PinUse, SheetRule } from './rule.js';
 
@@ -10,21 +11,17 @@ export const rule: SheetRule = {
     const first = new Map<string, PinUse>();
     return uses.flatMap((use): Problem[] => {
       const { pin } = use;
-      if (use.role !== 'PWM output' || pin?.pwm === undefined || pin.pwm.channel === 'routed') return [];
-      const output = `${pin.pwm.timer}${pin.pwm.channel}`;
+      const output = pin && sharedOutput(pin);
+      if (use.role !== 'PWM output' || pin?.pwm === undefined || output === undefined) return [];
       const other = first.get(output);
       if (other?.pin === undefined || other.pin === pin) {
         first.set(output, use);
         return [];
       }
-      const taken = uses
-        .flatMap((each) => each.pin?.pwm ?? [])
-        .map(({ timer, channel }) => `${timer}${channel}`);
+      const taken = uses.map((each) => each.pin && sharedOutput(each.pin));
       const free = board.pins.filter(
         (each) =>
-          each.reserved === undefined &&
-          each.pwm !== undefined &&
-          !taken.includes(`${each.pwm.timer}${each.pwm.channel}`),
+          each.reserved === undefined && each.pwm !== undefined && !taken.includes(sharedOutput(each)),
       );
       return [
         {

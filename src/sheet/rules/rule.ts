@@ -7,6 +7,7 @@
 import type { BoardFacts, PinFacts } from '../../vehicle/board-facts.js';
 import { BOARDS, findPin } from '../../vehicle/boards.js';
 import { DRIVERS } from '../../vehicle/drivers.js';
+import type { PinRole } from '../../vehicle/pin-roles.js';
 import type { ResolvedSheet } from '../defaults.js';
 import { positionsOf } from '../positions.js';
 import type { Problem } from '../problem.js';
@@ -23,9 +24,6 @@ export interface SheetRule {
   /** All violations. Never throws on a sheet that fits the schema. */
   check(context: RuleContext): Problem[];
 }
-
-/** What a pin has to do. */
-export type PinRole = 'analog sensor' | 'digital sensor' | 'PWM output' | 'output' | 'button';
 
 /** One pin that the sheet uses. */
 export interface PinUse {
@@ -79,20 +77,4 @@ function pinUses(sheet: ResolvedSheet, board: BoardFacts): PinUse[] {
   }
   add(pointerTo('start', 'buttonPin'), sheet.start.buttonPin, 'button', 'start button');
   return uses;
-}
-
-/** Whether a pin can do what a role asks. */
-export function isAble(pin: PinFacts, role: PinRole): boolean {
-  switch (role) {
-    case 'analog sensor':
-      return pin.adc !== undefined;
-    case 'digital sensor':
-      return pin.input;
-    case 'PWM output':
-      return pin.pwm !== undefined;
-    case 'output':
-      return pin.output;
-    case 'button':
-      return pin.input && pin.pullUp;
-  }
 }

@@ -1,0 +1,107 @@
+/** Proposes a wiring: which pin for which sensor, motor input and button; or says why the board cannot have one. */
+import type { Problem } from '../sheet/problem.js';
+import { counted, joinOr, withUnit } from '../sheet/words.js';
+import type { BoardFacts, BoardId } from './board-facts.js';
+import { BOARDS, listPins, sheetLabel } from './boards.js';
+import { DRIVERS, type DriverSchemeId, type MotorPinKey } from './drivers.js';
+import { bestAssignment, type Assignment, type Need } from './pin-match.js';
+import { isAble } from './pin-roles.js';
+
+export interface PinRequest {
+  sensorKind: 'analog' | 'digital';
+  /** 1 to 16. */
+  sensorCount: number;
+  scheme: DriverSchemeId;
+  /** Whether to plan a standby pin; only for schemes that have one. */
+  standby?: boolean;
+}
+
+type Label = number | string;
+
+/** Pin labels as the sheet takes them. */
+export interface PinPlan {
+  /** Leftmost sensor first. */
+  sensorPins: Label[];
+  driver: {
+    left: Partial<Record<MotorPinKey, Label>>;
+    right: Partial<Record<MotorPinKey, Label>>;
+    standbyPin?: Label;
+  };
+  buttonPin: Label;
+}
+
+/** A plan of pins, or the problem why the board has none. */
+export function proposePins(boardId: BoardId, request: PinRequest): PinPlan | Problem {
+  const board = BOARDS[boardId];
+  const assignment = bestAssignment(board, needsOf(request));
+  return assignment ? planOf(board, request, assignment) : impossible(board, request);
+}
+
+function needsOf({ sensorKind, sensorCount, scheme, standby }: PinRequest): Need[] {
+  const { motorPins, standby: hasStandby } = DRIVERS[scheme];
+  const sensors = Array.from({ length: sensorCount }, (_, index): Need => {
+    return { key: `sensor${index}`, role: sensorKind === 'analog' ? 'analog sensor' : 'digital sensor' };
+  });
+  const motors = (['left', 'right'] as const).flatMap((side) =>
+    motorPins.map(({ key, pwm }): Need => ({ key: `${side}.${key}`, role: pwm ? 'PWM output' : 'output' })),
+  );
+  const others: Need[] = [{ key: 'button', role: 'button' }];
+  if (standby && hasStandby) others.unshift({ key: 'standby', role: 'output' });
+  // Digital sensors can go nearly anywhere, so they choose last.
+  return sensorKind === 'analog' ? [...sensors, ...motors, ...others] : [...motors, ...others, ...sensors];
+}
+
+function planOf(board: BoardFacts, request: PinRequest, assignment: Assignment): PinPlan {
+  const labelOf = (key: string): Label => {
+    const pin = assignment.get(key);
+    if (pin === undefined) throw new Error(`the plan has no pin for ${key}`);
+    return sheetLabel(pin);
+  };
+  const side = (name: 'left' | 'right'): Partial<Record<MotorPinKey, Label>> =>
+    Object.fromEntries(DRIVERS[request.scheme].motorPins.map(({ key }) => [key, labelOf(`${name}.${key}`)]));
+  // Neighbouring sensors get neighbouring pins.
+  const sensorPins = board.pins.filter((pin) =>
+    [...assignment].some(([key, own]) => own === pin && /^sensor/.test(key)),
+  );
+  return {
+    sensorPins: sensorPins.map(sheetLabel),
+    driver: {
+      left: side('left'),
+      right: side('right'),
+      ...(assignment.has('standby') ? { standbyPin: labelOf('standby') } : {}),
+    },
+    buttonPin: labelOf('button'),
+  };
+}
+
+function isPossible(board: BoardFacts, request: PinRequest): boolean {
+  return bestAssignment(board, needsOf(request)) !== undefined;
+}
+
+function impossible(board: BoardFacts, request: PinRequest): Problem {
+  const { sensorKind, sensorCount, scheme } = request;
+  const usable = board.pins.filter((pin) => pin.reserved === undefined);
+  const analog = usable.filter((pin) => isAble(pin, 'analog sensor'));
+  const tooFewAnalog = sensorKind === 'analog' && analog.length < sensorCount;
+  const message = tooFewAnalog
+    ? `${board.title} has ${counted(analog.length, 'analog pin')} (${listPins(analog)}), too few for ${counted(sensorCount, 'analog sensor')}.`
+    : `${board.title} has ${counted(usable.length, 'usable pin')}; ${counted(sensorCount, `${sensorKind} sensor`)}, the ${scheme} driver and the button need ${counted(needsOf(request).length, 'pin')} of the right kinds.`;
+  const fewer = Array.from({ length: sensorCount - 1 }, (_, index) => sensorCount - 1 - index);
+  const most = fewer.find((count) => isPossible(board, { ...request, sensorCount: count }));
+  const others = Object.values(BOARDS).filter((other) => isPossible(other, request));
+  const ways = [
+    ...(sensorKind === 'analog' && isPossible(board, { ...request, sensorKind: 'digital' })
+      ? ['take digital sensors']
+      : []),
+    ...(most === undefined ? [] : [`take ${counted(most, 'sensor')} at most`]),
+    ...(others.length === 0 ? [] : [`take another board: ${joinOr(others.map(({ id }) => id))}`]),
+  ];
+  const advice = joinOr(ways);
+  return {
+    pointer: '/sensors/count',
+    message,
+    got: withUnit(sensorCount, 'sensors'),
+    ...(most === undefined ? {} : { allowed: `at most ${withUnit(most, 'sensors')}` }),
+    fix: `${advice.charAt(0).toUpperCase()}${advice.slice(1)}.`,
+  };
+}
