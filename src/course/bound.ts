@@ -101,8 +101,10 @@ function step(
   lengthM: number,
   most: (square: number, k: number) => number,
 ): number {
-  const middle = square + most(square, k) * lengthM;
-  return square + 2 * most(middle, k) * lengthM;
+  const first = most(square, k);
+  // Half way may be past a limit already, where no acceleration is left; the grid point's own limit then ends the step.
+  const second = most(square + first * lengthM, k);
+  return square + 2 * (second > 0 ? second : first) * lengthM;
 }
 
 /** Time to turn on the spot, from rest to rest, s. */
