@@ -15,7 +15,9 @@ interface CommandModule {
 }
 
 /** The commands in the order in which a vehicle comes about; the help lists them so. */
-const COMMANDS: Readonly<Record<string, () => Promise<CommandModule>>> = {};
+const COMMANDS: Readonly<Record<string, () => Promise<CommandModule>>> = {
+  check: () => import('./check.js'),
+};
 
 const EXAMPLES = `
 Without a command, fairlead opens the questionnaire; without a terminal it takes the demo cart through the whole way.

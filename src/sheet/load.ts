@@ -34,29 +34,35 @@ export interface LoadedSheet {
  * @throws FairleadError (bad input) with all problems at once: the file's, the JSON's, or the sheet's.
  */
 export async function loadSheet(path: string): Promise<LoadedSheet> {
-  const { data, text, digest } = await readJsonFile(path);
+  const { data, text, digest } = await readSheetFile(path);
   const { sheet, problems, notes } = checkSheet(data);
   if (sheet === undefined)
     throw new FairleadError(`${path} is not a sound build sheet.`, { problems, file: path });
   return { sheet, data, text, digest, notes };
 }
 
+/** Reads a sheet's file without checking what it says; throws as `readJsonFile`. */
+export function readSheetFile(path: string): Promise<JsonFile> {
+  return readJsonFile(path, 'A new sheet is made with "fairlead survey".');
+}
+
 /**
- * Reads a JSON file of ours: a sheet or a course.
+ * Reads a JSON file of ours: a sheet or a course. `advice` is added where there is nothing to read.
  *
  * @throws FairleadError (bad input) if there is none, or it is no UTF-8 JSON of a sensible size.
  */
-export async function readJsonFile(path: string): Promise<JsonFile> {
-  const bytes = await readBytes(path);
+export async function readJsonFile(path: string, advice = ''): Promise<JsonFile> {
+  const bytes = await readBytes(path, advice);
   const digest = createHash('sha256').update(bytes).digest('hex');
   const text = decoded(bytes, path);
   if (text.trim() === '') {
-    throw unreadable(path, { message: 'The file is empty.', fix: 'Make a sheet with "fairlead survey".' });
+    const fix = `Check that this is the right file. ${advice}`.trim();
+    throw unreadable(path, { message: 'The file is empty.', got: 'nothing', fix });
   }
   const fault = findJsonFault(text);
   if (fault) {
     const message = `This is not JSON: line ${fault.line}, column ${fault.column}: ${fault.what}.`;
-    throw unreadable(path, { message, got: fault.what, allowed: 'JSON', fix: 'Correct that place.' });
+    throw unreadable(path, { message, fix: 'Correct that place.' });
   }
   return { data: JSON.parse(text), text, digest };
 }
@@ -69,7 +75,7 @@ function unreadable(path: string, problem: Omit<Problem, 'pointer'>, cause?: unk
   });
 }
 
-async function readBytes(path: string): Promise<Buffer> {
+async function readBytes(path: string, advice: string): Promise<Buffer> {
   try {
     const found = await stat(path);
     if (found.isDirectory()) {
@@ -90,11 +96,11 @@ async function readBytes(path: string): Promise<Buffer> {
     return await readFile(path);
   } catch (error) {
     if (error instanceof FairleadError) throw error;
-    throw unreadable(path, reasonOf(error), error);
+    throw unreadable(path, reasonOf(error, advice), error);
   }
 }
 
-function reasonOf(error: unknown): Omit<Problem, 'pointer'> {
+function reasonOf(error: unknown, advice: string): Omit<Problem, 'pointer'> {
   const code = error instanceof Error && 'code' in error ? error.code : undefined;
   if (code === 'ENOENT') {
     return {
