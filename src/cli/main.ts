@@ -17,6 +17,7 @@ interface CommandModule {
 /** The commands in the order in which a vehicle comes about; the help lists them so. */
 const COMMANDS: Readonly<Record<string, () => Promise<CommandModule>>> = {
   check: () => import('./check.js'),
+  derive: () => import('./derive.js'),
 };
 
 const EXAMPLES = `
