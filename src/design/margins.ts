@@ -19,8 +19,9 @@ const REFINEMENTS = 44;
 /** Margins, and whether the loop crosses the negative real axis beyond -1. */
 export interface LoopScan extends Margins {
   /**
-   * Whether |L| > 1 at a crossing of the negative real axis, or L comes in from below it. A loop of two
-   * integrators with a lead, such as the lane loop, is stable exactly when this is false (Nyquist).
+   * Whether |L| > 1 at a crossing of the negative real axis, or L comes in from below it. A lane loop (two
+   * integrators, lead) is stable when this is false; when it is true, it is unstable or stable only while the
+   * gain does not fall either (Nyquist).
    */
   beyondMinusOne: boolean;
 }

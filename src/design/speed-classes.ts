@@ -2,7 +2,7 @@
  * Speed classes: for each range of bend radii, the least of four limits.
  *
  *   motor    v (1 + b / 2R) <= wheel speed at full duty: the outer wheel must get there
- *   grip     v = sqrt(mu g R), with the grip at the low end of its tolerance
+ *   grip     v = sqrt(mu g R)
  *   view     entering the bend, the line stays under the bar (entry.ts)
  *   control  a steering law exists that keeps the margins over the whole tolerance box
  *
@@ -78,9 +78,9 @@ function motorLimit(vehicle: Vehicle, radiusM: number): number {
   return ((1 - STEERING_RESERVE) * topSpeedMps) / (1 + trackM / (2 * radiusM));
 }
 
-/** Grip limit at the low end of the grip tolerance, m/s. */
+/** Grip limit, m/s; what its tolerance asks for is left to the perturbed rehearsals. */
 function gripLimit(vehicle: Vehicle, radiusM: number): number {
-  return Math.sqrt(vehicle.drive.grip * (1 - 0.5 * vehicle.tolerance.grip) * STANDARD_GRAVITY_MPS2 * radiusM);
+  return Math.sqrt(vehicle.drive.grip * STANDARD_GRAVITY_MPS2 * radiusM);
 }
 
 /** The four limits of one class, m/s. The view limit holds for the law that the other three allow. */

@@ -76,7 +76,7 @@ function openLoop(sampled: SampledLanePlant, controller: SampledController): Res
   };
 }
 
-/** Ms of the loop, for searches: coarse grid, refined peak; Infinity where the loop is unstable. */
+/** Ms of the loop, for searches: coarse grid, refined peak; Infinity where it is unstable or only conditionally stable. */
 export function loopPeak(plant: LanePlant, controller: SampledController): number {
   const loop = openLoop(samplePlant(plant), controller);
   return quickPeak(loop, LOWEST_SHARE / plant.lagS, Math.PI / plant.samplePeriodS);
@@ -84,13 +84,15 @@ export function loopPeak(plant: LanePlant, controller: SampledController): numbe
 
 /** Margins of the loop of plant and controller; an unstable loop has none of them. */
 export function loopMargins(plant: LanePlant, controller: SampledController): Margins {
-  const loop = openLoop(samplePlant(plant), controller);
+  const sampled = samplePlant(plant);
+  const loop = openLoop(sampled, controller);
   const { beyondMinusOne, ...margins } = scanLoop(
     loop,
     LOWEST_SHARE / plant.lagS,
     Math.PI / plant.samplePeriodS,
   );
-  return beyondMinusOne ? { gainMargin: 0, phaseMarginDeg: 0, ms: Infinity } : margins;
+  const stable = !beyondMinusOne || closedLoopRadius(sampled, controller) < 1;
+  return stable ? margins : { gainMargin: 0, phaseMarginDeg: 0, ms: Infinity };
 }
 
 /** Matrix of the closed loop; states e, psi, omega, filter memory, then the delayed commands. */

@@ -10,7 +10,7 @@ import { table } from './text-table.js';
 
 const LIMIT_REASONS: Readonly<Record<DesignedClass['limitedBy'], string>> = {
   motor: 'outer wheel at full duty',
-  grip: 'grip at the low end of its tolerance',
+  grip: 'grip, sqrt(mu g R)',
   view: 'line still under the bar on entry',
   control: 'steering margins over the tolerance box',
   finish: 'perturbed rehearsals of the twin',
