@@ -37,6 +37,8 @@ export interface Loss {
   timeS: number;
   xM: number;
   yM: number;
+  /** What the firmware left behind where its program ended by itself: an exception's traceback, why the chip was reset. */
+  detail?: string;
 }
 
 /** What was recorded of a run, one entry a sample; columns of equal length. */

@@ -1,0 +1,30 @@
+/** Rehearses the rendered MicroPython files themselves, in the real interpreter on a virtual chip wired to the plant. */
+import type { Design } from '../design/design.js';
+import { type SheetIdentity, renderFirmware } from '../firmware/render.js';
+import type { Vehicle } from '../vehicle/vehicle.js';
+import type { Engine, RunResult, RunSetup } from './engine.js';
+import type { PythonFile } from './micropython-interpreter.js';
+import { runProgram } from './micropython-program.js';
+import { MicroPythonRun } from './micropython-run.js';
+
+export class MicroPythonEngine implements Engine {
+  readonly name = 'micropython';
+
+  /** @param files as they lie on the board: main.py and its modules */
+  constructor(
+    readonly files: readonly PythonFile[],
+    private readonly vehicle: Vehicle,
+  ) {}
+
+  async run(setup: RunSetup): Promise<RunResult> {
+    const run = new MicroPythonRun(this.vehicle, setup);
+    return run.result(await runProgram(this.files, this.vehicle.board, run));
+  }
+}
+
+/** Renders a design's firmware for the interpreter. */
+export async function micropythonEngine(sheet: SheetIdentity, design: Design): Promise<MicroPythonEngine> {
+  const files = await renderFirmware(sheet, design);
+  const inFolder = files.map(({ path, text }) => ({ path: path.slice(path.indexOf('/') + 1), text }));
+  return new MicroPythonEngine(inFolder, design.vehicle);
+}

@@ -1,0 +1,102 @@
+/**
+ * One rehearsal in MicroPython: the virtual chip's pins wired to the plant, and the observer.
+ *
+ * The start button is pressed once, after the firmware has had time to see it released. The run begins, for plant and observer,
+ * when a motor is first driven: start-up and countdown are not the rehearsal's subject. It ends when the observer says so; the
+ * power is cut then, whatever the program is doing. If the program ends before, the vehicle rolls on with what its pins last said,
+ * as it would; after a reset these float and the motors are off.
+ */
+import type { Vehicle } from '../vehicle/vehicle.js';
+import type { RunResult, RunSetup } from './engine.js';
+import type { Surroundings } from './micropython-chip.js';
+import { MicroPythonMotors } from './micropython-motors.js';
+import { PowerCut, type ProgramEnd } from './micropython-program.js';
+import { Plant } from './plant.js';
+import { RunMonitor } from './run-monitor.js';
+import type { ControlState } from './trace-recorder.js';
+
+/** Longest step of the plant between two looks of the observer, s. */
+const LOOK_S = 2e-3;
+/** The button: pressed, and released again, s after power-on. */
+const PRESS_S = 0.3;
+const RELEASE_S = 0.45;
+/** Time beyond the countdown in which the firmware has to set off, s. */
+const SET_OFF_S = 2;
+/** Motors undriven for so long: the firmware has stopped. A braking or slow vehicle drives them at least every few samples. */
+const STOPPED_S = 0.15;
+
+export class MicroPythonRun implements Surroundings {
+  private readonly plant: Plant;
+  private readonly monitor: RunMonitor;
+  private readonly motors: MicroPythonMotors;
+  private readonly state: ControlState = { dutyLeft: 0, dutyRight: 0, classIndex: -1, phase: -1 };
+  private readonly sensorOfPin: ReadonlyMap<number, number>;
+  private readonly buttonPin: number;
+  private readonly setOffByS: number;
+  /** Time before the first drive, s. */
+  private standingS = 0;
+  private started = false;
+  private undrivenS = 0;
+
+  constructor(vehicle: Vehicle, setup: RunSetup) {
+    this.plant = new Plant(setup.plant, setup.lane);
+    this.monitor = new RunMonitor(this.plant, setup);
+    this.motors = new MicroPythonMotors(vehicle);
+    this.sensorOfPin = new Map(vehicle.bar.pins.map((pin, i) => [Number(pin.code), i]));
+    this.buttonPin = Number(vehicle.start.button.code);
+    this.setOffByS = RELEASE_S + vehicle.start.countdownS + SET_OFF_S;
+  }
+
+  isSensor(gpio: number): boolean {
+    return this.sensorOfPin.has(gpio);
+  }
+
+  isMotor(gpio: number): boolean {
+    return this.motors.isMotor(gpio);
+  }
+
+  count(gpio: number): number {
+    const sensor = this.sensorOfPin.get(gpio);
+    return sensor === undefined ? 0 : this.plant.count(sensor);
+  }
+
+  level(gpio: number, timeS: number): boolean | undefined {
+    if (gpio === this.buttonPin) return timeS >= PRESS_S && timeS < RELEASE_S ? false : undefined;
+    const sensor = this.sensorOfPin.get(gpio);
+    return sensor === undefined ? undefined : this.plant.count(sensor) === 1;
+  }
+
+  drive(gpio: number, level: number): void {
+    this.motors.drive(gpio, level);
+    if (this.motors.dutyLeft !== 0 || this.motors.dutyRight !== 0) this.started = true;
+  }
+
+  advance(durationS: number): void {
+    if (this.started) this.roll(durationS, false);
+    else this.standingS += durationS;
+    if (this.monitor.ended || this.standingS > this.setOffByS) throw new PowerCut();
+  }
+
+  /** Lets the vehicle drive on with the duties in force, until the time is over or the run is. */
+  private roll(durationS: number, programEnded: boolean): void {
+    const { plant, monitor, motors, state } = this;
+    state.dutyLeft = motors.dutyLeft;
+    state.dutyRight = motors.dutyRight;
+    const driven = state.dutyLeft !== 0 || state.dutyRight !== 0;
+    const steps = Math.ceil(durationS / LOOK_S - 1e-9);
+    for (let i = 0; i < steps && !monitor.ended; i++) {
+      plant.step(state.dutyLeft, state.dutyRight, durationS / steps);
+      this.undrivenS = driven ? 0 : this.undrivenS + durationS / steps;
+      monitor.observe(state, this.undrivenS > STOPPED_S || (programEnded && !driven));
+    }
+  }
+
+  /** The outcome, after the program has ended. */
+  result(end: ProgramEnd): RunResult {
+    if (end.by === 'reset') this.motors.release();
+    while (!this.monitor.ended) this.roll(LOOK_S, true);
+    const result = this.monitor.result();
+    if (result.loss === undefined || end.detail === '') return result;
+    return { ...result, loss: { ...result.loss, detail: end.detail } };
+  }
+}
