@@ -103,10 +103,7 @@ async function readBytes(path: string, advice: string): Promise<Buffer> {
 function reasonOf(error: unknown, advice: string): Omit<Problem, 'pointer'> {
   const code = error instanceof Error && 'code' in error ? error.code : undefined;
   if (code === 'ENOENT') {
-    return {
-      message: 'There is no such file.',
-      fix: 'Check the path, or make a sheet with "fairlead survey".',
-    };
+    return { message: 'There is no such file.', fix: `Check the path. ${advice}`.trim() };
   }
   if (code === 'EACCES' || code === 'EPERM') {
     return { message: 'The file may not be read.', fix: 'Check its access rights.' };
