@@ -39,7 +39,7 @@ describe('fairlead', () => {
     expect(stderr).toBe('');
     expect(JSON.parse(stdout)).toEqual({
       ok: false,
-      problems: [{ pointer: '', message: "missing required argument 'SHEET'" }],
+      problems: [{ pointer: '', message: "missing required argument 'sheet'" }],
     });
   });
 
