@@ -18,6 +18,7 @@ interface CommandModule {
 const COMMANDS: Readonly<Record<string, () => Promise<CommandModule>>> = {
   check: () => import('./check.js'),
   derive: () => import('./derive.js'),
+  render: () => import('./render.js'),
 };
 
 const EXAMPLES = `

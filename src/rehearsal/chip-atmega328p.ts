@@ -94,11 +94,12 @@ export class Atmega328p {
 
   /** Runs until at least so many cycles since power-on have passed. */
   runTo(cycles: number): void {
+    const execute = avrInstruction;
     while (this.cycles < cycles) {
       const { cpu } = this;
       const end = cycles - this.cyclesBefore;
       while (cpu.cycles < end && !this.resetPending) {
-        avrInstruction(cpu);
+        execute(cpu);
         cpu.tick();
       }
       if (this.resetPending) this.restart();
