@@ -113,7 +113,8 @@ export class Twin {
   private updatePhase(): void {
     const { memory } = this.constants;
     if (this.corner > 0) this.corner -= this.speed;
-    if (this.sensing.wide) {
+    // a bar that stays on the line everywhere ends a search, and with it the run, like one that sees none
+    if (this.sensing.wide && this.phase !== PHASE.search) {
       this.corner = 0;
       this.enter(PHASE.crossing);
       if (this.travelled > memory.crossingDistance) this.enter(PHASE.search);
@@ -135,7 +136,9 @@ export class Twin {
     } else if (this.searched >= memory.searchSamples) {
       this.enter(PHASE.stopped);
     }
-    this.travelled += this.speed;
+    // only what a limit is set on is counted: a sum without end would overflow in the firmware
+    if (this.phase === PHASE.follow) this.travelled = 0;
+    else this.travelled += this.speed;
     if (this.phase === PHASE.search) this.searched++;
     else this.searched = 0;
   }
@@ -183,7 +186,10 @@ export class Twin {
       this.release = memory.releaseDistance;
     } else {
       this.release -= this.speed;
-      if (this.release <= 0) this.bend = demand;
+      if (this.release <= 0) {
+        this.release = 0;
+        this.bend = demand;
+      }
     }
     let index = 0;
     while (index < last && this.bend > classes[index]!.curvature) index++;

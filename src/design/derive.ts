@@ -1,4 +1,5 @@
 /** The design: from the SI vehicle to speed classes, laws and the controller that is rendered. */
+import type { ControllerConstants } from '../controller/constants.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { controllerConstants, firmwareGains, tableGainPerM2 } from './controller-constants.js';
 import { delayBudget } from './delay.js';
@@ -6,6 +7,7 @@ import type { ClassSettings, Design, DesignedClass, SpeedLimits } from './design
 import { Proving, type SpeedScale } from './proving.js';
 import { type ClassRange, bindingLimit, classRanges, speedLimits } from './speed-classes.js';
 import { designLaw, lanePlantOf, marginsAt, worstMargins } from './steering-gains.js';
+import { INT32_MAX, overflows } from './intervals.js';
 import { type SteeringGains, controllerOf } from './steering-loop.js';
 import { EXIT, FairleadError, type Problem } from '../sheet/problem.js';
 import { mToMm } from '../sheet/units.js';
@@ -77,6 +79,18 @@ function designedClass(
   };
 }
 
+function refuseOverflow(vehicle: Vehicle, controller: ControllerConstants): void {
+  const problems = overflows(controller, vehicle.board.adcMaxCount).map(({ name, magnitude }): Problem => ({
+    pointer: '',
+    message: `The firmware's 32-bit integers cannot hold an intermediate of the control law: ${name}.`,
+    got: magnitude.toExponential(2),
+    allowed: `at most ${INT32_MAX}`,
+    fix: 'Check the speeds and lengths of the sheet for a wrong unit.',
+  }));
+  if (problems.length > 0)
+    throw new FairleadError('No design meets the sheet.', { exitCode: EXIT.noDesign, problems });
+}
+
 /** Designs the controller of a vehicle; throws FairleadError with exit code 3 when nothing meets the sheet. */
 export function deriveDesign(vehicle: Vehicle): Design {
   const bases = classRanges(vehicle).map((range) => classBase(vehicle, range));
@@ -86,6 +100,7 @@ export function deriveDesign(vehicle: Vehicle): Design {
   const scale = proven ?? { top: vehicle.drive.topSpeedMps, share: 1 };
   const chosen = settings(scale);
   const controller = controllerAt(scale);
+  refuseOverflow(vehicle, controller);
   const tableGain = tableGainPerM2(vehicle, chosen);
   const classes = chosen.map((each, i) =>
     designedClass(vehicle, bases[i]!, each, firmwareGains(vehicle, controller, i, tableGain)),
