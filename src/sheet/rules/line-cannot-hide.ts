@@ -22,7 +22,7 @@ export const rule: SheetRule = {
       const before = positionsMm[index - 1];
       if (before === undefined || before - position <= widestMm + SLACK_MM) return [];
       const between = withUnit(before - position, 'mm');
-      const allowed = `at most ${withUnit(Math.floor(widestMm * 10) / 10, 'mm')}`;
+      const allowed = `at most ${withUnit(Math.floor((widestMm + SLACK_MM) * 10) / 10, 'mm')}`;
       return [
         {
           pointer: even ? '/sensors/pitchMm' : pointerTo('sensors', 'positionsMm', index),
