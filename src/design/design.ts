@@ -1,6 +1,6 @@
 /** What the design finds for one vehicle: the numbers of `derive`, and the controller that is rendered. */
 import type { ControllerConstants } from '../controller/constants.js';
-import type { SteeringGains } from './steering-loop.js';
+import type { SampledController, SteeringGains } from './steering-loop.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 
 /** One share of the delay between the floor and the motors, s. */
@@ -42,7 +42,7 @@ export interface DesignedClass extends ClassSettings {
   limitedBy: keyof SpeedLimits | 'sheet' | 'finish';
   plant: { lookaheadM: number; speedMps: number; lagS: number; delayS: number; samplePeriodS: number };
   /** From lateral error (m) to commanded turn rate (rad/s), polynomials in z^-1. */
-  controller: { numerator: number[]; denominator: number[]; samplePeriodS: number };
+  controller: SampledController;
   /** At the nominal vehicle. */
   margins: Margins;
   /** Worst over the tolerance box. */
