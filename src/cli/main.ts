@@ -16,9 +16,11 @@ interface CommandModule {
 
 /** The commands in the order in which a vehicle comes about; the help lists them so. */
 const COMMANDS: Readonly<Record<string, () => Promise<CommandModule>>> = {
+  survey: () => import('./survey.js'),
   check: () => import('./check.js'),
   derive: () => import('./derive.js'),
   render: () => import('./render.js'),
+  rehearse: () => import('./rehearse.js'),
 };
 
 const EXAMPLES = `
