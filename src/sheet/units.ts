@@ -21,8 +21,8 @@ const FACTORS = {
   mm: { mm: 1, cm: 10, m: 1000, in: 25.4, ft: 304.8, inch: 25.4, inches: 25.4, '"': 25.4, '″': 25.4 },
   s: { s: 1, ms: 0.001, min: 60, sec: 1, seconds: 1 },
   ms: { ms: 1, s: 1000, sec: 1000 },
-  V: { v: 1, mv: 0.001, volt: 1, volts: 1 },
-  A: { a: 1, ma: 0.001 },
+  V: { V: 1, mV: 0.001, volt: 1, volts: 1 },
+  A: { A: 1, mA: 0.001 },
   kg: { kg: 1, g: 0.001, lb: 0.45359237, oz: 0.45359237 / 16 },
   rpm: { rpm: 1, '1/min': 1, rps: 60, 'rad/s': 60 / (2 * Math.PI), 'r/min': 1 },
   'm/s': { 'm/s': 1, 'mm/s': 0.001, 'cm/s': 0.01, 'km/h': 1 / 3.6, 'in/s': 0.0254 },
@@ -90,13 +90,12 @@ export function parseLength(text: string): Quantity {
 }
 
 function scaled(number: number, unitText: string, text: string, unit: Unit): Quantity {
-  const factors: Readonly<Record<string, number>> = FACTORS[unit];
+  const names = Object.entries<number>(FACTORS[unit]);
   const written = unitText.trim().toLowerCase();
-  const factor = written === '' ? 1 : Object.hasOwn(factors, written) ? factors[written] : undefined;
+  const factor = written === '' ? 1 : names.find(([name]) => name.toLowerCase() === written)?.[1];
   if (factor === undefined) {
-    const known = Object.keys(factors).slice(0, 5);
-    if (known.length === 0) return nonsense(text, unit);
-    const allowed = joinOr(known.map((name) => (name === 'v' ? 'V' : name)));
+    if (names.length === 0) return nonsense(text, unit);
+    const allowed = joinOr(names.slice(0, 5).map(([name]) => name));
     return {
       ok: false,
       message: `${quote(text)}: the unit ${quote(unitText.trim())} does not fit here; use ${allowed}.`,
