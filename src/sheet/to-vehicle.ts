@@ -6,11 +6,8 @@ import type { MotorWiring, Vehicle } from '../vehicle/vehicle.js';
 import type { ResolvedSheet } from './defaults.js';
 import { positionsOf } from './positions.js';
 import { topSpeedMps } from './top-speed.js';
+import { typicalReadings } from './typical-readings.js';
 import { mmToM, msToS, percentToFraction } from './units.js';
-
-/** Readings of a typical sensor, as shares of the converter's range: over the darker and over the lighter surface. */
-const TYPICAL_DARK = 0.12;
-const TYPICAL_LIGHT = 0.82;
 
 /**
  * The vehicle that a sheet describes.
@@ -91,13 +88,11 @@ function calibrationOf(sheet: ResolvedSheet, board: BoardFacts): Vehicle['bar'][
   const { kind, count, calibration } = sheet.sensors;
   const all = (reading: number): number[] => Array.from({ length: count }, () => reading);
   if (kind === 'digital') return { mode: 'stored', ground: all(0), line: all(1) };
-  const dark = Math.round(TYPICAL_DARK * board.adcMaxCount);
-  const light = Math.round(TYPICAL_LIGHT * board.adcMaxCount);
-  const [ground, line] = sheet.line.polarity === 'light-on-dark' ? [dark, light] : [light, dark];
+  const typical = typicalReadings(board, sheet.line.polarity);
   return {
     mode: calibration.mode,
-    ground: calibration.ground ?? all(ground),
-    line: calibration.line ?? all(line),
+    ground: calibration.ground ?? all(typical.ground),
+    line: calibration.line ?? all(typical.line),
   };
 }
 

@@ -3,6 +3,7 @@
  * with their values; where the sheet has a number, text with a unit will do ("6.5 cm").
  */
 import { checkSheet } from '../sheet/check.js';
+import { unknownKeyProblem } from '../sheet/nearest-key.js';
 import type { Problem } from '../sheet/problem.js';
 import { SCHEMAS, schemaAt } from '../sheet/schema.js';
 import { isUnit, parseQuantity } from '../sheet/units.js';
@@ -11,9 +12,10 @@ import { assemble } from './assemble.js';
 import { Facts, IS_READING } from './facts.js';
 import { isObject, type Json, type JsonObject, leavesOf, sameJson, valueAt, withValue } from './json-tree.js';
 import { readClasses, readValues, spread } from './lists.js';
-import { IS_PIN, planProblem } from './pins.js';
-import { entriesFor } from './questions.js';
+import { ABOUT_PINS, IS_PIN, planProblem } from './pins.js';
 import type { Read } from './question.js';
+import { entriesFor } from './questions.js';
+import { keyOrder } from './schema-node.js';
 
 export type FromAnswers = { sheet: JsonObject } | { problems: Problem[] };
 
@@ -39,11 +41,22 @@ export function sheetFromAnswers(data: unknown, base: JsonObject): FromAnswers {
   const sheet = assemble(facts);
   const problems = firstOfEach([
     ...unreadable,
+    ...given.flatMap(([pointer]) => unknownKey(pointer)),
     ...planAndCheck(facts, sheet),
     ...refused(facts),
     ...withoutEffect(given, facts, sheet),
   ]);
   return problems.length > 0 ? { problems } : { sheet };
+}
+
+/** The first key on the way to a value that a sheet cannot have. */
+function unknownKey(pointer: string): Problem[] {
+  const keys = pointer.split('/').slice(1);
+  const pointers = keys.map((_, index) => `/${keys.slice(0, index + 1).join('/')}`);
+  const wrong = pointers.findIndex((each) => schemaAt(SCHEMAS.sheet, each) === undefined);
+  if (wrong < 0) return [];
+  const parent = pointers[wrong - 1] ?? '';
+  return [unknownKeyProblem(SCHEMAS.sheet, parent, keys[wrong] ?? '', keyOrder(parent))];
 }
 
 /** A value as the sheet takes it: text is read where the sheet wants numbers. */
@@ -84,7 +97,7 @@ function planAndCheck(facts: Facts, sheet: JsonObject): Problem[] {
   const { problems } = checkSheet(sheet);
   const noPlan = planProblem(facts);
   // Without a plan there are no pins to complain of.
-  return noPlan ? [noPlan, ...problems.filter(({ pointer }) => !IS_PIN.test(pointer))] : problems;
+  return noPlan ? [noPlan, ...problems.filter(({ pointer }) => !ABOUT_PINS.test(pointer))] : problems;
 }
 
 /** Answers that their question would not take. */

@@ -9,7 +9,9 @@ import { tightestRadius } from '../sheet/rules/bend-in-view.js';
 import { ruleContext } from '../sheet/rules/rule.js';
 import { barView } from '../sheet/rules/view.js';
 import { topSpeedMps } from '../sheet/top-speed.js';
+import { typicalReadings } from '../sheet/typical-readings.js';
 import { mmToM } from '../sheet/units.js';
+import { BOARDS } from '../vehicle/boards.js';
 import { STANDARD_GRAVITY_MPS2 } from '../vehicle/gravity.js';
 
 /** What a row of sensors sees. Lengths in mm. */
@@ -76,6 +78,23 @@ function barLines(sheet: ResolvedSheet): string[] {
   ];
 }
 
+function contrastLines(sheet: ResolvedSheet): string[] {
+  const { ground = [], line = [] } = sheet.sensors.calibration;
+  const { adcMaxCount } = BOARDS[sheet.target.board];
+  const least = Math.min(...ground.map((reading, index) => Math.abs((line[index] ?? reading) - reading)));
+  const percent = Math.round((100 * least) / adcMaxCount);
+  const typical = typicalReadings(BOARDS[sheet.target.board], sheet.line.polarity);
+  const guessed =
+    ground.every((reading) => reading === typical.ground) &&
+    line.every((reading) => reading === typical.line);
+  return [
+    `Line and ground differ by ${least} of ${adcMaxCount} counts (${percent} %).`,
+    ...(guessed
+      ? ['These are readings of a typical sensor: take your own before the first run, or choose the sweep.']
+      : []),
+  ];
+}
+
 function speedLines(sheet: ResolvedSheet): string[] {
   const { gripCoefficient } = sheet.drive;
   const { tightestRadiusMm } = sheet.line;
@@ -106,6 +125,7 @@ function pinLines(sheet: ResolvedSheet): string[] {
 /** What is told after a question, by its id, or after a group of questions. */
 const LINES: Readonly<Record<string, (sheet: ResolvedSheet) => string[]>> = {
   '/sensors/spotRadiusMm': barLines,
+  '/sensors/calibration/line': contrastLines,
   '/drive/motor/stallCurrentA': speedLines,
   'end of drive': pinLines,
   '/power/emptyV': batteryLines,

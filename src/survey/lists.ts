@@ -1,4 +1,5 @@
 /** Questions answered with several values in one line: readings of the sensors, their positions, speed classes. */
+import { typicalReadings } from '../sheet/typical-readings.js';
 import type { Unit } from '../sheet/units.js';
 import { describeValue, quote } from '../sheet/words.js';
 import type { Facts } from './facts.js';
@@ -52,16 +53,10 @@ function judgedAll(node: SchemaNode, values: readonly Json[], whole: Json): Read
   return refused ?? { value: whole };
 }
 
-/**
- * Readings of a typical sensor board, as a share of the converter's range: dark surfaces 12 %, light ones 82 %
- * (common practice). Only a start: the vehicle's own readings are to be taken before its first run.
- */
-const TYPICAL_SHARE = { dark: 0.12, light: 0.82 } as const;
-
 function typicalReading(pointer: string, facts: Facts): number {
-  const isLine = pointer.endsWith('/line');
-  const lineIsLight = facts.text('/line/polarity') === 'light-on-dark';
-  return Math.round(TYPICAL_SHARE[isLine === lineIsLight ? 'light' : 'dark'] * facts.board.adcMaxCount);
+  const dark = facts.text('/line/polarity') === 'dark-on-light';
+  const { ground, line } = typicalReadings(facts.board, dark ? 'dark-on-light' : 'light-on-dark');
+  return pointer.endsWith('/line') ? line : ground;
 }
 
 /** One reading for all sensors, or one for each. */

@@ -19,6 +19,9 @@ export interface PinNeed {
 export const IS_PIN =
   /^\/(sensors\/pins|drive\/driver\/(left|right)\/(pwm|dir|in1|in2)|drive\/driver\/standbyPin|start\/buttonPin)(\/|$)/;
 
+/** Pointers of the pins and of what holds nothing else to ask for. */
+export const ABOUT_PINS = /^\/(sensors\/pins|drive\/driver\/(left|right|standbyPin)|start\/buttonPin)(\/|$)/;
+
 /** How the pins come about: as proposed, as the sheet at hand has them, or one by one. */
 export type PinMode = 'proposed' | 'kept' | 'by-hand';
 

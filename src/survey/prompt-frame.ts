@@ -22,6 +22,7 @@ export function questionLines(config: PromptConfig, explained: boolean): string[
   const heading = question.allowed === '' ? question.title : `${question.title}, ${question.allowed}`;
   const [first = '', ...rest] = wrap(heading, columns);
   return [
+    '',
     style('bold', first),
     ...rest.map((line) => style('bold', line)),
     ...wrap(question.why, columns, 2),

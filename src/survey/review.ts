@@ -3,7 +3,7 @@ import type { SheetCheck } from '../sheet/check.js';
 import type { Problem } from '../sheet/problem.js';
 import { counted } from '../sheet/words.js';
 import { factsOf, type FlowState, visibleEntries } from './flow.js';
-import { IS_PIN } from './pins.js';
+import { ABOUT_PINS } from './pins.js';
 import type { PromptConfig } from './prompt-frame.js';
 import { type Choice, plainly, type Question, type Read } from './question.js';
 import { type Entry, GROUPS } from './questions.js';
@@ -17,7 +17,7 @@ export function problemText({ message, fix }: Problem): string {
 
 /** The question that a problem is about: the one of that value, of the whole it belongs to, or of a part of it. */
 export function concerned(pointer: string, entries: readonly Entry[]): Entry | undefined {
-  const plan = IS_PIN.test(pointer) ? ['#pins', '#fit-pins'] : [];
+  const plan = ABOUT_PINS.test(pointer) ? ['#pins', '#fit-pins'] : [];
   const ids = [
     ...entries.map(({ id }) => id).filter((id) => pointer === id || pointer.startsWith(`${id}/`)),
     ...plan,
@@ -49,8 +49,10 @@ export function reviewLines(
   for (const [index, entry] of entries.entries()) {
     if (entry.group !== group) lines.push('', style('bold', GROUPS[entry.group]));
     group = entry.group;
-    const { title, show, defaultValue } = entry.make(facts);
-    lines.push(...wrap(`${String(index + 1).padStart(2)} ${title}: ${show(defaultValue)}`, columns, 1, 5));
+    const { title, show, defaultValue, lines: plan = [] } = entry.make(facts);
+    const number = index + 1;
+    lines.push(...wrap(`${number} ${title}: ${show(defaultValue)}`, columns, number < 10 ? 2 : 1, 4));
+    lines.push(...plan.flatMap((line) => wrap(line, columns, 4, 2)));
     remarks(entry, 4);
   }
   remarks(undefined, 0);

@@ -49,7 +49,7 @@ export async function converse(talk: Conversation): Promise<Ending> {
 function sayHeading(group: GroupId, surface: Surface): void {
   const ids = Object.keys(GROUPS);
   const title = `${ids.indexOf(group) + 1}/${ids.length} ${GROUPS[group]}`;
-  surface.say(`\n${surface.style('bold', title)}\n\n`);
+  surface.say(`\n${surface.style('bold', title)}\n`);
 }
 
 async function askEntry(
