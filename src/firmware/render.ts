@@ -7,7 +7,7 @@
  */
 import { readFile } from 'node:fs/promises';
 import Handlebars from 'handlebars';
-import type { Design } from '../design/design.js';
+import type { Design, DesignedClass } from '../design/design.js';
 import { comment } from './comments.js';
 import { formatCode } from './format.js';
 import { type IntegerType, type Language, literal } from './literals.js';
@@ -46,6 +46,11 @@ export interface SheetIdentity {
   digest: string;
 }
 
+/** What the firmware is made from: of a design, all but how it was found. */
+export interface FirmwareDesign extends Pick<Design, 'vehicle' | 'controller'> {
+  classes: readonly Pick<DesignedClass, 'minRadiusM' | 'speedMps' | 'limitedBy'>[];
+}
+
 const TEMPLATES = new URL('../../templates/', import.meta.url);
 
 function engineFor(language: Language): typeof Handlebars {
@@ -75,15 +80,16 @@ export async function fillTemplates(rendering: Rendering): Promise<RenderedFile[
   return files;
 }
 
-async function renderingOf(sheet: SheetIdentity, design: Design): Promise<Rendering> {
+async function renderingOf(sheet: SheetIdentity, design: FirmwareDesign): Promise<Rendering> {
   if (design.vehicle.language === 'arduino') {
     const { arduinoRendering } = await import('./view-arduino.js');
     return arduinoRendering(sheet, design);
   }
-  throw new Error(`There are no templates for ${design.vehicle.language}.`);
+  const { micropythonRendering } = await import('./view-micropython.js');
+  return micropythonRendering(sheet, design);
 }
 
 /** The firmware of one vehicle, the manifest excepted. */
-export async function renderFirmware(sheet: SheetIdentity, design: Design): Promise<RenderedFile[]> {
+export async function renderFirmware(sheet: SheetIdentity, design: FirmwareDesign): Promise<RenderedFile[]> {
   return fillTemplates(await renderingOf(sheet, design));
 }

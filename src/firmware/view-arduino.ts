@@ -1,9 +1,8 @@
 /** The view model of the Arduino sketch: pins, what the driver's scheme needs, and the files to write. */
-import type { Design } from '../design/design.js';
 import type { PinFacts } from '../vehicle/board-facts.js';
 import type { MotorWiring, Vehicle } from '../vehicle/vehicle.js';
 import { fileName } from './identifiers.js';
-import type { Rendering, SheetIdentity, TemplateFile } from './render.js';
+import type { FirmwareDesign, Rendering, SheetIdentity, TemplateFile } from './render.js';
 import { type CommonView, commonView } from './view.js';
 
 /** LED_BUILTIN of Uno and Nano: variants/standard/pins_arduino.h. */
@@ -94,7 +93,7 @@ function pinLines(vehicle: Vehicle): PinLine[] {
   return lines;
 }
 
-function arduinoView(sheet: SheetIdentity, design: Design): ArduinoView {
+function arduinoView(sheet: SheetIdentity, design: FirmwareDesign): ArduinoView {
   const { vehicle } = design;
   const { scheme, left, right, standby } = vehicle.drive;
   const led = usedPins(vehicle).every((pin) => pin.label !== LED_LABEL);
@@ -139,7 +138,7 @@ function filesOf(view: ArduinoView): TemplateFile[] {
 }
 
 /** Templates, paths and view model of one vehicle's sketch. */
-export function arduinoRendering(sheet: SheetIdentity, design: Design): Rendering {
+export function arduinoRendering(sheet: SheetIdentity, design: FirmwareDesign): Rendering {
   const view = arduinoView(sheet, design);
   return { folder: 'arduino', language: 'cpp', files: filesOf(view), view };
 }

@@ -1,7 +1,8 @@
 /** The table of speed classes as the firmware holds it. */
-import type { Design, DesignedClass } from '../design/design.js';
+import type { DesignedClass } from '../design/design.js';
 import { mToMm } from '../sheet/units.js';
 import { numberText } from './literals.js';
+import type { FirmwareDesign } from './render.js';
 
 export interface ClassRow {
   curvature: number;
@@ -23,7 +24,7 @@ const LIMIT_WORDS: Readonly<Record<DesignedClass['limitedBy'], string>> = {
 };
 
 /** One row a class, the fastest first. */
-export function classRows(design: Design): ClassRow[] {
+export function classRows(design: FirmwareDesign): ClassRow[] {
   return design.controller.classes.map((row, index) => {
     const designed = design.classes[index]!;
     const radius = numberText(mToMm(designed.minRadiusM), 3);

@@ -3,12 +3,11 @@
  * of the header, and what this vehicle has. A language's own view model adds its pins and its files.
  */
 import type { ControllerConstants } from '../controller/constants.js';
-import type { Design } from '../design/design.js';
 import { VERSION } from '../version.js';
 import type { ConstantGroup } from './constant.js';
 import { type Features, featuresOf } from './features.js';
 import { type Reason, headerParagraphs, reasonsOf } from './header.js';
-import type { SheetIdentity } from './render.js';
+import type { FirmwareDesign, SheetIdentity } from './render.js';
 import { type ClassRow, classRows } from './view-classes.js';
 import { driveConstants, memoryConstants, steeringConstants } from './view-drive.js';
 import { sensingConstants } from './view-sensing.js';
@@ -56,7 +55,7 @@ function ruleLines(controller: ControllerConstants): RuleLine[] {
  *
  * @param led whether the board has an LED that the vehicle leaves free
  */
-export function commonView(sheet: SheetIdentity, design: Design, led: boolean): CommonView {
+export function commonView(sheet: SheetIdentity, design: FirmwareDesign, led: boolean): CommonView {
   const { vehicle, controller } = design;
   const features = featuresOf(controller, led);
   const groups: ConstantGroup[] = [

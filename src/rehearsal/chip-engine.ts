@@ -6,8 +6,7 @@
  * firmware has had time to see it released. The run begins, for plant and observer, when a motor is first driven: start-up and
  * countdown are not the rehearsal's subject.
  */
-import type { Design } from '../design/design.js';
-import { type SheetIdentity, renderFirmware } from '../firmware/render.js';
+import { type FirmwareDesign, type SheetIdentity, renderFirmware } from '../firmware/render.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { Atmega328p, CLOCK_HZ } from './chip-atmega328p.js';
 import { type ChipImage, buildSketch } from './chip-build.js';
@@ -99,7 +98,7 @@ export class ChipEngine implements Engine {
  *
  * @throws FairleadError with exit code 5 when a tool is missing
  */
-export async function chipEngine(sheet: SheetIdentity, design: Design): Promise<ChipEngine> {
+export async function chipEngine(sheet: SheetIdentity, design: FirmwareDesign): Promise<ChipEngine> {
   const { vehicle } = design;
   const image = await buildSketch(await renderFirmware(sheet, design), vehicle.board.id);
   return new ChipEngine(image, vehicle);

@@ -1,67 +1,84 @@
-/** A hand-made vehicle, for tests that need a design without a sheet. */
-import { deriveDesign } from '../../src/design/derive.js';
-import type { Design } from '../../src/design/design.js';
-import { BOARDS, findPin } from '../../src/vehicle/boards.js';
-import type { BoardFacts, PinFacts } from '../../src/vehicle/board-facts.js';
+/** Vehicles for tests of the firmware: changed copies of the demo sheet, with a design that costs no search. */
+import { controllerConstants } from '../../src/design/controller-constants.js';
+import { classRanges } from '../../src/design/speed-classes.js';
+import type { FirmwareDesign } from '../../src/firmware/render.js';
+import { checkSheet } from '../../src/sheet/check.js';
+import { toVehicle } from '../../src/sheet/to-vehicle.js';
+import { STANDARD_GRAVITY_MPS2 } from '../../src/vehicle/gravity.js';
 import type { Vehicle } from '../../src/vehicle/vehicle.js';
+import { type Changes, changedSheet } from '../sheet/example-sheet.js';
 
 export const SHEET = { digest: '0'.repeat(64) };
 
-export function pin(board: BoardFacts, label: string | number): PinFacts {
-  const found = findPin(board, label);
-  if (found === undefined) throw new Error(`${board.id} has no pin ${label}.`);
-  return found;
+/** The vehicle of the demo sheet with some values changed. */
+export function cart(changes: Changes = {}): Vehicle {
+  const { sheet, problems } = checkSheet(changedSheet(changes));
+  if (sheet === undefined) throw new Error(JSON.stringify(problems, undefined, 1));
+  return toVehicle(sheet);
 }
 
-/** The demo cart on an Uno: analog bar of six, pwm-in-in, stored calibration. */
-export function trayCart(): Vehicle {
-  const board = BOARDS.uno;
-  const at = (label: string | number) => pin(board, label);
-  return {
-    name: 'tray-cart',
-    board,
-    language: 'arduino',
-    line: {
-      polarity: 'light-on-dark',
-      widthM: 0.019,
-      tightestRadiusM: 0.12,
-      longestGapM: 0.04,
-      crossings: true,
-    },
-    bar: {
-      kind: 'analog',
-      positionsM: [0.025, 0.015, 0.005, -0.005, -0.015, -0.025],
-      aheadM: 0.075,
-      spotRadiusM: 0.004,
-      pins: ['A0', 'A1', 'A2', 'A3', 'A4', 'A5'].map(at),
-      lineLevel: 'high',
-      calibration: { mode: 'stored', ground: Array(6).fill(123), line: Array(6).fill(839) },
-    },
-    drive: {
-      trackM: 0.12,
-      wheelDiameterM: 0.042,
-      massKg: 0.6,
-      grip: 0.7,
-      topSpeedMps: 1.4998,
-      lagS: 0.08,
-      startDuty: 0.1,
-      stallCurrentA: 1.2,
-      scheme: 'pwm-in-in',
-      left: { pwm: at(5), in1: at(7), in2: at(8), inverted: false },
-      right: { pwm: at(6), in1: at(9), in2: at(10), inverted: false },
-      trimLeft: 1,
-      trimRight: 1,
-    },
-    power: { nominalV: 6, fullV: 6.6, emptyV: 5.2 },
-    control: { kind: 'pid' },
-    speeds: { classes: 'auto', finishTarget: 0.995 },
-    start: { button: at(2), countdownS: 0.5, runLimitS: 120 },
-    tolerance: { motorGain: 0.07, lag: 0.35, grip: 0.2 },
-  };
+/**
+ * A design with rules of thumb in the place of the search for laws and of the proof: curvature 2 y / L^2, which points the
+ * vehicle at the line seen L ahead, and a lead of one motor lag. It drives the demo cart; the firmware's integers are made
+ * from it as from any other.
+ */
+export function quickDesign(vehicle: Vehicle): FirmwareDesign {
+  const { drive, bar } = vehicle;
+  const classes = classRanges(vehicle).map((range) => {
+    const gripMps = Math.sqrt(0.6 * drive.grip * STANDARD_GRAVITY_MPS2 * range.minRadiusM);
+    return {
+      name: range.name,
+      minRadiusM: range.minRadiusM,
+      speedMps: range.speedMps ?? Math.min(0.7 * drive.topSpeedMps, gripMps),
+      limitedBy: 'grip' as const,
+      gains: { proportionalPerM2: 2 / bar.aheadM ** 2, derivativeTimeS: drive.lagS, filterCoefficient: 0.4 },
+    };
+  });
+  return { vehicle, classes, controller: controllerConstants(vehicle, classes) };
 }
 
-export function designOf(change: (vehicle: Vehicle) => void = () => undefined): Design {
-  const vehicle = trayCart();
-  change(vehicle);
-  return deriveDesign(vehicle);
-}
+const NANO = { '/target/board': 'nano' };
+const DUAL_PWM = {
+  '/drive/driver': {
+    scheme: 'dual-pwm',
+    left: { in1: 5, in2: 6 },
+    right: { in1: 9, in2: 10, inverted: true },
+  },
+};
+const PWM_DIR = {
+  '/drive/driver': {
+    scheme: 'pwm-dir',
+    left: { pwm: 9, dir: 7, inverted: true },
+    right: { pwm: 10, dir: 13 },
+  },
+};
+const SWEEP = { '/sensors/calibration': { mode: 'sweep' } };
+const DIGITAL = { '/sensors/kind': 'digital', '/sensors/calibration': undefined };
+const RULES = { '/control/kind': 'rules' };
+const NO_CROSSINGS = { '/line/crossings': false, '/line/longestGapMm': 0 };
+const EIGHT = {
+  ...NANO,
+  '/sensors/count': 8,
+  '/sensors/pins': ['A0', 'A1', 'A2', 'A3', 'A4', 'A5', 'A6', 'A7'],
+  '/sensors/calibration': {
+    mode: 'stored',
+    ground: [700, 710, 690, 720, 705, 702, 698, 700],
+    line: [90, 95, 80, 102, 99, 91, 88, 93],
+  },
+  '/line/polarity': 'dark-on-light',
+};
+const UNEVEN = { '/sensors/pitchMm': undefined, '/sensors/positionsMm': [27, 15, 5, -5, -15, -27] };
+
+/** Vehicles that between them use every branch of the templates, by what is special about them. */
+export const CARTS: Readonly<Record<string, Changes>> = {
+  'the demo cart': {},
+  'the demo cart with rules': RULES,
+  'digital sensors': { ...DIGITAL, ...DUAL_PWM },
+  'digital sensors and rules': { ...DIGITAL, ...DUAL_PWM, ...RULES, ...NANO, '/sensors/lineLevel': 'low' },
+  'a sweep': { ...SWEEP, ...PWM_DIR },
+  'a sweep, dark line, and rules': { ...SWEEP, ...PWM_DIR, ...RULES, '/line/polarity': 'dark-on-light' },
+  'eight sensors, dark line': EIGHT,
+  'eight sensors, dark line and rules': { ...EIGHT, ...RULES },
+  'uneven bar without crossings': { ...UNEVEN, ...NO_CROSSINGS },
+  'uneven bar without crossings and rules': { ...UNEVEN, ...NO_CROSSINGS, ...RULES },
+};

@@ -1,0 +1,172 @@
+/** The view model of the MicroPython program: pins, what board and driver need, and the files to write. */
+import type { BoardId } from '../vehicle/board-facts.js';
+import type { Constant, ConstantGroup } from './constant.js';
+import { fileName } from './identifiers.js';
+import type { IntegerType } from './literals.js';
+import type { FirmwareDesign, Rendering, SheetIdentity, TemplateFile } from './render.js';
+import { checkSmallIntegers } from './small-integers.js';
+import { type PinLine, directionLines, pinLines, usedPins } from './view-pins.js';
+import { type CommonView, commonView } from './view.js';
+
+/** The LED on the board: the pin that it takes, and its name in MicroPython. */
+interface BoardLed {
+  label: string;
+  code: string;
+  about: string;
+}
+
+const LEDS: Readonly<Partial<Record<BoardId, BoardLed>>> = {
+  // "LED" is the name on boards with and without radio, which have it on different pins.
+  pico: { label: 'GP25', code: '"LED"', about: "The board's own LED." },
+  esp32: { label: 'GPIO2', code: 'const(2)', about: 'The LED of most boards of this kind.' },
+};
+
+/** Type codes of MicroPython's arrays. */
+const TYPECODES: Readonly<Record<IntegerType, string>> = {
+  int8_t: 'b',
+  uint8_t: 'B',
+  int16_t: 'h',
+  uint16_t: 'H',
+  int32_t: 'i',
+  uint32_t: 'I',
+};
+
+interface MicroPythonView extends Omit<CommonView, 'groups' | 'reasons'> {
+  groups: readonly (Omit<ConstantGroup, 'constants'> & {
+    constants: readonly (Constant & { typecode: string })[];
+  })[];
+  reasons: readonly { constantName: string; flashes: number; about: string }[];
+  pwmDir: boolean;
+  pwmInIn: boolean;
+  dualPwm: boolean;
+  standby: boolean;
+  /** The converter has an attenuator that has to be set. */
+  attenuated: boolean;
+  sensorPins: readonly string[];
+  pins: readonly PinLine[];
+  directions: readonly { name: string; level: number; about: string }[];
+  ledCode: string;
+  ledAbout: string;
+  pwmHz: number;
+}
+
+/** Longest list of file names in one command. */
+const COPY_WIDTH = 70;
+
+/** LineLost -> REASON_LINE_LOST */
+function reasonName(name: string): string {
+  return `REASON${name.replace(/[A-Z]/g, (letter) => `_${letter}`).toUpperCase()}`;
+}
+
+/** Command lines that copy the files, each short enough for a line of comment: wrapped, it could not be pasted. */
+function copyCommands(files: readonly string[]): string[] {
+  const commands: string[] = [];
+  let names = '';
+  for (const file of files) {
+    if (names.length + file.length > COPY_WIDTH) {
+      commands.push(`mpremote cp${names} :`);
+      names = '';
+    }
+    names += ` ${file}`;
+  }
+  return [...commands, `mpremote cp${names} :`];
+}
+
+/** How the program gets onto the board, and what else a person has to know who has it in hand. */
+function handlingParagraphs(files: readonly string[]): string[] {
+  return [
+    '',
+    'To the board, in this folder (pip install mpremote):',
+    ...copyCommands(files),
+    'mpremote reset',
+    'boot.py stays as it is. The first run starts the watchdog, which nothing stops: from then on the board restarts by itself when the program is interrupted; switch it off and on before changing files.',
+  ];
+}
+
+function micropythonView(
+  sheet: SheetIdentity,
+  design: FirmwareDesign,
+  files: readonly string[],
+): MicroPythonView {
+  const { vehicle } = design;
+  const { scheme, standby } = vehicle.drive;
+  const boardLed = LEDS[vehicle.board.id];
+  const led = usedPins(vehicle).some((pin) => pin.label === boardLed?.label) ? undefined : boardLed;
+  const common = commonView(sheet, design, led !== undefined);
+  return {
+    ...common,
+    header: [...common.header, ...handlingParagraphs(files)],
+    groups: common.groups.map(({ title, constants }) => ({
+      title,
+      constants: constants.map((each) => ({ ...each, typecode: TYPECODES[each.type] })),
+    })),
+    reasons: common.reasons.map(({ name, flashes, about }) => ({
+      constantName: reasonName(name),
+      flashes,
+      about,
+    })),
+    pwmDir: scheme === 'pwm-dir',
+    pwmInIn: scheme === 'pwm-in-in',
+    dualPwm: scheme === 'dual-pwm',
+    standby: standby !== undefined,
+    attenuated: vehicle.board.id === 'esp32',
+    sensorPins: vehicle.bar.pins.map((pin) => pin.code),
+    pins: pinLines(vehicle),
+    directions: directionLines(vehicle).map(({ name, high, about }) => ({
+      name,
+      level: high ? 1 : 0,
+      about,
+    })),
+    ledCode: led?.code ?? '',
+    ledAbout: led?.about ?? '',
+    pwmHz: vehicle.board.pwmHz,
+  };
+}
+
+interface Wanted {
+  rules: boolean;
+  sweep: boolean;
+  led: boolean;
+}
+
+function filesOf(name: string, { rules, sweep, led }: Wanted): TemplateFile[] {
+  const folder = fileName(name);
+  const file = (module: string, wanted = true): TemplateFile => ({
+    template: `${module}.py`,
+    path: `${folder}/${module}.py`,
+    owner: 'tool',
+    wanted,
+  });
+  return [
+    file('main'),
+    file('constants'),
+    file('pins'),
+    file('sensing'),
+    file('steering'),
+    file('rule_table', rules),
+    file('calibration', sweep),
+    file('sweep', sweep),
+    file('motors'),
+    file('board'),
+    file('states'),
+    file('blink', led),
+    file('supervisor'),
+    { ...file('user_hooks'), owner: 'user' },
+  ];
+}
+
+/**
+ * Templates, paths and view model of one vehicle's program.
+ *
+ * @throws LiteralError when the control law could leave MicroPython's small integers
+ */
+export function micropythonRendering(sheet: SheetIdentity, design: FirmwareDesign): Rendering {
+  const { vehicle, controller } = design;
+  checkSmallIntegers(controller, vehicle.board.adcMaxCount);
+  const boardLed = LEDS[vehicle.board.id];
+  const led = boardLed !== undefined && usedPins(vehicle).every((pin) => pin.label !== boardLed.label);
+  const wanted = { rules: controller.kind === 'rules', sweep: controller.sweep !== undefined, led };
+  const files = filesOf(vehicle.name, wanted);
+  const names = files.filter((file) => file.wanted).map(({ template }) => template);
+  return { folder: 'micropython', language: 'python', files, view: micropythonView(sheet, design, names) };
+}
