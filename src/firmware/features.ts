@@ -1,5 +1,6 @@
 /** What one vehicle has, as the controller's constants say it. */
 import { type ControllerConstants, FULL_COVERAGE } from '../controller/constants.js';
+import type { Vehicle } from '../vehicle/vehicle.js';
 
 /** What this vehicle has; the templates' only conditions. */
 export interface Features {
@@ -17,6 +18,8 @@ export interface Features {
   crossings: boolean;
   /** The board has an LED that this vehicle does not use otherwise. */
   led: boolean;
+  /** The firmware can tell a start after the supply broke down from switching on; MicroPython does not say. */
+  brownOut: boolean;
 }
 
 /**
@@ -24,7 +27,11 @@ export interface Features {
  *
  * @param led whether the board has an LED that the vehicle leaves free
  */
-export function featuresOf(controller: ControllerConstants, led: boolean): Features {
+export function featuresOf(
+  controller: ControllerConstants,
+  language: Vehicle['language'],
+  led: boolean,
+): Features {
   const { sensing, sweep, kind } = controller;
   const binary = sensing.digital || kind === 'rules';
   return {
@@ -38,5 +45,6 @@ export function featuresOf(controller: ControllerConstants, led: boolean): Featu
     graded: !binary,
     crossings: sensing.wideCoverage <= sensing.sensorCount * FULL_COVERAGE,
     led,
+    brownOut: language === 'arduino',
   };
 }

@@ -55,7 +55,10 @@ export interface Reason {
 
 /** The reasons that this vehicle can have. */
 export function reasonsOf(features: Features): readonly Reason[] {
-  return REASONS.filter(({ name }) => features.sweep || (name !== 'FlatSensor' && name !== 'LineNotFound'));
+  return REASONS.filter(({ name }) => {
+    if (name === 'FlatSensor' || name === 'LineNotFound') return features.sweep;
+    return name !== 'BrownOut' || features.brownOut;
+  });
 }
 
 /** Paragraphs on what the LED shows. */

@@ -167,6 +167,8 @@ export function micropythonRendering(sheet: SheetIdentity, design: FirmwareDesig
   const led = boardLed !== undefined && usedPins(vehicle).every((pin) => pin.label !== boardLed.label);
   const wanted = { rules: controller.kind === 'rules', sweep: controller.sweep !== undefined, led };
   const files = filesOf(vehicle.name, wanted);
-  const names = files.filter((file) => file.wanted).map(({ template }) => template);
+  // main.py comes last: if the copying is interrupted, the board has no program that lacks half its modules.
+  const [main, ...modules] = files.filter((file) => file.wanted).map(({ template }) => template);
+  const names = [...modules, main!];
   return { folder: 'micropython', language: 'python', files, view: micropythonView(sheet, design, names) };
 }

@@ -57,7 +57,7 @@ function ruleLines(controller: ControllerConstants): RuleLine[] {
  */
 export function commonView(sheet: SheetIdentity, design: FirmwareDesign, led: boolean): CommonView {
   const { vehicle, controller } = design;
-  const features = featuresOf(controller, led);
+  const features = featuresOf(controller, vehicle.language, led);
   const groups: ConstantGroup[] = [
     { title: 'Time', constants: timeConstants(vehicle, controller, features) },
     { title: 'Scales of the integers', constants: scaleConstants(features) },
