@@ -15,7 +15,7 @@
  */
 import { sinc } from '../course/arc.js';
 import type { Lane } from '../course/lane.js';
-import { makeProjection } from '../course/projection.js';
+import { makeProjection, type Projection } from '../course/projection.js';
 import { STANDARD_GRAVITY_MPS2 } from '../vehicle/gravity.js';
 import { STREAM, type PlantParameters } from './plant-parameters.js';
 import { Random } from './random.js';
@@ -37,10 +37,12 @@ export class Plant {
   rightMps = 0;
   /** Turn rate that reached the floor in the last substep, rad/s. */
   turnRadPerS = 0;
-  /** Where the axle's middle is along the lane (arc length, m, counted on lap after lap) and beside it (m, positive left). */
-  readonly place = makeProjection();
+  private readonly projection = makeProjection();
   private cosHeading = 1;
   private sinHeading = 0;
+  /** Whether the vehicle has moved since place and direction were worked out. */
+  private placeIsOld = true;
+  private directionIsOld = true;
   private readonly gripMps2: number;
   private readonly deadDuty: number;
   private readonly positionsM: Float64Array;
@@ -62,7 +64,6 @@ export class Plant {
     this.ground = Float64Array.from(parameters.ground);
     this.line = Float64Array.from(parameters.line);
     this.noise = new Random(parameters.seed, STREAM.noise);
-    this.settle();
   }
 
   get sensorCount(): number {
@@ -72,6 +73,17 @@ export class Plant {
   /** Speed of the axle's middle, m/s. */
   get speedMps(): number {
     return (this.leftMps + this.rightMps) / 2;
+  }
+
+  /**
+   * Where the axle's middle is along the lane (arc length, m, counted on lap after lap) and beside it (m, positive left).
+   *
+   * It is searched for near the place of the last look: look at least once every few centimetres.
+   */
+  get place(): Readonly<Projection> {
+    if (this.placeIsOld) this.lane.project(this.xM, this.yM, this.projection.sM, this.projection);
+    this.placeIsOld = false;
+    return this.projection;
   }
 
   /**
@@ -94,12 +106,13 @@ export class Plant {
     const keptMean = ((1 - kept) * lagS) / h;
     for (let i = 0; i < substeps; i++) this.substep(steadyLeft, steadyRight, h, kept, keptMean);
     this.timeS += dtS;
-    this.settle();
+    this.placeIsOld = this.directionIsOld = true;
   }
 
   /** What sensor i reads now: counts, or the level 0 or 1 of a digital one. Each call draws new noise. */
   count(i: number): number {
     const { aheadM, spotRadiusM, kind, lineLevel, adcMaxCount, noiseShare } = this.parameters;
+    if (this.directionIsOld) this.findDirection();
     const sideM = this.positionsM[i]!;
     const xM = this.xM + aheadM * this.cosHeading - sideM * this.sinHeading;
     const yM = this.yM + aheadM * this.sinHeading + sideM * this.cosHeading;
@@ -158,9 +171,9 @@ export class Plant {
     this.headingRad += turn * h;
   }
 
-  private settle(): void {
+  private findDirection(): void {
     this.cosHeading = Math.cos(this.headingRad);
     this.sinHeading = Math.sin(this.headingRad);
-    this.lane.project(this.xM, this.yM, this.place.sM, this.place);
+    this.directionIsOld = false;
   }
 }

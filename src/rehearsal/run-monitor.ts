@@ -65,7 +65,7 @@ export class RunMonitor {
   }
 
   /**
-   * To be called after each plant step.
+   * To be called after each plant step, or at least every few milliseconds.
    *
    * @param state duties in force during the step, and what the controller was doing
    * @param stopped whether the firmware has stopped the vehicle by itself

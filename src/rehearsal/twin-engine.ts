@@ -2,7 +2,7 @@
  * Rehearses the controller itself, the twin of the firmware's arithmetic.
  *
  * One sample period: the sensors are read at its start; scanning and computing take `delayS`, during which the duties of the
- * period before stay on; then the new ones take over. Duties are rounded to the steps of the board's PWM.
+ * period before stay on; then the new ones take over; at its end the observer looks. Duties are rounded to the steps of the board's PWM.
  */
 import type { Engine, RunResult, RunSetup } from './engine.js';
 import { Plant } from './plant.js';
@@ -12,8 +12,8 @@ import type { ControlState } from './trace-recorder.js';
 /** Duty that means full, as controllers give it. */
 const FULL_DUTY = 4096;
 
-/** Longest step of the plant between two looks of the observer, s. */
-const LOOK_S = 2e-3;
+/** Longest step of the plant, s. */
+const STEP_S = 5e-3;
 
 /** A controller that can be stepped once a sample period. */
 export interface ControlStep {
@@ -67,12 +67,13 @@ export class TwinEngine implements Engine {
     while (!monitor.ended) {
       plant.readCounts(counts);
       control.step(counts);
-      drive(plant, monitor, state, delayS, false);
+      drive(plant, state, delayS);
       state.dutyLeft = inPwmSteps(control.dutyLeft, pwmSteps);
       state.dutyRight = inPwmSteps(control.dutyRight, pwmSteps);
       state.classIndex = control.classIndex;
       state.phase = control.phase;
-      drive(plant, monitor, state, samplePeriodS - delayS, control.stopped);
+      drive(plant, state, samplePeriodS - delayS);
+      monitor.observe(state, control.stopped);
     }
     return monitor.result();
   }
@@ -84,16 +85,7 @@ function inPwmSteps(duty: number, pwmSteps: number): number {
 }
 
 /** Lets time pass with constant duties, in steps that the plant can take. */
-function drive(
-  plant: Plant,
-  monitor: RunMonitor,
-  state: ControlState,
-  timeS: number,
-  stopped: boolean,
-): void {
-  const steps = Math.ceil(timeS / LOOK_S - 1e-9);
-  for (let i = 0; i < steps && !monitor.ended; i++) {
-    plant.step(state.dutyLeft, state.dutyRight, timeS / steps);
-    monitor.observe(state, stopped);
-  }
+function drive(plant: Plant, { dutyLeft, dutyRight }: ControlState, timeS: number): void {
+  const steps = Math.ceil(timeS / STEP_S - 1e-9);
+  for (let i = 0; i < steps; i++) plant.step(dutyLeft, dutyRight, timeS / steps);
 }

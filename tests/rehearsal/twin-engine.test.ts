@@ -112,7 +112,7 @@ describe('timing', () => {
     const engine = new TwinEngine(() => control, { samplePeriodS: 4e-3, delayS: 1.5e-3, pwmSteps: 65535 });
     const { loss } = engine.runNow({ plant, lane, laps: 1, timeLimitS: 10, sampleTrace: false });
     expect(loss).toMatchObject({ reason: 'stopped' });
-    expect(loss!.timeS).toBeCloseTo(99 * 4e-3 + 1.5e-3 + 2.5e-3 / 2, 9);
+    expect(loss!.timeS).toBeCloseTo(100 * 4e-3, 9);
     expect(loss!.xM).toBeCloseTo(0.75 * (32768 / 65535 / 0.5) * (loss!.timeS - 1.5e-3), 6);
     expect(control.last).toEqual([100, 100, 900, 900, 100, 100]);
   });
