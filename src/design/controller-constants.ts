@@ -91,10 +91,15 @@ export function firmwareGains(
   };
 }
 
-/** Largest number of bits with which every gain still fits a 16-bit integer. */
+/**
+ * Largest number of bits with which the largest gains of both kinds together still fit a 16-bit integer: the sum of their
+ * products with 16-bit inputs then fits the 31 bits that MicroPython keeps in a machine word.
+ */
 function gainBits(gains: readonly { proportional: number; derivative: number }[]): number {
-  const largest = Math.max(...gains.map((g) => Math.max(g.proportional, g.derivative)));
-  return Math.max(0, Math.min(LARGEST_GAIN_BITS, Math.floor(Math.log2(INT16_MAX / largest))));
+  const proportional = Math.max(...gains.map((each) => each.proportional));
+  const derivative = Math.max(...gains.map((each) => each.derivative));
+  const bits = Math.floor(Math.log2(INT16_MAX / (proportional + derivative)));
+  return Math.max(0, Math.min(LARGEST_GAIN_BITS, bits));
 }
 
 function classConstants(
