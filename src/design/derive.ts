@@ -7,7 +7,7 @@ import type { ClassSettings, Design, DesignedClass, SpeedLimits } from './design
 import { Proving, type SpeedScale } from './proving.js';
 import { type ClassRange, bindingLimit, classRanges, speedLimits } from './speed-classes.js';
 import { designLaw, lanePlantOf, marginsAt, worstMargins } from './steering-gains.js';
-import { INT32_MAX, overflows } from './intervals.js';
+import { overflows } from './intervals.js';
 import { type SteeringGains, controllerOf } from './steering-loop.js';
 import { EXIT, FairleadError, type Problem } from '../sheet/problem.js';
 import { mToMm } from '../sheet/units.js';
@@ -80,13 +80,16 @@ function designedClass(
 }
 
 function refuseOverflow(vehicle: Vehicle, controller: ControllerConstants): void {
-  const problems = overflows(controller, vehicle.board.adcMaxCount).map(({ name, magnitude }): Problem => ({
-    pointer: '',
-    message: `The firmware's 32-bit integers cannot hold an intermediate of the control law: ${name}.`,
-    got: magnitude.toExponential(2),
-    allowed: `at most ${INT32_MAX}`,
-    fix: 'Check the speeds and lengths of the sheet for a wrong unit.',
-  }));
+  const { board, language } = vehicle;
+  const problems = overflows(controller, board.adcMaxCount, language).map(
+    ({ name, magnitude, limit }): Problem => ({
+      pointer: '',
+      message: `The firmware's integers cannot hold an intermediate of the control law: ${name}.`,
+      got: magnitude.toExponential(2),
+      allowed: `at most ${limit}`,
+      fix: 'Check the speeds and lengths of the sheet for a wrong unit.',
+    }),
+  );
   if (problems.length > 0)
     throw new FairleadError('No design meets the sheet.', { exitCode: EXIT.noDesign, problems });
 }

@@ -2,6 +2,9 @@
  * Interval analysis of the controller's arithmetic: the largest magnitude of each intermediate, from the
  * constants alone. Nothing may leave a signed 32-bit integer; the firmware repeats these bounds as static
  * assertions. Magnitudes add and multiply; a shift to the right divides; a clamp caps.
+ *
+ * MicroPython keeps integers of 31 bits in the machine word and puts larger ones on the heap (py/smallint.h). What a control
+ * step takes from the heap has to be collected one day, in the middle of a bend: there the limit is one bit less.
  */
 import {
   type ControllerConstants,
@@ -12,14 +15,18 @@ import {
   SPEED_GAIN_BITS,
   SPEED_MODEL_BITS,
 } from '../controller/constants.js';
+import type { Vehicle } from '../vehicle/vehicle.js';
 
 export const INT32_MAX = 2 ** 31 - 1;
+const SMALL_INT_MAX = 2 ** 30 - 1;
 const INT16_MAX = 2 ** 15 - 1;
 
 /** Largest magnitude of one intermediate. */
 export interface Bound {
   name: string;
   magnitude: number;
+  /** Largest magnitude allowed where it is less than the machine's integers, for what C++ stores in 16 bits. */
+  limit?: number;
 }
 
 const largest = (values: readonly number[]) => Math.max(0, ...values.map(Math.abs));
@@ -51,7 +58,7 @@ export function intermediateBounds(constants: ControllerConstants, adcMaxCount: 
       magnitude: sensing.digital ? 0 : adcMaxCount * largest(sensing.gain),
     },
     { name: 'half gap times edge table', magnitude: largest(sensing.gapHalf) * largest(sensing.edgeTable) },
-    { name: 'offset, in 16 bits', magnitude: offsetBound(constants) * 65536 },
+    { name: 'offset', magnitude: offsetBound(constants), limit: INT16_MAX },
     { name: 'sum of coverages', magnitude: sensing.sensorCount * FULL_COVERAGE },
     { name: 'proportional and derivative sum', magnitude: INT16_MAX * proportional + INT16_MAX * derivative },
     { name: 'filter product', magnitude: INT16_MAX * INT16_MAX },
@@ -72,11 +79,18 @@ export function intermediateBounds(constants: ControllerConstants, adcMaxCount: 
         speed,
     },
     { name: 'search distance', magnitude: memory.searchSamples * speed },
-    { name: 'curvature, in 16 bits', magnitude: steering.curvatureLimit * 65536 },
+    { name: 'curvature', magnitude: steering.curvatureLimit, limit: INT16_MAX },
   ];
 }
 
-/** The bounds that a 32-bit integer cannot hold. */
-export function overflows(constants: ControllerConstants, adcMaxCount: number): Bound[] {
-  return intermediateBounds(constants, adcMaxCount).filter(({ magnitude }) => magnitude > INT32_MAX);
+/** The bounds that the integers of the language cannot hold, each with its limit. */
+export function overflows(
+  constants: ControllerConstants,
+  adcMaxCount: number,
+  language: Vehicle['language'],
+): Required<Bound>[] {
+  const word = language === 'micropython' ? SMALL_INT_MAX : INT32_MAX;
+  return intermediateBounds(constants, adcMaxCount)
+    .map((bound) => ({ ...bound, limit: bound.limit ?? word }))
+    .filter(({ magnitude, limit }) => magnitude > limit);
 }

@@ -4,7 +4,6 @@ import type { Constant, ConstantGroup } from './constant.js';
 import { fileName } from './identifiers.js';
 import type { IntegerType } from './literals.js';
 import type { FirmwareDesign, Rendering, SheetIdentity, TemplateFile } from './render.js';
-import { checkSmallIntegers } from './small-integers.js';
 import { type PinLine, directionLines, pinLines, usedPins } from './view-pins.js';
 import { type CommonView, commonView } from './view.js';
 
@@ -155,14 +154,9 @@ function filesOf(name: string, { rules, sweep, led }: Wanted): TemplateFile[] {
   ];
 }
 
-/**
- * Templates, paths and view model of one vehicle's program.
- *
- * @throws LiteralError when the control law could leave MicroPython's small integers
- */
+/** Templates, paths and view model of one vehicle's program. */
 export function micropythonRendering(sheet: SheetIdentity, design: FirmwareDesign): Rendering {
   const { vehicle, controller } = design;
-  checkSmallIntegers(controller, vehicle.board.adcMaxCount);
   const boardLed = LEDS[vehicle.board.id];
   const led = boardLed !== undefined && usedPins(vehicle).every((pin) => pin.label !== boardLed.label);
   const wanted = { rules: controller.kind === 'rules', sweep: controller.sweep !== undefined, led };
