@@ -4,6 +4,7 @@ import type { Io } from './io.js';
 
 interface DeriveOptions {
   json?: boolean;
+  compare?: boolean;
 }
 
 export function register(program: Command, io: Io): void {
@@ -11,18 +12,22 @@ export function register(program: Command, io: Io): void {
     .command('derive')
     .description('the numbers of the design: gains, margins, rule table, speed classes and what limits each')
     .argument('<sheet>', 'build sheet')
+    .option('--compare', 'judge published tuning rules on the same loops')
     .option('--json', 'print one JSON document')
     .addHelpText('after', '\nExample:\n  fairlead derive examples/tray-cart/tray-cart.json\n')
     .action(async (file: string, options: DeriveOptions) => {
-      const [{ loadSheet }, { designFor }, { designJson }, { designText }] = await Promise.all([
-        import('../sheet/load.js'),
-        import('../pipeline.js'),
-        import('../report/design-json.js'),
-        import('../report/design-text.js'),
-      ]);
+      const [{ loadSheet }, { designFor }, { designJson }, { designText }, { compareLaws, comparisonText }] =
+        await Promise.all([
+          import('../sheet/load.js'),
+          import('../pipeline.js'),
+          import('../report/design-json.js'),
+          import('../report/design-text.js'),
+          import('../report/comparison-text.js'),
+        ]);
       const { sheet } = await loadSheet(file);
       const design = designFor(sheet);
-      if (options.json) io.json(designJson(design));
-      else io.stdout(designText(design));
+      const compared = options.compare ? compareLaws(design) : undefined;
+      if (options.json) io.json({ ...designJson(design), ...(compared && { comparison: compared }) });
+      else io.stdout(designText(design) + (compared ? comparisonText(compared) : ''));
     });
 }

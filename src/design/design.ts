@@ -1,6 +1,7 @@
 /** What the design finds for one vehicle: the numbers of `derive`, and the controller that is rendered. */
 import type { ControllerConstants } from '../controller/constants.js';
-import type { SampledController, SteeringGains } from './steering-loop.js';
+import type { SampledController } from './sampled-controller.js';
+import type { SteeringGains } from './steering-loop.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 
 /** One share of the delay between the floor and the motors, s. */

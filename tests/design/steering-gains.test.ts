@@ -1,6 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { samplePlant } from '../../src/design/lane-plant.js';
-import { closedLoopRadius, controllerOf, loopMargins, loopPeak } from '../../src/design/steering-loop.js';
+import { closedLoopRadius } from '../../src/design/closed-loop.js';
+import { controllerOf, loopMargins, loopPeak } from '../../src/design/steering-loop.js';
 import {
   LEAST_MARGINS,
   designLaw,

@@ -142,8 +142,8 @@ describe('second-order loop wn^2/(s(s + 2 zeta wn)), standard closed forms (comp
 describe('lane loop with digital PD, 40-digit arithmetic (computed)', () => {
   const plant = { lookaheadM: 0.08, speedMps: 0.5, lagS: 0.05, delayS: 0, samplePeriodS: 0.01 };
   const controller = {
-    numerator: [120, -100] as [number, number],
-    denominator: [1, 0] as [number, number],
+    numerator: [120, -100],
+    denominator: [1, 0],
     samplePeriodS: 0.01,
   };
 
