@@ -38,7 +38,8 @@ export function withDefaults(sheet: Sheet): ResolvedSheet {
 
 function filled(root: SchemaNode, node: SchemaNode, value: unknown): unknown {
   const { properties } = resolved(root, node);
-  if (!properties || typeof value !== 'object' || value === null) return structuredClone(value);
+  if (typeof value !== 'object' || value === null) return value;
+  if (!properties) return structuredClone(value);
   const given = value as Readonly<Record<string, unknown>>;
   const entries = Object.entries(properties).flatMap(([key, child]): [string, unknown][] => {
     const field = resolved(root, child);

@@ -1,0 +1,142 @@
+/**
+ * Random sound build sheets over the whole plausible range: boards, sensors, schemes, geometry, calibration, motors, controllers.
+ *
+ * Values are drawn so that they fit together, by the same geometry as the rules; what still does not pass the check is filtered
+ * out, which is seldom the case (valid-sheets.test.ts).
+ */
+import fc from 'fast-check';
+import { checkSheet } from '../../src/sheet/check.js';
+import type { Sheet } from '../../src/sheet/sheet-types.js';
+import type { BoardId } from '../../src/vehicle/board-facts.js';
+import { BOARDS } from '../../src/vehicle/boards.js';
+import type { DriverSchemeId } from '../../src/vehicle/drivers.js';
+import { proposePins, type PinPlan, type PinRequest } from '../../src/vehicle/pin-plan.js';
+import { decimal } from './decimal.js';
+import { drive } from './valid-drive.js';
+import { geometry } from './valid-geometry.js';
+
+interface Wiring {
+  board: BoardId;
+  request: PinRequest;
+  plan: PinPlan;
+}
+
+const BOARD_IDS: readonly BoardId[] = ['uno', 'nano', 'pico', 'esp32'];
+const SCHEMES: readonly DriverSchemeId[] = ['pwm-dir', 'pwm-in-in', 'dual-pwm'];
+
+/** Every wiring that the boards allow. */
+const WIRINGS: readonly Wiring[] = BOARD_IDS.flatMap((board) =>
+  SCHEMES.flatMap((scheme) =>
+    (['analog', 'digital'] as const).flatMap((sensorKind) =>
+      [false, ...(scheme === 'pwm-in-in' ? [true] : [])].flatMap((standby) =>
+        Array.from({ length: 15 }, (_, index): PinRequest => ({
+          sensorKind,
+          sensorCount: index + 2,
+          scheme,
+          standby,
+        })).flatMap((request) => {
+          const plan = proposePins(board, request);
+          return 'sensorPins' in plan ? [{ board, request, plan }] : [];
+        }),
+      ),
+    ),
+  ),
+);
+
+/** Bars of every length are drawn equally often, though few boards take long analog ones. */
+const wiring: fc.Arbitrary<Wiring> = fc
+  .constantFrom(...BOARD_IDS)
+  .chain((board) => fc.constantFrom(...WIRINGS.filter((each) => each.board === board)));
+
+/** Readings with contrast, all to the same side; or none, for a sweep. */
+function calibration({ board, request }: Wiring): fc.Arbitrary<Pick<Sheet['sensors'], 'calibration'>> {
+  if (request.sensorKind === 'digital') return fc.constant({});
+  const full = BOARDS[board].adcMaxCount;
+  const list = (min: number, max: number): fc.Arbitrary<number[]> =>
+    fc.array(fc.integer({ min, max }), { minLength: request.sensorCount, maxLength: request.sensorCount });
+  const readings = fc
+    .integer({ min: Math.ceil(0.15 * full), max: Math.floor(0.85 * full) })
+    .chain((middle) => {
+      const margin = Math.ceil(0.05 * full) + 1;
+      return fc.tuple(list(0, middle - margin), list(middle + margin, full), fc.boolean());
+    })
+    .map(([low, high, swap]) => (swap ? { ground: high, line: low } : { ground: low, line: high }));
+  const mode = fc.constantFrom('stored' as const, 'sweep' as const);
+  return fc.oneof(
+    fc.tuple(mode, readings).map(([how, lists]) => ({ calibration: { mode: how, ...lists } })),
+    fc.constantFrom({ calibration: { mode: 'sweep' as const } }, {}),
+  );
+}
+
+function speeds(radiusMm: number, topSpeedMps: number): fc.Arbitrary<Sheet['speeds']> {
+  const finishTargetPercent = decimal(80, 99.9);
+  const byHand = fc.array(decimal(0.1, 0.9, 2), { minLength: 1, maxLength: 5 }).map((shares) =>
+    shares
+      .sort((a, b) => a - b)
+      .map((share, index) => ({
+        name: `class ${index + 1}`,
+        minRadiusMm: Math.max(40, Math.floor(radiusMm)) * (index + 1),
+        speedMps: Math.max(0.02, Math.round(share * topSpeedMps * 1000) / 1000),
+      })),
+  );
+  return fc.record({ classes: fc.oneof(fc.constant('auto' as const), byHand), finishTargetPercent });
+}
+
+/** Sheets as drawn, nearly all of them sound; use `validSheets`. */
+export const sheetCandidates: fc.Arbitrary<Sheet> = fc
+  .tuple(wiring, fc.constantFrom<Sheet['control']['kind']>('pid', 'rules'))
+  .chain(([wired, kind]) =>
+    fc.tuple(fc.constant(wired), fc.constant(kind), geometry(wired.request, kind), calibration(wired), drive),
+  )
+  .chain(([wired, kind, { line, bar }, calibrated, { drive: vehicle, power, topSpeedMps }]) => {
+    const { board, request, plan } = wired;
+    const inverted = fc.boolean();
+    return fc
+      .record({
+        name: fc.stringMatching(/^[A-Za-z][A-Za-z0-9_-]{0,39}$/),
+        speeds: speeds(line.tightestRadiusMm, topSpeedMps),
+        lineLevel: fc.constantFrom<'high' | 'low'>('high', 'low'),
+        inverted: fc.tuple(inverted, inverted),
+        countdownS: decimal(0, 5),
+        runLimitS: fc.integer({ min: 1, max: 3600 }),
+        tolerances: fc.record({
+          motorGainPercent: fc.integer({ min: 0, max: 20 }),
+          timeConstantPercent: fc.integer({ min: 0, max: 50 }),
+          gripPercent: fc.integer({ min: 0, max: 40 }),
+        }),
+      })
+      .map((rest): Sheet => ({
+        sheetVersion: 1,
+        name: rest.name,
+        target: { board, language: BOARDS[board].language },
+        line,
+        sensors: {
+          kind: request.sensorKind,
+          count: request.sensorCount,
+          ...bar,
+          pins: plan.sensorPins,
+          ...(request.sensorKind === 'digital' ? { lineLevel: rest.lineLevel } : {}),
+          ...calibrated,
+        },
+        drive: {
+          ...vehicle,
+          driver: {
+            scheme: request.scheme,
+            ...plan.driver,
+            left: { ...plan.driver.left, inverted: rest.inverted[0] },
+            right: { ...plan.driver.right, inverted: rest.inverted[1] },
+          },
+        },
+        power,
+        control: { kind },
+        speeds: rest.speeds,
+        start: { buttonPin: plan.buttonPin, countdownS: rest.countdownS, runLimitS: rest.runLimitS },
+        telemetry: { mode: 'off' },
+        tolerances: rest.tolerances,
+      }));
+  });
+
+/** Random sound sheets. */
+export const validSheets: fc.Arbitrary<Sheet> = sheetCandidates.filter(
+  (sheet) => checkSheet(sheet).sheet !== undefined,
+);
