@@ -7,11 +7,11 @@
  * control step, is spent once a step: before the first motor output that follows a sensor reading.
  * A reading shows the world at its beginning; an output acts after its cost.
  *
- * The clock starts 1 s before the 30-bit tick counters wrap, so that every run crosses a wrap.
  * Source of limits and ranges: MicroPython documentation, machine, time, rp2 and esp32 quick references.
  */
 import type { BoardFacts, PinFacts } from '../vehicle/board-facts.js';
 import { findPin } from '../vehicle/boards.js';
+import { ChipReset, MicroPythonClock, ticksAdd, ticksDiff } from './micropython-clock.js';
 
 /** What the chip's pins lead to. Levels are 0 or 1, or between them the mean of a PWM output. */
 export interface Surroundings {
@@ -27,15 +27,8 @@ export interface Surroundings {
   isMotor(gpio: number): boolean;
 }
 
-/** The chip has started anew, and would do so for ever: the rehearsal ends. */
-export class ChipReset extends Error {
-  override readonly name = 'ChipReset';
-}
-
 export const RESET_CAUSE = { powerOn: 1, watchdog: 3 } as const;
 
-const TICKS_PERIOD = 2 ** 30;
-const US_BEFORE_WRAP = 1e6;
 const U16_MAX = 65535;
 /** Longest watchdog time of the RP2040, ms; the ESP32's is longer than anything asked for here. */
 const RP2040_WATCHDOG_LIMIT_MS = 8388;
@@ -46,54 +39,39 @@ interface PinState {
   output: boolean;
   pullUp: boolean;
   latch: boolean;
+  /** What the pin last gave as an output, 0 to 1. */
+  level: number;
   /** Factor on the counts by which the converter sees less than the full range. */
   adcGain: number;
 }
 
 export class MicroPythonChip {
-  /** Virtual time since power-on, us. */
-  private nowUs = 0;
-  /** Time up to which the surroundings have run, us. */
-  private worldUs = 0;
+  private readonly clock: MicroPythonClock;
   private computePending = false;
-  private watchdogUs = Infinity;
-  private watchdogLimitUs = Infinity;
   private readonly pins = new Map<number, PinState>();
 
   constructor(
     private readonly board: BoardFacts,
     private readonly surroundings: Surroundings,
     private readonly cause: number = RESET_CAUSE.powerOn,
-  ) {}
-
-  /** Lets time pass for the program, and for the surroundings up to it. */
-  private spend(timeS: number): void {
-    this.nowUs += timeS * 1e6;
-    if (this.nowUs > this.watchdogUs) {
-      this.nowUs = this.watchdogUs;
-      this.catchUp();
-      throw new ChipReset(`The watchdog was not fed for ${this.watchdogLimitUs / 1000} ms.`);
-    }
-  }
-
-  private catchUp(): void {
-    const behindS = (this.nowUs - this.worldUs) / 1e6;
-    if (behindS <= 0) return;
-    this.worldUs = this.nowUs;
-    this.surroundings.advance(behindS);
+  ) {
+    this.clock = new MicroPythonClock((durationS) => surroundings.advance(durationS));
   }
 
   private touch(): void {
-    this.spend(this.board.digitalReadS);
+    this.clock.spend(this.board.digitalReadS);
   }
 
   private output(gpio: number, level: number): void {
     if (this.computePending && this.surroundings.isMotor(gpio)) {
       this.computePending = false;
-      this.spend(this.board.computeS);
+      this.clock.spend(this.board.computeS);
     }
     this.touch();
-    this.catchUp();
+    const state = this.state(gpio);
+    if (state.level === level) return;
+    state.level = level;
+    this.clock.catchUp();
     this.surroundings.drive(gpio, level);
   }
 
@@ -105,14 +83,10 @@ export class MicroPythonChip {
   private state(gpio: number): PinState {
     let state = this.pins.get(gpio);
     if (state === undefined) {
-      state = { output: false, pullUp: false, latch: false, adcGain: 1 };
+      state = { output: false, pullUp: false, latch: false, level: 0, adcGain: 1 };
       this.pins.set(gpio, state);
     }
     return state;
-  }
-
-  private ticks(value: number): number {
-    return ((value % TICKS_PERIOD) + TICKS_PERIOD) % TICKS_PERIOD;
   }
 
   /** The functions that `machine` and `time` call, as module `_chip`. Texts are reasons to refuse, "" is none. */
@@ -134,24 +108,18 @@ export class MicroPythonChip {
       reset: () => {
         throw new ChipReset('The program has called machine.reset().');
       },
-      sleep_ms: (timeMs: number) => this.sleep(timeMs / 1e3),
-      sleep_us: (timeUs: number) => this.sleep(timeUs / 1e6),
+      sleep_ms: (timeMs: number) => this.clock.sleep(timeMs / 1e3),
+      sleep_us: (timeUs: number) => this.clock.sleep(timeUs / 1e6),
       ticks_us: () => this.look(1),
       ticks_ms: () => this.look(1000),
-      ticks_add: (ticks: number, change: number) => this.ticks(ticks + change),
-      ticks_diff: (end: number, start: number) =>
-        this.ticks(end - start + TICKS_PERIOD / 2) - TICKS_PERIOD / 2,
+      ticks_add: ticksAdd,
+      ticks_diff: ticksDiff,
     };
   }
 
   private look(usPerTick: number): number {
     this.touch();
-    return Math.floor(this.ticks((TICKS_PERIOD - US_BEFORE_WRAP + this.nowUs) / usPerTick));
-  }
-
-  private sleep(timeS: number): void {
-    if (timeS > 0) this.spend(timeS);
-    this.catchUp();
+    return this.clock.ticks(usPerTick);
   }
 
   private configure(gpio: number, output: boolean, pullUp: boolean): string {
@@ -173,22 +141,22 @@ export class MicroPythonChip {
   }
 
   private read(gpio: number): number {
-    this.catchUp();
+    this.clock.catchUp();
     const state = this.state(gpio);
     if (this.surroundings.isSensor(gpio)) this.computePending = true;
     const level = state.output
       ? state.latch
-      : (this.surroundings.level(gpio, this.nowUs / 1e6) ?? state.pullUp);
+      : (this.surroundings.level(gpio, this.clock.nowS) ?? state.pullUp);
     this.touch();
     return level ? 1 : 0;
   }
 
   private readU16(gpio: number): number {
-    this.catchUp();
+    this.clock.catchUp();
     if (this.surroundings.isSensor(gpio)) this.computePending = true;
     const seen = Math.floor(this.surroundings.count(gpio) * this.state(gpio).adcGain);
     const count = Math.min(this.board.adcMaxCount, seen);
-    this.spend(this.board.adcReadS);
+    this.clock.spend(this.board.adcReadS);
     // Both ports widen 12 bits to 16 by repeating the upper ones, so that full scale is 65535.
     return (count << 4) | (count >> 8);
   }
@@ -202,13 +170,12 @@ export class MicroPythonChip {
 
   private startWatchdog(timeoutMs: number): string {
     if (this.board.id === 'pico' && timeoutMs > RP2040_WATCHDOG_LIMIT_MS) return 'timeout exceeds 8388';
-    this.watchdogLimitUs = timeoutMs * 1000;
-    this.feed();
+    this.clock.startWatchdog(timeoutMs);
     return '';
   }
 
   private feed(): void {
     this.touch();
-    this.watchdogUs = this.nowUs + this.watchdogLimitUs;
+    this.clock.feedWatchdog();
   }
 }

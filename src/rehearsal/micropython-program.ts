@@ -1,6 +1,7 @@
 /** Runs a program's files in the MicroPython interpreter on a virtual chip, from power-on to its end. */
 import type { BoardFacts } from '../vehicle/board-facts.js';
-import { ChipReset, MicroPythonChip, type Surroundings } from './micropython-chip.js';
+import { MicroPythonChip, type Surroundings } from './micropython-chip.js';
+import { ChipReset } from './micropython-clock.js';
 import { PythonFailure, type PythonFile, withInterpreter } from './micropython-interpreter.js';
 import { boardModules } from './micropython-modules.js';
 
