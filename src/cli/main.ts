@@ -21,6 +21,7 @@ const COMMANDS: Readonly<Record<string, () => Promise<CommandModule>>> = {
   derive: () => import('./derive.js'),
   render: () => import('./render.js'),
   rehearse: () => import('./rehearse.js'),
+  demo: () => import('./demo.js'),
 };
 
 const EXAMPLES = `
