@@ -99,5 +99,5 @@ async function interactive(sheetFile: string | undefined, asJson: boolean, io: I
 }
 
 function writtenText(file: string): string {
-  return `Written: ${file}, and sheet.schema.json beside it for editors.\nNext, type: fairlead derive ${file}\n`;
+  return `Written: ${file}\nBeside it, for editors: sheet.schema.json\nNext, type: fairlead derive ${file}\n`;
 }

@@ -1,7 +1,7 @@
 /** Questions answered with several values in one line: readings of the sensors, their positions, speed classes. */
 import { typicalReadings } from '../sheet/typical-readings.js';
 import type { Unit } from '../sheet/units.js';
-import { describeValue, quote } from '../sheet/words.js';
+import { counted, describeValue, quote } from '../sheet/words.js';
 import type { Facts } from './facts.js';
 import { common, judgedNumber, limits, readNumber, unitOf } from './fields.js';
 import { isObject, type Json } from './json-tree.js';
@@ -68,7 +68,7 @@ export function readingsQuestion(pointer: string, facts: Facts): Question {
   const judged = (value: Json): Read => {
     if (!Array.isArray(value)) return judgedNumber(item, value);
     if (value.length === count) return judgedAll(item, value, value);
-    return { problem: `${value.length} readings for ${count} sensors; allowed: ${forms}.` };
+    return { problem: `${counted(value.length, 'reading')} for ${count} sensors; allowed: ${forms}.` };
   };
   const given = facts.given(pointer);
   const usual = given === undefined || 'problem' in judged(given) ? typicalReading(pointer, facts) : given;
@@ -103,7 +103,9 @@ export function positionsQuestion(pointer: string, facts: Facts): Question {
   const judged = (value: Json): Read => {
     const list = Array.isArray(value) ? value : [value];
     if (list.length === count) return judgedAll(item, list, list);
-    return { problem: `${list.length} positions for ${count} sensors; allowed: ${count}, leftmost first.` };
+    return {
+      problem: `${counted(list.length, 'position')} for ${count} sensors; allowed: ${count}, leftmost first.`,
+    };
   };
   return {
     ...common(node),

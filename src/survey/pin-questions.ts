@@ -44,10 +44,12 @@ function planLines(pins: ReadonlyMap<string, Json>): string[] {
 export function planQuestion(facts: Facts): Question {
   const kept = keptPinsFit(facts);
   const mode = pinMode(facts);
+  // Once answered so, the single pins follow.
+  const answered = mode === 'by-hand';
   const choices: Choice[] = [
     ...(kept ? [{ value: 'kept', label: 'keep', meaning: 'the pins of the sheet' }] : []),
     ...(kept ? [] : [{ value: 'proposed', label: 'accept', meaning: 'these pins' }]),
-    { value: 'by-hand', label: 'change', meaning: 'pin by pin, beginning with these' },
+    { value: 'by-hand', label: 'by hand', meaning: 'pin by pin, beginning with these' },
     ...(kept ? [{ value: 'proposed', label: 'propose', meaning: 'pins anew' }] : []),
   ];
   const node = nodeAt('/sensors/pins');
@@ -62,7 +64,7 @@ export function planQuestion(facts: Facts): Question {
       choices,
       mode,
     ),
-    lines: planLines(currentPins(facts)),
+    ...(answered ? {} : { lines: planLines(currentPins(facts)) }),
   };
 }
 
@@ -97,9 +99,10 @@ export function pinQuestion(need: PinNeed, facts: Facts): Question {
   const start = wish.find((label) => label !== undefined && 'value' in judged(label));
   const [first] = free;
   const node = nodeAt(need.pointer);
+  const isSensor = need.pointer.startsWith('/sensors/');
   return {
     title: need.title,
-    why: node.description,
+    why: isSensor ? nodeAt('/sensors/pins').description : node.description,
     help: free.flatMap(({ label, caution }) => (caution === undefined ? [] : [`${label}: ${caution}.`])),
     allowed: listPins(free),
     defaultValue: start ?? (first ? sheetLabel(first) : null),
@@ -117,7 +120,12 @@ export function fitQuestion(facts: Facts): Question {
     label: `take ${label}`,
   }));
   return choiceQuestion(
-    { title: 'Too few pins', why: problem?.message ?? '', help: [], allowed: '' },
+    {
+      title: 'Too few pins',
+      why: problem?.message ?? '',
+      help: problem?.fix === undefined ? [] : [problem.fix],
+      allowed: '',
+    },
     choices,
     choices[0]?.value ?? null,
   );

@@ -1,4 +1,5 @@
 /** The pins in the questionnaire: which are needed, what is proposed, and which labels the sheet gets. */
+import type { BoardId } from '../vehicle/board-facts.js';
 import { proposePins, type PinPlan, type PinRequest } from '../vehicle/pin-plan.js';
 import type { PinRole } from '../vehicle/pin-roles.js';
 import { DRIVERS, type DriverSchemeId } from '../vehicle/drivers.js';
@@ -40,7 +41,7 @@ export function hasStandby(facts: Facts): boolean {
 /** Every pin that the vehicle needs, in the order in which people wire them. */
 export function pinNeeds(facts: Facts): PinNeed[] {
   const sensors = Array.from({ length: facts.count }, (_, index): PinNeed => {
-    const title = `${nodeAt('/sensors/pins').title}, sensor ${index + 1} of ${facts.count} from the left`;
+    const title = `Sensor ${index + 1} of ${facts.count}, ${nodeAt('/sensors/pins/0').title.toLowerCase()}`;
     return {
       pointer: `/sensors/pins/${index}`,
       title,
@@ -68,19 +69,26 @@ export function pinNeeds(facts: Facts): PinNeed[] {
   ];
 }
 
-/** The request to the planner, with some answers changed. */
+/** Plans made so far: every step of the questionnaire asks for the same one several times. */
+const plans = new Map<string, PinPlan | Problem>();
+
+/** The plan of pins, or why there is none; with some answers changed, or for another board. */
 export function planWith(
   facts: Facts,
   changes: Partial<PinRequest> = {},
-  board = facts.board.id,
+  board: BoardId = facts.board.id,
 ): PinPlan | Problem {
   const request: PinRequest = {
     sensorKind: facts.analog ? 'analog' : 'digital',
     sensorCount: facts.count,
     scheme: schemeOf(facts),
     standby: hasStandby(facts),
+    ...changes,
   };
-  return proposePins(board, { ...request, ...changes });
+  const key = JSON.stringify([board, request]);
+  const plan = plans.get(key) ?? proposePins(board, request);
+  plans.set(key, plan);
+  return plan;
 }
 
 /** Why the board has no pins for these answers, or undefined if it has. */
@@ -148,7 +156,7 @@ export function pinValues(facts: Facts): [pointer: string, value: Json][] {
 
 /** Other answers with which the board, or another one, has pins for everything. */
 export function waysOut(facts: Facts): { answers: Record<string, Json>; label: string }[] {
-  const works = (changes: Partial<PinRequest>, board = facts.board.id): boolean =>
+  const works = (changes: Partial<PinRequest>, board?: BoardId): boolean =>
     !('message' in planWith(facts, changes, board));
   const { enum: boards = [] } = nodeAt('/target/board');
   const fewer = Array.from({ length: facts.count - 2 }, (_, index) => facts.count - 1 - index);
@@ -158,7 +166,7 @@ export function waysOut(facts: Facts): { answers: Record<string, Json>; label: s
       ? [{ answers: { '/sensors/kind': 'digital' }, label: 'digital sensors' }]
       : []),
     ...boards
-      .filter((board) => works({}, board as typeof facts.board.id))
+      .filter((board) => works({}, board as BoardId))
       .map((board) => ({ answers: { '/target/board': board }, label: `board ${board}` })),
     ...(most === undefined ? [] : [{ answers: { '/sensors/count': most }, label: `${most} sensors` }]),
   ];

@@ -43,6 +43,7 @@ export const textPrompt = createPrompt<Reply, PromptConfig>((config, done) => {
       setProblem('');
     } else {
       const typed = line.trim();
+      readline.clearLine(0);
       setLine('');
       if (typed === EXPLAIN) setExplained(true);
       else if (BACK.has(typed.toLowerCase())) {
