@@ -24,6 +24,8 @@ export interface LoopScan extends Margins {
    * gain does not fall either (Nyquist).
    */
   beyondMinusOne: boolean;
+  /** Frequency of the crossing that sets the gain margin, rad/s; absent without one. */
+  phaseCrossoverRadS?: number;
 }
 
 /** Zero of `f` between `low` and `high`, where its signs differ. */
@@ -82,6 +84,7 @@ export function scanLoop(loop: Response, lowestRadS: number, highestRadS: number
   };
   const step = Math.pow(highestRadS / lowestRadS, 1 / (GRID_POINTS - 1));
   let gainMargin = Infinity;
+  let phaseCrossoverRadS: number | undefined;
   let phaseMarginDeg = Infinity;
   let highestSensitivity = 0;
   let peakAt = lowestRadS;
@@ -93,9 +96,10 @@ export function scanLoop(loop: Response, lowestRadS: number, highestRadS: number
     const [re, im] = loop(w);
     if (i > 0) {
       if (imBefore < 0 !== im < 0 && reBefore < 0 && re < 0) {
-        const at = size(bisect(imaginary, before, w));
-        if (at < 1) gainMargin = Math.min(gainMargin, 1 / at);
-        else beyondMinusOne = true;
+        const crossing = bisect(imaginary, before, w);
+        const at = size(crossing);
+        if (at >= 1) beyondMinusOne = true;
+        else if (1 / at < gainMargin) [gainMargin, phaseCrossoverRadS] = [1 / at, crossing];
       }
       if (Math.hypot(reBefore, imBefore) > 1 !== Math.hypot(re, im) > 1) {
         const [cr, ci] = loop(bisect((x) => size(x) - 1, before, w));
@@ -117,6 +121,7 @@ export function scanLoop(loop: Response, lowestRadS: number, highestRadS: number
     phaseMarginDeg,
     ms: Math.max(highestSensitivity, peak(sensitivity, low, high)),
     beyondMinusOne,
+    ...(phaseCrossoverRadS !== undefined && { phaseCrossoverRadS }),
   };
 }
 

@@ -66,13 +66,19 @@ export function loopPeak(plant: LanePlant, controller: SampledController): numbe
 export function loopMargins(plant: LanePlant, controller: SampledController): Margins {
   const sampled = samplePlant(plant);
   const loop = openLoop(sampled, controller);
-  const { beyondMinusOne, ...margins } = scanLoop(
+  const { beyondMinusOne, gainMargin, phaseMarginDeg, ms } = scanLoop(
     loop,
     LOWEST_SHARE / plant.lagS,
     Math.PI / plant.samplePeriodS,
   );
   const stable = !beyondMinusOne || closedLoopRadius(sampled, controller) < 1;
-  return stable ? margins : { gainMargin: 0, phaseMarginDeg: 0, ms: Infinity };
+  return stable ? { gainMargin, phaseMarginDeg, ms } : { gainMargin: 0, phaseMarginDeg: 0, ms: Infinity };
+}
+
+/** Frequency at which the loop crosses -180 deg with the gain margin, rad/s; undefined without such a crossing. */
+export function phaseCrossover(plant: LanePlant, controller: SampledController): number | undefined {
+  const loop = openLoop(samplePlant(plant), controller);
+  return scanLoop(loop, LOWEST_SHARE / plant.lagS, Math.PI / plant.samplePeriodS).phaseCrossoverRadS;
 }
 
 /** Time constant of the derivative filter, s. */

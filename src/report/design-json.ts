@@ -1,5 +1,6 @@
 /** The design as `derive --json` gives it. */
 import type { Design, Margins } from '../design/design.js';
+import { predictCycles } from '../design/rule-cycle.js';
 import { stateTable } from '../design/state-table.js';
 import { mToMm } from '../sheet/units.js';
 
@@ -37,6 +38,7 @@ export function designJson(design: Design) {
           ...(fromM === undefined || toM === undefined ? {} : { fromMm: mToMm(fromM), toMm: mToMm(toM) }),
         }))
       : [],
+    ...(controller.rules && { cycles: predictCycles(vehicle, classes) }),
     firmware: controller,
     remarks: design.remarks,
   };

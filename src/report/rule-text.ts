@@ -1,5 +1,6 @@
 /** The rule table as a strip of the bar for each state, for reading and annotating. */
 import type { Design, RuleRow } from '../design/design.js';
+import { predictCycles } from '../design/rule-cycle.js';
 import { stateTable } from '../design/state-table.js';
 import { mToMm } from '../sheet/units.js';
 import { table } from './text-table.js';
@@ -36,5 +37,23 @@ export function ruleLines(design: Design): string[] {
   return [
     `Rule table: ${all.length} states, wheel speeds as fractions of base speed${rest > 0 ? ` (${rest} states without a single line are in --json)` : ''}`,
     table([['bar', 'kind', 'offset, mm', 'left', 'right'], ...rows]),
+    ...cycleLines(design),
   ];
+}
+
+/** What the steps of the table do to the loop, by the describing function. */
+function cycleLines({ vehicle, classes }: Design): string[] {
+  const predictions = predictCycles(vehicle, classes);
+  const steepest = Math.max(...predictions.map((each) => each.gainRatio));
+  const nearest = Math.min(...predictions.map((each) => each.criticalRatio));
+  const cycling = predictions.flatMap(({ name, cycles }) =>
+    cycles.map(
+      ({ amplitude, frequencyRadS }) =>
+        `class ${name}: ${mToMm(amplitude).toFixed(1)} mm at the bar, ${(frequencyRadS / (2 * Math.PI)).toFixed(1)} Hz`,
+    ),
+  );
+  const measure = `the table's steps act like up to ${steepest.toFixed(2)} times the gain, the loop bears ${nearest.toFixed(1)} times`;
+  return cycling.length > 0
+    ? [`Limit cycles predicted (describing function; ${measure}): ${cycling.join('; ')}.`]
+    : [`No limit cycle is predicted (describing function): ${measure}.`];
 }
