@@ -51,7 +51,6 @@ async function buildProgram(words: readonly string[], io: Io, wantsJson: boolean
     )
     .version(VERSION, '--version', 'print the version')
     .helpOption('-h, --help', 'print this help')
-    .helpCommand(false)
     .addHelpText('after', EXAMPLES)
     .exitOverride()
     .configureOutput({
@@ -61,17 +60,18 @@ async function buildProgram(words: readonly string[], io: Io, wantsJson: boolean
         if (!wantsJson) write(text);
       },
     });
-  const named = words.find((word) => !word.startsWith('-'));
-  const load = named === undefined ? undefined : COMMANDS[named];
+  const [named = ''] = words;
+  const load = Object.hasOwn(COMMANDS, named) ? COMMANDS[named] : undefined;
   const loads = load ? [load] : Object.values(COMMANDS);
   for (const module of await Promise.all(loads.map((each) => each()))) module.register(program, io);
   return program;
 }
 
-/** What a bare `fairlead` does: the questionnaire where somebody can answer, else the demo. */
+/** What `fairlead` does without a command: the questionnaire where somebody can answer, else the demo. */
 function withDefaultCommand(words: readonly string[], io: Io): string[] {
-  const asksForProgram = words.some((word) => !word.startsWith('-') || FOR_PROGRAM.has(word));
-  if (asksForProgram) return [...words];
+  const [first] = words;
+  const isForProgram = first !== undefined && (!first.startsWith('-') || FOR_PROGRAM.has(first));
+  if (isForProgram || words.some((word) => Object.hasOwn(COMMANDS, word))) return [...words];
   return [io.isTerminalIn && io.isTerminalOut ? 'survey' : 'demo', ...words];
 }
 
