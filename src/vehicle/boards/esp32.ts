@@ -96,6 +96,7 @@ export const esp32: BoardFacts = {
     'ESP-IDF programming guide: GPIO & RTC GPIO, LED Control, ADC oneshot mode',
     'MicroPython documentation, esp32 port',
   ],
+  // What MicroPython sets unless told otherwise (from memory); the chip can do 240 MHz.
   clockHz: 160e6,
   logicV: 3.3,
   // The firmware reads read_u16() >> 4: the converter's own 12 bits.
