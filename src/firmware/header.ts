@@ -65,7 +65,7 @@ export function reasonsOf(features: Features): readonly Reason[] {
 function ledParagraphs(features: Features): string[] {
   return [
     '',
-    'LED: on while driving, quick flashes during the countdown, else a number of flashes:',
+    'LED: on while driving, flashing without a pause during the countdown, else a number of flashes:',
     ...reasonsOf(features).map(
       ({ flashes, about }) => `${flashes} ${flashes === 1 ? 'flash' : 'flashes'}: ${about}`,
     ),

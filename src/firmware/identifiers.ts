@@ -5,6 +5,7 @@
  * softkwlist of 3.12), and names that the Arduino core and avr-libc define as macros or globals.
  * File names also avoid the device names of Windows, on which many carts are programmed.
  */
+import { FairleadError } from '../sheet/problem.js';
 import type { Language } from './literals.js';
 
 const CPP_WORDS = `alignas alignof and and_eq asm auto bitand bitor bool break case catch char char8_t char16_t char32_t
@@ -51,10 +52,14 @@ export function identifier(name: string, language: Language): string {
  * The vehicle's name as folder and file name. The sheet's schema admits only letters, digits, hyphen and underscore;
  * checked again here because a path is made from it.
  *
- * @throws Error when it could leave the folder or name a device
+ * @throws FairleadError (bad input) when it could leave the folder or names a device
  */
 export function fileName(name: string): string {
-  if (!/^[A-Za-z][A-Za-z0-9_-]{0,39}$/.test(name) || WINDOWS_DEVICES.test(name))
-    throw new Error(`"${name}" cannot name a folder on every system.`);
-  return name;
+  if (/^[A-Za-z][A-Za-z0-9_-]{0,39}$/.test(name) && !WINDOWS_DEVICES.test(name)) return name;
+  const message = `${JSON.stringify(name)} cannot name a folder on every system.`;
+  const fix =
+    'Take a name that begins with a letter, of letters, digits, hyphen and underscore, not CON, NUL or the like.';
+  throw new FairleadError(message, {
+    problems: [{ pointer: '/name', message, got: JSON.stringify(name), fix }],
+  });
 }

@@ -2,7 +2,7 @@
  * From a design to the text of every firmware file: view model -> templates -> formatter.
  *
  * Templates hold no arithmetic and branch only on booleans of the view model; a name that the view model lacks is an
- * error (strict), so is a helper that is not one of ours (knownHelpersOnly). Numbers and user text pass through one
+ * error (strict, and the checks below), so is a helper that is not one of ours (knownHelpersOnly). Numbers and user text pass through one
  * helper each. The same sheet and version give the same bytes: no date, host name or path enters a view model.
  */
 import { readFile } from 'node:fs/promises';
@@ -53,10 +53,31 @@ export interface FirmwareDesign extends Pick<Design, 'vehicle' | 'controller'> {
 
 const TEMPLATES = new URL('../../templates/', import.meta.url);
 
+/** Strict mode does not reach the arguments of blocks: a name misspelt in a condition would silently be false. */
+function checkBlocks(engine: typeof Handlebars): void {
+  const check = (name: string, isSound: (value: unknown) => boolean, kind: string): void => {
+    const block = engine.helpers[name]!;
+    engine.registerHelper(name, function (this: unknown, value: unknown, options: Handlebars.HelperOptions) {
+      if (!isSound(value))
+        throw new TypeError(`{{#${name}}} takes a ${kind} of the view model, not ${typeof value}.`);
+      return block.call(this, value, options) as string;
+    });
+  };
+  const isBoolean = (value: unknown) => typeof value === 'boolean';
+  check('if', isBoolean, 'boolean');
+  check('unless', isBoolean, 'boolean');
+  check('each', Array.isArray, 'list');
+}
+
 function engineFor(language: Language): typeof Handlebars {
   const engine = Handlebars.create();
+  checkBlocks(engine);
   engine.registerHelper('literal', (value: number, type: IntegerType) => literal(value, type, language));
-  engine.registerHelper('comment', (text: string) => comment(text, language));
+  engine.registerHelper('comment', (text: unknown) => {
+    if (typeof text !== 'string')
+      throw new TypeError(`{{comment}} takes a text of the view model, not ${typeof text}.`);
+    return comment(text, language);
+  });
   return engine;
 }
 

@@ -2,7 +2,7 @@
  * An ATmega328P at 16 MHz, instruction by instruction (avr8js): processor, timers 0 to 2, ports B to D, converter, watchdog.
  *
  * Pins by the numbers of the Arduino core (variants/standard/pins_arduino.h): 0 to 7 are port D, 8 to 13 port B, A0 to A5 (14 to
- * 19) port C. A watchdog reset starts the chip anew with its registers cleared and its memory kept, as data sheet 8271H, 10.7 has
+ * 19) port C. A watchdog reset starts the chip anew with its registers cleared and its memory kept, as the data sheet (8271H, Reset Sources) has
  * it; the emulator alone would only set the program counter.
  */
 import {

@@ -25,7 +25,7 @@ export function runOnChip(program: Uint8Array, input: Int32Array): ChipOutput {
   const stepCycles: number[] = [];
   let taken = 0;
   let stepBegan = 0;
-  let ended = false;
+  const state = { ended: false };
   cpu.readHooks[GPIOR0] = () => bytes[taken++] ?? 0;
   cpu.writeHooks[GPIOR0] = (value) => {
     output.push(value);
@@ -37,13 +37,13 @@ export function runOnChip(program: Uint8Array, input: Int32Array): ChipOutput {
     return true;
   };
   cpu.writeHooks[GPIOR2] = () => {
-    ended = true;
+    state.ended = true;
     return true;
   };
   const execute = avrInstruction;
   const limit = MOST_CYCLES_PER_NUMBER * input.length;
-  while (!ended && cpu.cycles < limit) execute(cpu);
-  if (!ended) throw new Error(`The harness has not ended after ${limit} cycles.`);
+  while (!state.ended && cpu.cycles < limit) execute(cpu);
+  if (!state.ended) throw new Error(`The harness has not ended after ${limit} cycles.`);
   return {
     numbers: new Int32Array(Uint8Array.from(output).buffer),
     stepCycles: Uint32Array.from(stepCycles),

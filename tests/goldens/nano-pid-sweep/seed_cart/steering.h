@@ -1,0 +1,35 @@
+// Part of the firmware of seed_cart. Written by fairlead 0.1.0; change the build sheet, not
+// this file.
+//
+// From the line's offset to the duties of the two wheels: one step a sample period.
+#pragma once
+
+#include <stdint.h>
+
+#include "constants.h"
+#include "sensing.h"
+
+// Where in the course of following a line the vehicle is; numbers as in a run log.
+enum class Phase : uint8_t {
+  Follow = 0,
+  Crossing = 1,
+  Gap = 2,
+  Search = 3,
+  Stopped = 4,
+};
+
+struct Steering {
+  Phase phase;
+  uint8_t classIndex;       // speed class in force
+  int32_t curvaturePerMQ8;  // commanded
+  int32_t speedMmSQ6;       // of the vehicle, modelled
+  int16_t dutyLeftQ12;      // -FULL_DUTY_Q12 to FULL_DUTY_Q12; positive drives forward
+  int16_t dutyRightQ12;
+};
+
+// Puts the controller into the state at the start of a run.
+void startSteering();
+
+// One sample period: readings, leftmost sensor first, to duties. Phase::Stopped lasts until the
+// next start.
+const Steering& steer(const int16_t (&counts)[SENSOR_COUNT]);

@@ -1,0 +1,138 @@
+// Part of the firmware of seed_cart. Written by fairlead 0.1.0; change the build sheet, not
+// this file.
+//
+// The watchdog runs while the vehicle moves: if the program hangs, it resets the board, which
+// switches the motors off. After any reset the button has to be pressed again.
+#include "supervisor.h"
+
+#include <avr/wdt.h>
+
+#include "board.h"
+#include "motors.h"
+#include "steering.h"
+#include "sweep.h"
+#include "user_hooks.h"
+
+namespace {
+
+State state = State::Ready;
+Reason reason = Reason::Ready;
+uint8_t flatSensorNumber;
+uint32_t samples;  // in this state
+
+void enter(State next) {
+  state = next;
+  samples = 0;
+}
+
+void stop(State next, Reason why) {
+  motorsOff();
+  wdt_disable();
+  reason = why;
+  enter(next);
+  userStopped(why);
+}
+
+void startRun() {
+  startSteering();
+  enter(State::Running);
+}
+
+void startMoving() {
+  startOverruns();
+  wdt_enable(WDTO_120MS);
+  startSweep();
+  enter(State::Calibrating);
+}
+
+void calibrate() {
+  int16_t counts[SENSOR_COUNT];
+  readSensors(counts);
+  const Sweep& sweep = stepSweep(counts);
+  switch (sweep.result) {
+    case SweepResult::Turning:
+      setMotors(sweep.dutyLeftQ12, sweep.dutyRightQ12);
+      break;
+    case SweepResult::Done:
+      startRun();
+      break;
+    case SweepResult::FlatSensor:
+      flatSensorNumber = sweep.flatSensor;
+      stop(State::Fault, Reason::FlatSensor);
+      break;
+    case SweepResult::LineNotFound:
+      stop(State::Fault, Reason::LineNotFound);
+      break;
+  }
+}
+
+void run() {
+  int16_t counts[SENSOR_COUNT];
+  readSensors(counts);
+  const Steering& steering = steer(counts);
+  samples++;
+  if (steering.phase == Phase::Stopped) {
+    stop(State::LineLost, Reason::LineLost);
+  } else if (samples >= RUN_LIMIT_SAMPLES) {
+    stop(State::Stopped, Reason::RunLimit);
+  } else if (overruns() > OVERRUN_LIMIT) {
+    stop(State::Fault, Reason::Overrun);
+  } else {
+    setMotors(steering.dutyLeftQ12, steering.dutyRightQ12);
+    userSample(steering);
+  }
+}
+
+void countDown() {
+  samples++;
+  if (samples >= COUNTDOWN_SAMPLES) startMoving();
+}
+
+void takePress() {
+  if (state == State::Countdown || isMoving(state)) {
+    stop(State::Stopped, Reason::Button);
+  } else {
+    flatSensorNumber = 0;
+    enter(State::Countdown);
+  }
+}
+
+}  // namespace
+
+State currentState() {
+  return state;
+}
+
+Reason lastReason() {
+  return reason;
+}
+
+uint8_t flatSensor() {
+  return flatSensorNumber;
+}
+
+void setupSupervisor() {
+  if (resetCause() == ResetCause::Watchdog) reason = Reason::Watchdog;
+  if (resetCause() == ResetCause::BrownOut) reason = Reason::BrownOut;
+}
+
+void superviseSample() {
+  wdt_reset();
+  if (buttonPressed()) takePress();
+  switch (state) {
+    case State::Countdown:
+      countDown();
+      break;
+    case State::Calibrating:
+      calibrate();
+      break;
+    case State::Running:
+      run();
+      break;
+    case State::Ready:
+    case State::LineLost:
+    case State::Stopped:
+    case State::Fault:
+      break;
+  }
+}

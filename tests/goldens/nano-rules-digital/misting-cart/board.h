@@ -1,0 +1,29 @@
+// Part of the firmware of misting-cart. Written by fairlead 0.1.0; change the build sheet, not
+// this file.
+//
+// The board: sample clock, sensors, start button, cause of the last reset.
+#pragma once
+
+#include <stdint.h>
+
+#include "constants.h"
+
+void setupBoard();
+
+// Whether a sample is to begin now. A sample that is a whole period late counts as an overrun, and
+// the clock starts afresh from it.
+bool sampleDue();
+
+// Overruns since the last startOverruns().
+uint16_t overruns();
+void startOverruns();
+
+// One reading a sensor, leftmost first: 0 or 1.
+void readSensors(int16_t (&counts)[SENSOR_COUNT]);
+
+// Whether the button has just been pressed; to be asked once a sample. A button that is held down
+// since the reset does not count until it has been released.
+bool buttonPressed();
+
+enum class ResetCause : uint8_t { Normal, Watchdog, BrownOut };
+ResetCause resetCause();

@@ -1,0 +1,209 @@
+// Part of the firmware of misting-cart. Written by fairlead 0.1.0; change the build sheet, not
+// this file.
+//
+// The numbers of this vehicle. A name that ends in _Qn holds its quantity times 2^n:
+// 608 in HALF_LINE_MM_Q6 is 9.5 mm. Offsets to the left and turns to the left are positive.
+#pragma once
+
+#include <stdint.h>
+
+// Time
+
+// Period of the control loop, us: 500 samples a second. From target.board.
+constexpr uint32_t SAMPLE_PERIOD_US = 2000UL;
+// From the button to the first motion: 0.5 s. From start.countdownS.
+constexpr uint16_t COUNTDOWN_SAMPLES = 250;
+// Longest run: 120 s. From start.runLimitS.
+constexpr uint32_t RUN_LIMIT_SAMPLES = 60000UL;
+// How long the button must keep its level to count: 20 ms. Common practice.
+constexpr uint8_t DEBOUNCE_SAMPLES = 10;
+// Samples of one run that may begin a whole period late before the run is stopped. Common
+// practice.
+constexpr uint16_t OVERRUN_LIMIT = 20;
+// Length of one flash and of one pause of the LED: 0.2 s. Common practice.
+constexpr uint16_t BLINK_SAMPLES = 100;
+
+// Scales of the integers
+
+// Coverage of a sensor whose spot lies wholly on the line.
+constexpr int16_t FULL_COVERAGE_Q8 = 256;
+// Duty of a motor at full voltage.
+constexpr int16_t FULL_DUTY_Q12 = 4096;
+// Bits that a filtered value has beyond its input.
+constexpr uint8_t FILTER_BITS = 4;
+// Bits of the filter and motor model coefficients.
+constexpr uint8_t COEFFICIENT_BITS = 15;
+// Bits of the curvature per wheel-speed difference.
+constexpr uint8_t RULE_CURVATURE_BITS = 4;
+// Bits of the rule table's wheel-speed fractions.
+constexpr uint8_t FRACTION_BITS = 6;
+// Bits of a modelled speed beyond mm/s.
+constexpr uint8_t SPEED_BITS = 6;
+// Bits of a curvature beyond 1/m.
+constexpr uint8_t CURVATURE_BITS = 8;
+// Bits of a class's speed slope.
+constexpr uint8_t SPEED_SLOPE_BITS = 4;
+// How much faster than the motors a small speed error is closed: 2^n times.
+constexpr uint8_t SPEED_GAIN_BITS = 2;
+// Bits dropped from a speed difference before the motor model's product.
+constexpr uint8_t SPEED_MODEL_BITS = 4;
+// Bits of the half track width beyond m.
+constexpr uint8_t TRACK_BITS = 16;
+// Bits of the duty per wheel speed beyond duty.
+constexpr uint8_t SLOPE_BITS = 12;
+
+// Sensor bar
+
+// Sensors of the bar. From sensors.count.
+constexpr uint8_t SENSOR_COUNT = 6;
+// Level of a sensor's pin over the line: low. From sensors.lineLevel.
+constexpr uint8_t LINE_LEVEL = 0;
+// Half way between neighbouring sensors, from the left, with one place beyond each end; mm left
+// of the centre line. From sensors.pitchMm or positionsMm.
+constexpr int16_t GAP_MIDDLE_MM_Q6[] = {1920, 1280, 640, 0, -640, -1280, -1920};
+// Half the width of the line: 9.5 mm. From line.widthMm.
+constexpr int16_t HALF_LINE_MM_Q6 = 608;
+// Width of line reaching an end of the bar from which it is taken for a corner: 34.34 mm. From
+// line.widthMm and tightestRadiusMm.
+constexpr int16_t CORNER_WIDTH_MM_Q6 = 2198;
+
+// Steering
+
+// Bits of the gains of the speed classes.
+constexpr uint8_t GAIN_BITS = 14;
+// Filter of the curvature demand that picks the speed class; time constant 25 ms.
+constexpr int16_t DEMAND_FILTER_Q15 = 2519;
+// Filter of the curvature that is held over gaps; time constant 60 ms.
+constexpr int16_t HOLD_FILTER_Q15 = 1074;
+// Largest curvature commanded: 33.3 per m. From drive.trackWidthMm.
+constexpr int16_t CURVATURE_LIMIT_PER_M_Q8 = 8533;
+// Curvature of the search for a lost line: 16.7 per m. From drive.trackWidthMm and
+// line.tightestRadiusMm.
+constexpr int16_t SEARCH_CURVATURE_PER_M_Q8 = 4267;
+// Curvature for each step of difference between the wheels' fractions. From drive.trackWidthMm.
+constexpr int16_t CURVATURE_PER_DIFFERENCE_Q4 = 533;
+
+// Drive
+
+// Half the track width: 60 mm. From drive.trackWidthMm.
+constexpr int16_t HALF_TRACK_M_Q16 = 3932;
+// Largest turn rate commanded, mrad/s. From drive.motor and drive.trackWidthMm.
+constexpr int32_t TURN_LIMIT_MRAD_S = 27496L;
+// Wheel speed at full duty, mm/s. From drive.motor, drive.wheelDiameterMm and power.nominalV.
+constexpr int16_t WHEEL_LIMIT_MM_S = 1500;
+// Wheel speed up to which a wheel is left without duty, mm/s.
+constexpr int16_t WHEEL_DEAD_MM_S = 15;
+// Share of a speed difference that the motors make up in one sample; time constant 80 ms. From
+// drive.motor.timeConstantMs.
+constexpr int16_t MOTOR_STEP_Q15 = 809;
+// Speed command above the present speed when speeding up: 0.395 m/s. From
+// drive.gripCoefficient.
+constexpr int32_t LEAD_UP_MM_S_Q6 = 25306L;
+// Speed command below the present speed when braking: 0.417 m/s. From drive.gripCoefficient.
+constexpr int32_t LEAD_DOWN_MM_S_Q6 = 26712L;
+// Speed of the search for a lost line: 0.344 m/s. From drive.gripCoefficient.
+constexpr int32_t SEARCH_SPEED_MM_S_Q6 = 22043L;
+// Duty at which the left wheel begins to turn: 10 %. From drive.motor.startDutyPercent and
+// trim.
+constexpr int16_t START_DUTY_LEFT_Q12 = 410;
+// Duty at which the right wheel begins to turn: 10 %. From drive.motor.startDutyPercent and
+// trim.
+constexpr int16_t START_DUTY_RIGHT_Q12 = 410;
+// Duty of the left wheel for each mm/s beyond that. From drive.motor, drive.wheelDiameterMm and
+// trim.
+constexpr int16_t DUTY_LEFT_PER_MM_S_Q24 = 10066;
+// Duty of the right wheel for each mm/s beyond that. From drive.motor, drive.wheelDiameterMm
+// and trim.
+constexpr int16_t DUTY_RIGHT_PER_MM_S_Q24 = 10066;
+
+// Memory of the line
+
+// Offset beyond which a vanished line has left by that side: 24.75 mm. From sensors and
+// line.widthMm.
+constexpr int16_t SIDE_OFFSET_MM_Q6 = 1584;
+// Way over which a vanished line is taken for a gap: 18 mm, as a sum of speeds over samples.
+// From line.longestGapMm.
+constexpr int32_t GAP_MM_S_Q6_SAMPLES = 576000L;
+// Way after a corner on which a vanished line is looked for on its side: 46 mm. From
+// line.widthMm.
+constexpr int32_t CORNER_MM_S_Q6_SAMPLES = 1472000L;
+// Way out of a bend before a faster class is taken: 37.5 mm. From sensors.aheadOfAxleMm.
+constexpr int32_t RELEASE_MM_S_Q6_SAMPLES = 1200000L;
+// Longest search for a lost line: 1.21 s; then the vehicle stops. From drive and
+// line.tightestRadiusMm.
+constexpr uint16_t SEARCH_SAMPLES = 603;
+
+// Speed classes
+
+struct SpeedClass {
+  int16_t curvaturePerMQ8;  // largest curvature of the class
+  int16_t speedSlope;       // speed gained for each step of curvature below that
+  int32_t speedMmSQ6;       // speed at that curvature
+  int16_t proportional;     // curvature for each step of the table's curvature, GAIN_BITS more bits
+  int16_t derivative;       // the same for its change, FILTER_BITS fewer bits
+  int16_t derivativeFilterQ15;
+};
+
+// From speeds.classes, the fastest first.
+constexpr SpeedClass SPEED_CLASSES[] = {
+    // straight: bends from 3600 mm radius at 1.25 m/s, limited by the finish target
+    {71, 0, 80239L, 3315, 2383, 4644},
+    // sweeping: bends from 960 mm radius at 1.25 m/s, limited by the finish target
+    {267, 0, 80239L, 3482, 2415, 4583},
+    // wide: bends from 480 mm radius at 1.25 m/s, limited by the finish target
+    {533, 0, 80239L, 4118, 2530, 4386},
+    // open: bends from 288 mm radius at 1.11 m/s, limited by the margins of the steering
+    {889, 404, 71240L, 6452, 2868, 3960},
+    // medium: bends from 180 mm radius at 0.914 m/s, limited by the margins of the steering
+    {1422, 383, 58492L, 10280, 3342, 3649},
+    // tight: bends from 120 mm radius at 0.738 m/s, limited by the margins of the steering
+    {2133, 253, 47244L, 16384, 3909, 3439},
+    // reserve: bends from 90 mm radius at 0.738 m/s, limited by the margins of the steering
+    {2844, 0, 47244L, 16384, 3909, 3439},
+};
+constexpr uint8_t CLASS_COUNT = sizeof SPEED_CLASSES / sizeof SPEED_CLASSES[0];
+
+// What must hold between them
+
+template <typename T, uint32_t N>
+constexpr uint32_t entriesOf(const T (&)[N]) {
+  return N;
+}
+static_assert(entriesOf(GAP_MIDDLE_MM_Q6) == SENSOR_COUNT + 1, "one place for each gap of the bar");
+static_assert(DEBOUNCE_SAMPLES > 0, "a button that has to be seen");
+
+constexpr bool classesInOrder(uint8_t i) {
+  return i == CLASS_COUNT ||
+         (SPEED_CLASSES[i - 1].curvaturePerMQ8 <= SPEED_CLASSES[i].curvaturePerMQ8 &&
+          classesInOrder(static_cast<uint8_t>(i + 1)));
+}
+static_assert(classesInOrder(1), "each class is for tighter bends than the one before");
+
+// No sum and no product leaves 32 bits: the largest values that each can meet
+
+constexpr bool fits(int64_t value) {
+  return value <= INT32_MAX;
+}
+constexpr int64_t MOST_MM_S_Q6 = int64_t{WHEEL_LIMIT_MM_S} << SPEED_BITS;
+
+constexpr bool classFits(const SpeedClass& each) {
+  return fits(int64_t{INT16_MAX} * (int64_t{each.proportional} + each.derivative)) &&
+         fits(int64_t{each.curvaturePerMQ8} * each.speedSlope) &&
+         fits((each.speedMmSQ6 + MOST_MM_S_Q6 +
+               ((int64_t{each.curvaturePerMQ8} * each.speedSlope) >> SPEED_SLOPE_BITS))
+              << SPEED_GAIN_BITS);
+}
+constexpr bool classesFit(uint8_t i) {
+  return i == CLASS_COUNT ||
+         (classFits(SPEED_CLASSES[i]) && classesFit(static_cast<uint8_t>(i + 1)));
+}
+static_assert(classesFit(0), "gains, speed slopes and speed errors");
+static_assert(fits(int64_t{WHEEL_LIMIT_MM_S} * CURVATURE_LIMIT_PER_M_Q8), "speed times curvature");
+static_assert(fits(int64_t{TURN_LIMIT_MRAD_S} * HALF_TRACK_M_Q16), "turn rate times half track");
+static_assert(fits((2 * MOST_MM_S_Q6 >> SPEED_MODEL_BITS) * MOTOR_STEP_Q15), "motor model");
+static_assert(fits(int64_t{WHEEL_LIMIT_MM_S} * DUTY_LEFT_PER_MM_S_Q24), "duty of the left wheel");
+static_assert(fits(int64_t{WHEEL_LIMIT_MM_S} * DUTY_RIGHT_PER_MM_S_Q24), "duty of the right wheel");
+static_assert(fits(GAP_MM_S_Q6_SAMPLES + MOST_MM_S_Q6), "way in a gap");
+static_assert(fits(CORNER_MM_S_Q6_SAMPLES + MOST_MM_S_Q6), "way after a corner");
+static_assert(fits(RELEASE_MM_S_Q6_SAMPLES + MOST_MM_S_Q6), "way out of a bend");
+static_assert(fits(SEARCH_SAMPLES* MOST_MM_S_Q6), "way of a search");

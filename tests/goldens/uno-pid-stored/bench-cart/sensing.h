@@ -1,0 +1,23 @@
+// Part of the firmware of bench-cart. Written by fairlead 0.1.0; change the build sheet, not
+// this file.
+//
+// From readings to the line's offset at the bar.
+#pragma once
+
+#include <stdint.h>
+
+#include "constants.h"
+
+struct Sight {
+  bool found;  // the line is under the bar
+  bool wide;   // the bar lies on a crossing
+  int32_t
+      offsetMmQ6;  // the line's middle, left of the bar's middle; the last one seen while not found
+  int8_t reach;    // end of the bar that a too wide line reaches, as at a corner: 1 left, -1 right
+};
+
+// Forgets the line.
+void resetSensing();
+
+// Finds the line in one set of readings, leftmost sensor first.
+const Sight& findLine(const int16_t (&counts)[SENSOR_COUNT]);
