@@ -1,5 +1,5 @@
 /** What the demo says, stage by stage. */
-import { relative } from 'node:path';
+import { basename, relative } from 'node:path';
 import { table } from '../report/text-table.js';
 import { counted } from '../sheet/words.js';
 import type { DemoVehicle, Driven, Picture, RenderedDemo } from './demo-stages.js';
@@ -95,7 +95,7 @@ export function nextText(rendered: readonly RenderedDemo[]): string {
   const self = process.env['npm_lifecycle_event'] === 'start' ? 'npm start --' : 'fairlead';
   const steps = rendered.map(({ folder, vehicle }) =>
     vehicle.design.vehicle.language === 'arduino'
-      ? ['Arduino', `open ${folder}/${vehicle.sheet.name}.ino in the Arduino IDE, choose the board, upload`]
+      ? ['Arduino', `open ${folder}/${basename(folder)}.ino in the Arduino IDE, choose the board, upload`]
       : ['MicroPython', `copy ${folder}/*.py to the board, for example with: mpremote cp ${folder}/*.py :`],
   );
   const others = [
