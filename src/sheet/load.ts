@@ -9,6 +9,9 @@ import { FairleadError, type Problem } from './problem.js';
 /** A thousand times the size of an ordinary sheet. */
 const MOST_BYTES = 1_000_000;
 
+/** What every complaint about the file itself asks for. */
+const WANTED = 'a JSON file';
+
 /** A JSON file as read. */
 export interface JsonFile {
   data: unknown;
@@ -57,19 +60,24 @@ export async function readJsonFile(path: string, advice = ''): Promise<JsonFile>
   const text = decoded(bytes, path);
   if (text.trim() === '') {
     const fix = `Check that this is the right file. ${advice}`.trim();
-    throw unreadable(path, { message: 'The file is empty.', got: 'nothing', fix });
+    throw unreadable(path, { message: `The file is empty; ${WANTED} is needed.`, got: 'empty', fix });
   }
   const fault = findJsonFault(text);
   if (fault) {
-    const message = `This is not JSON: line ${fault.line}, column ${fault.column}: ${fault.what}.`;
-    throw unreadable(path, { message, fix: 'Correct that place.' });
+    const got = `line ${fault.line}, column ${fault.column}: ${fault.what}`;
+    throw unreadable(path, {
+      message: `This is not JSON: ${got}.`,
+      got,
+      allowed: 'JSON',
+      fix: 'Correct that place.',
+    });
   }
   return { data: JSON.parse(text), text, digest };
 }
 
 function unreadable(path: string, problem: Omit<Problem, 'pointer'>, cause?: unknown): FairleadError {
   return new FairleadError(`${path}: ${problem.message}`, {
-    problems: [{ pointer: '', ...problem }],
+    problems: [{ pointer: '', allowed: WANTED, ...problem }],
     file: path,
     cause,
   });
@@ -79,11 +87,16 @@ async function readBytes(path: string, advice: string): Promise<Buffer> {
   try {
     const found = await stat(path);
     if (found.isDirectory()) {
-      throw unreadable(path, { message: 'This is a folder, not a file.', fix: 'Name the file in it.' });
+      throw unreadable(path, {
+        message: `This is a folder; ${WANTED} is needed.`,
+        got: 'a folder',
+        fix: 'Name the file in it.',
+      });
     }
     if (!found.isFile()) {
       throw unreadable(path, {
-        message: 'This is not an ordinary file.',
+        message: `This is a device or pipe; ${WANTED} is needed.`,
+        got: 'a device or pipe',
         fix: 'Save it as a file and name that.',
       });
     }
@@ -103,13 +116,15 @@ async function readBytes(path: string, advice: string): Promise<Buffer> {
 function reasonOf(error: unknown, advice: string): Omit<Problem, 'pointer'> {
   const code = error instanceof Error && 'code' in error ? error.code : undefined;
   if (code === 'ENOENT') {
-    return { message: 'There is no such file.', fix: `Check the path. ${advice}`.trim() };
+    const message = `There is no such file; ${WANTED} is needed.`;
+    return { message, got: 'no such file', fix: `Check the path. ${advice}`.trim() };
   }
   if (code === 'EACCES' || code === 'EPERM') {
-    return { message: 'The file may not be read.', fix: 'Check its access rights.' };
+    const message = `Reading the file is not permitted; ${WANTED} is needed.`;
+    return { message, got: 'not permitted', fix: 'Check its access rights.' };
   }
-  const text = error instanceof Error ? error.message : String(error);
-  return { message: `The file cannot be read: ${text}.`, fix: 'Check the path.' };
+  const got = error instanceof Error ? error.message : String(error);
+  return { message: `The file cannot be read: ${got}; ${WANTED} is needed.`, got, fix: 'Check the path.' };
 }
 
 function decoded(bytes: Buffer, path: string): string {
@@ -118,7 +133,8 @@ function decoded(bytes: Buffer, path: string): string {
     // A byte order mark of UTF-8 is dropped by the decoder; some editors write one.
     return new TextDecoder('utf-8', { fatal: true }).decode(bytes);
   } catch (error) {
-    const message = utf16 ? 'The file is in UTF-16.' : 'The file is not UTF-8 text.';
-    throw unreadable(path, { message, allowed: 'UTF-8', fix: 'Save it as UTF-8.' }, error);
+    const got = utf16 ? 'UTF-16' : 'bytes that are no UTF-8';
+    const message = `The file has ${got}; text in UTF-8 is needed.`;
+    throw unreadable(path, { message, got, allowed: 'text in UTF-8', fix: 'Save it as UTF-8.' }, error);
   }
 }

@@ -25,11 +25,9 @@ export function schemaProblems(name: SchemaName, data: unknown): Problem[] {
   const errors = withoutEchoes(chosenBranches(schemaErrors(name, data).slice(0, MOST_ERRORS)));
   const problems = errors.slice(0, MOST_PROBLEMS).map((error) => problemOf(root, error));
   if (errors.length > MOST_PROBLEMS) {
-    problems.push({
-      pointer: '',
-      message: 'There are more problems than these.',
-      fix: 'Check that this is the right file.',
-    });
+    const got = `more than ${MOST_PROBLEMS} problems`;
+    const message = `There are ${got}; these are the first.`;
+    problems.push({ pointer: '', message, got, allowed: 'none', fix: 'Check that this is the right file.' });
   }
   return problems;
 }

@@ -110,7 +110,7 @@ test('a file that is not there: exit 2', async () => {
   expect(await check(path, '--json')).toEqual({
     exitCode: 2,
     out: '',
-    err: `${path}: There is no such file. Check the path. A new sheet is made with "fairlead survey".\n`,
+    err: `${path}: There is no such file; a JSON file is needed. Check the path. A new sheet is made with "fairlead survey".\n`,
   });
 });
 

@@ -65,9 +65,10 @@ function applied(changes: readonly (readonly [string, unknown])[]): unknown {
       }, sheet);
     const key = pointer.split('/').at(-1) ?? '';
     if (typeof holder !== 'object' || holder === null) return sheet;
-    // A list has no holes; elsewhere `undefined` removes the key.
-    if (value !== undefined) Reflect.set(holder, key, value);
-    else if (!Array.isArray(holder)) Reflect.deleteProperty(holder, key);
+    // JSON lists have no holes; elsewhere `undefined` removes the key.
+    if (Array.isArray(holder) && (value === undefined || Number(key) >= holder.length)) return sheet;
+    if (value === undefined) Reflect.deleteProperty(holder, key);
+    else Reflect.set(holder, key, structuredClone(value));
     return sheet;
   }, changedSheet());
 }

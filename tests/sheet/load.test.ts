@@ -36,8 +36,8 @@ const utf16 = (text: string): Uint8Array =>
   Buffer.concat([Buffer.from([0xff, 0xfe]), Buffer.from(text, 'utf16le')]);
 
 test.each<[name: string, content: string | Uint8Array, message: RegExp, fix: RegExp]>([
-  ['empty.json', '', /^The file is empty\.$/, /"fairlead survey"/],
-  ['blank.json', ' \n\t\n', /^The file is empty\.$/, /"fairlead survey"/],
+  ['empty.json', '', /^The file is empty; a JSON file is needed\.$/, /"fairlead survey"/],
+  ['blank.json', ' \n\t\n', /^The file is empty; a JSON file is needed\.$/, /"fairlead survey"/],
   [
     'huge.json',
     ' '.repeat(1_000_001),
@@ -57,17 +57,17 @@ test.each<[name: string, content: string | Uint8Array, message: RegExp, fix: Reg
     /Correct/,
   ],
   ['deep.json', '['.repeat(100_000), /nesting is deeper than 64 levels\.$/, /Correct/],
-  ['utf16.json', utf16(SOUND), /^The file is in UTF-16\.$/, /^Save it as UTF-8\.$/],
+  ['utf16.json', utf16(SOUND), /^The file has UTF-16; text in UTF-8 is needed\.$/, /^Save it as UTF-8\.$/],
   [
     'latin1.json',
     Buffer.from('{"name": "caf\xe9"}', 'latin1'),
-    /^The file is not UTF-8 text\.$/,
+    /^The file has bytes that are no UTF-8; text in UTF-8 is needed\.$/,
     /Save it as UTF-8/,
   ],
   [
     'binary.json',
     Buffer.from([0x89, 0x50, 0x4e, 0x47, 0, 0]),
-    /^The file is not UTF-8 text\.$/,
+    /^The file has bytes that are no UTF-8; text in UTF-8 is needed\.$/,
     /Save it as UTF-8/,
   ],
   [
@@ -87,6 +87,8 @@ test.each<[name: string, content: string | Uint8Array, message: RegExp, fix: Reg
   expect(failure.problems[0]?.pointer).toBe('');
   expect(failure.problems[0]?.message).toMatch(message);
   expect(failure.problems[0]?.fix).toMatch(fix);
+  expect(failure.problems[0]?.got).toBeTypeOf('string');
+  expect(failure.problems[0]?.allowed).toBeTypeOf('string');
 });
 
 test('a missing file, a folder, a path through a file, a device', async () => {
@@ -100,9 +102,12 @@ test('a missing file, a folder, a path through a file, a device', async () => {
       return failure.problems[0]?.message;
     }),
   );
-  expect(messages.slice(0, 2)).toEqual(['There is no such file.', 'This is a folder, not a file.']);
+  expect(messages.slice(0, 2)).toEqual([
+    'There is no such file; a JSON file is needed.',
+    'This is a folder; a JSON file is needed.',
+  ]);
   expect(messages[2]).toMatch(/^The file cannot be read: ENOTDIR/);
-  expect(messages[3]).toBe('This is not an ordinary file.');
+  expect(messages[3]).toBe('This is a device or pipe; a JSON file is needed.');
   expect(messages[4]).toMatch(/^The file cannot be read: .*null bytes/);
 });
 
@@ -115,7 +120,10 @@ test('a file that may not be read says so', async () => {
   );
   // The superuser may read everything.
   expect(readable).toBe(process.getuid?.() === 0);
-  if (!readable) expect((await failureOf(path)).problems[0]?.message).toBe('The file may not be read.');
+  if (!readable)
+    expect((await failureOf(path)).problems[0]?.message).toBe(
+      'Reading the file is not permitted; a JSON file is needed.',
+    );
 });
 
 test('all problems of a sheet come at once, with the file', async () => {

@@ -73,7 +73,9 @@ describe('hostile sheets', () => {
     expect(problems).toHaveLength(101);
     expect(problems.at(-1)).toEqual({
       pointer: '',
-      message: 'There are more problems than these.',
+      message: 'There are more than 100 problems; these are the first.',
+      got: 'more than 100 problems',
+      allowed: 'none',
       fix: 'Check that this is the right file.',
     });
   });
