@@ -4,7 +4,7 @@ import type { Vehicle } from '../vehicle/vehicle.js';
 import { controllerConstants, firmwareGains, tableGainPerM2 } from './controller-constants.js';
 import { delayBudget } from './delay.js';
 import type { ClassSettings, Design, DesignedClass, SpeedLimits } from './design.js';
-import { Proving, type SpeedScale } from './proving.js';
+import { Proving, type SpeedScale, slowestScale } from './proving.js';
 import { type ClassRange, bindingLimit, classRanges, speedLimits } from './speed-classes.js';
 import { designLaw, lanePlantOf, marginsAt, worstMargins } from './steering-gains.js';
 import { overflows } from './intervals.js';
@@ -94,13 +94,18 @@ function refuseOverflow(vehicle: Vehicle, controller: ControllerConstants): void
     throw new FairleadError('No design meets the sheet.', { exitCode: EXIT.noDesign, problems });
 }
 
-/** Designs the controller of a vehicle; throws FairleadError with exit code 3 when nothing meets the sheet. */
-export function deriveDesign(vehicle: Vehicle): Design {
+/**
+ * Designs the controller of a vehicle.
+ *
+ * @param provenOn vehicle on whose proving lane the speeds are proven; by default its own
+ * @throws FairleadError with exit code 3 when nothing meets the sheet
+ */
+export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Design {
   const bases = classRanges(vehicle).map((range) => classBase(vehicle, range));
   const settings = (scale: SpeedScale) => bases.map((base) => settingsAt(base, scale));
   const controllerAt = (scale: SpeedScale) => controllerConstants(vehicle, settings(scale));
-  const proven = new Proving(vehicle).best(controllerAt);
-  const scale = proven ?? { top: vehicle.drive.topSpeedMps, share: 1 };
+  const proven = new Proving(vehicle, provenOn).best(controllerAt);
+  const scale = proven ?? slowestScale(vehicle);
   const chosen = settings(scale);
   const controller = controllerAt(scale);
   refuseOverflow(vehicle, controller);

@@ -6,12 +6,10 @@
  * taken). For each share the largest cap that passes is found by bisection; the pair with the shortest mean
  * time on the proving lane is taken. Runs are repeatable: their seeds are fixed.
  */
-import { Twin } from '../controller/twin.js';
 import type { ControllerConstants } from '../controller/constants.js';
 import { type PlantParameters, perturbedPlant } from '../rehearsal/plant-parameters.js';
-import { TwinEngine } from '../rehearsal/twin-engine.js';
+import { twinEngine } from '../rehearsal/twin-maker.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
-import { twinDelayS } from './delay.js';
 import { provingLane } from './proving-lane.js';
 
 /** Scales on class speeds. */
@@ -22,11 +20,20 @@ export interface SpeedScale {
   share: number;
 }
 
-/** Perturbed vehicles drawn, and how many of the most demanding of them every trial must finish. */
+/** A scale and the mean time that it gives. */
+interface Timed {
+  scale: SpeedScale;
+  timeS: number;
+}
+
+/** Perturbed vehicles drawn; how many of the most demanding every trial must finish, and how many typical ones are timed. */
 const DRAWN = 200;
-const TRIED = 12;
+const DEMANDING = 12;
+const TYPICAL = 8;
 const SHARES = [1, 0.95, 0.9, 0.84, 0.77, 0.7];
 const BISECTIONS = 5;
+/** Caps below the largest passing one that are tried too. */
+const SLOWER_TOPS = [0.95, 0.9, 0.85];
 /** Slowest cap tried, as a share of full wheel speed. */
 const LOWEST_TOP_SHARE = 0.25;
 /** Simulated time allowed for the proving lane, in times of driving it at the lowest cap. */
@@ -38,71 +45,98 @@ function demand(plant: PlantParameters): number {
   return (speed * speed * Math.sqrt(plant.lagS)) / plant.grip;
 }
 
-/** Vehicles on which the target is proven: from the drawn ones the most demanding that the target includes, and the nominal one. */
-function triedPlants(vehicle: Vehicle): PlantParameters[] {
+/** Vehicles on which the target is proven, and those whose time counts. */
+function triedPlants(vehicle: Vehicle): { demanding: PlantParameters[]; typical: PlantParameters[] } {
   const drawn = Array.from({ length: DRAWN }, (_, i) => perturbedPlant(vehicle, i + 1));
   drawn.sort((a, b) => demand(b) - demand(a));
   const excused = Math.floor(DRAWN * (1 - vehicle.speeds.finishTarget));
-  return [...drawn.slice(excused, excused + TRIED), perturbedPlant(vehicle, 0)];
+  const typical = Array.from(
+    { length: TYPICAL },
+    (_, i) => drawn[Math.floor(((i + 0.5) * DRAWN) / TYPICAL)]!,
+  );
+  return {
+    demanding: drawn.slice(excused, excused + DEMANDING),
+    typical: [perturbedPlant(vehicle, 0), ...typical],
+  };
+}
+
+/** The scale that is left when nothing passes. */
+export function slowestScale(vehicle: Vehicle): SpeedScale {
+  return { top: LOWEST_TOP_SHARE * vehicle.drive.topSpeedMps, share: SHARES[SHARES.length - 1] as number };
 }
 
 export class Proving {
   private readonly lane;
-  private readonly plants: PlantParameters[];
+  private readonly demanding: PlantParameters[];
+  private readonly typical: PlantParameters[];
   private readonly timeLimitS: number;
 
-  constructor(private readonly vehicle: Vehicle) {
-    this.lane = provingLane(vehicle);
-    this.plants = triedPlants(vehicle);
+  /** @param laneOf vehicle on whose proving lane is driven; by default its own */
+  constructor(
+    private readonly vehicle: Vehicle,
+    laneOf: Vehicle = vehicle,
+  ) {
+    this.lane = provingLane(laneOf);
+    ({ demanding: this.demanding, typical: this.typical } = triedPlants(vehicle));
     const slowest = LOWEST_TOP_SHARE * vehicle.drive.topSpeedMps;
     this.timeLimitS = (PATIENCE * this.lane.lengthM) / slowest;
   }
 
-  /** Mean time over the tried vehicles, s; undefined as soon as one does not finish. */
+  /** Mean time of the typical vehicles, s; undefined as soon as one of all does not finish. */
   meanTimeS(controller: ControllerConstants): number | undefined {
-    const { samplePeriodS, pwmSteps } = this.vehicle.board;
-    const makeControl = () => {
-      const twin = new Twin(controller);
-      twin.start();
-      return twin;
-    };
-    const engine = new TwinEngine(makeControl, { samplePeriodS, pwmSteps, delayS: twinDelayS(this.vehicle) });
-    let sum = 0;
-    for (const [i, plant] of this.plants.entries()) {
+    const engine = twinEngine(this.vehicle, controller);
+    const timeOf = (plant: PlantParameters): number | undefined => {
       const setup = { plant, lane: this.lane, laps: 1, timeLimitS: this.timeLimitS, sampleTrace: false };
       const result = engine.runNow(setup);
-      if (result.loss) {
-        // the vehicle that fails now most likely fails the next trial too: try it first
-        this.plants.unshift(...this.plants.splice(i, 1));
-        return undefined;
-      }
-      sum += result.timeS;
+      return result.loss ? undefined : result.timeS;
+    };
+    const failing = this.demanding.findIndex((plant) => timeOf(plant) === undefined);
+    if (failing >= 0) {
+      // the vehicle that fails now most likely fails the next trial too: try it first
+      this.demanding.unshift(...this.demanding.splice(failing, 1));
+      return undefined;
     }
-    return sum / this.plants.length;
+    let sum = 0;
+    for (const plant of this.typical) {
+      const timeS = timeOf(plant);
+      if (timeS === undefined) return undefined;
+      sum += timeS;
+    }
+    return sum / this.typical.length;
   }
 
   /** The scale with the shortest time that keeps the target; undefined when even the slowest does not. */
   best(controllerAt: (scale: SpeedScale) => ControllerConstants): SpeedScale | undefined {
-    const full = this.vehicle.drive.topSpeedMps;
-    let best: { scale: SpeedScale; timeS: number } | undefined;
+    let best: Timed | undefined;
     for (const share of SHARES) {
-      let low = LOWEST_TOP_SHARE * full;
-      let high = full;
-      let found: { scale: SpeedScale; timeS: number } | undefined;
-      for (let i = 0; i <= BISECTIONS; i++) {
-        const top = i === 0 ? full : (low + high) / 2;
-        const timeS = this.meanTimeS(controllerAt({ top, share }));
-        if (timeS === undefined) {
-          high = top;
-          continue;
-        }
-        found = { scale: { top, share }, timeS };
-        if (i === 0) break;
-        low = top;
-      }
+      const timeAt = (top: number) => this.meanTimeS(controllerAt({ top, share }));
+      const found = this.quickestTop(share, timeAt);
       if (found && (best === undefined || found.timeS < best.timeS)) best = found;
       else if (best) break;
     }
     return best?.scale;
+  }
+
+  /** For one share, the cap with the shortest time: the largest that passes, or one a little below it. */
+  private quickestTop(share: number, timeAt: (top: number) => number | undefined): Timed | undefined {
+    let low = LOWEST_TOP_SHARE * this.vehicle.drive.topSpeedMps;
+    const full = this.vehicle.drive.topSpeedMps;
+    let high = full;
+    let best: Timed | undefined;
+    const tryTop = (top: number): boolean => {
+      const timeS = timeAt(top);
+      if (timeS !== undefined && (best === undefined || timeS < best.timeS))
+        best = { scale: { top, share }, timeS };
+      return timeS !== undefined;
+    };
+    let largest = tryTop(full) ? full : undefined;
+    for (let i = 0; largest !== full && i < BISECTIONS; i++) {
+      const top = (low + high) / 2;
+      if (tryTop(top)) largest = low = top;
+      else high = top;
+    }
+    // entering bends too fast costs more than the straights gain: the fastest cap need not be the quickest
+    if (largest !== undefined) for (const factor of SLOWER_TOPS) tryTop(factor * largest);
+    return best;
   }
 }
