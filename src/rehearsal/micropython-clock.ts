@@ -2,12 +2,13 @@
  * Virtual time of the chip that the interpreter believes to run on, its tick counters and its watchdog.
  *
  * Time passes only by what the program does. The surroundings are let run up to the present before they are looked at or acted on,
- * and whenever the program sleeps. The clock starts 1 s before the 30-bit tick counter wraps, so that every run crosses a wrap.
+ * whenever the program sleeps, and at least every millisecond. The clock starts 1 s before the 30-bit tick counter wraps, so that every run crosses a wrap.
  * Source: MicroPython documentation, time: ticks_add(), ticks_diff() and their period.
  */
 
 const TICKS_PERIOD = 2 ** 30;
 const US_BEFORE_WRAP = 1e6;
+const LONGEST_BEHIND_US = 1000;
 
 /** The chip has started anew, and would do so for ever: the rehearsal ends. */
 export class ChipReset extends Error {
@@ -56,6 +57,8 @@ export class MicroPythonClock {
       this.catchUp();
       throw new ChipReset(`The watchdog was not fed for ${this.watchdogLimitUs / 1000} ms.`);
     }
+    // A program that only looks at the clock must not keep the world from running on, and ending it.
+    if (this.nowUs - this.worldUs > LONGEST_BEHIND_US) this.catchUp();
   }
 
   /** Lets the surroundings run up to the present. */

@@ -1,6 +1,5 @@
 /** Rehearses the rendered MicroPython files themselves, in the real interpreter on a virtual chip wired to the plant. */
-import type { Design } from '../design/design.js';
-import { type SheetIdentity, renderFirmware } from '../firmware/render.js';
+import { type FirmwareDesign, type SheetIdentity, renderFirmware } from '../firmware/render.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import type { Engine, RunResult, RunSetup } from './engine.js';
 import type { PythonFile } from './micropython-interpreter.js';
@@ -23,7 +22,10 @@ export class MicroPythonEngine implements Engine {
 }
 
 /** Renders a design's firmware for the interpreter. */
-export async function micropythonEngine(sheet: SheetIdentity, design: Design): Promise<MicroPythonEngine> {
+export async function micropythonEngine(
+  sheet: SheetIdentity,
+  design: FirmwareDesign,
+): Promise<MicroPythonEngine> {
   const files = await renderFirmware(sheet, design);
   const inFolder = files.map(({ path, text }) => ({ path: path.slice(path.indexOf('/') + 1), text }));
   return new MicroPythonEngine(inFolder, design.vehicle);

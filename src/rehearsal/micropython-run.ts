@@ -96,7 +96,8 @@ export class MicroPythonRun implements Surroundings {
     if (end.by === 'reset') this.motors.release();
     while (!this.monitor.ended) this.roll(LOOK_S, true);
     const result = this.monitor.result();
-    if (result.loss === undefined || end.detail === '') return result;
-    return { ...result, loss: { ...result.loss, detail: end.detail } };
+    const detail = end.detail !== '' || this.started ? end.detail : 'The firmware did not set off.';
+    if (result.loss === undefined || detail === '') return result;
+    return { ...result, loss: { ...result.loss, detail } };
   }
 }
