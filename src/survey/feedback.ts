@@ -1,11 +1,11 @@
 /**
  * What the answers so far amount to, told at once: what the bar sees, the tightest bend, the speeds.
  *
- * Bar and bends: src/sheet/rules/view.ts and bend-in-view.ts. Speed at grip's limit on a bend of radius r:
+ * Bar and bends: src/sheet/rules/view.ts and bend.ts. Speed at grip's limit on a bend of radius r:
  * v = sqrt(mu g r) (friction on a circle, e.g. any mechanics text).
  */
 import type { ResolvedSheet } from '../sheet/defaults.js';
-import { tightestRadius } from '../sheet/rules/bend-in-view.js';
+import { tightestRadius } from '../sheet/rules/bend.js';
 import { ruleContext } from '../sheet/rules/rule.js';
 import { barView } from '../sheet/rules/view.js';
 import { topSpeedMps } from '../sheet/top-speed.js';

@@ -1,5 +1,6 @@
 /** All rules across fields, in the order in which their problems are told. */
 import { rule as bendInView } from './bend-in-view.js';
+import { rule as bendIsCut } from './bend-is-cut.js';
 import { rule as calibrationContrast } from './calibration-contrast.js';
 import { rule as calibrationPolarity } from './calibration-polarity.js';
 import { rule as driverPins } from './driver-pins.js';
@@ -46,6 +47,7 @@ export const RULES: readonly SheetRule[] = [
   startDuty,
   topSpeed,
   speedClasses,
+  bendIsCut,
   pwmTimers,
   pinCautions,
   calibrationPolarity,
