@@ -6,7 +6,7 @@ import { delayBudget } from './delay.js';
 import type { ClassSettings, Design, DesignedClass, SpeedLimits } from './design.js';
 import { Proving, type SpeedScale, slowestScale } from './proving.js';
 import { type ClassRange, bindingLimit, classRanges, speedLimits } from './speed-classes.js';
-import { designLaw, lanePlantOf, marginsAt, worstMargins } from './steering-gains.js';
+import { designLaw, givenGains, keeps, lanePlantOf, marginsAt, worstMargins } from './steering-gains.js';
 import { overflows } from './intervals.js';
 import { type SteeringGains, controllerOf } from './steering-loop.js';
 import { EXIT, FairleadError, type Problem } from '../sheet/problem.js';
@@ -40,6 +40,13 @@ function noDesign(range: ClassRange, speedMps: number, limits: SpeedLimits): Fai
 
 function classBase(vehicle: Vehicle, range: ClassRange): ClassBase {
   const limits = speedLimits(vehicle, range);
+  const given = givenGains(vehicle);
+  if (given) {
+    // gains by hand are judged, not refused: where they never keep the margins, motor and grip alone limit the speed
+    const least = limits[bindingLimit(limits)];
+    const allowedMps = range.speedMps ?? (least > 0 ? least : Math.min(limits.motor, limits.grip));
+    return { range, limits, allowedMps, gains: given };
+  }
   const allowedMps = range.speedMps ?? limits[bindingLimit(limits)];
   const law = allowedMps > 0 ? designLaw(vehicle, allowedMps, range.lawRadiusM) : undefined;
   if (law === undefined) throw noDesign(range, allowedMps, limits);
@@ -94,6 +101,18 @@ function refuseOverflow(vehicle: Vehicle, controller: ControllerConstants): void
     throw new FairleadError('No design meets the sheet.', { exitCode: EXIT.noDesign, problems });
 }
 
+function remarksOn(vehicle: Vehicle, classes: readonly DesignedClass[], proven: boolean): string[] {
+  const weak = classes.filter((each) => !keeps(each.worstMargins)).map((each) => each.name);
+  const remarks = proven ? [] : [UNPROVEN];
+  if (weak.length > 0) {
+    const whose = vehicle.control.gains ? 'The gains of the sheet' : 'The gains';
+    remarks.push(
+      `${whose} miss the required margins in some corner of the tolerances in ${weak.length === 1 ? 'class' : 'classes'} ${weak.join(', ')}: see the worst margins.`,
+    );
+  }
+  return remarks;
+}
+
 /**
  * Designs the controller of a vehicle.
  *
@@ -113,5 +132,11 @@ export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Des
   const classes = chosen.map((each, i) =>
     designedClass(vehicle, bases[i]!, each, firmwareGains(vehicle, controller, i, tableGain)),
   );
-  return { vehicle, delay: delayBudget(vehicle), classes, controller, remarks: proven ? [] : [UNPROVEN] };
+  return {
+    vehicle,
+    delay: delayBudget(vehicle),
+    classes,
+    controller,
+    remarks: remarksOn(vehicle, classes, proven !== undefined),
+  };
 }

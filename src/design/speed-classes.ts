@@ -13,7 +13,7 @@ import { STANDARD_GRAVITY_MPS2 } from '../vehicle/gravity.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import type { SpeedLimits } from './design.js';
 import { entryHolds } from './entry.js';
-import { designLaw, lawExists } from './steering-gains.js';
+import { designLaw, givenGains, keeps, lawExists, worstMargins } from './steering-gains.js';
 
 /** A class before its speed is known. */
 export interface ClassRange {
@@ -89,9 +89,12 @@ export function speedLimits(vehicle: Vehicle, range: ClassRange): SpeedLimits {
   const motor = motorLimit(vehicle, range.minRadiusM);
   const grip = gripLimit(vehicle, range.minRadiusM);
   const radiusM = range.lawRadiusM;
-  const control = largestSpeed(top, (v) => lawExists(vehicle, v, radiusM));
-  const law = designLaw(vehicle, Math.min(motor, grip, control), radiusM);
-  const view = law ? largestSpeed(top, (v) => entryHolds(vehicle, law.gains, v, radiusM)) : 0;
+  const given = givenGains(vehicle);
+  const control = largestSpeed(top, (v) =>
+    given ? keeps(worstMargins(vehicle, v, given)) : lawExists(vehicle, v, radiusM),
+  );
+  const gains = given ?? designLaw(vehicle, Math.min(motor, grip, control), radiusM)?.gains;
+  const view = gains ? largestSpeed(top, (v) => entryHolds(vehicle, gains, v, radiusM)) : 0;
   return { motor, grip, view, control };
 }
 

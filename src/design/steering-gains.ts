@@ -93,6 +93,15 @@ export function proportionalRange(vehicle: Vehicle, radiusM: number): [number, n
   return [least, Math.max(least, onLine)];
 }
 
+/** The law that the sheet gives, if it does. */
+export function givenGains(vehicle: Vehicle): SteeringGains | undefined {
+  const { gains } = vehicle.control;
+  if (gains === undefined) return undefined;
+  const { proportionalPerM2, derivativeTimeS, filterTimeS } = gains;
+  const filterCoefficient = -Math.expm1(-vehicle.board.samplePeriodS / filterTimeS);
+  return { proportionalPerM2, derivativeTimeS, filterCoefficient };
+}
+
 /** Law with a given derivative time; its filter is as fast as noise allows. */
 function lawWith(
   vehicle: Vehicle,

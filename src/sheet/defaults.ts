@@ -20,6 +20,7 @@ export interface ResolvedSheet extends Required<Sheet> {
     driver: Omit<Drive['driver'], 'left' | 'right'> & { left: Motor; right: Motor };
     trim: Required<NonNullable<Drive['trim']>>;
   };
+  control: Sheet['control'] & { gains?: Required<NonNullable<Sheet['control']['gains']>> };
   speeds: Required<Sheet['speeds']>;
   start: Required<Sheet['start']>;
   tolerances: Required<NonNullable<Sheet['tolerances']>>;

@@ -223,6 +223,23 @@ export interface Sheet {
      * pid: feedback on the measured offset. rules: a table with one action for each sensor state.
      */
     kind: 'pid' | 'rules';
+    /**
+     * Steering gains of your own for every speed class, in place of the computed ones: curvature = gain x (offset + derivative time x its rate). The design judges them by the same measures.
+     */
+    gains?: {
+      /**
+       * Curvature of the path for each metre that the line lies to the side at the bar. [1/m^2]
+       */
+      proportionalPerM2: number;
+      /**
+       * Time by which the offset is looked ahead along its rate. [ms]
+       */
+      derivativeTimeMs: number;
+      /**
+       * Time constant of the filter on the derivative. [ms]
+       */
+      filterTimeMs?: number;
+    };
   };
   /**
    * How fast each kind of bend is driven.

@@ -44,7 +44,7 @@ export function toVehicle(sheet: ResolvedSheet): Vehicle {
       trimRight: percentToFraction(drive.trim.rightPercent),
     },
     power: { ...sheet.power },
-    control: { kind: sheet.control.kind },
+    control: controlOf(sheet.control),
     speeds: {
       classes: classesOf(speeds.classes),
       finishTarget: percentToFraction(speeds.finishTargetPercent),
@@ -122,4 +122,13 @@ function classesOf(classes: ResolvedSheet['speeds']['classes']): Vehicle['speeds
   return classes
     .map(({ name, minRadiusMm, speedMps }) => ({ name, minRadiusM: mmToM(minRadiusMm), speedMps }))
     .sort((a, b) => a.minRadiusM - b.minRadiusM);
+}
+
+function controlOf({ kind, gains }: ResolvedSheet['control']): Vehicle['control'] {
+  if (gains === undefined) return { kind };
+  const { proportionalPerM2, derivativeTimeMs, filterTimeMs } = gains;
+  return {
+    kind,
+    gains: { proportionalPerM2, derivativeTimeS: msToS(derivativeTimeMs), filterTimeS: msToS(filterTimeMs) },
+  };
 }

@@ -29,6 +29,7 @@ const FACTORS = {
   '%': { '%': 1, percent: 1 },
   deg: { deg: 1, rad: 180 / Math.PI, '°': 1, degrees: 1 },
   counts: { counts: 1, count: 1 },
+  '1/m^2': { '1/m^2': 1, '1/m2': 1 },
   '1': {},
 } as const satisfies Record<string, Readonly<Record<string, number>>>;
 
@@ -43,6 +44,7 @@ export function isUnit(text: unknown): text is Unit {
 export type Quantity = { ok: true; value: number } | { ok: false; message: string };
 
 const EXAMPLES: Readonly<Record<Unit, string>> = {
+  '1/m^2': '300',
   mm: '65, 65 mm, 6.5 cm or 2.5 in',
   s: '2, 2 s or 500 ms',
   ms: '80, 80 ms or 0.08 s',

@@ -60,7 +60,11 @@ export interface Vehicle {
     trimRight: number;
   };
   power: { nominalV: number; fullV: number; emptyV: number };
-  control: { kind: 'pid' | 'rules' };
+  control: {
+    kind: 'pid' | 'rules';
+    /** Steering gains given in the sheet, for every class. */
+    gains?: { proportionalPerM2: number; derivativeTimeS: number; filterTimeS: number };
+  };
   speeds: {
     classes: 'auto' | readonly { name: string; minRadiusM: number; speedMps: number }[];
     /** Share of perturbed rehearsals that must finish, 0..1. */

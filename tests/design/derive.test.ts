@@ -121,3 +121,31 @@ test('scaling all lengths by four and times by two scales speeds by two and gain
     expect(each.gains.derivativeTimeS / before.gains.derivativeTimeS).toBeCloseTo(2, 1);
   });
 });
+
+describe('gains by hand', () => {
+  const vehicle = demoVehicle();
+  const withGains = (proportionalPerM2: number, derivativeTimeS: number) =>
+    deriveDesign({
+      ...vehicle,
+      control: { kind: 'pid', gains: { proportionalPerM2, derivativeTimeS, filterTimeS: 0.004 } },
+    });
+
+  test('are kept, and limit the speed to where they keep the margins', () => {
+    const design = withGains(600, 0.02);
+    for (const each of design.classes) {
+      expect(each.gains.proportionalPerM2).toBeCloseTo(600, 0);
+      expect(each.gains.derivativeTimeS).toBeCloseTo(0.02, 4);
+      expect(each.limitedBy).toBe('control');
+      expect(keeps(each.worstMargins)).toBe(true);
+    }
+    expect(design.remarks).toEqual([]);
+  });
+
+  test('that never keep the margins are told so', () => {
+    const design = withGains(20000, 0);
+    expect(design.classes[0]!.limits.control).toBe(0);
+    expect(design.remarks.join(' ')).toMatch(
+      /The gains of the sheet miss the required margins .* classes straight, /,
+    );
+  });
+});
