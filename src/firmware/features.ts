@@ -16,6 +16,7 @@ export interface Features {
   graded: boolean;
   /** Lanes cross, and the bar can tell. */
   crossings: boolean;
+  severalClasses: boolean;
   /** The board has an LED that this vehicle does not use otherwise. */
   led: boolean;
   /** The firmware can tell a start after the supply broke down from switching on; MicroPython does not say. */
@@ -44,6 +45,7 @@ export function featuresOf(
     binary,
     graded: !binary,
     crossings: sensing.wideCoverage <= sensing.sensorCount * FULL_COVERAGE,
+    severalClasses: controller.classes.length > 1,
     led,
     brownOut: language === 'arduino',
   };

@@ -88,14 +88,28 @@ const COMPILE_OPTIONS: CompileOptions = {
   knownHelpers: { literal: true, comment: true },
 };
 
+type Template = (view: object) => string;
+
+/** Templates compiled so far, by path: compiling takes as long as formatting. */
+const compiled = new Map<string, Template>();
+
+async function templateAt(path: string, language: Language): Promise<Template> {
+  let template = compiled.get(path);
+  if (template === undefined) {
+    const source = await readFile(new URL(path, TEMPLATES), 'utf8');
+    template = engineFor(language).compile(source, COMPILE_OPTIONS);
+    compiled.set(path, template);
+  }
+  return template;
+}
+
 /** Fills in one rendering's templates; files that the vehicle does not need are left out. */
 export async function fillTemplates(rendering: Rendering): Promise<RenderedFile[]> {
-  const engine = engineFor(rendering.language);
   const files: RenderedFile[] = [];
   for (const { template, path, owner, wanted } of rendering.files) {
     if (!wanted) continue;
-    const url = new URL(`${rendering.folder}/${template}.hbs`, TEMPLATES);
-    const filled = engine.compile(await readFile(url, 'utf8'), COMPILE_OPTIONS)(rendering.view);
+    const fill = await templateAt(`${rendering.folder}/${template}.hbs`, rendering.language);
+    const filled = fill(rendering.view);
     files.push({ path, owner, text: await formatCode(filled, path, rendering.language) });
   }
   return files;

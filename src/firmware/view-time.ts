@@ -51,7 +51,8 @@ export function timeConstants(
     constant(
       'COUNTDOWN_SAMPLES',
       'uint16_t',
-      countdownSamples,
+      // The press itself takes one sample.
+      Math.max(1, countdownSamples),
       `From the button to the first motion: ${numberText(countdownS)} s. From start.countdownS.`,
     ),
     constant(

@@ -67,6 +67,7 @@ const EIGHT = {
   },
   '/line/polarity': 'dark-on-light',
 };
+const ONE_SPEED = { '/speeds/classes': [{ name: 'Crawl', minRadiusMm: 120, speedMps: 0.3 }] };
 const UNEVEN = { '/sensors/pitchMm': undefined, '/sensors/positionsMm': [27, 15, 5, -5, -15, -27] };
 
 /** Vehicles that between them use every branch of the templates, by what is special about them. */
@@ -79,6 +80,7 @@ export const CARTS: Readonly<Record<string, Changes>> = {
   'a sweep, dark line, and rules': { ...SWEEP, ...PWM_DIR, ...RULES, '/line/polarity': 'dark-on-light' },
   'eight sensors, dark line': EIGHT,
   'eight sensors, dark line and rules': { ...EIGHT, ...RULES },
+  'one speed for all': ONE_SPEED,
   'uneven bar without crossings': { ...UNEVEN, ...NO_CROSSINGS },
   'uneven bar without crossings and rules': { ...UNEVEN, ...NO_CROSSINGS, ...RULES },
 };

@@ -97,7 +97,7 @@ void follow(const Sight& sight, bool regained) {
 }
 
 // Slower at once when the demand for curvature rises, faster again by way driven out of the bend.
-void pickClass() {
+void followBend() {
   const int32_t curvature = steering.curvaturePerMQ8;
   const int32_t size = curvature < 0 ? -curvature : curvature;
   demand += filterStep(clamped16(size * (1 << FILTER_BITS) - demand), DEMAND_FILTER_Q15);
@@ -192,7 +192,7 @@ const Steering& steer(const int16_t (&counts)[SENSOR_COUNT]) {
   } else {
     steering.curvaturePerMQ8 = held >> FILTER_BITS;
   }
-  pickClass();
+  followBend();
   drive();
   return steering;
 }
