@@ -101,13 +101,20 @@ export async function boardFiles(design: FirmwareDesign, hooks?: string): Promis
   });
 }
 
-/** Runs a design's firmware on the stand. */
-export async function onStand(design: FirmwareDesign, script: Script): Promise<Observed> {
-  const { vehicle } = design;
+/** Runs a program's files on the stand. */
+export async function filesOnStand(
+  vehicle: Vehicle,
+  files: readonly PythonFile[],
+  script: Script,
+): Promise<Observed> {
   const stand = new Stand(vehicle, script, vehicle.board.id === 'pico' ? 25 : 2);
-  const files = await boardFiles(design, script.hooks);
   const end = await runProgram(files, vehicle.board, stand, script.resetCause);
   return { end, duties: stand.duties, led: stand.led };
+}
+
+/** Runs a design's firmware on the stand. */
+export async function onStand(design: FirmwareDesign, script: Script): Promise<Observed> {
+  return filesOnStand(design.vehicle, await boardFiles(design, script.hooks), script);
 }
 
 /** Duties that lasted: not those between the writing of one motor and of the other. */
