@@ -116,8 +116,9 @@ describe('RP2040 on the Pico', () => {
   });
 
   test('PWM frequency within the reach of the counter', () => {
-    // MicroPython, rp2 port: duty_u16() from 0 to 65535; lowest frequency 125 MHz / (65536 * 255.94) = 7.45 Hz.
-    expect(pico.pwmSteps).toBe(65535);
+    // MicroPython, rp2 port: lowest frequency 125 MHz / (65536 * 255.94) = 7.45 Hz; a 16-bit counter.
+    expect(pico.pwmSteps).toBe(Math.floor(125e6 / pico.pwmHz));
+    expect(pico.pwmSteps).toBeLessThanOrEqual(65535);
     expect(pico.pwmHz).toBeGreaterThan(125e6 / (65536 * 255.94));
     // Counter steps at that frequency: more than the 256 of an Uno.
     expect(pico.clockHz / pico.pwmHz).toBeGreaterThan(256);

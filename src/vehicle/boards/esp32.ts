@@ -107,7 +107,8 @@ export const esp32: BoardFacts = {
   samplePeriodS: 5e-3,
   pwmHz: 20e3,
   // The range of duty_u16(); at 20 kHz the timer itself resolves 11 bits, as 80 MHz / 2^12 is already less than 20 kHz.
-  pwmSteps: 65535,
+  // 80 MHz / 20 kHz leaves 11 whole bits
+  pwmSteps: 2047,
   flashBytes: 4 * 1024 * 1024,
   ramBytes: 520 * 1024,
   pins: GPIOS.map(pin),

@@ -53,7 +53,8 @@ export const pico: BoardFacts = {
   samplePeriodS: 5e-3,
   pwmHz: 20e3,
   // The range of duty_u16(); at 20 kHz the counter itself resolves 125 MHz / 20 kHz = 6250 steps.
-  pwmSteps: 65535,
+  // 125 MHz / 20 kHz
+  pwmSteps: 6250,
   flashBytes: 2 * 1024 * 1024,
   ramBytes: 264 * 1024,
   pins: Array.from({ length: 30 }, (_, gpio) => pin(gpio)),
