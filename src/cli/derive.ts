@@ -16,16 +16,14 @@ export function register(program: Command, io: Io): void {
     .option('--json', 'print one JSON document')
     .addHelpText('after', '\nExample:\n  fairlead derive examples/tray-cart/tray-cart.json\n')
     .action(async (file: string, options: DeriveOptions) => {
-      const [{ loadSheet }, { designFor }, { designJson }, { designText }, { compareLaws, comparisonText }] =
+      const [{ loadDesign }, { designJson }, { designText }, { compareLaws, comparisonText }] =
         await Promise.all([
-          import('../sheet/load.js'),
-          import('../pipeline.js'),
+          import('./load-design.js'),
           import('../report/design-json.js'),
           import('../report/design-text.js'),
           import('../report/comparison-text.js'),
         ]);
-      const { sheet } = await loadSheet(file);
-      const design = designFor(sheet);
+      const { design } = await loadDesign(file);
       const compared = options.compare ? compareLaws(design) : undefined;
       if (options.json) io.json({ ...designJson(design), ...(compared && { comparison: compared }) });
       else io.stdout(designText(design) + (compared ? comparisonText(compared) : ''));

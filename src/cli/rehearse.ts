@@ -57,16 +57,15 @@ export function register(program: Command, io: Io): void {
 }
 
 async function rehearseCommand(path: string, options: RehearseOptions, io: Io): Promise<void> {
-  const { loadSheet } = await import('../sheet/load.js');
+  const { loadDesign } = await import('./load-design.js');
   const { loadCourse } = await import('../course/load-course.js');
-  const [{ sheet, digest }, { lane }] = [await loadSheet(path), await loadCourse(options.course)];
-  const { designFor } = await import('../pipeline.js');
   const { engineFor } = await import('../rehearsal/engines.js');
   const { rehearse } = await import('../rehearsal/runner.js');
   const { rehearsalText } = await import('../report/rehearsal-text.js');
 
   io.progress('designing ...');
-  const design = designFor(sheet);
+  const { sheet, digest, design } = await loadDesign(path);
+  const { lane } = await loadCourse(options.course);
   io.progress('making the engine ready ...');
   const engine = await engineFor(options.on, { digest }, design);
   const { runs, laps } = options;

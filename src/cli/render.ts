@@ -39,15 +39,14 @@ export function register(program: Command, io: Io): void {
 }
 
 async function render(path: string, options: RenderOptions, io: Io): Promise<void> {
-  const { loadSheet } = await import('../sheet/load.js');
-  const { designFor } = await import('../pipeline.js');
+  const { loadDesign } = await import('./load-design.js');
   const { renderFirmware } = await import('../firmware/render.js');
   const { planRender, isUpToDate } = await import('../firmware/plan.js');
   const { refuseEdits, writePlan } = await import('../firmware/write.js');
 
-  const { sheet, digest } = await loadSheet(path);
   io.progress('designing ...');
-  const files = await renderFirmware({ digest }, designFor(sheet));
+  const { digest, design } = await loadDesign(path);
+  const files = await renderFirmware({ digest }, design);
   io.progress('');
   const plan = await planRender(files, { digest }, options.out);
 
