@@ -5,7 +5,7 @@
  * reading, pin or duty write and look at the clock costs `digitalReadS`; sleeping costs what is asked for. The
  * interpreter's own arithmetic between these has no cost of its own, so `computeS`, the board's worst case for one
  * control step, is spent once a step: before the first motor output that follows a sensor reading.
- * A reading shows the world at its beginning; an output acts after its cost.
+ * A reading shows the world at its beginning; an output acts after its cost. PWM has the board's `pwmSteps`.
  *
  * Source of limits and ranges: MicroPython documentation, machine, time, rp2 and esp32 quick references.
  */
@@ -101,7 +101,7 @@ export class MicroPythonChip {
       read: (gpio: number) => this.read(gpio),
       read_u16: (gpio: number) => this.readU16(gpio),
       write: (gpio: number, level: boolean) => this.write(gpio, level),
-      duty: (gpio: number, duty: number) => this.output(gpio, Math.min(U16_MAX, Math.max(0, duty)) / U16_MAX),
+      duty: (gpio: number, duty: number) => this.output(gpio, this.pwmLevel(duty)),
       start_watchdog: (timeoutMs: number) => this.startWatchdog(timeoutMs),
       feed: () => this.feed(),
       reset_cause: () => this.cause,
@@ -115,6 +115,12 @@ export class MicroPythonChip {
       ticks_add: ticksAdd,
       ticks_diff: ticksDiff,
     };
+  }
+
+  /** Mean level of a PWM output: the hardware's counter has fewer steps than duty_u16(). */
+  private pwmLevel(duty: number): number {
+    const share = Math.min(U16_MAX, Math.max(0, duty)) / U16_MAX;
+    return Math.round(share * this.board.pwmSteps) / this.board.pwmSteps;
   }
 
   private look(usPerTick: number): number {
