@@ -20,6 +20,8 @@ export interface RunRecord {
   maxLateralMm: number;
   /** Only when lost. */
   reason?: LossReason;
+  /** What the firmware left behind where its program ended by itself, e.g. a traceback. */
+  detail?: string;
   /** Where on the lane it was lost, mm from the start line, and in which lap, from 1. */
   lostAtMm?: number;
   lostInLap?: number;
@@ -99,6 +101,11 @@ function toRecord(result: RunResult, lapM: number): RunRecord {
     maxLateralMm: mToMm(result.maxLateralM),
     ...(loss === undefined
       ? {}
-      : { reason: loss.reason, lostAtMm: mToMm(loss.sM - lap * lapM), lostInLap: lap + 1 }),
+      : {
+          reason: loss.reason,
+          ...(loss.detail === undefined ? {} : { detail: loss.detail }),
+          lostAtMm: mToMm(loss.sM - lap * lapM),
+          lostInLap: lap + 1,
+        }),
   };
 }

@@ -92,6 +92,8 @@ function lostText(report: RehearsalReport, lane: Lane): string {
   });
   const lines = ['', table([['Lost seed', 'after', 'where', 'why'], ...rows])];
   if (lost.length > MOST_LOST) lines.push(`and ${lost.length - MOST_LOST} more`);
+  const broken = lost.find((run) => run.detail !== undefined);
+  if (broken) lines.push(`What the firmware said, seed ${broken.seed}:`, broken.detail?.trimEnd() ?? '');
   if (report.runs > 1)
     lines.push(`One run alone: the same command with --runs 1 --seed ${lost[0]?.seed ?? 0}`);
   return `${lines.join('\n')}\n`;

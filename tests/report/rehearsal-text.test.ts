@@ -34,6 +34,14 @@ describe('rehearsalText', () => {
     expect(text).not.toContain('bound');
   });
 
+  it('gives the traceback of a firmware that broke off', () => {
+    const detail =
+      'Traceback (most recent call last):\n  File "user_hooks.py", line 3, in sample\nValueError: 7\n';
+    const text = textOf([{ ...fast, loss: { ...fast.loss!, reason: 'stopped', detail } }]);
+    expect(text).toMatch(/What the firmware said, seed 0:\nTraceback[^]+in sample\nValueError: 7\n$/);
+    expect(textOf([fast])).not.toContain('What the firmware said');
+  });
+
   it('counts many, and says how to repeat a lost one alone', () => {
     const results = [
       slow,
