@@ -44,6 +44,7 @@ const DARK_6 = {
 };
 const SWEEP = { '/sensors/calibration': { mode: 'sweep' } };
 const RULES = { '/control/kind': 'rules' };
+const ONE_CLASS = { '/speeds/classes': [{ name: 'all', minRadiusMm: 120, speedMps: 0.4 }] };
 const NO_CROSSINGS = { '/line/crossings': false, '/line/longestGapMm': 0 };
 
 const IN_IN = (left: object, right: object, more: object = {}) => ({
@@ -82,7 +83,7 @@ export const MICROPYTHON_CARTS: Readonly<Record<string, Changes>> = {
   'esp32, digital on the LED pin': { ...ESP32, ...ESP32_DIGITAL, ...ESP32_IN_IN },
   'pico, three analog': { ...PICO, ...THREE_ANALOG, ...STORED_3, ...PICO_DIR },
   'pico, three analog, sweep': { ...PICO, ...THREE_ANALOG, ...SWEEP, ...PICO_IN_IN },
-  'pico, digital': { ...PICO, ...EIGHT_DIGITAL, ...PICO_DIR },
+  'pico, digital, one class': { ...PICO, ...EIGHT_DIGITAL, ...PICO_DIR, ...ONE_CLASS },
   'pico, digital, rules': { ...PICO, ...EIGHT_DIGITAL, ...PICO_IN_IN, ...RULES },
   'pico, digital, rules, no crossings': { ...PICO, ...EIGHT_DIGITAL, ...PICO_DIR, ...RULES, ...NO_CROSSINGS },
 };

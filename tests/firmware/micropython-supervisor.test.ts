@@ -7,7 +7,9 @@ import { drivenFromS, flashCodes, offFromS, onStand } from './micropython-stand.
 
 const esp32 = quickDesign(cart(MICROPYTHON_CARTS['esp32, analog']));
 const pico = quickDesign(cart(MICROPYTHON_CARTS['pico, digital, rules']));
-const shortRun = quickDesign(cart({ ...MICROPYTHON_CARTS['pico, digital'], '/start/runLimitS': 2 }));
+const shortRun = quickDesign(
+  cart({ ...MICROPYTHON_CARTS['pico, digital, one class'], '/start/runLimitS': 2 }),
+);
 
 const COUNTDOWN_S = 0.5;
 const DEBOUNCE_S = 0.02;

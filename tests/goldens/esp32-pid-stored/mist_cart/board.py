@@ -36,7 +36,7 @@ class SampleClock:
 
 class Sensors:
     def __init__(self):
-        # 11 dB of attenuation: the converter's range is that of the supply.
+        # With 11 dB of attenuation the converter reaches nearly to the supply.
         self._adcs = [ADC(Pin(pin), atten=ADC.ATTN_11DB) for pin in SENSOR_PINS]
 
     def read(self, counts):
