@@ -32,13 +32,19 @@ function offsetAtBar(x: number, y: number, heading: number, aheadM: number, radi
   return root < 0 ? NaN : -b - Math.sqrt(root);
 }
 
-/** Largest offset at the bar, m, while entering a bend; Infinity when the line is lost. */
+/**
+ * Largest offset at the bar, m, while entering a bend; Infinity when the line is lost.
+ *
+ * @param onSample told each sample: distance driven since the bar reached the bend, m, and the offset at the bar, m,
+ * positive to the inner side; NaN when the bar no longer meets the line
+ */
 export function entryPeakM(
   vehicle: Vehicle,
   gains: SteeringGains,
   speedMps: number,
   radiusM: number,
   corner: Corner,
+  onSample?: (distanceM: number, offsetM: number) => void,
 ): number {
   const { drive, bar, board } = vehicle;
   const period = board.samplePeriodS;
@@ -60,6 +66,7 @@ export function entryPeakM(
   const steps = Math.ceil((bar.aheadM + ENTERED_RAD * radiusM) / (speed * period));
   for (let i = 0; i < steps; i++) {
     const offset = offsetAtBar(x, y, heading, bar.aheadM, radiusM);
+    onSample?.((i - 1) * speed * period, offset);
     const size = Math.abs(offset);
     if (!(size <= limit)) return Infinity;
     peak = Math.max(peak, size);
@@ -76,6 +83,35 @@ export function entryPeakM(
     heading += mean * period;
   }
   return peak;
+}
+
+/** The offset at the bar while entering a bend, sample by sample. */
+export interface EntryTrace {
+  corner: Corner;
+  /** Distance driven since the bar reached the bend, m; as long as offsetM. */
+  distanceM: number[];
+  /** Offset of the line at the bar, m, positive to the inner side; ends where the line is lost. */
+  offsetM: number[];
+  /** Largest size of the offset, m; Infinity when the line is lost. */
+  peakM: number;
+}
+
+/** Entering a bend in every corner of the tolerance box, the nominal vehicle first. */
+export function entryTraces(
+  vehicle: Vehicle,
+  gains: SteeringGains,
+  speedMps: number,
+  radiusM: number,
+): EntryTrace[] {
+  return toleranceCorners(vehicle).map((corner) => {
+    const trace: EntryTrace = { corner, distanceM: [], offsetM: [], peakM: 0 };
+    trace.peakM = entryPeakM(vehicle, gains, speedMps, radiusM, corner, (distanceM, offsetM) => {
+      if (Number.isNaN(offsetM)) return;
+      trace.distanceM.push(distanceM);
+      trace.offsetM.push(offsetM);
+    });
+    return trace;
+  });
 }
 
 /** Whether the line stays under the bar while entering a bend, in every corner of the tolerance box. */

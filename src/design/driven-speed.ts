@@ -1,0 +1,24 @@
+/**
+ * The speed at which a controller takes a steady bend, from the very constants that it runs on.
+ *
+ * Between the smallest radius of its class and that of the next wider one the speed rises with falling
+ * curvature kappa: v = v_class + slope (kappa_class - kappa); a slope of 0 makes steps (controller/twin.ts).
+ */
+import {
+  CURVATURE_PER_INV_M,
+  type ControllerConstants,
+  SPEED_PER_MPS,
+  SPEED_SLOPE_BITS,
+} from '../controller/constants.js';
+
+/**
+ * @param radiusM radius of the bend, above 0, m
+ * @returns speed of the axle's middle, m/s
+ */
+export function drivenSpeedMps({ classes }: ControllerConstants, radiusM: number): number {
+  const last = classes[classes.length - 1]!;
+  const curvature = Math.min(CURVATURE_PER_INV_M / radiusM, last.curvature);
+  const serving = classes.find((each) => curvature <= each.curvature) ?? last;
+  const gained = ((serving.curvature - curvature) * serving.speedSlope) / (1 << SPEED_SLOPE_BITS);
+  return (serving.speed + gained) / SPEED_PER_MPS;
+}
