@@ -25,6 +25,7 @@ import {
   TRACK_BITS,
   runIndex,
 } from './constants.js';
+import { LineMemory } from './line-memory.js';
 import { Sensing } from './sensing.js';
 
 const INT16_MAX = 32767;
@@ -37,7 +38,7 @@ function clamp(value: number, limit: number): number {
 
 export class Twin {
   readonly sensing: Sensing;
-  phase: Phase = PHASE.follow;
+  readonly memory: LineMemory;
   /** Index of the speed class in force; 0 is the fastest. */
   classIndex = 0;
   /** Curvature command, curvature units. */
@@ -53,21 +54,17 @@ export class Twin {
   /** Low-passed curvature demand and held curvature, FILTER_BITS more bits. */
   private demand = 0;
   private held = 0;
-  /** Distance driven in this phase. */
-  private travelled = 0;
-  /** Samples spent searching. */
-  private searched = 0;
-  /** Side on which the line was last seen: 1 left, -1 right. */
-  private side = 1;
   /** Curvature of the bend that the vehicle is in, curvature units, and distance yet to go until it is over. */
   private bend = 0;
   private release = 0;
-  /** Distance yet to go in which a vanished line is taken for a corner, and to which side. */
-  private corner = 0;
-  private cornerSide = 1;
 
   constructor(readonly constants: ControllerConstants) {
     this.sensing = new Sensing(constants.sensing, constants.kind === 'rules');
+    this.memory = new LineMemory(constants.memory, this.sensing);
+  }
+
+  get phase(): Phase {
+    return this.memory.phase;
   }
 
   /** Whether the line is lost for good: motors off, and so until the next start. */
@@ -78,14 +75,11 @@ export class Twin {
   /** Puts the controller into the state at the start of a run. */
   start(): void {
     this.sensing.reset();
-    this.phase = PHASE.follow;
+    this.memory.start();
     this.classIndex = 0;
     this.curvature = this.speed = this.dutyLeft = this.dutyRight = 0;
     this.filtered = this.demand = this.held = 0;
-    this.travelled = this.searched = 0;
-    this.side = 1;
-    this.bend = this.release = this.corner = 0;
-    this.cornerSide = 1;
+    this.bend = this.release = 0;
   }
 
   /**
@@ -97,56 +91,17 @@ export class Twin {
     if (this.phase === PHASE.stopped) return;
     this.sensing.read(counts);
     const before = this.phase;
-    this.updatePhase();
+    this.memory.update(this.speed);
     if (this.stopped) {
       this.dutyLeft = this.dutyRight = this.speed = 0;
       return;
     }
     if (this.phase === PHASE.follow) this.steer(before !== PHASE.follow);
     else if (this.phase === PHASE.search)
-      this.curvature = this.side * this.constants.steering.searchCurvature;
+      this.curvature = this.memory.side * this.constants.steering.searchCurvature;
     else this.curvature = this.held >> FILTER_BITS;
     this.pickClass();
     this.drive();
-  }
-
-  private updatePhase(): void {
-    const { memory } = this.constants;
-    if (this.corner > 0) this.corner -= this.speed;
-    // a bar that stays on the line everywhere ends a search, and with it the run, like one that sees none
-    if (this.sensing.wide && this.phase !== PHASE.search) {
-      this.corner = 0;
-      this.enter(PHASE.crossing);
-      if (this.travelled > memory.crossingDistance) this.enter(PHASE.search);
-    } else if (this.sensing.found) {
-      this.enter(PHASE.follow);
-      const offset = this.sensing.offset;
-      if (offset !== 0) this.side = offset > 0 ? 1 : -1;
-      if (this.sensing.reach !== 0) {
-        this.corner = memory.cornerDistance;
-        this.cornerSide = this.sensing.reach;
-      }
-    } else if (this.phase === PHASE.follow || this.phase === PHASE.crossing) {
-      const offset = this.sensing.offset;
-      const bySide = offset > memory.sideOffset || offset < -memory.sideOffset;
-      if (this.corner > 0) this.side = this.cornerSide;
-      this.enter(bySide || this.corner > 0 ? PHASE.search : PHASE.gap);
-    } else if (this.phase === PHASE.gap) {
-      if (this.travelled > memory.gapDistance) this.enter(PHASE.search);
-    } else if (this.searched >= memory.searchSamples) {
-      this.enter(PHASE.stopped);
-    }
-    // only what a limit is set on is counted: a sum without end would overflow in the firmware
-    if (this.phase === PHASE.follow) this.travelled = 0;
-    else this.travelled += this.speed;
-    if (this.phase === PHASE.search) this.searched++;
-    else this.searched = 0;
-  }
-
-  private enter(phase: Phase): void {
-    if (phase === this.phase) return;
-    this.phase = phase;
-    this.travelled = 0;
   }
 
   /** Curvature from the measured offset: proportional plus filtered derivative. */

@@ -1,7 +1,8 @@
 /** The design: from the SI vehicle to speed classes, laws and the controller that is rendered. */
 import type { ControllerConstants } from '../controller/constants.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
-import { controllerConstants, firmwareGains, tableGainPerM2 } from './controller-constants.js';
+import { firmwareGains, tableGainPerM2 } from './class-constants.js';
+import { controllerConstants } from './controller-constants.js';
 import { delayBudget } from './delay.js';
 import type { ClassSettings, Design, DesignedClass, SpeedLimits } from './design.js';
 import { Proving, type SpeedScale, slowestScale } from './proving.js';

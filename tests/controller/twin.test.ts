@@ -127,7 +127,7 @@ describe.each(['pid', 'rules'] as const)('arithmetic, %s', (kind) => {
       if (twin.stopped) twin.start();
       twin.step(counts);
       if (Math.max(Math.abs(twin.dutyLeft), Math.abs(twin.dutyRight)) > FULL_DUTY) outside.push('duty');
-      for (const [name, value] of Object.entries(twin)) {
+      for (const [name, value] of [...Object.entries(twin), ...Object.entries(twin.memory)]) {
         if (typeof value === 'number' && value !== (value | 0)) outside.push(name);
       }
     }
