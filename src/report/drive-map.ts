@@ -3,13 +3,12 @@ import type { Pose } from '../course/arc.js';
 import { CROSSING_LENGTH_M } from '../course/lane-strips.js';
 import type { LanePiece } from '../course/layout.js';
 import { mToMm, radToDeg } from '../sheet/units.js';
-import { extentOf, niceStep, type DrivenRun } from './driven-run.js';
+import { niceStep } from './axis-steps.js';
+import { extentOf, type DrivenRun } from './driven-run.js';
 import { stepOf, type SpeedStep } from './speed-scale.js';
+import { HALO, SHADE, WORDS } from './svg-document.js';
 import { coordinate, element, pathThrough, textAt } from './svg-text.js';
 
-const BAND = '#dfdacb';
-const MARK = '#4a463c';
-const HALO = { stroke: '#ffffff', 'stroke-width': 3, 'paint-order': 'stroke', fill: MARK };
 /** Space around the lane for marks and their words, m. */
 const BORDER_M = 0.1;
 const MOST_HEIGHT = 620;
@@ -49,7 +48,7 @@ export function driveMap(run: DrivenRun, steps: readonly SpeedStep[], width: num
   const across = lane.crossings.map((crossing) =>
     pathThrough([beside(crossing, halfM), beside(crossing, -halfM)]),
   );
-  const band = { fill: 'none', stroke: BAND, 'stroke-width': Math.max(3, lane.lineWidthM * perM) };
+  const band = { fill: 'none', stroke: SHADE, 'stroke-width': Math.max(3, lane.lineWidthM * perM) };
   const parts = [
     element('path', { ...band, d: across.join('') }),
     element('path', { ...band, 'stroke-linejoin': 'round', d: painted.join('') }),
@@ -140,8 +139,8 @@ function scaleBar(perM: number, width: number, height: number): string {
     element('path', {
       d: `M${coordinate(x0)} ${coordinate(y - 5)}V${coordinate(y)}H${coordinate(x1)}V${coordinate(y - 5)}`,
       fill: 'none',
-      stroke: MARK,
+      stroke: WORDS,
     }),
-    textAt((x0 + x1) / 2, y - 7, label, { 'text-anchor': 'middle', fill: MARK }),
+    textAt((x0 + x1) / 2, y - 7, label, { 'text-anchor': 'middle', fill: WORDS }),
   ].join('\n');
 }

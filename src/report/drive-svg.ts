@@ -8,12 +8,10 @@ import { driveMap } from './drive-map.js';
 import type { DrivenRun } from './driven-run.js';
 import { errorPlot } from './error-plot.js';
 import { speedSteps, type SpeedStep } from './speed-scale.js';
-import { coordinate, element, escaped, textAt } from './svg-text.js';
+import { groupAt, MARGIN, svgDocument, WIDTH, WORDS } from './svg-document.js';
+import { element, textAt } from './svg-text.js';
 
-const WIDTH = 960;
-const MARGIN = 24;
 const INNER = WIDTH - 2 * MARGIN;
-const WORDS = '#4a463c';
 
 export interface DriveSvgText {
   title: string;
@@ -28,34 +26,17 @@ export function driveSvg(run: DrivenRun, text: DriveSvgText): string {
   const plot = errorPlot(run, INNER);
   const mapTop = 108;
   const plotTop = mapTop + map.height + 28;
-  const height = plotTop + plot.height + MARGIN;
-  const at = (y: number, content: string): string => {
-    return element('g', { transform: `translate(${MARGIN} ${coordinate(y)})` }, `\n${content}\n`);
-  };
-  const parts = [
-    element('title', {}, escaped(text.title)),
-    element(
-      'desc',
-      {},
-      escaped(`${text.summary}. The path is darker and broader where the vehicle was slower.`),
-    ),
-    element('rect', { width: WIDTH, height, fill: '#ffffff' }),
-    textAt(MARGIN, 38, text.title, { 'font-size': '20', 'font-weight': 'bold', fill: WORDS }),
-    textAt(MARGIN, 60, text.summary, { 'font-size': '14', fill: WORDS }),
-    at(70, speedLegend(steps)),
-    at(mapTop, map.svg),
-    at(plotTop, plot.svg),
-  ];
-  const root = {
-    xmlns: 'http://www.w3.org/2000/svg',
-    viewBox: `0 0 ${WIDTH} ${coordinate(height)}`,
-    width: WIDTH,
-    height,
-    role: 'img',
-    'font-family': "system-ui, 'Helvetica Neue', Arial, 'DejaVu Sans', sans-serif",
-    'font-size': '12',
-  };
-  return `${element('svg', root, `\n${parts.join('\n')}\n`)}\n`;
+  return svgDocument({
+    ...text,
+    description: `${text.summary}. The path is darker and broader where the vehicle was slower.`,
+    height: plotTop + plot.height + MARGIN,
+    fontSize: 12,
+    parts: [
+      groupAt(MARGIN, 70, speedLegend(steps)),
+      groupAt(MARGIN, mapTop, map.svg),
+      groupAt(MARGIN, plotTop, plot.svg),
+    ],
+  });
 }
 
 function speedLegend(steps: readonly SpeedStep[]): string {

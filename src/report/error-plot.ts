@@ -2,12 +2,11 @@
 import type { Lane } from '../course/lane.js';
 import { mToMm } from '../sheet/units.js';
 import type { SvgPart } from './drive-map.js';
-import { least, most, niceStep, type DrivenRun } from './driven-run.js';
+import { niceStep } from './axis-steps.js';
+import { least, most, type DrivenRun } from './driven-run.js';
+import { GRID, INK, SHADE, WORDS } from './svg-document.js';
 import { coordinate, element, pathThrough, textAt } from './svg-text.js';
 
-const INK = '#231a4c';
-const GRID = '#d5d2ca';
-const WORDS = '#4a463c';
 const LEFT = 62;
 const RIGHT = 8;
 const TOP = 30;
@@ -69,7 +68,7 @@ function background(lane: Lane, endM: number, x: (sM: number) => number): string
       const box = { x: x(from), y: TOP, width: x(to) - x(from), height: PLOT_HEIGHT };
       const opacity = (0.75 * Math.abs(curvaturePerM)) / tightest;
       if (kind === 'arc')
-        parts.push(element('rect', { ...box, fill: '#dfdacb', 'fill-opacity': opacity.toFixed(2) }));
+        parts.push(element('rect', { ...box, fill: SHADE, 'fill-opacity': opacity.toFixed(2) }));
       else parts.push(element('rect', { ...box, fill: '#9fb4cc', 'fill-opacity': '0.5' }));
     }
     for (const crossing of lane.crossings) {

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { driveSvg } from '../../src/report/drive-svg.js';
-import { niceStep } from '../../src/report/driven-run.js';
+import { niceStep } from '../../src/report/axis-steps.js';
 import { speedSteps, stepOf } from '../../src/report/speed-scale.js';
 import { drive } from './driven.js';
 
