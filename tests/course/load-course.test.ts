@@ -52,7 +52,7 @@ describe('loadCourse', () => {
   });
 
   it.each([
-    ['', 'The file is empty.'],
+    ['', 'The file is empty; a JSON file is needed.'],
     ['{ "courseVersion": 1, ', 'This is not JSON'],
     ['[]', 'list'],
     ['{ "courseVersion": 1, "pieces": [] }', 'piece'],
