@@ -1,11 +1,10 @@
 /**
- * The stages of the demo, each on its own: prepare (check, derive), render, rehearse, draw.
+ * The stages of the demo, each on its own: derive, render, rehearse, draw.
  *
  * They take the same way as the commands; only the sheets and the course are fixed.
  */
 import { mkdir } from 'node:fs/promises';
 import { basename, join } from 'node:path';
-import { fileURLToPath } from 'node:url';
 import writeFileAtomic from 'write-file-atomic';
 import type { Lane } from '../course/lane.js';
 import type { Design } from '../design/design.js';
@@ -20,14 +19,14 @@ import type { DrivenRun } from '../report/driven-run.js';
 import { driveSvg } from '../report/drive-svg.js';
 import { runSummary } from '../report/rehearsal-text.js';
 import type { ResolvedSheet } from '../sheet/defaults.js';
-import { loadSheet } from '../sheet/load.js';
-import { EXIT, FairleadError, type Problem } from '../sheet/problem.js';
+import type { LoadedSheet } from '../sheet/load.js';
+import { EXIT, FairleadError } from '../sheet/problem.js';
+import { COURSE } from './demo-files.js';
 
-const EXAMPLES = fileURLToPath(new URL('../../examples/tray-cart', import.meta.url));
-
-export const SHEETS = ['tray-cart.json', 'tray-cart-esp32.json'].map((name) => join(EXAMPLES, name));
-export const COURSE = join(EXAMPLES, 'nursery-lane.json');
 const LAPS = 2;
+
+/** A sheet of the demo that was found sound. */
+export type DemoSheet = LoadedSheet & { path: string };
 
 type ControlKind = Design['vehicle']['control']['kind'];
 
@@ -36,18 +35,16 @@ export interface DemoVehicle {
   path: string;
   sheet: ResolvedSheet;
   digest: string;
-  notes: readonly Problem[];
   /** The design that the sheet asks for; one of `designs`. */
   design: Design;
   designs: Readonly<Record<ControlKind, Design>>;
 }
 
-/** Checks the sheet and derives both designs. */
-export async function prepare(path: string): Promise<DemoVehicle> {
-  const { sheet, digest, notes } = await loadSheet(path);
+/** Derives the sheet's design and that with the other controller. */
+export function derive({ path, sheet, digest }: DemoSheet): DemoVehicle {
   const designOf = (kind: ControlKind) => designFor({ ...sheet, control: { ...sheet.control, kind } });
   const designs = { pid: designOf('pid'), rules: designOf('rules') };
-  return { path, sheet, digest, notes, design: designs[sheet.control.kind], designs };
+  return { path, sheet, digest, design: designs[sheet.control.kind], designs };
 }
 
 export interface RenderedDemo {

@@ -2,7 +2,8 @@
 import { basename, relative } from 'node:path';
 import { table } from '../report/text-table.js';
 import { counted } from '../sheet/words.js';
-import type { DemoVehicle, Driven, Picture, RenderedDemo } from './demo-stages.js';
+import { BOARDS } from '../vehicle/boards.js';
+import type { DemoSheet, DemoVehicle, Driven, Picture, RenderedDemo } from './demo-stages.js';
 
 const INDENT = '   ';
 
@@ -17,11 +18,11 @@ function indented(rows: readonly (readonly string[])[]): string {
 }
 
 /** Stage 1: the sheets that were found sound. */
-export function checkText(vehicles: readonly DemoVehicle[]): string {
-  const rows = vehicles.map(({ path, notes, design: { vehicle } }) => [
+export function checkText(sheets: readonly DemoSheet[]): string {
+  const rows = sheets.map(({ path, notes, sheet: { target } }) => [
     shortPath(path),
     `sound, ${counted(notes.length, 'note')}`,
-    `${vehicle.language === 'arduino' ? 'Arduino C++' : 'MicroPython'} for ${vehicle.board.title}`,
+    `${target.language === 'arduino' ? 'Arduino C++' : 'MicroPython'} for ${BOARDS[target.board].title}`,
   ]);
   return indented(rows);
 }

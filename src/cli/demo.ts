@@ -1,7 +1,8 @@
 /** `fairlead demo`, also a bare `fairlead` without a terminal: the demo cart through the whole way. */
 import type { Command } from 'commander';
 import { EXIT, type Problem } from '../sheet/problem.js';
-import type { DemoVehicle, Driven, Picture, RenderedDemo } from './demo-stages.js';
+import { COURSE, SHEETS } from './demo-files.js';
+import type { DemoSheet, Driven, Picture, RenderedDemo } from './demo-stages.js';
 import type { Io } from './io.js';
 import { problemLine } from './problem-text.js';
 import { wholeNumber } from './whole-number.js';
@@ -43,15 +44,16 @@ async function demo({ out, runs, json }: DemoOptions, io: Io): Promise<void> {
   };
   const begin = (title: string): void => say(`\n${io.style('bold', title)}\n`);
   say('The demo cart, from build sheet to driven lane\n');
-  const stages = await import('./demo-stages.js');
   const text = await import('./demo-text.js');
-  const { loadCourse } = await import('../course/load-course.js');
-
-  const vehicles: DemoVehicle[] = [];
-  for (const path of stages.SHEETS) vehicles.push(await stages.prepare(path));
+  const { loadSheet } = await import('../sheet/load.js');
   begin('1  Check');
-  say(text.checkText(vehicles));
+  const sheets: DemoSheet[] = [];
+  for (const path of SHEETS) sheets.push({ path, ...(await loadSheet(path)) });
+  say(text.checkText(sheets));
+
+  const stages = await import('./demo-stages.js');
   begin('2  Derive');
+  const vehicles = sheets.map((sheet) => stages.derive(sheet));
   say(text.deriveText(vehicles));
 
   const rendered: RenderedDemo[] = [];
@@ -59,8 +61,9 @@ async function demo({ out, runs, json }: DemoOptions, io: Io): Promise<void> {
   begin('3  Render');
   say(text.renderText(rendered));
 
-  const { lane } = await loadCourse(stages.COURSE);
-  begin(`4  Rehearse, two laps of ${text.shortPath(stages.COURSE)}`);
+  const { loadCourse } = await import('../course/load-course.js');
+  const { lane } = await loadCourse(COURSE);
+  begin(`4  Rehearse, two laps of ${text.shortPath(COURSE)}`);
   say(text.rehearsalHead());
   const drives: Driven[] = [];
   for (const task of vehicles.flatMap((vehicle) => stages.tasksOf(vehicle, runs))) {

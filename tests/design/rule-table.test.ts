@@ -13,7 +13,7 @@ const count = vehicle.bar.positionsM.length;
 
 function mirrored(state: number): number {
   const bits = state.toString(2).padStart(count, '0');
-  return parseInt([...bits].reverse().join(''), 2);
+  return parseInt(Array.from(bits).reverse().join(''), 2);
 }
 
 /** State that a line whose middle is at `offsetM` causes. */
