@@ -1,4 +1,5 @@
 /** A named integer of the firmware, with the comment that explains it. */
+import { identifier } from './identifiers.js';
 import type { IntegerType } from './literals.js';
 
 /** One integer constant, or a table of them, as it is declared and commented. */
@@ -20,12 +21,17 @@ export interface ConstantGroup {
   constants: readonly Constant[];
 }
 
+/** One list of constants serves both languages, so a name has to be one in both. */
+function checked(name: string): string {
+  return identifier(identifier(name, 'cpp'), 'python');
+}
+
 /** A single constant. */
 export function constant(name: string, type: IntegerType, value: number, about: string): Constant {
-  return { name, type, value, table: false, about };
+  return { name: checked(name), type, value, table: false, about };
 }
 
 /** A table of constants. */
 export function table(name: string, type: IntegerType, values: readonly number[], about: string): Constant {
-  return { name, type, values, table: true, about };
+  return { name: checked(name), type, values, table: true, about };
 }

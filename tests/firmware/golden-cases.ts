@@ -5,7 +5,6 @@ import { fileURLToPath } from 'node:url';
 import { renderFirmware, type RenderedFile } from '../../src/firmware/render.js';
 import { designFor } from '../../src/pipeline.js';
 import { loadSheet } from '../../src/sheet/load.js';
-import type { BoardId } from '../../src/vehicle/board-facts.js';
 
 const HERE = fileURLToPath(new URL('../goldens/', import.meta.url));
 
@@ -13,14 +12,9 @@ export const CASES = readdirSync(HERE, { withFileTypes: true })
   .filter((entry) => entry.isDirectory())
   .map(({ name }) => name);
 
-export interface Rendered {
-  board: BoardId;
-  files: RenderedFile[];
-}
-
-export async function renderCase(name: string): Promise<Rendered> {
+export async function renderCase(name: string): Promise<RenderedFile[]> {
   const { sheet, digest } = await loadSheet(join(HERE, name, 'sheet.json'));
-  return { board: sheet.target.board, files: await renderFirmware({ digest }, designFor(sheet)) };
+  return renderFirmware({ digest }, designFor(sheet));
 }
 
 /** The golden files of a case, by path, as they are on disk. */

@@ -21,7 +21,7 @@ beforeAll(async () => {
 
 const onBench = () => new ChipBench(image, vehicle, centred);
 
-describe('the button', () => {
+describe('the button', { timeout: 120_000 }, () => {
   it('is needed: nothing moves by itself, motors off from the start', () => {
     const rig = onBench();
     rig.run(2);
@@ -77,7 +77,7 @@ describe('the button', () => {
   });
 });
 
-describe('a run', () => {
+describe('a run', { timeout: 120_000 }, () => {
   it('drives both wheels forward alike on a straight, and turns towards the line', () => {
     const rig = onBench();
     rig.start();
@@ -124,7 +124,7 @@ describe('a run', () => {
   });
 });
 
-describe('a program that fails', () => {
+describe('a program that fails', { timeout: 120_000 }, () => {
   it('is reset by the watchdog: motors off, and nothing moves again without the button', async () => {
     const hanging = await imageOf(quickDesign(vehicle), 'static int n; if (++n > 100) for (;;) {}');
     const rig = new ChipBench(hanging, vehicle, centred);
@@ -148,7 +148,7 @@ describe('a program that fails', () => {
   });
 });
 
-describe('calibration by sweep', () => {
+describe('calibration by sweep', { timeout: 120_000 }, () => {
   const { '/sensors/calibration': calibration } = CARTS['a sweep']!;
   const sweeping = cart({ '/sensors/calibration': calibration });
   const { ground, line } = sweeping.bar.calibration;

@@ -17,7 +17,7 @@ async function lapsOnChip(design: FirmwareDesign, laps: number, seed = 0): Promi
   return engine.run(runSetup(design.vehicle, lane, seed, laps, false));
 }
 
-describe('the demo cart on the emulated chip', () => {
+describe('the demo cart on the emulated chip', { timeout: 120_000 }, () => {
   it.each(['the demo cart', 'the demo cart with rules'])(
     '%s drives two laps, much as the twin does',
     async (name) => {
@@ -33,11 +33,14 @@ describe('the demo cart on the emulated chip', () => {
     },
   );
 
-  it.each(['digital sensors', 'a sweep', 'a sweep, dark line, and rules'])('%s: a lap', async (name) => {
-    const result = await lapsOnChip(quickDesign(cart(CARTS[name])), 1);
-    expect(result.loss).toBeUndefined();
-    expect(result.maxLateralM).toBeLessThan(0.03);
-  });
+  it.each(['digital sensors', 'eight sensors, dark line', 'a sweep, dark line, and rules'])(
+    '%s: a lap',
+    async (name) => {
+      const result = await lapsOnChip(quickDesign(cart(CARTS[name])), 1);
+      expect(result.loss).toBeUndefined();
+      expect(result.maxLateralM).toBeLessThan(0.03);
+    },
+  );
 
   it('repeats a perturbed cart, noise and all, by its seed', async () => {
     const { lane } = await loadCourse(NURSERY);
