@@ -35,6 +35,11 @@ const PLAIN_COLUMNS = 80;
 /** We have looked at the stream ourselves; Node would look at stdout only. */
 const UNASKED = { validateStream: false };
 
+/** Width of a stream; a terminal that does not know its size says 0. */
+function columnsOf(stream: NodeJS.WriteStream): number {
+  return stream.isTTY && stream.columns > 0 ? stream.columns : PLAIN_COLUMNS;
+}
+
 function takesColor(stream: NodeJS.WriteStream, environment: NodeJS.ProcessEnv): boolean {
   return stream.isTTY && !environment['NO_COLOR'] && environment['TERM'] !== 'dumb';
 }
@@ -67,7 +72,7 @@ export function processIo(
       if (!err.isTTY) return;
       clearProgress();
       if (text === '') return;
-      err.write(text.slice(0, err.columns - 1));
+      err.write(text.slice(0, columnsOf(err) - 1));
       progressShown = true;
     },
     json(value) {
@@ -78,7 +83,7 @@ export function processIo(
     isTerminalOut: out.isTTY,
     isTerminalErr: err.isTTY,
     color,
-    columns: out.isTTY ? out.columns : PLAIN_COLUMNS,
+    columns: columnsOf(out),
     style: (format, text) => (color ? styleText(format, text, UNASKED) : text),
     styleErr: (format, text) => (colorErr ? styleText(format, text, UNASKED) : text),
   };

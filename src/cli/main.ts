@@ -105,7 +105,7 @@ function report(error: unknown, io: Io, wantsJson: boolean): void {
   process.exitCode = failure.exitCode;
   if (wantsJson) io.json(failureJson(failure));
   // Commander has written its usage errors itself, with the nearest command or option.
-  else if (!isUsage) io.stderr(io.styleErr('red', failureText(failure)));
+  else if (!isUsage) io.stderr(`${io.styleErr('red', failureText(failure))}\n`);
   if (process.env['DEBUG'] && error instanceof Error) io.stderr(`${error.stack ?? error.message}\n`);
 }
 

@@ -61,13 +61,13 @@ export function toFailure(error: unknown): Failure {
   return { exitCode: EXIT.defect, message, file: undefined, problems: [] };
 }
 
-/** The failure as lines for stderr. */
+/** The failure as text for stderr: a line a problem, the last one not ended. */
 export function failureText(failure: Failure): string {
   const lines =
     failure.problems.length > 0
       ? failure.problems.map((problem) => problemLine(problem, failure.file))
       : [visible(failure.message)];
-  return `${lines.join('\n')}\n`;
+  return lines.join('\n');
 }
 
 /** The failure as the JSON document that `--json` promises; there is always at least one problem. */

@@ -46,7 +46,7 @@ async function check(...words: string[]): Promise<{ exitCode: unknown; out: stri
   } catch (error) {
     const failure = toFailure(error);
     exitCode = failure.exitCode;
-    err += failureText(failure);
+    err += `${failureText(failure)}\n`;
   }
   return { exitCode, out, err };
 }

@@ -35,6 +35,15 @@ describe('processIo', () => {
     expect(written(err)).toBe('x'.repeat(39));
   });
 
+  it('takes a terminal that does not know its width for one of 80 characters', () => {
+    const unsized = () => Object.assign(stream(true), { columns: 0 });
+    const err = unsized();
+    const io = processIo(unsized(), err, {});
+    io.progress('x'.repeat(100));
+    expect(written(err)).toBe('x'.repeat(79));
+    expect(io.columns).toBe(80);
+  });
+
   it('shows no progress where stderr is no terminal', () => {
     const err = stream(false);
     processIo(stream(true), err, {}).progress('run 12 of 1000');

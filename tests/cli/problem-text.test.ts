@@ -76,10 +76,9 @@ describe('failure output', () => {
       new FairleadError('two problems', { problems: [pitch, second], file: 'c.json' }),
     );
     const lines = failureText(failure).split('\n');
-    expect(lines).toHaveLength(3);
+    expect(lines).toHaveLength(2);
     expect(lines[0]).toContain('c.json /sensors/pitchMm: 95 mm');
     expect(lines[1]).toBe('c.json /name: The name is empty.');
-    expect(lines[2]).toBe('');
   });
 
   it('gives JSON at least one problem, also where the failure is a single sentence', () => {
