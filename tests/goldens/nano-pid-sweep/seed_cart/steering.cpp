@@ -44,22 +44,23 @@ void enter(Phase phase) {
   travelled = 0;
 }
 
-void updatePhase(const Sight& sight) {
-  if (corner > 0) corner -= steering.speedMmSQ6;
-  // A bar that stays on the line everywhere ends a search, and with it the run, like one that sees
-  // none.
-  if (sight.wide && steering.phase != Phase::Search) {
-    corner = 0;
-    enter(Phase::Crossing);
-    if (travelled > CROSSING_MM_S_Q6_SAMPLES) enter(Phase::Search);
-  } else if (sight.found) {
-    enter(Phase::Follow);
-    if (sight.offsetMmQ6 != 0) side = sight.offsetMmQ6 > 0 ? 1 : -1;
-    if (sight.reach != 0) {
-      corner = CORNER_MM_S_Q6_SAMPLES;
-      cornerSide = sight.reach;
-    }
-  } else if (steering.phase == Phase::Follow || steering.phase == Phase::Crossing) {
+void cross() {
+  corner = 0;
+  enter(Phase::Crossing);
+  if (travelled > CROSSING_MM_S_Q6_SAMPLES) enter(Phase::Search);
+}
+
+void see(const Sight& sight) {
+  enter(Phase::Follow);
+  if (sight.offsetMmQ6 != 0) side = sight.offsetMmQ6 > 0 ? 1 : -1;
+  if (sight.reach != 0) {
+    corner = CORNER_MM_S_Q6_SAMPLES;
+    cornerSide = sight.reach;
+  }
+}
+
+void miss(const Sight& sight) {
+  if (steering.phase == Phase::Follow || steering.phase == Phase::Crossing) {
     const bool bySide =
         sight.offsetMmQ6 > SIDE_OFFSET_MM_Q6 || sight.offsetMmQ6 < -SIDE_OFFSET_MM_Q6;
     if (corner > 0) side = cornerSide;
@@ -68,6 +69,20 @@ void updatePhase(const Sight& sight) {
     if (travelled > GAP_MM_S_Q6_SAMPLES) enter(Phase::Search);
   } else if (searched >= SEARCH_SAMPLES) {
     enter(Phase::Stopped);
+  }
+}
+
+// What is done while the line is not seen as usual: crossing, gap, corner, search, stop.
+void updatePhase(const Sight& sight) {
+  if (corner > 0) corner -= steering.speedMmSQ6;
+  // A bar that stays on the line everywhere ends a search, and with it the run, like one that sees
+  // none.
+  if (sight.wide && steering.phase != Phase::Search) {
+    cross();
+  } else if (sight.found) {
+    see(sight);
+  } else {
+    miss(sight);
   }
   // Only what a limit is set on is counted: a sum without end would overflow.
   if (steering.phase == Phase::Follow) {

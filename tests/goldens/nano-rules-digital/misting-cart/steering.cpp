@@ -46,16 +46,17 @@ void enter(Phase phase) {
   travelled = 0;
 }
 
-void updatePhase(const Sight& sight) {
-  if (corner > 0) corner -= steering.speedMmSQ6;
-  if (sight.found) {
-    enter(Phase::Follow);
-    if (sight.offsetMmQ6 != 0) side = sight.offsetMmQ6 > 0 ? 1 : -1;
-    if (sight.reach != 0) {
-      corner = CORNER_MM_S_Q6_SAMPLES;
-      cornerSide = sight.reach;
-    }
-  } else if (steering.phase == Phase::Follow) {
+void see(const Sight& sight) {
+  enter(Phase::Follow);
+  if (sight.offsetMmQ6 != 0) side = sight.offsetMmQ6 > 0 ? 1 : -1;
+  if (sight.reach != 0) {
+    corner = CORNER_MM_S_Q6_SAMPLES;
+    cornerSide = sight.reach;
+  }
+}
+
+void miss(const Sight& sight) {
+  if (steering.phase == Phase::Follow) {
     const bool bySide =
         sight.offsetMmQ6 > SIDE_OFFSET_MM_Q6 || sight.offsetMmQ6 < -SIDE_OFFSET_MM_Q6;
     if (corner > 0) side = cornerSide;
@@ -64,6 +65,16 @@ void updatePhase(const Sight& sight) {
     if (travelled > GAP_MM_S_Q6_SAMPLES) enter(Phase::Search);
   } else if (searched >= SEARCH_SAMPLES) {
     enter(Phase::Stopped);
+  }
+}
+
+// What is done while the line is not seen as usual: gap, corner, search, stop.
+void updatePhase(const Sight& sight) {
+  if (corner > 0) corner -= steering.speedMmSQ6;
+  if (sight.found) {
+    see(sight);
+  } else {
+    miss(sight);
   }
   // Only what a limit is set on is counted: a sum without end would overflow.
   if (steering.phase == Phase::Follow) {
