@@ -14,17 +14,16 @@ import {
   type ControllerConstants,
   FILTER_BITS,
   FRACTION_BITS,
-  FULL_DUTY,
   PHASE,
   type Phase,
   RULE_CURVATURE_BITS,
-  SLOPE_BITS,
   SPEED_GAIN_BITS,
   SPEED_MODEL_BITS,
   SPEED_SLOPE_BITS,
   TRACK_BITS,
-  runIndex,
 } from './constants.js';
+import { runIndex } from './run-index.js';
+import { wheelDuty } from './wheel-duty.js';
 import { LineMemory } from './line-memory.js';
 import { Sensing } from './sensing.js';
 
@@ -183,8 +182,8 @@ export class Twin {
     const lag = (middle - this.speed) >> SPEED_MODEL_BITS;
     this.speed += (lag * drive.motorStep) >> (COEFFICIENT_BITS - SPEED_MODEL_BITS);
     if (this.speed < 0) this.speed = 0;
-    this.dutyLeft = this.duty(left, drive.startDutyLeft, drive.slopeLeft);
-    this.dutyRight = this.duty(right, drive.startDutyRight, drive.slopeRight);
+    this.dutyLeft = wheelDuty(left, drive.wheelDead, drive.startDutyLeft, drive.slopeLeft);
+    this.dutyRight = wheelDuty(right, drive.wheelDead, drive.startDutyRight, drive.slopeRight);
   }
 
   /** Wheel speed for both wheels, mm/s; a rule's mean fraction scales it. */
@@ -194,13 +193,5 @@ export class Twin {
     const index = runIndex(this.sensing.first, this.sensing.last, sensing.sensorCount);
     const sum = (rules.left[index] as number) + (rules.right[index] as number);
     return (speed * sum) >> (FRACTION_BITS + 1);
-  }
-
-  private duty(wheelSpeed: number, startDuty: number, slope: number): number {
-    const size = wheelSpeed < 0 ? -wheelSpeed : wheelSpeed;
-    if (size <= this.constants.drive.wheelDead) return 0;
-    let duty = startDuty + ((size * slope) >> SLOPE_BITS);
-    if (duty > FULL_DUTY) duty = FULL_DUTY;
-    return wheelSpeed < 0 ? -duty : duty;
   }
 }

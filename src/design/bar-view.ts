@@ -7,15 +7,7 @@
  */
 import { FULL_COVERAGE } from '../controller/constants.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
-import { segmentShare } from './edge-table.js';
-
-/** Covered share of a spot whose centre is `offsetM` beside the middle of a line. */
-export function lineShare(offsetM: number, lineWidthM: number, spotRadiusM: number): number {
-  return (
-    segmentShare((lineWidthM / 2 - offsetM) / spotRadiusM) -
-    segmentShare((-lineWidthM / 2 - offsetM) / spotRadiusM)
-  );
-}
+import { coveredShare, seeingReach } from '../vehicle/sensor-bar.js';
 
 /** Distance between neighbouring sensors, mean, m. */
 export function meanPitchM(positionsM: readonly number[]): number {
@@ -30,7 +22,7 @@ export function weakestPeak(vehicle: Vehicle): number {
   let weakest = 1;
   for (let i = 1; i < positionsM.length; i++) {
     const half = ((positionsM[i - 1] as number) - (positionsM[i] as number)) / 2;
-    weakest = Math.min(weakest, lineShare(half, vehicle.line.widthM, spotRadiusM));
+    weakest = Math.min(weakest, coveredShare(half, vehicle.line.widthM, spotRadiusM));
   }
   return weakest;
 }
@@ -43,22 +35,14 @@ export function highCoverage(vehicle: Vehicle): number {
 
 /** Distance from a sensor to the line's middle at which the sensor just counts as on the line, m. */
 export function switchingDistanceM(vehicle: Vehicle): number {
-  const threshold = highCoverage(vehicle) / FULL_COVERAGE;
-  const { widthM } = vehicle.line;
-  const { spotRadiusM } = vehicle.bar;
-  let low = 0;
-  let high = widthM / 2 + spotRadiusM;
-  for (let i = 0; i < 50; i++) {
-    const middle = (low + high) / 2;
-    if (lineShare(middle, widthM, spotRadiusM) >= threshold) low = middle;
-    else high = middle;
-  }
-  return (low + high) / 2;
+  const share = highCoverage(vehicle) / FULL_COVERAGE;
+  return seeingReach(vehicle.line.widthM, vehicle.bar.spotRadiusM, share) ?? 0;
 }
 
-/** Largest offset of the line's middle that is still measured, m. */
+/** Largest offset of the line's middle that is still measured on both sides, m. */
 export function viewM(vehicle: Vehicle): number {
-  const outermost = vehicle.bar.positionsM[0] as number;
+  const { positionsM } = vehicle.bar;
+  const outermost = Math.min(positionsM[0] as number, -(positionsM[positionsM.length - 1] as number));
   return outermost + switchingDistanceM(vehicle);
 }
 

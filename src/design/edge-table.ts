@@ -1,27 +1,19 @@
 /**
  * Where an edge of the line lies between two sensors, by the sum of what they see.
  *
- * A sensor sees a disc of radius r. If a straight edge passes at distance d from the disc's centre, with
- * the line on the near side, the covered share of the disc is that of a circular segment:
- *
- *   A(u) = 1/2 + (u sqrt(1 - u^2) + asin u) / pi,   u = d / r in -1..1
+ * A sensor sees a disc of radius r. If a straight edge passes at distance d from the disc's centre, with the
+ * line on the near side, the covered share of the disc is A(d / r) (vehicle/sensor-bar.ts, discShare).
  *
  * Between two sensors a distance 2 g apart, with the edge at x from the middle, the two coverages add up to
  * S(x) = A((x + g)/r) + A((x - g)/r), which rises with x. The table is its inverse. Where spots do not
  * touch, S keeps the value 1 while the edge crosses the blind part; the table passes through its middle.
  */
 import { EDGE_BITS, EDGE_ENTRIES } from '../controller/constants.js';
-
-/** Covered share 0..1 of a disc whose centre lies `u` radii inside the edge (negative: outside). */
-export function segmentShare(u: number): number {
-  if (u <= -1) return 0;
-  if (u >= 1) return 1;
-  return 0.5 + (u * Math.sqrt(1 - u * u) + Math.asin(u)) / Math.PI;
-}
+import { discShare } from '../vehicle/sensor-bar.js';
 
 /** Edge position from the middle of the gap, in half gaps, at which two sensors see `sum` (0..2) together. */
 function edgeAt(sum: number, spotInHalfGaps: number): number {
-  const seen = (x: number) => segmentShare((x + 1) / spotInHalfGaps) + segmentShare((x - 1) / spotInHalfGaps);
+  const seen = (x: number) => discShare((x + 1) / spotInHalfGaps) + discShare((x - 1) / spotInHalfGaps);
   const bound = (towards: 1 | -1): number => {
     // outermost x still on the given side of the sum; the two differ only on a level stretch
     let low = -1 - spotInHalfGaps;

@@ -8,7 +8,7 @@
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { viewM } from './bar-view.js';
 import { delayBudget } from './delay.js';
-import { type Corner, toleranceCorners } from './steering-gains.js';
+import { type Corner, toleranceCorners } from './tolerance-box.js';
 import type { SteeringGains } from './steering-loop.js';
 
 /** Share of the view that entering a bend may use. */

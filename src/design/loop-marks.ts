@@ -10,7 +10,7 @@
 import { radToDeg } from '../sheet/units.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import type { Response } from './margins.js';
-import { type Corner, marginsAt, toleranceCorners } from './steering-gains.js';
+import { type Corner, marginsAt, toleranceCorners } from './tolerance-box.js';
 import type { SteeringGains } from './steering-loop.js';
 
 /** A margin and the frequency at which it is read, rad/s. */

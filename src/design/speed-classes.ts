@@ -13,7 +13,8 @@ import { STANDARD_GRAVITY_MPS2 } from '../vehicle/gravity.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import type { SpeedLimits } from './design.js';
 import { entryHolds } from './entry.js';
-import { designLaw, givenGains, keeps, lawExists, worstMargins } from './steering-gains.js';
+import { designLaw, givenGains, lawExists } from './steering-gains.js';
+import { keeps, worstMargins } from './tolerance-box.js';
 
 /** A class before its speed is known. */
 export interface ClassRange {

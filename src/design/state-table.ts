@@ -9,12 +9,8 @@
  *   split       several runs, each of which a single line could cause
  *   impossible  what neither a line nor two lines cause: a faulty sensor, answered by its widest run
  */
-import {
-  type ControllerConstants,
-  FRACTION_BITS,
-  type RuleConstants,
-  runIndex,
-} from '../controller/constants.js';
+import { type ControllerConstants, FRACTION_BITS, type RuleConstants } from '../controller/constants.js';
+import { runIndex } from '../controller/run-index.js';
 import { Sensing } from '../controller/sensing.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import type { RuleRow } from './design.js';

@@ -1,7 +1,7 @@
 /** The design as a person reads it: each number with its unit and where it comes from. */
 import { OFFSET_PER_M, SPEED_PER_MPS } from '../controller/constants.js';
 import type { Design, DesignedClass } from '../design/design.js';
-import { LEAST_MARGINS } from '../design/steering-gains.js';
+import { LEAST_MARGINS } from '../design/tolerance-box.js';
 import { filterTimeS } from '../design/steering-loop.js';
 import { viewM } from '../design/bar-view.js';
 import { mToMm, sToMs } from '../sheet/units.js';

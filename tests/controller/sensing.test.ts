@@ -1,7 +1,8 @@
 import { describe, expect, test } from 'vitest';
 import { OFFSET_PER_M, type SensingConstants } from '../../src/controller/constants.js';
 import { Sensing, edgeShift } from '../../src/controller/sensing.js';
-import { lineShare, viewM } from '../../src/design/bar-view.js';
+import { viewM } from '../../src/design/bar-view.js';
+import { coveredShare } from '../../src/vehicle/sensor-bar.js';
 import { sensingConstants } from '../../src/design/sensing-constants.js';
 import type { Vehicle } from '../../src/vehicle/vehicle.js';
 import { demoVehicle } from '../design/demo-vehicle.js';
@@ -10,7 +11,7 @@ import { demoVehicle } from '../design/demo-vehicle.js';
 function readings(vehicle: Vehicle, offsetM: number): Int32Array {
   const { bar, line } = vehicle;
   return Int32Array.from(bar.positionsM, (position, i) => {
-    const share = lineShare(Math.abs(position - offsetM), line.widthM, bar.spotRadiusM);
+    const share = coveredShare(Math.abs(position - offsetM), line.widthM, bar.spotRadiusM);
     return Math.round(
       bar.calibration.ground[i]! + share * (bar.calibration.line[i]! - bar.calibration.ground[i]!),
     );
@@ -122,7 +123,7 @@ test('a digital bar finds the line to half the spacing', () => {
   const digital = new Sensing(sensingConstants({ ...vehicle, bar }), false);
   for (let at = -30; at <= 30; at += 0.3) {
     const levels = bar.positionsM.map((p) =>
-      lineShare(Math.abs(p - at / 1000), 0.019, 0.004) >= 0.5 ? 1 : 0,
+      coveredShare(Math.abs(p - at / 1000), 0.019, 0.004) >= 0.5 ? 1 : 0,
     );
     digital.read(Int32Array.from(levels));
     expect(digital.found).toBe(true);

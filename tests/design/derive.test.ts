@@ -3,7 +3,7 @@ import { FairleadError } from '../../src/sheet/problem.js';
 import { deriveDesign } from '../../src/design/derive.js';
 import { bindingLimit } from '../../src/design/speed-classes.js';
 import { loopMargins } from '../../src/design/steering-loop.js';
-import { keeps } from '../../src/design/steering-gains.js';
+import { keeps } from '../../src/design/tolerance-box.js';
 import { STANDARD_GRAVITY_MPS2 } from '../../src/vehicle/gravity.js';
 import { demoVehicle, demoVehicleOnBend } from './demo-vehicle.js';
 

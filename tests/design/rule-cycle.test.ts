@@ -1,7 +1,7 @@
 import { expect, test } from 'vitest';
 import { deriveDesign } from '../../src/design/derive.js';
 import { predictCycles, staircase } from '../../src/design/rule-cycle.js';
-import { LEAST_MARGINS } from '../../src/design/steering-gains.js';
+import { LEAST_MARGINS } from '../../src/design/tolerance-box.js';
 import { demoVehicle } from '../design/demo-vehicle.js';
 
 const vehicle = demoVehicle('rules');

@@ -1,7 +1,8 @@
 import { describe, expect, test } from 'vitest';
-import { runIndex } from '../../src/controller/constants.js';
+import { runIndex } from '../../src/controller/run-index.js';
 import { deriveDesign } from '../../src/design/derive.js';
-import { lineShare, switchingDistanceM } from '../../src/design/bar-view.js';
+import { switchingDistanceM } from '../../src/design/bar-view.js';
+import { coveredShare } from '../../src/vehicle/sensor-bar.js';
 import { runInterval } from '../../src/design/rule-runs.js';
 import { runsOf, stateTable } from '../../src/design/state-table.js';
 import { demoVehicle } from './demo-vehicle.js';
@@ -19,7 +20,7 @@ function mirrored(state: number): number {
 /** State that a line whose middle is at `offsetM` causes. */
 function stateAt(offsetM: number): number {
   const bits = vehicle.bar.positionsM.map((p) =>
-    lineShare(p - offsetM, vehicle.line.widthM, vehicle.bar.spotRadiusM) >= 0.5 ? '1' : '0',
+    coveredShare(p - offsetM, vehicle.line.widthM, vehicle.bar.spotRadiusM) >= 0.5 ? '1' : '0',
   );
   return parseInt(bits.join(''), 2);
 }

@@ -2,14 +2,8 @@ import { describe, expect, test } from 'vitest';
 import { samplePlant } from '../../src/design/lane-plant.js';
 import { closedLoopRadius } from '../../src/design/closed-loop.js';
 import { controllerOf, loopMargins, loopPeak } from '../../src/design/steering-loop.js';
-import {
-  LEAST_MARGINS,
-  designLaw,
-  keeps,
-  lanePlantOf,
-  proportionalRange,
-  toleranceCorners,
-} from '../../src/design/steering-gains.js';
+import { designLaw, proportionalRange } from '../../src/design/steering-gains.js';
+import { LEAST_MARGINS, keeps, lanePlantOf, toleranceCorners } from '../../src/design/tolerance-box.js';
 import { Random } from '../../src/rehearsal/random.js';
 import { demoVehicle } from './demo-vehicle.js';
 

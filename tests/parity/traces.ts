@@ -2,7 +2,7 @@
  * Readings that a bar may give, and some that it should never give: a line that wanders under the bar, leaves it to a side, ends in
  * gaps, meets crossings and corners, with noise; and now and then nothing but rubbish. Drawn by seed.
  */
-import { lineShare } from '../../src/design/bar-view.js';
+import { coveredShare } from '../../src/vehicle/sensor-bar.js';
 import { Random } from '../../src/rehearsal/random.js';
 import type { Vehicle } from '../../src/vehicle/vehicle.js';
 
@@ -50,7 +50,7 @@ export class BarTrace {
     if (this.scene === 'gap' || this.scene === 'lost') return 0;
     if (this.scene === 'crossing') return 1;
     if (this.scene === 'corner' && positionM * this.driftM > 0) return 1;
-    return lineShare(positionM - this.offsetM, line.widthM, bar.spotRadiusM);
+    return coveredShare(positionM - this.offsetM, line.widthM, bar.spotRadiusM);
   }
 
   private count(i: number): number {
