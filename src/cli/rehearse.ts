@@ -61,6 +61,7 @@ async function rehearseCommand(path: string, options: RehearseOptions, io: Io): 
   const { loadCourse } = await import('../course/load-course.js');
   const { engineFor } = await import('../rehearsal/engines.js');
   const { rehearse } = await import('../rehearsal/runner.js');
+  const { courseNotes } = await import('../rehearsal/course-fit.js');
   const { rehearsalText } = await import('../report/rehearsal-text.js');
 
   io.progress('designing ...');
@@ -81,11 +82,13 @@ async function rehearseCommand(path: string, options: RehearseOptions, io: Io): 
       ? await drawnRun(rehearsal, engine, design.vehicle, lane, laps)
       : undefined;
   if (run !== undefined && options.svg !== undefined) await writePicture(options.svg, run, rehearsal, names);
+  const notes = courseNotes(design.vehicle, lane);
   if (options.json === true) {
-    io.json(rehearsal.report);
+    io.json({ ...rehearsal.report, notes });
     return;
   }
   io.stdout(rehearsalText(rehearsal.report, lane, names));
+  for (const note of notes) io.stdout(`Note: ${note}\n`);
   if (run !== undefined && isPlotted) {
     const { terminalPlot } = await import('../report/terminal-plot.js');
     const { isUtf8Locale } = await import('../report/dot-canvas.js');
