@@ -71,7 +71,7 @@ describe('fairlead rehearse', () => {
     expect(report.ratio).toBeCloseTo(report.lapS! / report.boundLapS, 12);
     expect(Object.keys(report)).toEqual([
       ...['runs', 'finished', 'lost', 'lapS', 'boundLapS', 'ratio'],
-      ...['rmsLateralMm', 'maxLateralMm', 'seed', 'engine', 'list'],
+      ...['rmsLateralMm', 'maxLateralMm', 'seed', 'engine', 'list', 'notes'],
     ]);
     const alone = await rehearse([SHEET, '--course', COURSE, '--seed', '2', '--json']);
     expect((alone.json[0] as RehearsalReport).list[0]).toEqual(report.list[1]);
