@@ -5,6 +5,7 @@ import { firmwareGains, tableGainPerM2 } from './class-constants.js';
 import { controllerConstants } from './controller-constants.js';
 import { delayBudget } from './delay.js';
 import type { ClassSettings, Design, DesignedClass, SpeedLimits } from './design.js';
+import { overrideRemarks } from './override-remarks.js';
 import { Proving, type SpeedScale, slowestScale } from './proving.js';
 import { type ClassRange, bindingLimit, classRanges, speedLimits } from './speed-classes.js';
 import { designLaw, givenGains } from './steering-gains.js';
@@ -139,6 +140,9 @@ export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Des
     delay: delayBudget(vehicle),
     classes,
     controller,
-    remarks: remarksOn(vehicle, classes, proven !== undefined),
+    remarks: [
+      ...remarksOn(vehicle, classes, proven !== undefined),
+      ...overrideRemarks(vehicle, classes, tableGain),
+    ],
   };
 }

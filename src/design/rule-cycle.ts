@@ -9,6 +9,7 @@
 import { FRACTION_BITS } from '../controller/constants.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { viewM } from './bar-view.js';
+import { tableGainPerM2 } from './class-constants.js';
 import { type LimitCycle, type Step, cycleAmplitudes, largestGain } from './describing-function.js';
 import type { DesignedClass } from './design.js';
 import { runActions } from './rule-runs.js';
@@ -44,9 +45,12 @@ export function staircase(vehicle: Vehicle, proportionalPerM2: number): Step[] {
 /** Predictions for all classes of a design by rules. */
 export function predictCycles(vehicle: Vehicle, classes: readonly DesignedClass[]): CyclePrediction[] {
   const largest = viewM(vehicle);
+  const tableGain = tableGainPerM2(vehicle, classes);
+  const table = staircase(vehicle, tableGain);
   return classes.map(({ name, gains, plant, controller, margins }) => {
     const kp = gains.proportionalPerM2;
-    const steps = staircase(vehicle, kp);
+    // each class takes its share of the table's curvature
+    const steps = table.map(({ at, height }) => ({ at, height: (height * kp) / tableGain }));
     const crossover = phaseCrossover(plant, controller);
     const gainRatio = largestGain(steps, largest) / kp;
     const criticalRatio = margins.gainMargin;

@@ -49,6 +49,17 @@ function fractionsFor(curvaturePerM: number, trackM: number): { left: number; ri
   return curvaturePerM > 0 ? { left: inner, right: outer } : { left: outer, right: inner };
 }
 
+/** The action that the sheet gives for a run, in 1/2^FRACTION_BITS; undefined where it leaves it to the formula. */
+function givenAction(
+  vehicle: Vehicle,
+  first: number,
+  last: number,
+): { left: number; right: number } | undefined {
+  const given = vehicle.control.overrides?.find((each) => each.first === first && each.last === last);
+  const unit = 1 << FRACTION_BITS;
+  return given && { left: Math.round(given.left * unit), right: Math.round(given.right * unit) };
+}
+
 /**
  * Actions of all runs, in the order of the firmware's rule table (runIndex).
  *
@@ -61,13 +72,8 @@ export function runActions(vehicle: Vehicle, proportionalPerM2: number): RunActi
     for (let last = first; last < count; last++) {
       const interval = runInterval(vehicle, first, last);
       const offsetM = interval ? (interval[0] + interval[1]) / 2 : shownOffsetM(vehicle, first, last);
-      actions.push({
-        first,
-        last,
-        interval,
-        offsetM,
-        ...fractionsFor(proportionalPerM2 * offsetM, vehicle.drive.trackM),
-      });
+      const computed = fractionsFor(proportionalPerM2 * offsetM, vehicle.drive.trackM);
+      actions.push({ first, last, interval, offsetM, ...(givenAction(vehicle, first, last) ?? computed) });
     }
   }
   return actions;

@@ -224,6 +224,28 @@ export interface Sheet {
      */
     kind: 'pid' | 'rules';
     /**
+     * Actions of your own for single states of the rule table, in place of the computed ones; with the controller kind rules only.
+     *
+     * @minItems 1
+     * @maxItems 136
+     *
+     * Items: One state of the bar and what the wheels do in it.
+     */
+    overrides?: {
+      /**
+       * One digit a sensor, leftmost first: 1 on the line, 0 off it. The ones stand together: other states follow from these.
+       */
+      state: string;
+      /**
+       * Speed of the left wheel as a fraction of the class's speed; negative is backward. [1]
+       */
+      left: number;
+      /**
+       * Speed of the right wheel as a fraction of the class's speed; negative is backward. [1]
+       */
+      right: number;
+    }[];
+    /**
      * Steering gains of your own for every speed class, in place of the computed ones: curvature = gain x (offset + derivative time x its rate). The design judges them by the same measures.
      */
     gains?: {

@@ -124,11 +124,23 @@ function classesOf(classes: ResolvedSheet['speeds']['classes']): Vehicle['speeds
     .sort((a, b) => a.minRadiusM - b.minRadiusM);
 }
 
-function controlOf({ kind, gains }: ResolvedSheet['control']): Vehicle['control'] {
-  if (gains === undefined) return { kind };
-  const { proportionalPerM2, derivativeTimeMs, filterTimeMs } = gains;
+function controlOf({ kind, gains, overrides }: ResolvedSheet['control']): Vehicle['control'] {
   return {
     kind,
-    gains: { proportionalPerM2, derivativeTimeS: msToS(derivativeTimeMs), filterTimeS: msToS(filterTimeMs) },
+    ...(gains && {
+      gains: {
+        proportionalPerM2: gains.proportionalPerM2,
+        derivativeTimeS: msToS(gains.derivativeTimeMs),
+        filterTimeS: msToS(gains.filterTimeMs),
+      },
+    }),
+    ...(overrides && {
+      overrides: overrides.map(({ state, left, right }) => ({
+        first: state.indexOf('1'),
+        last: state.lastIndexOf('1'),
+        left,
+        right,
+      })),
+    }),
   };
 }

@@ -64,6 +64,8 @@ export interface Vehicle {
     kind: 'pid' | 'rules';
     /** Steering gains given in the sheet, for every class. */
     gains?: { proportionalPerM2: number; derivativeTimeS: number; filterTimeS: number };
+    /** Actions given in the sheet for runs of sensors on the line: wheel speeds as fractions of base speed. */
+    overrides?: readonly { first: number; last: number; left: number; right: number }[];
   };
   speeds: {
     classes: 'auto' | readonly { name: string; minRadiusM: number; speedMps: number }[];

@@ -16,6 +16,7 @@ import { rule as pinsExist } from './pins-exist.js';
 import { rule as pinsUsedOnce } from './pins-used-once.js';
 import { rule as pwmOutputsDistinct } from './pwm-outputs-distinct.js';
 import { rule as pwmTimers } from './pwm-timers.js';
+import { rule as ruleOverrides } from './rule-overrides.js';
 import type { SheetRule } from './rule.js';
 import { rule as sensorCounts } from './sensor-counts.js';
 import { rule as sensorPositions } from './sensor-positions.js';
@@ -47,6 +48,7 @@ export const RULES: readonly SheetRule[] = [
   startDuty,
   topSpeed,
   speedClasses,
+  ruleOverrides,
   bendIsCut,
   pwmTimers,
   pinCautions,
