@@ -2,6 +2,7 @@
 import type { ControllerConstants } from '../controller/constants.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { firmwareGains, tableGainPerM2 } from './class-constants.js';
+import { biasRemarks } from './bias.js';
 import { controllerConstants } from './controller-constants.js';
 import { delayBudget } from './delay.js';
 import type { ClassSettings, Design, DesignedClass, SpeedLimits } from './design.js';
@@ -79,6 +80,7 @@ function designedClass(
   const plant = lanePlantOf(vehicle, speedMps, NOMINAL);
   return {
     ...settings,
+    wantedGains: settings.gains,
     gains,
     limits: base.limits,
     limitedBy: limitedBy(base, speedMps),
@@ -142,6 +144,7 @@ export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Des
     controller,
     remarks: [
       ...remarksOn(vehicle, classes, proven !== undefined),
+      ...biasRemarks({ vehicle, classes }),
       ...overrideRemarks(vehicle, classes, tableGain),
     ],
   };

@@ -38,6 +38,8 @@ export interface ClassSettings {
 }
 
 export interface DesignedClass extends ClassSettings {
+  /** The law as designed; `gains` is the one that the firmware's integers stand for. */
+  wantedGains: SteeringGains;
   limits: SpeedLimits;
   /** The least limit; `finish` where perturbed rehearsals asked for less, `sheet` where the speed is given. */
   limitedBy: keyof SpeedLimits | 'sheet' | 'finish';

@@ -1,5 +1,7 @@
 /** The design as `derive --json` gives it. */
 import type { Design, Margins } from '../design/design.js';
+import { biasOffsetM } from '../design/bias.js';
+import { quantisedConstants } from '../design/quantisation.js';
 import { predictCycles } from '../design/rule-cycle.js';
 import { stateTable } from '../design/state-table.js';
 import { mToMm } from '../sheet/units.js';
@@ -39,6 +41,8 @@ export function designJson(design: Design) {
         }))
       : [],
     ...(controller.rules && { cycles: predictCycles(vehicle, classes) }),
+    biasOffsetMm: mToMm(biasOffsetM(design)),
+    quantisation: quantisedConstants(design),
     firmware: controller,
     remarks: design.remarks,
   };

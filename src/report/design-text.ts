@@ -3,8 +3,10 @@ import { OFFSET_PER_M, SPEED_PER_MPS } from '../controller/constants.js';
 import type { Design, DesignedClass } from '../design/design.js';
 import { LEAST_MARGINS } from '../design/tolerance-box.js';
 import { filterTimeS } from '../design/steering-loop.js';
+import { biasOffsetM } from '../design/bias.js';
+import { quantisedConstants, worstQuantised } from '../design/quantisation.js';
 import { viewM } from '../design/bar-view.js';
-import { mToMm, sToMs } from '../sheet/units.js';
+import { fractionToPercent, mToMm, sToMs } from '../sheet/units.js';
 import { ruleLines } from './rule-text.js';
 import { table } from './text-table.js';
 
@@ -17,15 +19,29 @@ const LIMIT_REASONS: Readonly<Record<DesignedClass['limitedBy'], string>> = {
   sheet: 'given in the sheet',
 };
 
+/** Turn by which people who set courses tell how sharp a bend is. */
+const QUARTER_TURN_RAD = Math.PI / 2;
+
 function speedTable(classes: readonly DesignedClass[]): string {
   const rows = classes.map((each) => [
     each.name,
     mToMm(each.minRadiusM).toFixed(0),
+    mToMm(each.minRadiusM * QUARTER_TURN_RAD).toFixed(0),
     each.speedMps.toFixed(2),
     ...(['motor', 'grip', 'view', 'control'] as const).map((limit) => each.limits[limit].toFixed(2)),
     LIMIT_REASONS[each.limitedBy],
   ]);
-  const head = ['class', 'radius from, mm', 'speed, m/s', 'motor', 'grip', 'view', 'control', 'limited by'];
+  const head = [
+    'class',
+    'radius from, mm',
+    '90 deg within, mm',
+    'speed, m/s',
+    'motor',
+    'grip',
+    'view',
+    'control',
+    'limited by',
+  ];
   return table([head, ...rows]);
 }
 
@@ -64,6 +80,11 @@ function vehicleLines(design: Design): string {
       source,
     ]),
     ['delay in all', `${sToMs(design.delay.totalS).toFixed(2)} ms`, 'without the hold of one sample'],
+    [
+      'unequal motors',
+      `${mToMm(biasOffsetM(design)).toFixed(1)} mm to the side at most`,
+      'steady offset at the bar without an integral part',
+    ],
     ['search speed', `${(controller.drive.searchSpeed / SPEED_PER_MPS).toFixed(2)} m/s`, 'for a lost line'],
     [
       'side memory from',
@@ -71,6 +92,11 @@ function vehicleLines(design: Design): string {
       'beyond: left by the side, not a gap',
     ],
   ];
+  const worst = worstQuantised(quantisedConstants(design));
+  if (worst) {
+    const percent = fractionToPercent(worst.relativeError).toFixed(2);
+    rows.push(['largest rounding', `${percent} %`, `${worst.name}, in the firmware's integers`]);
+  }
   return table(rows);
 }
 
