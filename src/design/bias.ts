@@ -13,7 +13,7 @@ import { viewM } from './bar-view.js';
 import type { Design, DesignedClass } from './design.js';
 
 /** Share of the view from which the steady offset calls for a better trim. */
-const LARGE_SHARE = 0.25;
+const LARGE_SHARE = 0.35;
 
 /** Largest steady offset over the classes, m. */
 export function biasOffsetM({

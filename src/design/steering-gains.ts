@@ -15,7 +15,7 @@ import { keeps, lanePlantOf, toleranceCorners, worstMargins } from './tolerance-
 /** Share of the view in which the line must lie in a steady bend; the rest is for entering it. */
 const STEADY_VIEW_SHARE = 0.7;
 /** Largest share of the wheel-speed range that one step of measurement noise may ask for through the gains. */
-const NOISE_SHARE = 0.25;
+const NOISE_SHARE = 0.4;
 /** Uncertainty of a measured offset: share of the pitch, analog and digital sensors. */
 const OFFSET_NOISE_SHARE = { analog: 0.03, digital: 0.5 } as const;
 /** Fastest derivative filter: two samples. */

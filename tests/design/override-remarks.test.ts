@@ -14,18 +14,18 @@ function designWith(overrides: Overrides) {
 describe('rules by hand', () => {
   test('a mirrored pair takes the place of the computed actions, without a remark', () => {
     const design = designWith([
-      { first: 0, last: 0, left: 0.25, right: 1.75 },
-      { first: 5, last: 5, left: 1.75, right: 0.25 },
+      { first: 0, last: 0, left: 0, right: 1.875 },
+      { first: 5, last: 5, left: 1.875, right: 0 },
     ]);
     const table = stateTable(design.vehicle, design.controller);
-    expect(table[0b100000]).toMatchObject({ left: 0.25, right: 1.75 });
-    expect(table[0b000001]).toMatchObject({ left: 1.75, right: 0.25 });
-    expect(table[0b010000]!.left).not.toBe(0.25);
+    expect(table[0b100000]).toMatchObject({ left: 0, right: 1.875 });
+    expect(table[0b000001]).toMatchObject({ left: 1.875, right: 0 });
+    expect(table[0b010000]!.left).not.toBe(0);
     expect(design.remarks).toEqual([]);
   });
 
   test('one side alone is told as asymmetric', () => {
-    const { remarks } = designWith([{ first: 0, last: 0, left: 0.25, right: 1.75 }]);
+    const { remarks } = designWith([{ first: 0, last: 0, left: 0, right: 1.875 }]);
     expect(remarks).toEqual([
       'States 100000 and 000001 are mirror images, their actions are not: the vehicle will favour one side.',
     ]);

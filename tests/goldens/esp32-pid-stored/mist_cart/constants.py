@@ -167,8 +167,8 @@ CROSSING_MM_S_Q6_SAMPLES = const(832000)
 # Way after a corner on which a vanished line is looked for on its side: 46 mm. From
 # line.widthMm.
 CORNER_MM_S_Q6_SAMPLES = const(588800)
-# Way out of a bend before a faster class is taken: 37.5 mm. From sensors.aheadOfAxleMm.
-RELEASE_MM_S_Q6_SAMPLES = const(480000)
+# Way out of a bend before a faster class is taken: 26.3 mm. From sensors.aheadOfAxleMm.
+RELEASE_MM_S_Q6_SAMPLES = const(336000)
 # Longest search for a lost line: 1.21 s; then the vehicle stops. From drive and
 # line.tightestRadiusMm.
 SEARCH_SAMPLES = const(241)

@@ -141,8 +141,8 @@ constexpr int32_t CROSSING_MM_S_Q6_SAMPLES = 2080000L;
 // Way after a corner on which a vanished line is looked for on its side: 46 mm. From
 // line.widthMm.
 constexpr int32_t CORNER_MM_S_Q6_SAMPLES = 1472000L;
-// Way out of a bend before a faster class is taken: 37.5 mm. From sensors.aheadOfAxleMm.
-constexpr int32_t RELEASE_MM_S_Q6_SAMPLES = 1200000L;
+// Way out of a bend before a faster class is taken: 26.3 mm. From sensors.aheadOfAxleMm.
+constexpr int32_t RELEASE_MM_S_Q6_SAMPLES = 840000L;
 // Longest search for a lost line: 1.21 s; then the vehicle stops. From drive and
 // line.tightestRadiusMm.
 constexpr uint16_t SEARCH_SAMPLES = 603;

@@ -127,8 +127,8 @@ constexpr int32_t GAP_MM_S_Q6_SAMPLES = 576000L;
 // Way after a corner on which a vanished line is looked for on its side: 46 mm. From
 // line.widthMm.
 constexpr int32_t CORNER_MM_S_Q6_SAMPLES = 1472000L;
-// Way out of a bend before a faster class is taken: 37.5 mm. From sensors.aheadOfAxleMm.
-constexpr int32_t RELEASE_MM_S_Q6_SAMPLES = 1200000L;
+// Way out of a bend before a faster class is taken: 26.3 mm. From sensors.aheadOfAxleMm.
+constexpr int32_t RELEASE_MM_S_Q6_SAMPLES = 840000L;
 // Longest search for a lost line: 1.21 s; then the vehicle stops. From drive and
 // line.tightestRadiusMm.
 constexpr uint16_t SEARCH_SAMPLES = 603;
@@ -146,20 +146,20 @@ struct SpeedClass {
 
 // From speeds.classes, the fastest first.
 constexpr SpeedClass SPEED_CLASSES[] = {
-    // straight: bends from 3600 mm radius at 1.25 m/s, limited by the finish target
-    {71, 0, 80239L, 3315, 2383, 4644},
-    // sweeping: bends from 960 mm radius at 1.25 m/s, limited by the finish target
-    {267, 0, 80239L, 3482, 2415, 4583},
-    // wide: bends from 480 mm radius at 1.25 m/s, limited by the finish target
-    {533, 0, 80239L, 4118, 2530, 4386},
-    // open: bends from 288 mm radius at 1.11 m/s, limited by the margins of the steering
-    {889, 404, 71240L, 6452, 2868, 3960},
-    // medium: bends from 180 mm radius at 0.914 m/s, limited by the margins of the steering
-    {1422, 383, 58492L, 10280, 3342, 3649},
-    // tight: bends from 120 mm radius at 0.738 m/s, limited by the margins of the steering
-    {2133, 253, 47244L, 16384, 3909, 3439},
-    // reserve: bends from 90 mm radius at 0.738 m/s, limited by the margins of the steering
-    {2844, 0, 47244L, 16384, 3909, 3439},
+    // straight: bends from 3600 mm radius at 1.18 m/s, limited by the finish target
+    {71, 0, 75740L, 5539, 3684, 5455},
+    // sweeping: bends from 960 mm radius at 1.18 m/s, limited by the finish target
+    {267, 0, 75740L, 6161, 3827, 5340},
+    // wide: bends from 480 mm radius at 1.18 m/s, limited by the finish target
+    {533, 0, 75740L, 7136, 4014, 5198},
+    // open: bends from 288 mm radius at 1.18 m/s, limited by the finish target
+    {889, 0, 75740L, 8610, 4252, 5031},
+    // medium: bends from 180 mm radius at 1.1 m/s, limited by the motors
+    {1422, 156, 70550L, 11245, 4583, 4793},
+    // tight: bends from 120 mm radius at 0.908 m/s, limited by grip
+    {2133, 280, 58087L, 16384, 5396, 4619},
+    // reserve: bends from 90 mm radius at 0.786 m/s, limited by grip
+    {2844, 175, 50305L, 16384, 6389, 5008},
 };
 constexpr uint8_t CLASS_COUNT = sizeof SPEED_CLASSES / sizeof SPEED_CLASSES[0];
 
