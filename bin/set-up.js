@@ -8,7 +8,7 @@ import { existsSync, mkdirSync, readFileSync, readdirSync, rmSync, writeFileSync
 import { join } from 'node:path';
 import { fileURLToPath, pathToFileURL } from 'node:url';
 import { withLock } from './lock.js';
-import { howToInstall, missingTools } from './toolchain.js';
+import { howToInstall, missingForTests } from './toolchain.js';
 
 export const root = fileURLToPath(new URL('..', import.meta.url));
 const at = (...parts) => join(root, ...parts);
@@ -109,11 +109,11 @@ function installer() {
 
 /** Installs the compilers that the rehearsal on the emulated chip and the tests need. */
 export async function toolchain() {
-  if (missingTools().length === 0) return;
+  if (missingForTests().length === 0) return;
   const prefix = installer();
   if (prefix) {
     await withLock(at('.cache', 'toolchain.lock'), () => {
-      const missing = missingTools();
+      const missing = missingForTests();
       if (missing.length === 0) return;
       say(`installing ${missing.join(' ')} (apt-get)`);
       const apt = [...prefix, 'env', 'DEBIAN_FRONTEND=noninteractive', 'apt-get', '-qq'];
@@ -124,7 +124,7 @@ export async function toolchain() {
       run(install);
     });
   }
-  const missing = missingTools();
+  const missing = missingForTests();
   if (missing.length === 0) return;
   throw new SetUpError(howToInstall(missing), 5);
 }

@@ -1,4 +1,5 @@
-// The system packages that compile the generated sketches (for the emulated chip) and the control law (for the host).
+// The system packages that compile the generated sketches (for the emulated chip) and the control law (for the host),
+// and what else the tests run: a real terminal, and a general reference library to compare with.
 // One list for set-up, CI and the rehearsal on the chip; plain JavaScript, because set-up runs before the build.
 import { existsSync } from 'node:fs';
 import { delimiter, join } from 'node:path';
@@ -13,12 +14,27 @@ const TOOLS = [
   { name: 'g++', command: 'g++' },
 ];
 
-/** Names of the packages that this machine lacks. */
+/** What only the tests need. */
+const TEST_TOOLS = [
+  { name: 'tmux', command: 'tmux' },
+  { name: 'python3-scipy', file: '/usr/lib/python3/dist-packages/scipy/__init__.py' },
+];
+
+/** Names of the packages for the rehearsal on the chip that this machine lacks. */
 export function missingTools() {
+  return lacking(TOOLS);
+}
+
+/** Names of the packages for the tests that this machine lacks, those for the chip among them. */
+export function missingForTests() {
+  return lacking([...TOOLS, ...TEST_TOOLS]);
+}
+
+function lacking(tools) {
   const folders = (process.env.PATH ?? '').split(delimiter);
   const isThere = ({ command, file }) =>
     command ? folders.some((folder) => existsSync(join(folder, command))) : existsSync(file);
-  return TOOLS.filter((tool) => !isThere(tool)).map(({ name }) => name);
+  return tools.filter((tool) => !isThere(tool)).map(({ name }) => name);
 }
 
 /** One sentence that says what is missing and what to type. */

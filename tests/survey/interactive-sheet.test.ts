@@ -1,0 +1,100 @@
+import { mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { type Result, surveyOnTerminal } from '../../src/survey/interactive.js';
+import { type Line, scripted, type Scripted } from './scripted.js';
+
+let folder: string;
+beforeEach(async () => {
+  folder = await mkdtemp(join(tmpdir(), 'fairlead-survey-'));
+});
+afterEach(async () => {
+  await rm(folder, { recursive: true });
+});
+
+async function survey(
+  lines: readonly Line[],
+  sheetFile?: string,
+): Promise<{ result: Result; talk: Scripted }> {
+  const talk = scripted(lines);
+  const file = sheetFile === undefined ? undefined : join(folder, sheetFile);
+  const result = await surveyOnTerminal(talk.surface, file, folder);
+  expect(talk.left()).toEqual([]);
+  return { result, talk };
+}
+
+const sheetIn = async (name: string): Promise<Record<string, Record<string, unknown>>> =>
+  JSON.parse(await readFile(join(folder, name), 'utf8')) as Record<string, Record<string, unknown>>;
+
+describe('a sheet at hand', () => {
+  it('is named by its file', async () => {
+    await survey([], 'bench-cart.json');
+    expect(await sheetIn('bench-cart.json')).toMatchObject({ name: 'bench-cart' });
+  });
+
+  it('goes straight to the review, which says what changes', async () => {
+    await survey([], 'cart.json');
+    const sheet = await sheetIn('cart.json');
+    await writeFile(join(folder, 'cart.json'), JSON.stringify({ ...sheet, tolerances: { gripPercent: 30 } }));
+    const { talk } = await survey(
+      [
+        ['This sheet has values already', 'review'],
+        ['All answers fit together', 'change'],
+        ['Which answer', '4'],
+        ['Line width', '25'],
+      ],
+      'cart.json',
+    );
+    expect(talk.said()).toContain('Changes in');
+    expect(talk.said()).toContain('\n Line width: 19 mm -> 25 mm\n');
+    expect(await sheetIn('cart.json')).toEqual({
+      ...sheet,
+      line: { ...sheet['line'], widthMm: 25 },
+      tolerances: { gripPercent: 30 },
+    });
+  });
+
+  it('is left as it is when the survey is interrupted', async () => {
+    await survey([], 'cart.json');
+    const before = await readFile(join(folder, 'cart.json'), 'utf8');
+    await survey(
+      [
+        ['This sheet has values already', 'all questions'],
+        ['Line width', '25'],
+        ['Tightest bend', 'Ctrl-C'],
+      ],
+      'cart.json',
+    );
+    expect(await readFile(join(folder, 'cart.json'), 'utf8')).toBe(before);
+    expect(await readdir(folder)).toEqual(['.cart.draft.json', 'cart.json', 'sheet.schema.json']);
+  });
+
+  it('of the same name is not replaced unasked', async () => {
+    await writeFile(join(folder, 'tray-cart.json'), 'mine');
+    await survey([
+      [`${join(folder, 'tray-cart.json')} is there already`, ''],
+      ['Vehicle name', 'other-cart'],
+    ]);
+    expect(await readFile(join(folder, 'tray-cart.json'), 'utf8')).toBe('mine');
+    expect(await sheetIn('other-cart.json')).toMatchObject({ name: 'other-cart' });
+    await survey([[`${join(folder, 'tray-cart.json')} is there already`, 'replace it']]);
+    expect(await sheetIn('tray-cart.json')).toMatchObject({ name: 'tray-cart' });
+  });
+
+  it('that is not JSON is refused before the first question', async () => {
+    await writeFile(join(folder, 'cart.json'), '{ "name": ');
+    await expect(survey([], 'cart.json')).rejects.toMatchObject({ exitCode: 2 });
+    await writeFile(join(folder, 'cart.json'), '[]');
+    await expect(survey([], 'cart.json')).rejects.toMatchObject({
+      problems: [{ message: 'The file holds a list of 0 entries, not a build sheet.' }],
+    });
+  });
+
+  it('in a folder that does not exist is refused before the first question', async () => {
+    await expect(survey([], 'none/cart.json')).rejects.toMatchObject({
+      exitCode: 2,
+      problems: [{ message: 'There is no such folder.', fix: 'Make it first, or name a file elsewhere.' }],
+    });
+  });
+});
