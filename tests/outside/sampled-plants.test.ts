@@ -2,31 +2,8 @@
  * The exact zero-order-hold discretisation of the lane plant against published and independently computed plants.
  */
 import { describe, expect, test } from 'vitest';
-import {
-  type LanePlant,
-  type SampledLanePlant,
-  plantResponse,
-  samplePlant,
-} from '../../src/design/lane-plant.js';
-
-/** First outputs of the sampled plant to a unit step. */
-function stepOutputs(plant: SampledLanePlant, count: number): number[] {
-  let [error, heading, turn] = [0, 0, 0];
-  const outputs: number[] = [];
-  for (let k = 0; k < count; k++) {
-    outputs.push(error + plant.lookaheadM * heading);
-    const now = k >= plant.wholeDelay ? 1 : 0;
-    const late = k > plant.wholeDelay ? 1 : 0;
-    const next: [number, number, number] = [
-      error + plant.phi12 * heading + plant.phi13 * turn,
-      heading + plant.phi23 * turn,
-      plant.phi33 * turn,
-    ];
-    for (const i of [0, 1, 2] as const) next[i] += plant.gamma0[i] * now + plant.gamma1[i] * late;
-    [error, heading, turn] = next;
-  }
-  return outputs;
-}
+import { type LanePlant, plantResponse, samplePlant } from '../../src/design/lane-plant.js';
+import { stepOutputs } from './step-outputs.js';
 
 /** The same for a transfer function in z^-1 without direct term. */
 function stepOf(numerator: readonly number[], denominator: readonly number[], count: number): number[] {
