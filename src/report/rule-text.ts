@@ -6,7 +6,7 @@ import { mToMm } from '../sheet/units.js';
 import { table } from './text-table.js';
 
 /** States up to this number of sensors are printed one by one; beyond, only those that a line causes. */
-const FULL_PRINT_SENSORS = 6;
+export const FULL_PRINT_SENSORS = 6;
 
 /** The bar as characters, leftmost sensor first: # on the line, . off it. */
 function strip(state: number, sensorCount: number): string {
