@@ -1,79 +1,96 @@
 /**
- * Lane loops against a general reference library: scipy and numpy of the system (Debian's python3-scipy), asked live.
- *
- * Thirty loops drawn at random: sampled plant with fractional delay, margins, Ms and closed-loop poles.
+ * The design's numbers against a general reference library, live: random plants, loops and staircases, worked out by scipy and
+ * numpy (packages python3-scipy and python3-numpy of Debian) in one Python process. Its text is in scipy/.
  */
-import { execFileSync } from 'node:child_process';
-import { fileURLToPath } from 'node:url';
-import { beforeAll, describe, expect, test } from 'vitest';
+import { describe, expect, test } from 'vitest';
 import { closedLoopRadius } from '../../src/design/closed-loop.js';
-import { type LanePlant, samplePlant } from '../../src/design/lane-plant.js';
-import { controllerOf, loopMargins } from '../../src/design/steering-loop.js';
-import { Random } from '../../src/rehearsal/random.js';
-import { stepOutputs } from './step-outputs.js';
+import { describingGain } from '../../src/design/describing-function.js';
+import { plantResponse, samplePlant } from '../../src/design/lane-plant.js';
+import { loopMargins } from '../../src/design/steering-loop.js';
+import { CASES } from './scipy/cases.js';
+import { askScipy } from './scipy/ask.js';
 
-interface Answer {
-  step: number[];
-  gainMargin: number | null;
-  phaseMarginDeg: number | null;
-  ms: number;
-  radius: number;
+const answers = askScipy(CASES);
+
+/** Rounding of a double. */
+const EPSILON = 2 ** -52;
+
+function near(got: number, want: number, relative: number, absolute = 0): void {
+  expect(Math.abs(got - want), `${got} for ${want}`).toBeLessThanOrEqual(
+    relative * Math.abs(want) + absolute,
+  );
 }
 
-/** Python of the system, where Debian puts scipy; another python earlier in the path may lack it. */
-const PYTHON = '/usr/bin/python3';
-const LOOPS = 30;
-const random = new Random(2024, 1);
-
-const loops = Array.from({ length: LOOPS }, (_, i) => {
-  const plant: LanePlant = {
-    lookaheadM: random.uniform(0.03, 0.2),
-    speedMps: random.uniform(0.2, 2),
-    lagS: random.uniform(0.02, 0.2),
-    // every fourth without delay: scipy's own discretisation answers those
-    delayS: i % 4 === 0 ? 0 : random.uniform(0, 0.015),
-    samplePeriodS: random.uniform(0.001, 0.01),
-  };
-  const law = {
-    proportionalPerM2: random.uniform(0.2, 2) / plant.lookaheadM ** 2,
-    derivativeTimeS: random.uniform(0.5, 1.5) * plant.lagS,
-    filterCoefficient: random.uniform(0.1, 0.7),
-  };
-  return { plant, controller: controllerOf(law, plant.speedMps, plant.samplePeriodS) };
-});
-
-let answers: Answer[];
-beforeAll(() => {
-  const script = fileURLToPath(new URL('lane_loops.py', import.meta.url));
-  const input = JSON.stringify(loops.map(({ plant, controller }) => ({ ...plant, ...controller })));
-  answers = JSON.parse(execFileSync(PYTHON, [script], { input, encoding: 'utf8' })) as Answer[];
-}, 120_000);
-
-describe.each(loops.map((loop, i) => ({ i, ...loop })))('loop $i', ({ i, plant, controller }) => {
-  test('sampled plant: twelve outputs to a step', () => {
-    const outputs = stepOutputs(samplePlant(plant), 12);
-    answers[i]!.step.forEach((want, k) => expect(Math.abs(outputs[k]! - want)).toBeLessThan(1e-12));
-  });
-
-  test('closed-loop poles', () => {
-    // 18 squarings leave about 1e-5 of a radius near 1; roots of polynomials with poles near 1 lose digits too
-    expect(closedLoopRadius(samplePlant(plant), controller)).toBeCloseTo(answers[i]!.radius, 3);
-  });
-
-  test('margins', () => {
-    const { gainMargin, phaseMarginDeg, ms, radius } = answers[i]!;
-    const found = loopMargins(plant, controller);
-    if (radius >= 1) {
-      expect(found).toEqual({ gainMargin: 0, phaseMarginDeg: 0, ms: Infinity });
-      return;
+describe('lane plants with fractional delay', () => {
+  test.each(CASES.plants.map(({ plant }, i) => ({ plant, i })))('plant $i', ({ plant, i }) => {
+    const got = samplePlant(plant);
+    const want = answers.plants[i]!;
+    const { samplePeriodS: h, lagS, speedMps } = plant;
+    // a closed form loses what it subtracts: h - tau (1 - e^(-h/tau)) is known to eps h, its integral to eps tau h
+    const lost = [4 * EPSILON * speedMps * lagS * h, 4 * EPSILON * h, EPSILON] as const;
+    expect(got.wholeDelay).toBe(want.wholeDelay);
+    for (const phi of [want.phi, want.phiByC2d]) {
+      near(got.phi12, phi[0]![1]!, 1e-10);
+      near(got.phi13, phi[0]![2]!, 1e-10, lost[0]);
+      near(got.phi23, phi[1]![2]!, 1e-10);
+      near(got.phi33, phi[2]![2]!, 1e-10);
     }
-    expect(found.ms).toBeCloseTo(ms, 5);
-    expect(found.gainMargin / (gainMargin ?? Infinity)).toBeCloseTo(1, 6);
-    expect(found.phaseMarginDeg).toBeCloseTo(phaseMarginDeg ?? Infinity, 5);
+    for (const row of [0, 1, 2] as const) {
+      near(got.gamma0[row], want.gamma0[row]!, 1e-10, lost[row]);
+      near(got.gamma1[row], want.gamma1[row]!, 1e-10, lost[row]);
+      // an input that stays the same does not show where the sample is split
+      near(got.gamma0[row] + got.gamma1[row], want.gammaByC2d[row]![0]!, 1e-10, lost[row]);
+    }
+  });
+
+  test('have the same frequency response', () => {
+    CASES.plants.forEach(({ plant, frequenciesRadS }, i) => {
+      const sampled = samplePlant(plant);
+      frequenciesRadS.forEach((frequency, k) => {
+        const [re, im] = plantResponse(sampled, frequency);
+        const [wantRe, wantIm] = answers.plants[i]!.responses[k]!;
+        const error = Math.hypot(re - wantRe, im - wantIm) / Math.hypot(wantRe, wantIm);
+        expect(error, `plant ${i} at ${frequency} rad/s`).toBeLessThan(1e-9);
+      });
+    });
   });
 });
 
-test('the draw is mostly of stable loops', () => {
-  const stable = answers.filter(({ radius }) => radius < 1).length;
-  expect(stable).toBeGreaterThan(20);
+describe('loops of lane plant and steering law', () => {
+  const judged = CASES.loops.map((loop, i) => ({ ...loop, want: answers.loops[i]! }));
+  const stable = judged.filter(({ want }) => want.radius < 1);
+
+  test('are of both kinds, stable and unstable', () => {
+    expect(stable.length).toBeGreaterThan(40);
+    expect(judged.length - stable.length).toBeGreaterThan(20);
+  });
+
+  test.each(judged.map((each, i) => ({ ...each, i })))('loop $i: poles', ({ plant, controller, want }) => {
+    near(closedLoopRadius(samplePlant(plant), controller), want.radius, 1e-4);
+  });
+
+  test.each(stable.map((each, i) => ({ ...each, i })))('stable loop $i: margins', (loop) => {
+    const got = loopMargins(loop.plant, loop.controller);
+    near(got.ms, loop.want.ms, 1e-6);
+    for (const key of ['gainMargin', 'phaseMarginDeg'] as const) {
+      const want = loop.want[key];
+      if (want === null) expect(got[key]).toBe(Infinity);
+      else near(got[key], want, 1e-6);
+    }
+  });
+
+  test('unstable ones have no margins', () => {
+    for (const { plant, controller, want } of judged) {
+      if (want.radius > 1) expect(loopMargins(plant, controller).ms).toBe(Infinity);
+    }
+  });
+});
+
+describe('describing function of a staircase, by integration over a period', () => {
+  test.each(CASES.staircases.map((each, i) => ({ ...each, i })))(
+    'staircase $i',
+    ({ steps, amplitude, i }) => {
+      near(describingGain(steps, amplitude), answers.staircases[i]!, 1e-10, 1e-12);
+    },
+  );
 });

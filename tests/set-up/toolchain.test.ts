@@ -3,14 +3,23 @@ import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterEach, beforeEach, expect, it } from 'vitest';
-import { howToInstall, missingTools } from '../../bin/toolchain.js';
+import { howToInstall, missingForTests, missingTools } from '../../bin/toolchain.js';
 
 let emptyFolder = '';
 beforeEach(() => (emptyFolder = mkdtempSync(join(tmpdir(), 'fairlead-path-'))));
 afterEach(() => rmSync(emptyFolder, { recursive: true }));
 
 it('finds the toolchain that `npm test` has installed', () => {
-  expect(missingTools()).toEqual([]);
+  expect(missingForTests()).toEqual([]);
+});
+
+it('asks of a rehearsal on the chip only what the chip needs', () => {
+  const path = process.env['PATH'];
+  process.env['PATH'] = emptyFolder;
+  const [forChip, forTests] = [missingTools(), missingForTests()];
+  process.env['PATH'] = path;
+  expect(forChip).toEqual(['gcc-avr', 'g++']);
+  expect(forTests).toEqual(['gcc-avr', 'g++', 'tmux']);
 });
 
 it('says exactly what to type', () => {
