@@ -27,6 +27,8 @@ function parameters(sensorCount) {
   const motors = {
     topLeftMps: 1.5,
     topRightMps: 1.5,
+    trimLeft: 1,
+    trimRight: 1,
     lagS: 0.08,
     startDuty: 0.1,
     batteryFactor: 1,

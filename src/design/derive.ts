@@ -18,6 +18,9 @@ import { mToMm } from '../sheet/units.js';
 
 const NOMINAL = { gain: 1, lag: 1 };
 
+const UNPROVEN_AS_GIVEN =
+  'Perturbed rehearsals on the proving lane (straights into the tightest bend, S-bends, gap, crossing) miss the finish target at the speeds of the sheet. Lower them, or set /speeds/classes to auto.';
+
 const UNPROVEN =
   'Perturbed rehearsals on the proving lane (straights into the tightest bend, S-bends, gap, crossing) miss the finish target even at a quarter of full speed. Widen the bar, move it further ahead, or lower the tolerances by measuring.';
 
@@ -106,9 +109,18 @@ function refuseOverflow(vehicle: Vehicle, controller: ControllerConstants): void
     throw new FairleadError('No design meets the sheet.', { exitCode: EXIT.noDesign, problems });
 }
 
+/** Speeds of the sheet are rehearsed as they stand: the scale leaves them alone; undefined when the target is missed. */
+function givenScale(
+  proving: Proving,
+  controllerAt: (scale: SpeedScale) => ControllerConstants,
+): SpeedScale | undefined {
+  const asGiven = { top: Infinity, share: 1 };
+  return proving.meanTimeS(controllerAt(asGiven)) === undefined ? undefined : asGiven;
+}
+
 function remarksOn(vehicle: Vehicle, classes: readonly DesignedClass[], proven: boolean): string[] {
   const weak = classes.filter((each) => !keeps(each.worstMargins)).map((each) => each.name);
-  const remarks = proven ? [] : [UNPROVEN];
+  const remarks = proven ? [] : [vehicle.speeds.classes === 'auto' ? UNPROVEN : UNPROVEN_AS_GIVEN];
   if (weak.length > 0) {
     const whose = vehicle.control.gains ? 'The gains of the sheet' : 'The gains';
     remarks.push(
@@ -128,7 +140,9 @@ export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Des
   const bases = classRanges(vehicle).map((range) => classBase(vehicle, range));
   const settings = (scale: SpeedScale) => bases.map((base) => settingsAt(base, scale));
   const controllerAt = (scale: SpeedScale) => controllerConstants(vehicle, settings(scale));
-  const proven = new Proving(vehicle, provenOn).best(controllerAt);
+  const proving = new Proving(vehicle, provenOn);
+  const given = vehicle.speeds.classes !== 'auto';
+  const proven = given ? givenScale(proving, controllerAt) : proving.best(controllerAt);
   const scale = proven ?? slowestScale(vehicle);
   const chosen = settings(scale);
   const controller = controllerAt(scale);

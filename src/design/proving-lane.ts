@@ -7,7 +7,7 @@
  */
 import type { Course } from '../course/course-types.js';
 import { type Lane, compileCourse } from '../course/lane.js';
-import { mToMm } from '../sheet/units.js';
+import { mToMm, radToDeg } from '../sheet/units.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { brakingMps2, speedUpMps2 } from './drive-choices.js';
 
@@ -23,13 +23,26 @@ function runUpM(vehicle: Vehicle): number {
   return Math.min(2, RUN_UP_LAGS * lagS * topSpeedMps + (topSpeedMps * topSpeedMps) / (4 * acceleration));
 }
 
+/** Look-aheads, and distances driven in a time constant, after which a bend is steady and teaches no more. */
+const STEADY_LOOKAHEADS = 8;
+const STEADY_LAGS = 6;
+
+/** Length of bend that the proof needs, m: until the vehicle is steady in it. */
+function bendM(vehicle: Vehicle): number {
+  const { topSpeedMps, lagS } = vehicle.drive;
+  return STEADY_LOOKAHEADS * vehicle.bar.aheadM + STEADY_LAGS * topSpeedMps * lagS;
+}
+
 /** The proving course of a vehicle, open, in the course file's form. */
 export function provingCourse(vehicle: Vehicle): Course {
   const { tightestRadiusM, longestGapM, crossings, widthM } = vehicle.line;
   const radiusMm = mToMm(tightestRadiusM);
   const runUp = { straightMm: mToMm(runUpM(vehicle)) };
   const settle = { straightMm: mToMm(vehicle.bar.aheadM * 2) };
-  const arc = (factor: number, turnDeg: number) => ({ radiusMm: factor * radiusMm, turnDeg });
+  const arc = (factor: number, turnDeg: number) => {
+    const longestDeg = radToDeg(bendM(vehicle) / (factor * tightestRadiusM));
+    return { radiusMm: factor * radiusMm, turnDeg: Math.max(-longestDeg, Math.min(longestDeg, turnDeg)) };
+  };
   const pieces: Course['pieces'] = [runUp, arc(1, 90), runUp, arc(1, -LONG_TURN_DEG), runUp];
   if (longestGapM > 0) pieces.push({ gapMm: mToMm(longestGapM) }, settle);
   pieces.push(arc(1, 60), arc(1, -60), arc(2, 90), settle);

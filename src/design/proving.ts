@@ -20,6 +20,14 @@ export interface SpeedScale {
   share: number;
 }
 
+/**
+ * Samples that a proof may take. A slow vehicle on a long lane takes more a run, so it gets fewer runs a trial: only its most
+ * demanding vehicles, and fewer shares.
+ */
+const SAMPLE_BUDGET = 2.5e6;
+/** Trials that a full search takes, about. */
+const TRIALS = 30;
+
 /** A scale and the mean time that it gives. */
 interface Timed {
   scale: SpeedScale;
@@ -31,11 +39,15 @@ const DRAWN = 200;
 const DEMANDING = 12;
 const TYPICAL = 8;
 const SHARES = [1, 0.95, 0.9, 0.84, 0.77, 0.7];
+const FEW_SHARES = [1, 0.84, 0.7];
 const BISECTIONS = 5;
 /** Caps below the largest passing one that are tried too. */
 const SLOWER_TOPS = [0.95, 0.9, 0.85];
 /** Slowest cap tried, as a share of full wheel speed. */
 const LOWEST_TOP_SHARE = 0.25;
+/** Mean speed over a proving lane as a share of full wheel speed, about; and the fewest runs of a trial. */
+const USUAL_TOP_SHARE = 0.4;
+const FEWEST_RUNS = 4;
 /** Simulated time allowed for the proving lane, in times of driving it at the lowest cap. */
 const PATIENCE = 4;
 
@@ -71,15 +83,24 @@ export class Proving {
   private readonly typical: PlantParameters[];
   private readonly timeLimitS: number;
 
+  /** Shares that are tried. */
+  private readonly shares: readonly number[];
+
   /** @param laneOf vehicle on whose proving lane is driven; by default its own */
   constructor(
     private readonly vehicle: Vehicle,
     laneOf: Vehicle = vehicle,
   ) {
     this.lane = provingLane(laneOf);
-    ({ demanding: this.demanding, typical: this.typical } = triedPlants(vehicle));
-    const slowest = LOWEST_TOP_SHARE * vehicle.drive.topSpeedMps;
-    this.timeLimitS = (PATIENCE * this.lane.lengthM) / slowest;
+    const { demanding, typical } = triedPlants(vehicle);
+    const { topSpeedMps } = vehicle.drive;
+    const samples = this.lane.lengthM / (USUAL_TOP_SHARE * topSpeedMps) / vehicle.board.samplePeriodS;
+    const runs = Math.max(FEWEST_RUNS, Math.floor(SAMPLE_BUDGET / TRIALS / samples));
+    const demandingRuns = Math.min(demanding.length, Math.ceil(runs / 2));
+    this.demanding = demanding.slice(0, demandingRuns);
+    this.typical = typical.slice(0, Math.max(1, runs - demandingRuns));
+    this.shares = runs < demanding.length ? FEW_SHARES : SHARES;
+    this.timeLimitS = (PATIENCE * this.lane.lengthM) / (LOWEST_TOP_SHARE * topSpeedMps);
   }
 
   /** Mean time of the typical vehicles, s; undefined as soon as one of all does not finish. */
@@ -108,7 +129,7 @@ export class Proving {
   /** The scale with the shortest time that keeps the target; undefined when even the slowest does not. */
   best(controllerAt: (scale: SpeedScale) => ControllerConstants): SpeedScale | undefined {
     let best: Timed | undefined;
-    for (const share of SHARES) {
+    for (const share of this.shares) {
       const timeAt = (top: number) => this.meanTimeS(controllerAt({ top, share }));
       const found = this.quickestTop(share, timeAt);
       if (found && (best === undefined || found.timeS < best.timeS)) best = found;

@@ -32,6 +32,9 @@ export interface PlantParameters {
   /** Wheel surface speed at full duty and nominal battery voltage, m/s. */
   topLeftMps: number;
   topRightMps: number;
+  /** Each wheel answers to its duty divided by this: the trim that it needs, 1 for none. */
+  trimLeft: number;
+  trimRight: number;
   /** Time constant of both motors, s. */
   lagS: number;
   /** Duty at which the wheels begin to turn at nominal battery voltage, 0..1. */
@@ -64,15 +67,17 @@ export interface PlantParameters {
 /**
  * The vehicle just as the sheet describes it.
  *
- * Where the sheet trims a wheel's duty, the vehicle is one that needs it: that motor is faster or slower by as much.
+ * Where the sheet trims a wheel's duty, the vehicle is one that needs it: that wheel answers to so much less or more of it.
  */
 export function nominalPlant(vehicle: Vehicle): PlantParameters {
   const { bar, drive } = vehicle;
   return {
     seed: 0,
     trackM: drive.trackM,
-    topLeftMps: drive.topSpeedMps / drive.trimLeft,
-    topRightMps: drive.topSpeedMps / drive.trimRight,
+    topLeftMps: drive.topSpeedMps,
+    topRightMps: drive.topSpeedMps,
+    trimLeft: drive.trimLeft,
+    trimRight: drive.trimRight,
     lagS: drive.lagS,
     startDuty: drive.startDuty,
     batteryFactor: 1,

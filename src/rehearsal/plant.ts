@@ -97,9 +97,9 @@ export class Plant {
   step(dutyLeft: number, dutyRight: number, dtS: number): void {
     if (!(dtS > 0 && dtS <= LONGEST_STEP_S + 1e-12))
       throw new RangeError(`A plant step lasts up to 5 ms, not ${dtS} s.`);
-    const { topLeftMps, topRightMps, lagS } = this.parameters;
-    const steadyLeft = this.steadySpeed(dutyLeft, topLeftMps);
-    const steadyRight = this.steadySpeed(dutyRight, topRightMps);
+    const { topLeftMps, topRightMps, trimLeft, trimRight, lagS } = this.parameters;
+    const steadyLeft = this.steadySpeed(dutyLeft / trimLeft, topLeftMps);
+    const steadyRight = this.steadySpeed(dutyRight / trimRight, topRightMps);
     const substeps = Math.ceil(dtS / SUBSTEP_S - 1e-9);
     const h = dtS / substeps;
     const kept = Math.exp(-h / lagS);

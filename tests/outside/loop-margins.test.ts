@@ -4,37 +4,9 @@
  * Sources beside each row. "computed": 40-digit arithmetic done apart from this project (catalogue of checks).
  */
 import { describe, expect, test } from 'vitest';
-import { type Response, marginsOf } from '../../src/design/margins.js';
+import { marginsOf } from '../../src/design/margins.js';
 import { controllerOf, loopMargins } from '../../src/design/steering-loop.js';
-
-type Complex = [number, number];
-
-const times = ([a, b]: Complex, [c, d]: Complex): Complex => [a * c - b * d, a * d + b * c];
-const over = ([a, b]: Complex, [c, d]: Complex): Complex => {
-  const size = c * c + d * d;
-  return [(a * c + b * d) / size, (b * c - a * d) / size];
-};
-
-/** Value of a polynomial, highest power first, at s = jw. */
-function at(coefficients: readonly number[], w: number): Complex {
-  return coefficients.reduce<Complex>(
-    (sum, c) => {
-      const [re, im] = times(sum, [0, w]);
-      return [re + c, im];
-    },
-    [0, 0],
-  );
-}
-
-const rational =
-  (numerator: readonly number[], denominator: readonly number[]): Response =>
-  (w) =>
-    over(at(numerator, w), at(denominator, w));
-
-const delayed =
-  (loop: Response, delayS: number): Response =>
-  (w) =>
-    times(loop(w), [Math.cos(w * delayS), -Math.sin(w * delayS)]);
+import { delayed, rational } from './responses.js';
 
 describe('continuous loops', () => {
   test.each([
@@ -131,6 +103,7 @@ describe('second-order loop wn^2/(s(s + 2 zeta wn)), standard closed forms (comp
     [0.4, 43.117598, 1.655047],
     [0.5, 51.827292, 1.46789],
     [0.6, 59.187267, 1.352758],
+    [Math.SQRT1_2, 65.530199, 1.27202],
     [0.8, 69.859999, 1.22303],
   ])('zeta %d', (zeta, pm, ms) => {
     const found = marginsOf(rational([1], [1, 2 * zeta, 0]), 1e-3, 1e3);

@@ -1,3 +1,5 @@
+import { compileCourse } from '../../src/course/lane.js';
+import { Plant } from '../../src/rehearsal/plant.js';
 import { describe, expect, it } from 'vitest';
 import { nominalPlant, perturbedPlant, type PlantParameters } from '../../src/rehearsal/plant-parameters.js';
 import { trayCart } from './tray-cart.js';
@@ -28,7 +30,11 @@ describe('nominalPlant', () => {
 
   it('is a vehicle that needs the trim which the sheet gives', () => {
     const trimmed = nominalPlant({ ...cart, drive: { ...cart.drive, trimLeft: 0.95 } });
-    expect(trimmed.topLeftMps * 0.95).toBeCloseTo(trimmed.topRightMps, 12);
+    const lane = compileCourse({ courseVersion: 1, pieces: [{ straightMm: 2000 }] });
+    const plant = new Plant(trimmed, lane);
+    for (let i = 0; i < 100; i += 1) plant.step(0.95 * 0.4, 0.4, 2e-3);
+    expect(plant.leftMps).toBeGreaterThan(0.3);
+    expect(plant.leftMps).toBeCloseTo(plant.rightMps, 12);
   });
 });
 

@@ -9,6 +9,8 @@ export function plainPlant(changes: Partial<PlantParameters> = {}): PlantParamet
     trackM: 0.12,
     topLeftMps: 1.5,
     topRightMps: 1.5,
+    trimLeft: 1,
+    trimRight: 1,
     lagS: 0.08,
     startDuty: 0,
     batteryFactor: 1,
