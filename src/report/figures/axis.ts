@@ -42,15 +42,19 @@ export function linearAxis({ from, to, fromPx, toPx }: AxisEnds, step = niceStep
   return { from, to, ticks, at: (value) => fromPx + ((value - from) / (to - from)) * (toPx - fromPx) };
 }
 
-/** Width of a decade from which 2 and 5 are numbered too, px. */
-const WIDE_DECADE_PX = 130;
+/** Digits that are numbered, by the width of a decade from which there is room for them, px. */
+const NUMBERED: readonly { decadePx: number; digits: readonly number[] }[] = [
+  { decadePx: 450, digits: [1, 2, 3, 4, 5, 6, 7, 8, 9] },
+  { decadePx: 130, digits: [1, 2, 5] },
+  { decadePx: 0, digits: [1] },
+];
 
 /** @throws RangeError unless both ends are above 0 */
 export function logAxis({ from, to, fromPx, toPx }: AxisEnds): Axis {
   if (!(from > 0 && to > from)) throw new RangeError('A logarithmic axis runs from above 0 upward.');
   const decades = Math.log10(to / from);
-  const isWide = Math.abs(toPx - fromPx) / decades >= WIDE_DECADE_PX;
-  const numbered = isWide ? [1, 2, 5] : [1];
+  const room = Math.abs(toPx - fromPx) / decades;
+  const numbered = NUMBERED.find(({ decadePx }) => room >= decadePx)?.digits ?? [];
   const ticks: Tick[] = [];
   for (let power = Math.floor(Math.log10(from)); 10 ** power <= to; power++) {
     for (let digit = 1; digit <= 9; digit++) {

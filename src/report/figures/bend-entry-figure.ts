@@ -10,7 +10,7 @@ import type { Corner } from '../../design/tolerance-box.js';
 import { mToMm } from '../../sheet/units.js';
 import { niceStep } from '../axis-steps.js';
 import { MARGIN, WIDTH, WORDS, svgDocument } from '../svg-document.js';
-import { element } from '../svg-text.js';
+import { coordinate, element } from '../svg-text.js';
 import { linearAxis } from './axis.js';
 import { apartPoints } from './apart-points.js';
 import { cornerWords } from './drawn-loops.js';
@@ -160,7 +160,7 @@ function entrySvg(area: PlotArea, entries: readonly Entry[], limitMm: number, ah
 function lossMark([x, y]: Point): string {
   return element('path', {
     d: 'M-6 -6L6 6M-6 6L6 -6',
-    transform: `translate(${x.toFixed(1)} ${y.toFixed(1)})`,
+    transform: `translate(${coordinate(x)} ${coordinate(y)})`,
     ...strokeOf(SOLID),
   });
 }

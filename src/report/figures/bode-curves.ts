@@ -39,6 +39,7 @@ export interface BodeRange {
 const BELOW_CROSSOVER = 0.1;
 const ABOVE_CROSSING = 2.5;
 const MOST_DB = 60;
+/** The end of the magnitude axis, unless a gain margin reaches below it. */
 const LEAST_DB = -60;
 const LEAST_PHASE_DEG = -360;
 
@@ -65,9 +66,11 @@ export function bodeRange(loops: readonly DrawnLoop[]): BodeRange {
     from: Math.max(least, step * Math.floor(Math.min(...values) / step)),
     to: Math.min(most, step * Math.ceil(Math.max(...values) / step)),
   });
+  const gainMarks = loops.map(({ marks }) => -decibels(marks.gain?.margin ?? 1));
+  const leastDb = Math.min(LEAST_DB, 20 * Math.floor(Math.min(...gainMarks) / 20));
   return {
     frequencyRadS,
-    decibels: rounded([0, ...shown(magnitudePoints)], 20, LEAST_DB, MOST_DB),
+    decibels: rounded([0, ...shown(magnitudePoints)], 20, leastDb, MOST_DB),
     phaseDeg: rounded([-180, ...shown(phasePoints)], 45, LEAST_PHASE_DEG, 0),
   };
 }

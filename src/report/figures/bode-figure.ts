@@ -69,12 +69,15 @@ function columnSvg({ designed, loops }: Column, range: BodeRange, left: number, 
   const keyTop = phase.y + phase.height + BELOW_PLOT + 28;
   return [
     textAt(x, TOP - 14, classHeading(designed), { 'font-weight': 'bold', fill: WORDS }),
-    plotFrame(magnitude, { y: 'magnitude, dB' }),
-    plotFrame(phase, { x: 'frequency, rad/s', y: 'phase, degrees' }),
-    magnitudeSvg(magnitude, loops),
-    phaseSvg(phase, loops),
+    plot('magnitude', [plotFrame(magnitude, { y: 'magnitude, dB' }), magnitudeSvg(magnitude, loops)]),
+    plot('phase', [plotFrame(phase, { x: 'frequency, rad/s', y: 'phase, degrees' }), phaseSvg(phase, loops)]),
     ...loops.map(({ style, words }, i) => keyRow(left + 8, keyTop + i * KEY_ROW_PX, style, words)),
   ].join('\n');
+}
+
+/** A plot as a group that can be told from the others. */
+function plot(kind: string, parts: readonly string[]): string {
+  return element('g', { class: kind }, `\n${parts.join('\n')}\n`);
 }
 
 /** A level line across a plot: 0 dB, or -180 degrees. */
@@ -127,7 +130,7 @@ function plotSvg(
     });
     return placer.place(label, anchors);
   });
-  return element('g', {}, `\n${[zero.svg, ...curves, ...drawn, ...labels].join('\n')}\n`);
+  return [zero.svg, ...curves, ...drawn, ...labels].join('\n');
 }
 
 function magnitudeSvg(area: PlotArea, loops: readonly KeyedLoop[]): string {

@@ -105,12 +105,13 @@ export class LabelPlacer {
     return points * COVERED_POINT + labels * COVERED_LABEL;
   }
 
-  /** How many points of other lines a leader passes. */
+  /** How much of other lines and labels a leader passes. */
   private leaderCost(anchor: Point, box: Box): number {
     const along = filled(leaderLine(anchor, box), STEP_PX);
     const far = along.filter(([x, y]) => Math.hypot(x - anchor[0], y - anchor[1]) > OWN_PX);
-    return far.filter(([x, y]) => this.points.some(([px, py]) => Math.hypot(px - x, py - y) < STEP_PX))
-      .length;
+    const isNear = ([x, y]: Point) => this.points.some(([px, py]) => Math.hypot(px - x, py - y) < STEP_PX);
+    const crossed = along.filter((point) => this.taken.some((other) => contains(other, point)));
+    return far.filter(isNear).length * COVERED_POINT + crossed.length * COVERED_LABEL;
   }
 }
 

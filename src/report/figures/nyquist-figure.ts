@@ -7,7 +7,7 @@
 import type { Design, DesignedClass } from '../../design/design.js';
 import { LEAST_MARGINS } from '../../design/tolerance-box.js';
 import { INK, MARGIN, SHADE, WIDTH, WORDS, svgDocument } from '../svg-document.js';
-import { element, textAt } from '../svg-text.js';
+import { coordinate, element, textAt } from '../svg-text.js';
 import { linearAxis } from './axis.js';
 import { type DrawnLoop, classHeading, classLoops, cornerWords, drawnClasses } from './drawn-loops.js';
 import { LabelPlacer } from './label-place.js';
@@ -94,7 +94,7 @@ function columnSvg(designed: DesignedClass, loops: readonly MsLoop[], left: numb
   const keyTop = TOP + SIDE + BELOW_PLOT + 28;
   return [
     textAt(x, TOP - 14, classHeading(designed), { 'font-weight': 'bold', fill: WORDS }),
-    planeSvg(area, loops),
+    element('g', { class: 'plane' }, `\n${planeSvg(area, loops)}\n`),
     ...loops.map(({ style, words }, i) => keyRow(left + 8, keyTop + i * KEY_ROW_PX, style, words)),
   ].join('\n');
 }
@@ -161,7 +161,10 @@ function planeSvg(area: PlotArea, loops: readonly MsLoop[]): string {
       [30, 36, 150, 144, 80, 100].map((i) => place(circle(0, 1)[i]!)),
     ),
   ];
-  const cross = element('path', { d: `M${cx - 6} ${cy}h12M${cx} ${cy - 6}v12`, ...strokeOf(SOLID, INK) });
+  const cross = element('path', {
+    d: `M${coordinate(cx - 6)} ${coordinate(cy)}h12M${coordinate(cx)} ${coordinate(cy - 6)}v12`,
+    ...strokeOf(SOLID, INK),
+  });
   return [
     disc,
     plotFrame(area, { x: 'real part of L', y: 'imaginary part of L' }),

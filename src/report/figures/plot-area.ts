@@ -33,6 +33,7 @@ export function plotFrame({ x, y, width, height, xAxis, yAxis }: PlotArea, words
     element('rect', { x, y, width, height, fill: 'none', stroke: WORDS, 'stroke-width': 1 }),
     ...yAxis.ticks.map(({ value, label }) =>
       textAt(x - 7, yAxis.at(value) + 4.5, label.replace('-', '\u2212'), {
+        class: 'y-number',
         'text-anchor': 'end',
         fill: WORDS,
       }),
@@ -48,6 +49,7 @@ export function plotFrame({ x, y, width, height, xAxis, yAxis }: PlotArea, words
     parts.push(
       ...numbers.map(({ value, label }) =>
         textAt(xAxis.at(value), bottom + 18, label.replace('-', '\u2212'), {
+          class: 'x-number',
           'text-anchor': 'middle',
           fill: WORDS,
         }),

@@ -34,6 +34,8 @@ const PLOT_HEIGHT = 360;
 /** Radii shown beyond the tightest and the widest class, as factors. */
 const TIGHTER = 0.8;
 const WIDER = 1.6;
+/** The widest radius shown is at least this multiple of the tightest. */
+const LEAST_RANGE = 8;
 const RADII = 48;
 /** Speed shown above full wheel speed, as a factor. */
 const HEADROOM = 1.12;
@@ -60,7 +62,8 @@ const NAMES = ['motor', 'grip', 'view', 'control'] as const;
 /** Radii at even ratios, with those of the classes among them, rising, m. */
 function radiiOf(classes: readonly DesignedClass[]): number[] {
   const own = classes.map(({ minRadiusM }) => minRadiusM);
-  const [from, to] = [TIGHTER * Math.min(...own), WIDER * Math.max(...own)];
+  const from = TIGHTER * Math.min(...own);
+  const to = Math.max(WIDER * Math.max(...own), LEAST_RANGE * from);
   const even = Array.from({ length: RADII }, (_, i) => from * (to / from) ** (i / (RADII - 1)));
   return [...even, ...own].sort((a, b) => a - b);
 }
