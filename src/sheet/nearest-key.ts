@@ -1,7 +1,7 @@
 /** Unknown keys, and what was probably meant. */
 import { distance } from 'fastest-levenshtein';
 import type { Problem } from './problem.js';
-import { resolved, type SchemaNode } from './schema.js';
+import { resolved, schemaAt, type SchemaNode } from './schema.js';
 import { joinOr, pointerTo, quote } from './words.js';
 
 /** No name of ours is longer; a longer text is not a misspelt one, and comparing it would cost time. */
@@ -43,6 +43,8 @@ export function unknownKeyProblem(
 function fixFor(root: SchemaNode, pointer: string, key: string, free: readonly string[]): string {
   const near = nearest(key, free);
   if (near !== undefined) return `Did you mean ${quote(near)}?`;
+  const given = nearest(key, Object.keys(schemaAt(root, pointer)?.properties ?? {}));
+  if (given !== undefined) return `It looks like ${quote(given)}, which is given already: remove it.`;
   const home = homesOf(root, root, key).find((found) => found !== pointer);
   if (home === undefined) return 'Remove it.';
   return home === '' ? 'Move it to the top of the file.' : `Move it into ${home}.`;

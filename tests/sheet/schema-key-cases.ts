@@ -29,6 +29,19 @@ export const SCHEMA_KEY_CASES: SchemaProblemCase[] = [
     ],
   },
   {
+    when: 'a misspelt key beside the right one',
+    changes: { '/sensors/pichMm': 12 },
+    want: [
+      {
+        pointer: '/sensors/pichMm',
+        message: 'The key "pichMm" is unknown in /sensors.',
+        got: '"pichMm"',
+        allowed: 'positionsMm or lineLevel',
+        fix: 'It looks like "pitchMm", which is given already: remove it.',
+      },
+    ],
+  },
+  {
     when: 'a key in the wrong place',
     changes: { '/wheelDiameterMm': 42 },
     want: [
