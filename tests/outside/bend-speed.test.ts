@@ -4,16 +4,9 @@ import { lapBound, turnOnSpotS } from '../../src/course/bound.js';
 import { compileCourse } from '../../src/course/lane.js';
 import { Plant } from '../../src/rehearsal/plant.js';
 import { STANDARD_GRAVITY_MPS2 } from '../../src/vehicle/gravity.js';
-import { closed, open } from '../course/courses.js';
+import { open } from '../course/courses.js';
 import { plainPlant } from '../rehearsal/vehicles.js';
-
-const FREE = { topSpeedMps: 1e3, lagS: 1e-9, trackM: 1e-9 };
-
-/** Speed at which the bound goes round a circle, m/s. */
-function circleSpeed(grip: number, radiusM: number): number {
-  const lane = compileCourse(closed({ radiusMm: 1000 * radiusM, turnDeg: 360 }));
-  return (2 * Math.PI * radiusM) / lapBound({ ...FREE, lane, grip }).lapS;
-}
+import { FREE, circleSpeedMps } from './circle-speed.js';
 
 describe('v = sqrt(mu g r), g = 9.80665 m/s^2 (computed to six decimals with 50-digit arithmetic)', () => {
   const radii = [0.05, 0.1, 0.15, 0.2, 0.3, 0.5];
@@ -26,7 +19,7 @@ describe('v = sqrt(mu g r), g = 9.80665 m/s^2 (computed to six decimals with 50-
 
   it.each(table)('grip %f', (grip, speeds) => {
     radii.forEach((radiusM, i) => {
-      expect(Math.abs(circleSpeed(grip, radiusM) - speeds[i]!)).toBeLessThan(1e-6);
+      expect(Math.abs(circleSpeedMps(grip, radiusM) - speeds[i]!)).toBeLessThan(1e-6);
     });
   });
 
@@ -47,15 +40,14 @@ describe('OpenStax College Physics, flat curves', () => {
   // 500 m at 25 m/s needs a friction coefficient of 0.128, with g 9.8 m/s^2 (inputs seen, result from memory and recomputed).
   it('Example 6.4', () => {
     const grip = (0.128 * 9.8) / STANDARD_GRAVITY_MPS2;
-    // A hundredth of the radius, since speed goes with its root: that lane would be too long.
-    const speed = 10 * circleSpeed(grip, 500 / 100);
+    const speed = circleSpeedMps(grip, 500);
     expect(Math.abs(speed - 25)).toBeLessThan((25 * 0.0005) / (2 * 0.128));
   });
 
   // A car on a flat curve: mu 0.5, r 50 m, g 9.8 m/s^2 give 15.65 m/s.
   it('mu 0.5, radius 50 m', () => {
     const grip = (0.5 * 9.8) / STANDARD_GRAVITY_MPS2;
-    expect(circleSpeed(grip, 50)).toBeCloseTo(15.65, 2);
+    expect(circleSpeedMps(grip, 50)).toBeCloseTo(15.65, 2);
   });
 });
 

@@ -31,6 +31,17 @@ describe('Ziegler and Nichols 1942', () => {
     expect(pid.derivativeTimeS).toBeCloseTo(0.35124, 5);
   });
 
+  // Caltech wiki to Astrom and Murray, Feedback Systems, erratum to eq. 11.10: PI kp 0.9 T/(K tau), ki 0.27 T/(K tau^2) from the
+  // step response; kp 0.45 kc, ki 0.54 kc/Tc from the ultimate cycle
+  test('PI gains as the erratum of a textbook has them', () => {
+    const open = zieglerNicholsOpen({ gain: 2, lagS: 3, delayS: 0.5 }).pi;
+    expect(open.gain).toBeCloseTo((0.9 * 3) / (2 * 0.5), 12);
+    expect(open.gain / open.integralTimeS!).toBeCloseTo((0.27 * 3) / (2 * 0.5 ** 2), 12);
+    const closed = zieglerNicholsClosed(8, 3).pi;
+    expect(closed.gain).toBeCloseTo(0.45 * 8, 12);
+    expect(closed.gain / closed.integralTimeS!).toBeCloseTo((0.54 * 8) / 3, 12);
+  });
+
   // computed apart from this project
   test('open loop, K 2, T 0.5, L 0.05', () => {
     const { pid } = zieglerNicholsOpen({ gain: 2, lagS: 0.5, delayS: 0.05 });
