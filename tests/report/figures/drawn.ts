@@ -18,8 +18,13 @@ function withSensors(count: number, pitchM: number): Vehicle {
 /** A big slow cart: four times the lengths, a fifth of the time. */
 function bigCart(): Vehicle {
   const { bar, drive, ...rest } = demoVehicleOnBend(0.8);
+  const classes = [
+    { name: 'wide', minRadiusM: 4, speedMps: 0.5 },
+    { name: 'tight', minRadiusM: 0.8, speedMps: 0.4 },
+  ];
   return {
     ...rest,
+    speeds: { ...rest.speeds, classes },
     line: { ...rest.line, widthM: 0.04 },
     bar: { ...bar, positionsM: bar.positionsM.map((at) => 1.5 * at), aheadM: 0.22, spotRadiusM: 0.006 },
     drive: { ...drive, trackM: 0.42, topSpeedMps: 0.59, lagS: 0.22 },
