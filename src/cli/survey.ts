@@ -92,9 +92,9 @@ async function interactive(sheetFile: string | undefined, asJson: boolean, io: I
   const message =
     draftFile === undefined
       ? 'Stopped. There was no answer to keep.'
-      : `Stopped. Your answers are kept in ${draftFile}. To go on, type: ${again}`;
+      : `Stopped. Your answers are kept in ${draftFile}.\nTo go on, type: ${again}`;
   if (interrupted) process.exitCode = INTERRUPTED;
-  if (asJson) io.json({ ok: false, problems: [{ pointer: '', message }] });
+  if (asJson) io.json({ ok: false, problems: [{ pointer: '', message: message.replace('\n', ' ') }] });
   else io.stdout(`\n${message}\n`);
 }
 

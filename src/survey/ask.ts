@@ -15,6 +15,11 @@ export interface Surface {
   style: PromptConfig['style'];
 }
 
+/** Some terminals do not say how wide they are. */
+const USUAL_COLUMNS = 80;
+
+const columnsOf = ({ columns }: NodeJS.WriteStream): number => (columns > 0 ? columns : USUAL_COLUMNS);
+
 /** The surface on a terminal's output stream; `say` writes to the same. */
 export function terminalSurface(
   output: NodeJS.WriteStream,
@@ -25,10 +30,10 @@ export function terminalSurface(
     say,
     style,
     get columns() {
-      return output.columns;
+      return columnsOf(output);
     },
     async ask(question, canGoBack) {
-      const config = { question, canGoBack, columns: output.columns, style };
+      const config = { question, canGoBack, columns: columnsOf(output), style };
       const prompt = question.choices ? choicePrompt : textPrompt;
       try {
         return await prompt(config, { output });

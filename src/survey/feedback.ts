@@ -5,7 +5,7 @@
  * v = sqrt(mu g r) (friction on a circle, e.g. any mechanics text).
  */
 import type { ResolvedSheet } from '../sheet/defaults.js';
-import { tightestRadius } from '../sheet/rules/bend.js';
+import { tightestCutRadius, tightestRadius } from '../sheet/rules/bend.js';
 import { ruleContext } from '../sheet/rules/rule.js';
 import { barView } from '../sheet/rules/view.js';
 import { topSpeedMps } from '../sheet/top-speed.js';
@@ -23,8 +23,10 @@ export interface BarNumbers {
   most: number;
   /** Widest stretch between two sensors in which neither sees the line's middle; 0 if there is none. */
   blindGapMm: number;
-  /** Radius of the tightest bend in which the line stays under the bar. */
+  /** Radius of the tightest bend in which the line stays under the bar while the axle follows it. */
   tightestBendMm: number;
+  /** Radius of the tightest bend that can be followed at all, cutting it. */
+  tightestCutMm: number;
 }
 
 /** Undefined where the positions contradict each other or the spots are too wide for the line. */
@@ -42,6 +44,7 @@ export function barNumbers(sheet: ResolvedSheet): BarNumbers | undefined {
     most: Math.max(...seen),
     blindGapMm: Math.max(0, Math.max(...gaps) - 2 * reachMm),
     tightestBendMm: tightestRadius(sheet.sensors.aheadOfAxleMm, halfWidthMm),
+    tightestCutMm: tightestCutRadius(sheet.sensors.aheadOfAxleMm, halfWidthMm),
   };
 }
 
@@ -69,13 +72,24 @@ const mps = (value: number): string => `${value.toFixed(2)} m/s`;
 function barLines(sheet: ResolvedSheet): string[] {
   const numbers = barNumbers(sheet);
   if (numbers === undefined) return [];
-  const { fewest, most, blindGapMm, halfWidthMm, tightestBendMm } = numbers;
+  const { fewest, most, blindGapMm, halfWidthMm } = numbers;
   const atOnce = fewest === most ? String(most) : `${fewest} to ${most}`;
   const gap = blindGapMm > 0 ? `a blind gap of ${blindGapMm.toFixed(1)} mm between sensors` : 'no blind gap';
   return [
     `The bar sees the line up to ${mm(halfWidthMm)} to each side: ${atOnce} of ${sheet.sensors.count} sensors at once, ${gap}.`,
-    `Tightest bend it can see: ${Math.ceil(tightestBendMm)} mm. Yours: ${sheet.line.tightestRadiusMm} mm.`,
+    bendLine(numbers, sheet.line.tightestRadiusMm),
   ];
+}
+
+function bendLine({ tightestBendMm, tightestCutMm }: BarNumbers, radiusMm: number): string {
+  const yours = `Yours, ${radiusMm} mm,`;
+  const verdict =
+    radiusMm >= tightestBendMm
+      ? `${yours} is in view.`
+      : radiusMm >= tightestCutMm
+        ? `${yours} is followed by cutting it.`
+        : `${yours} is too tight.`;
+  return `Tightest bend it can see: ${Math.ceil(tightestBendMm)} mm. ${verdict}`;
 }
 
 function contrastLines(sheet: ResolvedSheet): string[] {

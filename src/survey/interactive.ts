@@ -11,10 +11,14 @@ import { changesBetween, fileNameFor, nameFrom, textOf, writeSheet } from './she
 import { checkFolderOf, sheetAtHand } from './target.js';
 import { wrap } from './wrap.js';
 
-export type Result =
-  | { kind: 'written'; file: string; sheet: JsonObject }
-  /** Left before the end, by choice or interrupted; without `draftFile` nothing was answered yet. */
-  | { kind: 'left'; interrupted: boolean; draftFile?: string };
+/** Left before the end, by choice or interrupted; without `draftFile` nothing was answered yet. */
+export interface Left {
+  kind: 'left';
+  interrupted: boolean;
+  draftFile?: string;
+}
+
+export type Result = { kind: 'written'; file: string; sheet: JsonObject } | Left;
 
 /**
  * Asks everything and writes the sheet to `sheetFile`, or else to a file in `folder` that has the vehicle's name.
@@ -45,7 +49,7 @@ export async function surveyOnTerminal(
     state = next;
     await saveDraft(draftFile, next);
   };
-  const left = (interrupted: boolean): Result => {
+  const left = (interrupted: boolean): Left => {
     const answered = Object.keys(state.answers).length > 0;
     return { kind: 'left', interrupted, ...(answered && { draftFile }) };
   };
@@ -59,7 +63,12 @@ export async function surveyOnTerminal(
     const reply = await mayWrite(surface, file, text);
     if (reply === 'closed') return left(true);
     if (reply === 'write') {
-      await writeSheet(file, sheet);
+      try {
+        await writeSheet(file, sheet);
+      } catch (error) {
+        if (left(false).draftFile) surface.say(`Your answers are kept in ${draftFile}.\n`);
+        throw error;
+      }
       await removeDraft(draftFile);
       return { kind: 'written', file, sheet };
     }

@@ -11,7 +11,7 @@ import { wrap } from './wrap.js';
 export function sayWelcome(surface: Surface, file: string | undefined): void {
   const lines = [
     surface.style('bold', file === undefined ? 'A build sheet for your vehicle' : `Build sheet ${file}`),
-    'Enter takes the value that is offered. Lengths may carry a unit: 6.5 cm, 2.5 in.',
+    'Enter takes the value that is offered. A length may have a unit: 6.5 cm.',
     '? explains a question, < goes back to the one before.',
     'Ctrl-C stops; your answers are kept, and the next survey goes on from there.',
   ];

@@ -30,7 +30,14 @@ export async function textOf(file: string): Promise<string | undefined> {
 
 /** Writes a file unless it has that text already: the whole text or, where something fails, nothing. */
 async function writeChanged(file: string, text: string): Promise<void> {
-  if ((await textOf(file)) !== text) await writeFileAtomic(file, text);
+  if ((await textOf(file)) === text) return;
+  try {
+    await writeFileAtomic(file, text);
+  } catch (error) {
+    // The system names a passing file, or none.
+    if (error instanceof Error) Object.assign(error, { path: file });
+    throw error;
+  }
 }
 
 /** Writes the sheet, and a copy of the schema beside it for editors. */

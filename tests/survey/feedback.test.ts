@@ -75,8 +75,24 @@ describe('feedbackAfter', () => {
   it('tells what the bar sees', () => {
     expect(feedbackAfter('/sensors/spotRadiusMm', digital)).toEqual([
       'The bar sees the line up to 34 mm to each side: 1 to 2 of 6 sensors at once, no blind gap.',
-      'Tightest bend it can see: 99 mm. Yours: 120 mm.',
+      'Tightest bend it can see: 99 mm. Yours, 120 mm, is in view.',
     ]);
+  });
+
+  it.each([
+    // From 98.8 mm on in view; from 78.4 mm on 0.7 * 34.5 mm + sqrt(R^2 - 75^2) is 0.6 R or more.
+    [99, 'Yours, 99 mm, is in view.'],
+    [98, 'Yours, 98 mm, is followed by cutting it.'],
+    [79, 'Yours, 79 mm, is followed by cutting it.'],
+    [78, 'Yours, 78 mm, is too tight.'],
+  ])('judges a bend of %d mm', (radiusMm, verdict) => {
+    const bent = sheetWith((sheet) => {
+      sheet.sensors.kind = 'digital';
+      sheet.line.tightestRadiusMm = radiusMm;
+    });
+    expect(feedbackAfter('/sensors/spotRadiusMm', bent)[1]).toBe(
+      `Tightest bend it can see: 99 mm. ${verdict}`,
+    );
   });
 
   it('tells the speeds: pi * 42 mm * 682 rpm is 1.50 m/s', () => {

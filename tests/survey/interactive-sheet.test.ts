@@ -1,4 +1,4 @@
-import { mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises';
+import { mkdir, mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
@@ -80,6 +80,26 @@ describe('a sheet at hand', () => {
     expect(await sheetIn('other-cart.json')).toMatchObject({ name: 'other-cart' });
     await survey([[`${join(folder, 'tray-cart.json')} is there already`, 'replace it']]);
     expect(await sheetIn('tray-cart.json')).toMatchObject({ name: 'tray-cart' });
+  });
+
+  it('that cannot be written leaves the answers kept, and says so', async () => {
+    // A folder where a file is to go: the system refuses to write.
+    await mkdir(join(folder, 'tray-cart.json'));
+    const talk = scripted([['Line width', '25']]);
+    await expect(surveyOnTerminal(talk.surface, undefined, folder)).rejects.toMatchObject({ code: 'EISDIR' });
+    await rm(join(folder, 'tray-cart.json'), { recursive: true });
+
+    await mkdir(join(folder, 'sheet.schema.json'));
+    const again = scripted([]);
+    await expect(surveyOnTerminal(again.surface, undefined, folder)).rejects.toMatchObject({
+      code: 'EISDIR',
+    });
+    expect(again.said()).toContain(
+      `Your answers are kept in ${join(folder, '.fairlead-survey.draft.json')}.`,
+    );
+    await rm(join(folder, 'sheet.schema.json'), { recursive: true });
+    await survey([['Unfinished survey', 'go on']]);
+    expect(await sheetIn('tray-cart.json')).toMatchObject({ line: { widthMm: 25 } });
   });
 
   it('that is not JSON is refused before the first question', async () => {
