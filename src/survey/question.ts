@@ -1,4 +1,5 @@
 /** A question of the questionnaire, as the prompts see it; made afresh from the schema and the answers so far. */
+import { visible } from '../cli/io.js';
 import { describeValue } from '../sheet/words.js';
 import type { Json } from './json-tree.js';
 
@@ -32,7 +33,7 @@ export interface Question {
   readonly judged: (value: Json) => Read;
 }
 
-/** A value in a word: text as it is, anything else by kind. */
+/** A value in a word: text without quotes and safe to show, anything else by kind. */
 export function plainly(value: Json | undefined): string {
-  return typeof value === 'string' ? value : describeValue(value);
+  return typeof value === 'string' ? visible(value) : describeValue(value);
 }

@@ -3,8 +3,10 @@ import { readFile } from 'node:fs/promises';
 import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import writeFileAtomic from 'write-file-atomic';
+import { visible } from '../cli/io.js';
 import { describeValue } from '../sheet/words.js';
-import { isObject, type Json, type JsonObject, leavesOf, sameJson, valueAt } from './json-tree.js';
+import { type Json, type JsonObject, leavesOf, sameJson, valueAt } from './json-tree.js';
+import { plainly } from './question.js';
 import { nodeAt } from './schema-node.js';
 
 const SCHEMA_NAME = 'sheet.schema.json';
@@ -59,19 +61,23 @@ export function changesBetween(before: Json, after: Json): string[] {
     });
 }
 
+const IS_MOTOR_PIN = /^(\/drive\/driver\/(?:left|right))\//;
+
 function labelOf(pointer: string): { title: string; unit?: string } {
+  const motor = IS_MOTOR_PIN.exec(pointer)?.[1];
   try {
-    return nodeAt(pointer);
+    const node = nodeAt(pointer);
+    return motor === undefined ? node : { title: `${nodeAt(motor).title}, ${node.title}` };
   } catch (error) {
     if (!(error instanceof RangeError)) throw error;
-    return { title: pointer };
+    return { title: visible(pointer) };
   }
 }
 
 function shown(value: Json | undefined, unit: string | undefined): string {
   if (value === undefined) return 'not given';
-  if (Array.isArray(value)) return value.map((each) => describeValue(each)).join(' ');
-  return typeof value === 'string' || isObject(value) ? JSON.stringify(value) : describeValue(value, unit);
+  if (Array.isArray(value)) return value.map(plainly).join(' ');
+  return typeof value === 'number' ? describeValue(value, unit) : plainly(value);
 }
 
 /** The name of a vehicle that a file name suggests, if it can be one. */
