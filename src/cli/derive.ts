@@ -2,7 +2,8 @@
 import type { Command } from 'commander';
 import type { Design } from '../design/design.js';
 import type { WhatIf } from '../design/what-if.js';
-import { visible, type Io } from './io.js';
+import type { Io } from './io.js';
+import { visible } from '../sheet/words.js';
 
 interface DeriveOptions {
   json?: boolean;

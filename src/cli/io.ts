@@ -88,13 +88,3 @@ export function processIo(
     styleErr: (format, text) => (colorErr ? styleText(format, text, UNASKED) : text),
   };
 }
-
-/**
- * Makes text from a file safe and visible in one line: control characters, line ends, and the characters that
- * reorder text (Unicode TR36, bidirectional controls) become escapes such as \u{1b}.
- */
-export function visible(text: string): string {
-  return text.replace(/[\p{Cc}\p{Cs}\p{Zl}\p{Zp}\u200e\u200f\u202a-\u202e\u2066-\u2069]/gu, (character) => {
-    return `\\u{${(character.codePointAt(0) ?? 0).toString(16)}}`;
-  });
-}

@@ -4,7 +4,7 @@
  * A problem is one line: file, JSON pointer, what was found, what is allowed, what to do.
  */
 import { EXIT, FairleadError, type ExitCode, type Problem } from '../sheet/problem.js';
-import { visible } from './io.js';
+import { visible } from '../sheet/words.js';
 
 /** A failure in the form in which it is shown. */
 export interface Failure {

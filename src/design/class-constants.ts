@@ -9,6 +9,7 @@ import {
   SPEED_SLOPE_BITS,
 } from '../controller/constants.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
+import { classForBend } from './class-for-bend.js';
 import type { ClassSettings } from './design.js';
 import { INT16_MAX, coefficientOf, curvatureUnits, speedUnits } from './scales.js';
 import type { SteeringGains } from './steering-loop.js';
@@ -17,9 +18,7 @@ const LARGEST_GAIN_BITS = 14;
 
 /** Curvature per offset that the rule table holds, 1/m^2: that of the tightest bend. */
 export function tableGainPerM2(vehicle: Vehicle, classes: readonly ClassSettings[]): number {
-  const reach = vehicle.line.tightestRadiusM * (1 + 1e-9);
-  const tightest = classes.find((designed) => designed.minRadiusM <= reach) ?? classes[classes.length - 1]!;
-  return tightest.gains.proportionalPerM2;
+  return classForBend(classes, vehicle.line.tightestRadiusM).gains.proportionalPerM2;
 }
 
 /** Gains of one class as real numbers in the firmware's input and curvature units. */

@@ -1,7 +1,7 @@
 /** The design: from the SI vehicle to speed classes, laws and the controller that is rendered. */
 import type { ControllerConstants } from '../controller/constants.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
-import { firmwareGains, tableGainPerM2 } from './class-constants.js';
+import { classConstants, firmwareGains, tableGainPerM2 } from './class-constants.js';
 import { biasRemarks } from './bias.js';
 import { controllerConstants } from './controller-constants.js';
 import { delayBudget } from './delay.js';
@@ -17,6 +17,8 @@ import { EXIT, FairleadError, type Problem } from '../sheet/problem.js';
 import { mToMm } from '../sheet/units.js';
 
 const NOMINAL = { gain: 1, lag: 1 };
+/** The scale that leaves speeds at what the limits or the sheet allow. */
+const AS_ALLOWED: SpeedScale = { top: Infinity, share: 1 };
 
 const UNPROVEN_AS_GIVEN =
   'Perturbed rehearsals on the proving lane (straights into the tightest bend, S-bends, gap, crossing) miss the finish target at the speeds of the sheet. Lower them, or set /speeds/classes to auto.';
@@ -114,8 +116,7 @@ function givenScale(
   proving: Proving,
   controllerAt: (scale: SpeedScale) => ControllerConstants,
 ): SpeedScale | undefined {
-  const asGiven = { top: Infinity, share: 1 };
-  return proving.meanTimeS(controllerAt(asGiven)) === undefined ? undefined : asGiven;
+  return proving.meanTimeS(controllerAt(AS_ALLOWED)) === undefined ? undefined : AS_ALLOWED;
 }
 
 function remarksOn(vehicle: Vehicle, classes: readonly DesignedClass[], proven: boolean): string[] {
@@ -139,7 +140,13 @@ function remarksOn(vehicle: Vehicle, classes: readonly DesignedClass[], proven: 
 export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Design {
   const bases = classRanges(vehicle).map((range) => classBase(vehicle, range));
   const settings = (scale: SpeedScale) => bases.map((base) => settingsAt(base, scale));
-  const controllerAt = (scale: SpeedScale) => controllerConstants(vehicle, settings(scale));
+  const unscaled = controllerConstants(vehicle, settings(AS_ALLOWED));
+  const tableGain = tableGainPerM2(vehicle, settings(AS_ALLOWED));
+  // a scale changes the classes' speeds and nothing else of the controller
+  const controllerAt = (scale: SpeedScale): ControllerConstants => ({
+    ...unscaled,
+    classes: classConstants(vehicle, settings(scale), tableGain, unscaled.steering.gainBits),
+  });
   const proving = new Proving(vehicle, provenOn);
   const given = vehicle.speeds.classes !== 'auto';
   const proven = given ? givenScale(proving, controllerAt) : proving.best(controllerAt);
@@ -147,7 +154,6 @@ export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Des
   const chosen = settings(scale);
   const controller = controllerAt(scale);
   refuseOverflow(vehicle, controller);
-  const tableGain = tableGainPerM2(vehicle, chosen);
   const classes = chosen.map((each, i) =>
     designedClass(vehicle, bases[i]!, each, firmwareGains(vehicle, controller, i, tableGain)),
   );

@@ -9,6 +9,7 @@
  * the peak too low. Source: Astrom and Murray, Feedback Systems, chapter 10.
  */
 import type { Margins } from './design.js';
+import { leastBetween } from './golden-section.js';
 
 /** Frequency response: [real, imaginary] at a frequency in rad/s. */
 export type Response = (frequencyRadS: number) => [number, number];
@@ -16,7 +17,7 @@ export type Response = (frequencyRadS: number) => [number, number];
 const GRID_POINTS = 160;
 const REFINEMENTS = 44;
 
-/** Margins, and whether the loop crosses the negative real axis beyond -1. */
+/** Margins and where they are read, and whether the loop crosses the negative real axis beyond -1. */
 export interface LoopScan extends Margins {
   /**
    * Whether |L| > 1 at a crossing of the negative real axis, or L comes in from below it. A lane loop (two
@@ -26,6 +27,10 @@ export interface LoopScan extends Margins {
   beyondMinusOne: boolean;
   /** Frequency of the crossing that sets the gain margin, rad/s; absent without one. */
   phaseCrossoverRadS?: number;
+  /** Frequency of the crossover that sets the phase margin, rad/s; absent without one. */
+  gainCrossoverRadS?: number;
+  /** Frequency of the largest sensitivity, rad/s. */
+  sensitivityPeakRadS: number;
 }
 
 /** Zero of `f` between `low` and `high`, where its signs differ. */
@@ -41,33 +46,6 @@ function bisect(f: (w: number) => number, low: number, high: number): number {
   return Math.sqrt(a * b);
 }
 
-/** Largest value of `f` between `low` and `high`, where it has one peak. */
-function peak(f: (w: number) => number, low: number, high: number, refinements = REFINEMENTS): number {
-  const ratio = (Math.sqrt(5) - 1) / 2;
-  let a = low;
-  let b = high;
-  let c = b - ratio * (b - a);
-  let d = a + ratio * (b - a);
-  let fc = f(c);
-  let fd = f(d);
-  for (let i = 0; i < refinements; i++) {
-    if (fc > fd) {
-      b = d;
-      d = c;
-      fd = fc;
-      c = b - ratio * (b - a);
-      fc = f(c);
-    } else {
-      a = c;
-      c = d;
-      fc = fd;
-      d = a + ratio * (b - a);
-      fd = f(d);
-    }
-  }
-  return Math.max(fc, fd);
-}
-
 /**
  * Margins of a loop.
  *
@@ -78,13 +56,14 @@ function peak(f: (w: number) => number, low: number, high: number, refinements =
 export function scanLoop(loop: Response, lowestRadS: number, highestRadS: number): LoopScan {
   const size = (w: number) => Math.hypot(...loop(w));
   const imaginary = (w: number) => loop(w)[1];
-  const sensitivity = (w: number) => {
+  const distance = (w: number) => {
     const [re, im] = loop(w);
-    return 1 / Math.hypot(1 + re, im);
+    return Math.hypot(1 + re, im);
   };
   const step = Math.pow(highestRadS / lowestRadS, 1 / (GRID_POINTS - 1));
   let gainMargin = Infinity;
   let phaseCrossoverRadS: number | undefined;
+  let gainCrossoverRadS: number | undefined;
   let phaseMarginDeg = Infinity;
   let highestSensitivity = 0;
   let peakAt = lowestRadS;
@@ -102,9 +81,10 @@ export function scanLoop(loop: Response, lowestRadS: number, highestRadS: number
         else if (1 / at < gainMargin) [gainMargin, phaseCrossoverRadS] = [1 / at, crossing];
       }
       if (Math.hypot(reBefore, imBefore) > 1 !== Math.hypot(re, im) > 1) {
-        const [cr, ci] = loop(bisect((x) => size(x) - 1, before, w));
-        const margin = (Math.atan2(-ci, -cr) * 180) / Math.PI;
-        phaseMarginDeg = Math.min(phaseMarginDeg, Math.abs(margin));
+        const crossover = bisect((x) => size(x) - 1, before, w);
+        const [cr, ci] = loop(crossover);
+        const margin = Math.abs((Math.atan2(-ci, -cr) * 180) / Math.PI);
+        if (margin < phaseMarginDeg) [phaseMarginDeg, gainCrossoverRadS] = [margin, crossover];
       }
     }
     const s = 1 / Math.hypot(1 + re, im);
@@ -116,12 +96,16 @@ export function scanLoop(loop: Response, lowestRadS: number, highestRadS: number
   }
   const low = Math.max(lowestRadS, peakAt / step);
   const high = Math.min(highestRadS, peakAt * step);
+  const nearest = leastBetween(distance, low, high, REFINEMENTS);
+  const refined = 1 / nearest.value >= highestSensitivity;
   return {
     gainMargin,
     phaseMarginDeg,
-    ms: Math.max(highestSensitivity, peak(sensitivity, low, high)),
+    ms: refined ? 1 / nearest.value : highestSensitivity,
+    sensitivityPeakRadS: refined ? nearest.at : peakAt,
     beyondMinusOne,
     ...(phaseCrossoverRadS !== undefined && { phaseCrossoverRadS }),
+    ...(gainCrossoverRadS !== undefined && { gainCrossoverRadS }),
   };
 }
 
@@ -147,12 +131,13 @@ export function quickPeak(loop: Response, lowestRadS: number, highestRadS: numbe
     if (s > highest) [highest, peakAt] = [s, w];
     [reBefore, imBefore, sizeBefore] = [re, im, size];
   }
-  const sensitivity = (w: number) => {
+  const distanceSquared = (w: number) => {
     const [re, im] = loop(w);
-    return 1 / ((1 + re) * (1 + re) + im * im);
+    return (1 + re) * (1 + re) + im * im;
   };
-  const top = peak(sensitivity, peakAt / step, Math.min(highestRadS, peakAt * step), COARSE_REFINEMENTS);
-  return Math.sqrt(Math.max(highest, top));
+  const high = Math.min(highestRadS, peakAt * step);
+  const least = leastBetween(distanceSquared, peakAt / step, high, COARSE_REFINEMENTS).value;
+  return Math.sqrt(Math.max(highest, 1 / least));
 }
 
 /** Margins of a loop; see scanLoop. */

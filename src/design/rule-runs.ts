@@ -1,10 +1,10 @@
 /**
  * The rule table: what each run of sensors on the line implies and what the wheels then do.
  *
- * A sensor is on the line while its distance to the line's middle is at most h (bar-view.ts). So the run of
+ * A sensor is on the line while its distance to the line's middle is at most switchingM (bar-view.ts). So the run of
  * sensors a..b, and no other, is on the line exactly while the middle x lies in
  *
- *   max(p_a - h, p_(b+1) + h)  <=  x  <=  min(p_b + h, p_(a-1) - h)
+ *   max(p_a - switchingM, p_(b+1) + switchingM)  <=  x  <=  min(p_b + switchingM, p_(a-1) - switchingM)
  *
  * with the positions p falling from left to right. Runs whose interval is empty no single line can cause;
  * they are answered from the edges that they show. The action for an offset x is the curvature
@@ -15,15 +15,30 @@ import { FRACTION_BITS } from '../controller/constants.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { switchingDistanceM } from './bar-view.js';
 
-/** Offsets of the line's middle that put exactly the sensors first..last on the line; undefined if none do. */
-export function runInterval(vehicle: Vehicle, first: number, last: number): [number, number] | undefined {
+/**
+ * Offsets of the line's middle that put exactly the sensors first..last on the line; undefined if none do.
+ *
+ * @param switchingM distance to the line's middle up to which a sensor is on the line, m; found by a search, so that who asks for many
+ * runs hands it in
+ */
+export function runInterval(
+  vehicle: Vehicle,
+  first: number,
+  last: number,
+  switchingM = switchingDistanceM(vehicle),
+): [number, number] | undefined {
   const { positionsM } = vehicle.bar;
-  const h = switchingDistanceM(vehicle);
   const at = (i: number) => positionsM[i];
   const next = at(last + 1);
   const previous = at(first - 1);
-  const from = Math.max((at(first) as number) - h, next === undefined ? -Infinity : next + h);
-  const to = Math.min((at(last) as number) + h, previous === undefined ? Infinity : previous - h);
+  const from = Math.max(
+    (at(first) as number) - switchingM,
+    next === undefined ? -Infinity : next + switchingM,
+  );
+  const to = Math.min(
+    (at(last) as number) + switchingM,
+    previous === undefined ? Infinity : previous - switchingM,
+  );
   return from < to ? [from, to] : undefined;
 }
 
@@ -67,10 +82,11 @@ function givenAction(
  */
 export function runActions(vehicle: Vehicle, proportionalPerM2: number): RunAction[] {
   const count = vehicle.bar.positionsM.length;
+  const switchingM = switchingDistanceM(vehicle);
   const actions: RunAction[] = [];
   for (let first = 0; first < count; first++) {
     for (let last = first; last < count; last++) {
-      const interval = runInterval(vehicle, first, last);
+      const interval = runInterval(vehicle, first, last, switchingM);
       const offsetM = interval ? (interval[0] + interval[1]) / 2 : shownOffsetM(vehicle, first, last);
       const computed = fractionsFor(proportionalPerM2 * offsetM, vehicle.drive.trackM);
       actions.push({ first, last, interval, offsetM, ...(givenAction(vehicle, first, last) ?? computed) });

@@ -14,6 +14,7 @@ import { runIndex } from '../controller/run-index.js';
 import { Sensing } from '../controller/sensing.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import type { RuleRow } from './design.js';
+import { switchingDistanceM } from './bar-view.js';
 import { runInterval } from './rule-runs.js';
 
 /** Runs of ones of a state, as [first, last] sensor, leftmost sensor highest bit. */
@@ -40,15 +41,7 @@ export function stateTable(vehicle: Vehicle, controller: ControllerConstants): R
   const { rules, sensing } = controller;
   if (rules === undefined) throw new RangeError('This controller works without rules.');
   const count = sensing.sensorCount;
-  const intervals = Array.from(
-    { length: (count * (count + 1)) / 2 },
-    () => undefined as [number, number] | undefined,
-  );
-  for (let first = 0; first < count; first++) {
-    for (let last = first; last < count; last++) {
-      intervals[runIndex(first, last, count)] = runInterval(vehicle, first, last);
-    }
-  }
+  const h = switchingDistanceM(vehicle);
   const bar = new Sensing({ ...sensing, digital: true, lineLevelHigh: true }, true);
   const levels = new Int32Array(count);
   return Array.from({ length: 2 ** count }, (_, state): RuleRow => {
@@ -57,7 +50,7 @@ export function stateTable(vehicle: Vehicle, controller: ControllerConstants): R
     if (bar.wide) return { state, kind: 'wide', ...STRAIGHT };
     if (!bar.found) return { state, kind: 'none', ...STRAIGHT };
     const runs = runsOf(state, count);
-    const feasible = runs.map(([first, last]) => intervals[runIndex(first, last, count)]);
+    const feasible = runs.map(([first, last]) => runInterval(vehicle, first, last, h));
     const action = actionOf(rules, runIndex(bar.first, bar.last, count));
     const [interval] = feasible;
     if (runs.length === 1 && interval) {

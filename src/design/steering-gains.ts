@@ -7,13 +7,13 @@
  * is the one with the least worst Ms; the derivative filter is as fast as the noise at the motors allows.
  */
 import type { Vehicle } from '../vehicle/vehicle.js';
+import { HELD_VIEW_SHARE, LEAST_RADIUS_AHEAD_RATIO } from '../vehicle/sensor-bar.js';
 import { axleCurvature, bendOffsetM, meanPitchM, viewM } from './bar-view.js';
 import type { Margins } from './design.js';
+import { leastBetween } from './golden-section.js';
 import { type SteeringGains, controllerOf, loopPeak } from './steering-loop.js';
 import { keeps, lanePlantOf, toleranceCorners, worstMargins } from './tolerance-box.js';
 
-/** Share of the view in which the line must lie in a steady bend; the rest is for entering it. */
-const STEADY_VIEW_SHARE = 0.7;
 /** Largest share of the wheel-speed range that one step of measurement noise may ask for through the gains. */
 const NOISE_SHARE = 0.4;
 /** Uncertainty of a measured offset: share of the pitch, analog and digital sensors. */
@@ -26,8 +26,8 @@ const SEARCH_STEPS = 9;
 /** Proportional gain that keeps the line of a bend well under the bar, 1/m^2: [least, wanted]. */
 export function proportionalRange(vehicle: Vehicle, radiusM: number): [number, number] {
   const { aheadM } = vehicle.bar;
-  const radius = Math.max(radiusM, aheadM * 1.02);
-  const kept = STEADY_VIEW_SHARE * viewM(vehicle);
+  const radius = Math.max(radiusM, aheadM * LEAST_RADIUS_AHEAD_RATIO);
+  const kept = HELD_VIEW_SHARE * viewM(vehicle);
   const least = axleCurvature(radius, aheadM, kept) / kept;
   const offset = bendOffsetM(radius, aheadM);
   const onLine = offset < kept ? 1 / (radius * offset) : least;
@@ -80,25 +80,7 @@ export function bestLaw(
     const gains = law(time);
     return Math.max(...plants.map((p) => loopPeak(p, controllerOf(gains, p.speedMps, p.samplePeriodS))));
   };
-  const ratio = (Math.sqrt(5) - 1) / 2;
-  let low = 0;
-  let high = 2.5 * vehicle.drive.lagS;
-  let c = high - ratio * (high - low);
-  let d = low + ratio * (high - low);
-  let fc = cost(c);
-  let fd = cost(d);
-  for (let i = 0; i < SEARCH_STEPS; i++) {
-    if (fc <= fd) {
-      [high, d, fd] = [d, c, fc];
-      c = high - ratio * (high - low);
-      fc = cost(c);
-    } else {
-      [low, c, fc] = [c, d, fd];
-      d = low + ratio * (high - low);
-      fd = cost(d);
-    }
-  }
-  const gains = law(fc <= fd ? c : d);
+  const gains = law(leastBetween(cost, 0, 2.5 * vehicle.drive.lagS, SEARCH_STEPS).at);
   return { gains, worst: worstMargins(vehicle, speedMps, gains) };
 }
 

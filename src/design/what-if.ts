@@ -7,6 +7,7 @@
 import { mmToM } from '../sheet/units.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { meanPitchM } from './bar-view.js';
+import { classForBend } from './class-for-bend.js';
 import { deriveDesign } from './derive.js';
 import type { Design } from './design.js';
 import { Proving } from './proving.js';
@@ -80,9 +81,8 @@ const CHANGES: readonly { change: string; apply: (vehicle: Vehicle) => Vehicle }
   },
 ];
 
-function tightSpeed({ classes, vehicle }: Design): number {
-  const reach = vehicle.line.tightestRadiusM * (1 + 1e-9);
-  return (classes.find((each) => each.minRadiusM <= reach) ?? classes[classes.length - 1]!).speedMps;
+function tightSpeedMps({ classes, vehicle }: Design): number {
+  return classForBend(classes, vehicle.line.tightestRadiusM).speedMps;
 }
 
 /** Every change with its effect, the most helpful first. */
@@ -97,7 +97,7 @@ export function whatIf(design: Design): WhatIf[] {
       return {
         change,
         topGainMps: other.classes[0]!.speedMps - design.classes[0]!.speedMps,
-        tightGainMps: tightSpeed(other) - tightSpeed(design),
+        tightGainMps: tightSpeedMps(other) - tightSpeedMps(design),
         ...(timeS !== undefined && otherS !== undefined && { timeChange: otherS / timeS - 1 }),
       };
     } catch (error) {

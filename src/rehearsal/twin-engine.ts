@@ -4,13 +4,11 @@
  * One sample period: the sensors are read at its start; scanning and computing take `delayS`, during which the duties of the
  * period before stay on; then the new ones take over; at its end the observer looks. Duties are rounded to the steps of the board's PWM.
  */
+import { FULL_DUTY } from '../controller/constants.js';
 import type { Engine, RunResult, RunSetup } from './engine.js';
 import { Plant } from './plant.js';
 import { RunMonitor } from './run-monitor.js';
 import type { ControlState } from './trace-recorder.js';
-
-/** Duty that means full, as controllers give it. */
-const FULL_DUTY = 4096;
 
 /** Longest step of the plant, s. */
 const STEP_S = 5e-3;

@@ -1,5 +1,5 @@
 /** A question of the questionnaire, as the prompts see it; made afresh from the schema and the answers so far. */
-import { visible } from '../cli/io.js';
+import { visible } from '../sheet/words.js';
 import { describeValue } from '../sheet/words.js';
 import type { Json } from './json-tree.js';
 

@@ -3,7 +3,7 @@ import { readFile } from 'node:fs/promises';
 import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import writeFileAtomic from 'write-file-atomic';
-import { visible } from '../cli/io.js';
+import { visible } from '../sheet/words.js';
 import { describeValue } from '../sheet/words.js';
 import { type Json, type JsonObject, leavesOf, sameJson, valueAt } from './json-tree.js';
 import { plainly } from './question.js';

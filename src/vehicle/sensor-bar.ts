@@ -6,6 +6,14 @@
  * strip of width w whose middle is at distance d from the spot's middle covers F((d + w/2)/s) - F((d - w/2)/s).
  */
 
+/**
+ * Share of the view at which the line is held in a steady tight bend: the rest is for entering it. The rules of the sheet and the design
+ * go by it alike.
+ */
+export const HELD_VIEW_SHARE = 0.7;
+/** Least radius of a bend over the bar's distance from the axle: nearer, the bar swings past the line. */
+export const LEAST_RADIUS_AHEAD_RATIO = 1.02;
+
 /** Positions of an evenly spaced row, leftmost first, positive to the left, symmetrical about 0. */
 export function evenPositions(count: number, pitch: number): number[] {
   return Array.from({ length: count }, (_, index) => ((count - 1) / 2 - index) * pitch);

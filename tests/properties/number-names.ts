@@ -83,7 +83,7 @@ export const LISTED: readonly Listed[] = [
     where: /^(design|vehicle|course|rehearsal|sheet)\//,
     names:
       words(`grip dutyLeft dutyRight startDuty trimLeft trimRight left right finishTarget motorGain gain lag coverage
-      weakestPeak gainMargin ms loopPeak quickPeak closedLoopRadius relativeError timeChange READING_ERROR READING_NOISE BEYOND_BAR
+      weakestPeak gainMargin ms loopPeak quickPeak closedLoopRadius relativeError timeChange READING_ERROR READING_NOISE
       sinc x u`),
   },
   {
@@ -94,11 +94,11 @@ export const LISTED: readonly Listed[] = [
   {
     why: 'mathematics in the unit of what it is given: staircases and their harmonics, polynomials, medians, random numbers, plane geometry',
     where:
-      /^(design\/(describing-function|sampled-controller|classic-rules|comparison|quantisation|loop-marks)|rehearsal\/(random|metrics)|vehicle\/sensor-bar|sheet\/rules\/bend)\.ts$/,
+      /^(design\/(describing-function|sampled-controller|classic-rules|comparison|quantisation|loop-marks)|rehearsal\/(random|metrics)|vehicle\/sensor-bar|sheet\/rules\/bend|design\/golden-section)\.ts$/,
     names:
       words(`at height amplitude largest largestGain cycleAmplitudes describingGain gain ultimateGain slope curvature a b productOf
       sumOf numerator denominator controllerResponse wanted held margin s0 s1 s2 s3 low high uniform normal values median
-      pitch evenPositions offset lineWidth spotRadius seeingReach ahead seen radius cutPath tightestRadius tightestCutRadius`),
+      pitch evenPositions offset value lineWidth spotRadius seeingReach ahead seen radius cutPath tightestRadius tightestCutRadius`),
   },
   {
     why: 'matrices and responses, whose entries differ in unit: the equation stands in the module',

@@ -1,31 +1,9 @@
-import { mkdir, mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises';
-import { tmpdir } from 'node:os';
+import { mkdir, readdir, readFile, rm, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
-import { type Result, surveyOnTerminal } from '../../src/survey/interactive.js';
-import { type Line, scripted, type Scripted } from './scripted.js';
-
-let folder: string;
-beforeEach(async () => {
-  folder = await mkdtemp(join(tmpdir(), 'fairlead-survey-'));
-});
-afterEach(async () => {
-  await rm(folder, { recursive: true });
-});
-
-async function survey(
-  lines: readonly Line[],
-  sheetFile?: string,
-): Promise<{ result: Result; talk: Scripted }> {
-  const talk = scripted(lines);
-  const file = sheetFile === undefined ? undefined : join(folder, sheetFile);
-  const result = await surveyOnTerminal(talk.surface, file, folder);
-  expect(talk.left()).toEqual([]);
-  return { result, talk };
-}
-
-const sheetIn = async (name: string): Promise<Record<string, Record<string, unknown>>> =>
-  JSON.parse(await readFile(join(folder, name), 'utf8')) as Record<string, Record<string, unknown>>;
+import { describe, expect, it } from 'vitest';
+import { surveyOnTerminal } from '../../src/survey/interactive.js';
+import { scripted } from './scripted.js';
+import { folder, sheetIn, survey } from './survey-folder.js';
 
 describe('a sheet at hand', () => {
   it('is named by its file', async () => {

@@ -1,32 +1,8 @@
-import { mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises';
-import { tmpdir } from 'node:os';
+import { readdir, readFile, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { checkSheet } from '../../src/sheet/check.js';
-import { type Result, surveyOnTerminal } from '../../src/survey/interactive.js';
-import { type Line, scripted, type Scripted } from './scripted.js';
-
-let folder: string;
-beforeEach(async () => {
-  folder = await mkdtemp(join(tmpdir(), 'fairlead-survey-'));
-});
-afterEach(async () => {
-  await rm(folder, { recursive: true });
-});
-
-async function survey(
-  lines: readonly Line[],
-  sheetFile?: string,
-): Promise<{ result: Result; talk: Scripted }> {
-  const talk = scripted(lines);
-  const file = sheetFile === undefined ? undefined : join(folder, sheetFile);
-  const result = await surveyOnTerminal(talk.surface, file, folder);
-  expect(talk.left()).toEqual([]);
-  return { result, talk };
-}
-
-const sheetIn = async (name: string): Promise<Record<string, Record<string, unknown>>> =>
-  JSON.parse(await readFile(join(folder, name), 'utf8')) as Record<string, Record<string, unknown>>;
+import { folder, sheetIn, survey } from './survey-folder.js';
 
 describe('a survey', () => {
   it('of defaults writes a sound sheet, the schema beside it, and leaves no draft', async () => {

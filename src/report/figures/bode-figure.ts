@@ -10,7 +10,7 @@ import { MARGIN, WIDTH, WORDS, svgDocument } from '../svg-document.js';
 import { element, textAt } from '../svg-text.js';
 import { type BodeRange, bodeRange, decibels, magnitudePoints, phasePoints } from './bode-curves.js';
 import { linearAxis, logAxis } from './axis.js';
-import { type DrawnLoop, classHeading, classLoops, drawnClasses } from './drawn-loops.js';
+import { type DrawnLoop, classHeading, classLoops, columnsInWords, drawnClasses } from './drawn-loops.js';
 import { type KeyedLoop, keyedLoops } from './keyed-loops.js';
 import { LabelPlacer } from './label-place.js';
 import { KEY_ROW_PX, THIN, dot, keyRow, line, strokeOf, upright } from './line-style.js';
@@ -44,12 +44,7 @@ export function bodeFigure(design: Design): string {
   return svgDocument({
     title: `${design.vehicle.name}: open loop of the steering`,
     summary: `From lateral error through law and vehicle. Demanded in every corner: ${demanded}.`,
-    description: columns
-      .map(
-        ({ designed, loops }) =>
-          `${classHeading(designed)}. ${loops.map(({ words }) => `${words}.`).join(' ')}`,
-      )
-      .join(' '),
+    description: columnsInWords(columns),
     height: HEIGHT,
     fontSize: FONT,
     parts: columns.map((column, i) => columnSvg(column, range, MARGIN + i * (width + COLUMN_GAP), width)),

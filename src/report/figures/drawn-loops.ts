@@ -20,6 +20,18 @@ export function classHeading({ name, speedMps, minRadiusM }: DesignedClass): str
   return `${name}: ${speedMps.toFixed(2)} m/s, bends from ${mToMm(minRadiusM).toFixed(0)} mm`;
 }
 
+/** What the columns of a picture show, a sentence for each class and each loop, for who cannot see it. */
+export function columnsInWords(
+  columns: readonly { designed: DesignedClass; loops: readonly { words: string }[] }[],
+): string {
+  return columns
+    .map(
+      ({ designed, loops }) =>
+        `${classHeading(designed)}. ${loops.map(({ words }) => `${words}.`).join(' ')}`,
+    )
+    .join(' ');
+}
+
 /** What sets a corner of the tolerance box apart. */
 export function cornerWords({ gain, lag }: Corner): string {
   return `speed \u00d7${gain.toFixed(2)}, lag \u00d7${lag.toFixed(2)}`;

@@ -9,7 +9,14 @@ import { LEAST_MARGINS } from '../../design/tolerance-box.js';
 import { INK, MARGIN, SHADE, WIDTH, WORDS, svgDocument } from '../svg-document.js';
 import { coordinate, element, textAt } from '../svg-text.js';
 import { linearAxis } from './axis.js';
-import { type DrawnLoop, classHeading, classLoops, cornerWords, drawnClasses } from './drawn-loops.js';
+import {
+  type DrawnLoop,
+  classHeading,
+  classLoops,
+  columnsInWords,
+  cornerWords,
+  drawnClasses,
+} from './drawn-loops.js';
 import { LabelPlacer } from './label-place.js';
 import {
   DASHED,
@@ -67,12 +74,7 @@ export function nyquistFigure(design: Design): string {
   return svgDocument({
     title: `${design.vehicle.name}: how near the loop comes to \u22121`,
     summary: `Grey: the circle 1/Ms around \u22121 for Ms ${demanded}, the most that the design allows in any corner. The loop must stay outside it.`,
-    description: columns
-      .map(
-        ({ designed, loops }) =>
-          `${classHeading(designed)}. ${loops.map(({ words }) => `${words}.`).join(' ')}`,
-      )
-      .join(' '),
+    description: columnsInWords(columns),
     height: HEIGHT,
     fontSize: FONT,
     parts: columns.map(({ designed, loops }, i) => {

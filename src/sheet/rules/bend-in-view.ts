@@ -1,5 +1,6 @@
+import { LEAST_RADIUS_AHEAD_RATIO } from '../../vehicle/sensor-bar.js';
 import { withUnit } from '../words.js';
-import { BEYOND_BAR, type Bend, bendOf, tightestCutRadius } from './bend.js';
+import { type Bend, bendOf, tightestCutRadius } from './bend.js';
 import type { SheetRule } from './rule.js';
 
 export const rule: SheetRule = {
@@ -13,7 +14,7 @@ export const rule: SheetRule = {
     const tightestMm = Math.ceil(tightestCutRadius(aheadMm, seenMm));
     if (radiusMm >= tightestMm) return [];
     const where =
-      aheadMm * BEYOND_BAR >= radiusMm
+      aheadMm * LEAST_RADIUS_AHEAD_RATIO >= radiusMm
         ? `the bar, ${withUnit(aheadMm, 'mm')} ahead of the axle, is beyond the bend`
         : `the line leaves the bar, which sees ${withUnit(Math.floor(seenMm), 'mm')} to the side`;
     return [
@@ -30,7 +31,7 @@ export const rule: SheetRule = {
 
 /** Furthest place of the bar, whole mm, at which it can follow the bend. */
 function longestAheadMm({ radiusMm, seenMm }: Bend): number {
-  let ahead = Math.floor(radiusMm / BEYOND_BAR);
+  let ahead = Math.floor(radiusMm / LEAST_RADIUS_AHEAD_RATIO);
   while (ahead > 1 && Math.ceil(tightestCutRadius(ahead, seenMm)) > radiusMm) ahead -= 1;
   return ahead;
 }

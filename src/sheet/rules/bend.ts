@@ -5,13 +5,10 @@
  * On the line itself the axle stays while y = R - sqrt(R^2 - L^2) is in view; so for a bar that sees V to the side, from
  * R = (L^2 + V^2) / (2 V) on. In tighter bends the line is held nearer to the bar's middle and the axle cuts the bend.
  */
+import { HELD_VIEW_SHARE, LEAST_RADIUS_AHEAD_RATIO } from '../../vehicle/sensor-bar.js';
 import type { RuleContext } from './rule.js';
 import { barView } from './view.js';
 
-/** Share of the view at which the design holds the line in a tight bend (src/design/steering-gains.ts). */
-const HELD_SHARE = 0.7;
-/** The bend has to reach this much beyond the bar, or the bar swings past it. */
-export const BEYOND_BAR = 1.02;
 /** Least radius of the axle's path, share of the bend's: less is turning on the spot rather than following (our assumption). */
 const LEAST_PATH_SHARE = 0.6;
 
@@ -22,12 +19,12 @@ export function tightestRadius(ahead: number, seen: number): number {
 
 /** Radius of the axle's path in a bend while the line is held well under the bar; NaN when the bar is beyond the bend. */
 export function cutPath(radius: number, ahead: number, seen: number): number {
-  return HELD_SHARE * seen + Math.sqrt(radius * radius - ahead * ahead);
+  return HELD_VIEW_SHARE * seen + Math.sqrt(radius * radius - ahead * ahead);
 }
 
 /** Tightest radius that can be followed at all, cutting it. */
 export function tightestCutRadius(ahead: number, seen: number): number {
-  let low = BEYOND_BAR * ahead;
+  let low = LEAST_RADIUS_AHEAD_RATIO * ahead;
   if (cutPath(low, ahead, seen) >= LEAST_PATH_SHARE * low) return Math.min(low, tightestRadius(ahead, seen));
   let high = tightestRadius(ahead, seen);
   for (let i = 0; i < 50; i += 1) {
