@@ -5,45 +5,29 @@ import { readFileSync } from 'node:fs';
 import { compileCourse } from '../dist/course/lane.js';
 import { makeProjection } from '../dist/course/projection.js';
 import { Plant } from '../dist/rehearsal/plant.js';
+import { perturbedPlant } from '../dist/rehearsal/plant-parameters.js';
+import { checkSheet } from '../dist/sheet/check.js';
+import { toVehicle } from '../dist/sheet/to-vehicle.js';
 
 const SECONDS = 100;
 /** Of so many tries the quickest counts: other work on the machine only slows it. */
 const TRIES = 5;
 const STEP_S = 2e-3;
-const course = JSON.parse(
-  readFileSync(new URL('../examples/tray-cart/nursery-lane.json', import.meta.url), 'utf8'),
-);
+const example = (name) =>
+  JSON.parse(readFileSync(new URL(`../examples/tray-cart/${name}`, import.meta.url), 'utf8'));
+const course = example('nursery-lane.json');
+const demo = toVehicle(checkSheet(example('tray-cart.json')).sheet);
 
+/** The demo cart drawn by seed 1, all its imperfections with it, with so many sensors on a bar of the same width. */
 function parameters(sensorCount) {
+  const { bar } = demo;
   const positionsM = Array.from(
     { length: sensorCount },
     (_, i) => ((sensorCount - 1) / 2 - i) * (0.05 / (sensorCount - 1)),
   );
-  const ends = {
-    ground: Array(sensorCount).fill(123),
-    line: Array(sensorCount).fill(839),
-    adcMaxCount: 1023,
-  };
-  const motors = {
-    topLeftMps: 1.5,
-    topRightMps: 1.5,
-    trimLeft: 1,
-    trimRight: 1,
-    lagS: 0.08,
-    startDuty: 0.1,
-    batteryFactor: 1,
-    grip: 0.7,
-    trackM: 0.12,
-  };
-  const bar = {
-    aheadM: 0.075,
-    positionsM,
-    spotRadiusM: 0.004,
-    kind: 'analog',
-    lineLevel: 'high',
-    noiseShare: 0.003,
-  };
-  return { seed: 1, ...motors, ...bar, ...ends, startLateralM: 0, startHeadingRad: 0 };
+  const all = (count) => Array(sensorCount).fill(count);
+  const calibration = { ...bar.calibration, ground: all(123), line: all(839) };
+  return { ...perturbedPlant({ ...demo, bar: { ...bar, positionsM, calibration } }, 1), startLateralM: 0 };
 }
 
 /** Drives at half duty toward the middle of what the sensors see; nanoseconds a step. */

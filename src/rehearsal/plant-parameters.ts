@@ -1,29 +1,15 @@
 /**
  * What the simulated vehicle is made of: the sheet's vehicle as it stands, or one drawn from its tolerances.
  *
- * A perturbed vehicle, each figure uniform in its range and independent of the others:
- *   motor gain         each motor's speed at a given duty, within the sheet's motorGainPercent
- *   time constant      of both motors together, within timeConstantPercent
- *   grip               within gripPercent
- *   battery            between the sheet's empty and full voltage
- *   start              5 mm to either side of the line, 3 degrees to either side of its direction    (common practice)
- *   sensors            each reading over ground and over line off by up to 3 % of their difference   (common practice)
- * and reading noise, normal, with a standard deviation of 0.3 % of full scale (common practice: 3 counts of 1023).
- * The seed alone repeats a vehicle. Seed 0 is the sheet's own: nothing perturbed, no noise.
+ * plant-table.ts lists what differs from vehicle to vehicle: each figure uniform in its range and independent of the others,
+ * beside normal noise on every reading. The seed alone repeats a vehicle. Seed 0 is the sheet's own: nothing perturbed, no noise.
  */
-import { degToRad, mmToM } from '../sheet/units.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
+import { READING_NOISE, spreads } from './plant-table.js';
 import { Random } from './random.js';
 
-/** Half-widths of what the sheet has no tolerance for. */
-export const START_LATERAL_M = mmToM(5);
-export const START_HEADING_RAD = degToRad(3);
-export const READING_ERROR = 0.03;
-/** Standard deviation of readings, share of full scale. */
-export const READING_NOISE = 0.003;
-
 /** Streams of random numbers that belong to one seed. */
-export const STREAM = { vehicle: 1, noise: 2 } as const;
+export const STREAM = { vehicle: 1, noise: 2, jitter: 3 } as const;
 
 export interface PlantParameters {
   /** Repeats the noise; 0 for the nominal vehicle. */
@@ -35,12 +21,24 @@ export interface PlantParameters {
   /** Each wheel answers to its duty divided by this: the trim that it needs, 1 for none. */
   trimLeft: number;
   trimRight: number;
+  /** Share by which each motor's speed has changed when it is warm. */
+  driftLeft: number;
+  driftRight: number;
   /** Time constant of both motors, s. */
   lagS: number;
   /** Duty at which the wheels begin to turn at nominal battery voltage, 0..1. */
   startDuty: number;
-  /** Battery voltage over nominal. */
+  /** Friction of each wheel over that of the start duty. */
+  frictionLeft: number;
+  frictionRight: number;
+  /** Friction of a standing wheel over that of a turning one, 1 or more. */
+  stiction: number;
+  /** Drag of the castor over the force of one stalled wheel at nominal voltage. */
+  castorDrag: number;
+  /** Battery voltage without load over nominal. */
   batteryFactor: number;
+  /** Resistance of battery and wiring over that of one motor's winding. */
+  batteryResistanceRatio: number;
   /** Friction coefficient. */
   grip: number;
   /** Distance from axle to bar, m. */
@@ -54,14 +52,29 @@ export interface PlantParameters {
   /** Analog: readings over ground and line, counts. */
   ground: readonly number[];
   line: readonly number[];
+  /** Difference of line and ground, all sensors alike, over that of their readings. */
+  contrast: number;
+  /** Ambient light: its amplitude over the floor, share of the difference of line and ground; and where on the floor it begins, rad. */
+  lightShare: number;
+  lightPhaseRad: number;
+  /** Worn or soiled stretches of line: share of the contrast that they lack; and where along the lane they begin, rad. */
+  wearShare: number;
+  wearPhaseRad: number;
   /** Largest reading, counts. */
   adcMaxCount: number;
   /** Standard deviation of a reading: share of full scale; digital: of the spot. */
   noiseShare: number;
+  /** The controller's delay varies by up to this from sample to sample, s. */
+  loopJitterS: number;
   /** Where the axle's middle starts beside the lane, m, positive left. */
   startLateralM: number;
   /** Heading at the start against the lane's, rad. */
   startHeadingRad: number;
+  /** Distance from one joint in the floor to the next, m; 0 for none. */
+  bumpEveryM: number;
+  /** How a joint shifts the vehicle, m, positive left, and turns it, rad. */
+  bumpLateralM: number;
+  bumpHeadingRad: number;
 }
 
 /**
@@ -78,9 +91,16 @@ export function nominalPlant(vehicle: Vehicle): PlantParameters {
     topRightMps: drive.topSpeedMps,
     trimLeft: drive.trimLeft,
     trimRight: drive.trimRight,
+    driftLeft: 0,
+    driftRight: 0,
     lagS: drive.lagS,
     startDuty: drive.startDuty,
+    frictionLeft: 1,
+    frictionRight: 1,
+    stiction: 1,
+    castorDrag: 0,
     batteryFactor: 1,
+    batteryResistanceRatio: batteryOhm(vehicle) / drive.windingOhm,
     grip: drive.grip,
     aheadM: bar.aheadM,
     positionsM: bar.positionsM,
@@ -89,11 +109,30 @@ export function nominalPlant(vehicle: Vehicle): PlantParameters {
     lineLevel: bar.lineLevel,
     ground: bar.calibration.ground,
     line: bar.calibration.line,
+    contrast: 1,
+    lightShare: 0,
+    lightPhaseRad: 0,
+    wearShare: 0,
+    wearPhaseRad: 0,
     adcMaxCount: vehicle.board.adcMaxCount,
     noiseShare: 0,
+    loopJitterS: 0,
     startLateralM: 0,
     startHeadingRad: 0,
+    bumpEveryM: 0,
+    bumpLateralM: 0,
+    bumpHeadingRad: 0,
   };
+}
+
+/** Resistance of rechargeable cells for each volt of theirs, ohm/V: 25 mohm a cell of 1.2 V (common practice, 15 to 40). */
+const CELL_OHM_PER_V = 0.021;
+/** Resistance of wires, switch and contacts, ohm (common practice). */
+const WIRING_OHM = 0.05;
+
+/** Resistance behind the motor driver where none was measured, ohm. */
+export function batteryOhm(vehicle: Vehicle): number {
+  return CELL_OHM_PER_V * vehicle.power.nominalV + WIRING_OHM;
 }
 
 /**
@@ -102,38 +141,40 @@ export function nominalPlant(vehicle: Vehicle): PlantParameters {
  * @param seed integer from 0 to 2^32 - 1; 0 gives the nominal vehicle
  */
 export function perturbedPlant(vehicle: Vehicle, seed: number): PlantParameters {
-  const nominal = nominalPlant(vehicle);
-  if (seed === 0) return nominal;
-  const { tolerance, power } = vehicle;
+  const plant = nominalPlant(vehicle);
+  if (seed === 0) return plant;
   const random = new Random(seed, STREAM.vehicle);
-  const within = (share: number): number => random.uniform(1 - share, 1 + share);
-  // The order of the draws is part of what a seed means.
-  const topLeftMps = nominal.topLeftMps * within(tolerance.motorGain);
-  const topRightMps = nominal.topRightMps * within(tolerance.motorGain);
-  const lagS = nominal.lagS * within(tolerance.lag);
-  const grip = nominal.grip * within(tolerance.grip);
-  const batteryFactor = random.uniform(power.emptyV, power.fullV) / power.nominalV;
-  const startLateralM = random.uniform(-START_LATERAL_M, START_LATERAL_M);
-  const startHeadingRad = random.uniform(-START_HEADING_RAD, START_HEADING_RAD);
-  const spans = nominal.ground.map((ground, i) => (nominal.line[i] ?? ground) - ground);
-  const ground = nominal.ground.map(
-    (count, i) => count + spans[i]! * random.uniform(-READING_ERROR, READING_ERROR),
-  );
-  const line = nominal.line.map(
-    (count, i) => count + (spans[i] ?? 0) * random.uniform(-READING_ERROR, READING_ERROR),
-  );
+  const spans = plant.ground.map((ground, i) => (plant.line[i] ?? ground) - ground);
+  // the order of the table is part of what a seed means
+  for (const spread of spreads(vehicle)) {
+    if (spread.by === 'sensor') {
+      plant[spread.key] = plant[spread.key].map(
+        (count, i) => count + spans[i]! * random.uniform(spread.low, spread.high),
+      );
+    } else if (spread.by === 'factor') plant[spread.key] *= random.uniform(spread.low, spread.high);
+    else plant[spread.key] = random.uniform(spread.low, spread.high);
+  }
+  return { ...plant, seed, noiseShare: READING_NOISE };
+}
+
+/** The vehicle as seen in a mirror. */
+export function mirroredPlant(plant: PlantParameters): PlantParameters {
   return {
-    ...nominal,
-    seed,
-    topLeftMps,
-    topRightMps,
-    lagS,
-    grip,
-    batteryFactor,
-    startLateralM,
-    startHeadingRad,
-    ground,
-    line,
-    noiseShare: READING_NOISE,
+    ...plant,
+    topLeftMps: plant.topRightMps,
+    topRightMps: plant.topLeftMps,
+    trimLeft: plant.trimRight,
+    trimRight: plant.trimLeft,
+    driftLeft: plant.driftRight,
+    driftRight: plant.driftLeft,
+    frictionLeft: plant.frictionRight,
+    frictionRight: plant.frictionLeft,
+    positionsM: plant.positionsM.map((sideM) => -sideM).reverse(),
+    ground: plant.ground.toReversed(),
+    line: plant.line.toReversed(),
+    startLateralM: -plant.startLateralM,
+    startHeadingRad: -plant.startHeadingRad,
+    bumpLateralM: -plant.bumpLateralM,
+    bumpHeadingRad: -plant.bumpHeadingRad,
   };
 }

@@ -1,8 +1,7 @@
 /**
  * The simulated vehicle: two driven wheels on the floor, and the bar's sensors over the lane.
  *
- * Wheel of first order behind a dead zone (Coulomb friction), at duty d and battery factor f = voltage/nominal:
- *   steady speed u = top f sign(d) max(0, |d| - d0/f)/(1 - d0/f),    v(t + h) = u + (v(t) - u) exp(-h/lag).
+ * Wheels: wheel-drive.ts gives each wheel's steady speed u at its duty; of first order, v(t + h) = u + (v(t) - u) exp(-h/lag).
  * Grip, a simplification with no state of its own, at speed v = (left + right)/2 and turn rate w = (right - left)/track:
  *   along   the vehicle's speed changes by at most mu g; the wheels are held to that speed, their difference stays;
  *   across  |v w| <= sqrt((mu g)^2 - a^2), a the acceleration along (circle of friction). A larger turn rate of the wheels
@@ -10,15 +9,20 @@
  * Sideways drift, the inertia of turning and weight transfer are left out.
  * Pose: a circular arc with the mean speed and turn rate of the substep (arc.ts), exact while they are constant.
  *
- * A sensor reads ground + share (line - ground) + noise, share being how much of its spot is painted; a digital one changes its
- * level at half the spot. Steps allocate nothing.
+ * A joint of the floor shifts and turns the vehicle at once, each time it has driven that far.
+ *
+ * A sensor reads ground + (c share + a) (line - ground) + noise, share being how much of its spot is painted, c the contrast at that
+ * place of the lane and a the ambient light at that place of the floor; a digital one changes its level at c share + a + noise =
+ * 1/2. Steps allocate nothing.
  */
 import { sinc } from '../course/arc.js';
 import type { Lane } from '../course/lane.js';
 import { makeProjection, type Projection } from '../course/projection.js';
 import { STANDARD_GRAVITY_MPS2 } from '../vehicle/gravity.js';
+import { FloorLight } from './floor-light.js';
 import { STREAM, type PlantParameters } from './plant-parameters.js';
 import { Random } from './random.js';
+import { WheelDrive } from './wheel-drive.js';
 
 /** Longest substep, s. */
 const SUBSTEP_S = 1e-3;
@@ -44,7 +48,10 @@ export class Plant {
   private placeIsOld = true;
   private directionIsOld = true;
   private readonly gripMps2: number;
-  private readonly deadDuty: number;
+  private readonly wheels: WheelDrive;
+  /** Distance to the next joint of the floor, m. */
+  private toBumpM: number;
+  private readonly light: FloorLight;
   private readonly positionsM: Float64Array;
   private readonly ground: Float64Array;
   private readonly line: Float64Array;
@@ -59,7 +66,9 @@ export class Plant {
     this.yM = start.yM + parameters.startLateralM * Math.cos(start.headingRad);
     this.headingRad = start.headingRad + parameters.startHeadingRad;
     this.gripMps2 = parameters.grip * STANDARD_GRAVITY_MPS2;
-    this.deadDuty = Math.min(1, parameters.startDuty / parameters.batteryFactor);
+    this.wheels = new WheelDrive(parameters);
+    this.toBumpM = parameters.bumpEveryM > 0 ? parameters.bumpEveryM : Infinity;
+    this.light = new FloorLight(parameters);
     this.positionsM = Float64Array.from(parameters.positionsM);
     this.ground = Float64Array.from(parameters.ground);
     this.line = Float64Array.from(parameters.line);
@@ -97,15 +106,18 @@ export class Plant {
   step(dutyLeft: number, dutyRight: number, dtS: number): void {
     if (!(dtS > 0 && dtS <= LONGEST_STEP_S + 1e-12))
       throw new RangeError(`A plant step lasts up to 5 ms, not ${dtS} s.`);
-    const { topLeftMps, topRightMps, trimLeft, trimRight, lagS } = this.parameters;
-    const steadyLeft = this.steadySpeed(dutyLeft / trimLeft, topLeftMps);
-    const steadyRight = this.steadySpeed(dutyRight / trimRight, topRightMps);
+    const { wheels } = this;
+    const { lagS } = this.parameters;
+    wheels.update(dutyLeft, dutyRight, this.leftMps, this.rightMps, this.timeS);
+    const { steadyLeftMps: steadyLeft, steadyRightMps: steadyRight } = wheels;
     const substeps = Math.ceil(dtS / SUBSTEP_S - 1e-9);
     const h = dtS / substeps;
     const kept = Math.exp(-h / lagS);
     const keptMean = ((1 - kept) * lagS) / h;
     for (let i = 0; i < substeps; i++) this.substep(steadyLeft, steadyRight, h, kept, keptMean);
     this.timeS += dtS;
+    this.toBumpM -= Math.abs(this.speedMps) * dtS;
+    if (this.toBumpM <= 0) this.bump();
     this.placeIsOld = this.directionIsOld = true;
   }
 
@@ -116,7 +128,7 @@ export class Plant {
     const sideM = this.positionsM[i]!;
     const xM = this.xM + aheadM * this.cosHeading - sideM * this.sinHeading;
     const yM = this.yM + aheadM * this.sinHeading + sideM * this.cosHeading;
-    const share = this.lane.coverage(xM, yM, spotRadiusM);
+    const share = this.light.contrast * this.lane.coverage(xM, yM, spotRadiusM) + this.light.ambient;
     const noise = noiseShare === 0 ? 0 : noiseShare * this.noise.normal();
     if (kind === 'digital') return share + noise > 0.5 === (lineLevel === 'high') ? 1 : 0;
     const ground = this.ground[i]!;
@@ -129,11 +141,13 @@ export class Plant {
     for (let i = 0; i < this.positionsM.length; i++) out[i] = this.count(i);
   }
 
-  private steadySpeed(duty: number, topMps: number): number {
-    const driven = Math.abs(duty) - this.deadDuty;
-    if (driven <= 0) return 0;
-    const speed = (topMps * this.parameters.batteryFactor * driven) / (1 - this.deadDuty);
-    return duty < 0 ? -speed : speed;
+  /** A joint of the floor. */
+  private bump(): void {
+    const { bumpEveryM, bumpLateralM, bumpHeadingRad } = this.parameters;
+    this.xM -= bumpLateralM * Math.sin(this.headingRad);
+    this.yM += bumpLateralM * Math.cos(this.headingRad);
+    this.headingRad += bumpHeadingRad;
+    this.toBumpM += bumpEveryM;
   }
 
   private substep(steadyLeft: number, steadyRight: number, h: number, kept: number, keptMean: number): void {
@@ -175,5 +189,6 @@ export class Plant {
     this.cosHeading = Math.cos(this.headingRad);
     this.sinHeading = Math.sin(this.headingRad);
     this.directionIsOld = false;
+    if (this.light.varies) this.light.update(this.place.sM + this.parameters.aheadM);
   }
 }

@@ -2,11 +2,14 @@
  * Rehearses the controller itself, the twin of the firmware's arithmetic.
  *
  * One sample period: the sensors are read at its start; scanning and computing take `delayS`, during which the duties of the
- * period before stay on; then the new ones take over; at its end the observer looks. Duties are rounded to the steps of the board's PWM.
+ * period before stay on; then the new ones take over; at its end the observer looks. The delay varies by the plant's loop jitter;
+ * the period, a hardware tick, does not. Duties are rounded to the steps of the board's PWM.
  */
 import { FULL_DUTY } from '../controller/constants.js';
 import type { Engine, RunResult, RunSetup } from './engine.js';
 import { Plant } from './plant.js';
+import { STREAM } from './plant-parameters.js';
+import { Random } from './random.js';
 import { RunMonitor } from './run-monitor.js';
 import type { ControlState } from './trace-recorder.js';
 
@@ -56,6 +59,8 @@ export class TwinEngine implements Engine {
   /** The same without a promise. */
   runNow(setup: RunSetup): RunResult {
     const { samplePeriodS, delayS, pwmSteps } = this.timing;
+    const { loopJitterS } = setup.plant;
+    const jitter = new Random(setup.plant.seed, STREAM.jitter);
     const control = this.makeControl();
     const plant = new Plant(setup.plant, setup.lane);
     const monitor = new RunMonitor(plant, setup);
@@ -65,12 +70,14 @@ export class TwinEngine implements Engine {
     while (!monitor.ended) {
       plant.readCounts(counts);
       control.step(counts);
-      drive(plant, state, delayS);
+      const lateS = loopJitterS === 0 ? 0 : jitter.uniform(-loopJitterS, loopJitterS);
+      const actS = Math.min(Math.max(delayS + lateS, 0.01 * samplePeriodS), 0.995 * samplePeriodS);
+      drive(plant, state, actS);
       state.dutyLeft = inPwmSteps(control.dutyLeft, pwmSteps);
       state.dutyRight = inPwmSteps(control.dutyRight, pwmSteps);
       state.classIndex = control.classIndex;
       state.phase = control.phase;
-      drive(plant, state, samplePeriodS - delayS);
+      drive(plant, state, samplePeriodS - actS);
       monitor.observe(state, control.stopped);
     }
     return monitor.result();

@@ -39,6 +39,7 @@ export function toVehicle(sheet: ResolvedSheet): Vehicle {
       lagS: msToS(drive.motor.timeConstantMs),
       startDuty: percentToFraction(drive.motor.startDutyPercent),
       stallCurrentA: drive.motor.stallCurrentA,
+      windingOhm: drive.motor.ratedVoltageV / drive.motor.stallCurrentA,
       ...wiringOf(sheet, board),
       trimLeft: percentToFraction(drive.trim.leftPercent),
       trimRight: percentToFraction(drive.trim.rightPercent),

@@ -51,6 +51,8 @@ export interface Vehicle {
     /** Duty at which the wheels begin to turn, 0..1, at nominal voltage. */
     startDuty: number;
     stallCurrentA: number;
+    /** Resistance of one motor, rated voltage over stall current, ohm. */
+    windingOhm: number;
     scheme: 'pwm-dir' | 'pwm-in-in' | 'dual-pwm';
     left: MotorWiring;
     right: MotorWiring;

@@ -6,7 +6,7 @@ const words = (text: string) => text.trim().split(/\s+/);
 
 /** Units at the end of a camel-case name or of a CONSTANT_NAME. */
 const UNITS =
-  words(`M Mm S Ms Us Mps Mps2 Rad RadS RadPerS Deg V A Kg Hz Rpm PerM PerM2 PerTick Percent Bytes Px
+  words(`M Mm S Ms Us Mps Mps2 Rad RadS RadPerS Deg V A Ohm N Kg Hz Rpm PerM PerM2 PerTick Percent Bytes Px
   Count Counts Samples Cycles`);
 /** Last words of names that are pure numbers; Units are the firmware's, by the scales of controller/constants.ts. */
 const PURE = words('Share Shares Fraction Factor Ratio Coefficient Bits Index Steps Units');
@@ -84,6 +84,7 @@ export const LISTED: readonly Listed[] = [
     names:
       words(`grip dutyLeft dutyRight startDuty trimLeft trimRight left right finishTarget motorGain gain lag coverage
       weakestPeak gainMargin ms loopPeak quickPeak closedLoopRadius relativeError timeChange READING_ERROR READING_NOISE
+      driftLeft driftRight frictionLeft frictionRight stiction castorDrag contrast ambient
       sinc x u`),
   },
   {

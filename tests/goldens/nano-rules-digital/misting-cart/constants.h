@@ -146,16 +146,16 @@ struct SpeedClass {
 
 // From speeds.classes, the fastest first.
 constexpr SpeedClass SPEED_CLASSES[] = {
-    // straight: bends from 3600 mm radius at 1.18 m/s, limited by the finish target
-    {71, 0, 75740L, 5539, 3684, 5455},
-    // sweeping: bends from 960 mm radius at 1.18 m/s, limited by the finish target
-    {267, 0, 75740L, 6161, 3827, 5340},
-    // wide: bends from 480 mm radius at 1.18 m/s, limited by the finish target
-    {533, 0, 75740L, 7136, 4014, 5198},
-    // open: bends from 288 mm radius at 1.18 m/s, limited by the finish target
-    {889, 0, 75740L, 8610, 4252, 5031},
+    // straight: bends from 3600 mm radius at 1.15 m/s, limited by the finish target
+    {71, 0, 73490L, 5539, 3684, 5455},
+    // sweeping: bends from 960 mm radius at 1.15 m/s, limited by the finish target
+    {267, 0, 73490L, 6161, 3827, 5340},
+    // wide: bends from 480 mm radius at 1.15 m/s, limited by the finish target
+    {533, 0, 73490L, 7136, 4014, 5198},
+    // open: bends from 288 mm radius at 1.15 m/s, limited by the finish target
+    {889, 0, 73490L, 8610, 4252, 5031},
     // medium: bends from 180 mm radius at 1.1 m/s, limited by the motors
-    {1422, 156, 70550L, 11245, 4583, 4793},
+    {1422, 88, 70550L, 11245, 4583, 4793},
     // tight: bends from 120 mm radius at 0.908 m/s, limited by grip
     {2133, 280, 58087L, 16384, 5396, 4619},
     // reserve: bends from 90 mm radius at 0.786 m/s, limited by grip
