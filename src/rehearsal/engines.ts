@@ -1,8 +1,9 @@
-/** The engines by name. Each is loaded only when it is asked for: the chip and the interpreter are heavy. */
+/** The engines by name, and which of them a board's firmware can run on. */
 import type { Design } from '../design/design.js';
 import type { SheetIdentity } from '../firmware/render.js';
 import { EXIT, FairleadError } from '../sheet/problem.js';
 import type { Engine, EngineName } from './engine.js';
+import { type EngineParts, enginePartsFor, engineFrom } from './engine-parts.js';
 
 export const ENGINE_NAMES = ['twin', 'chip', 'micropython'] as const satisfies readonly EngineName[];
 
@@ -15,6 +16,15 @@ const RUNS = { chip: 'arduino', micropython: 'micropython' } as const;
  * @throws FairleadError: bad input where the engine cannot run the design's firmware, tool missing where a compiler is
  */
 export async function engineFor(name: EngineName, sheet: SheetIdentity, design: Design): Promise<Engine> {
+  return engineFrom(await enginePartsOf(name, sheet, design));
+}
+
+/** The same as plain data, for worker threads. */
+export async function enginePartsOf(
+  name: EngineName,
+  sheet: SheetIdentity,
+  design: Design,
+): Promise<EngineParts> {
   const { vehicle } = design;
   if (name !== 'twin' && RUNS[name] !== vehicle.language) {
     const fitting = ENGINE_NAMES.filter((other) => other === 'twin' || RUNS[other] === vehicle.language);
@@ -24,12 +34,5 @@ export async function engineFor(name: EngineName, sheet: SheetIdentity, design: 
       { exitCode: EXIT.badInput },
     );
   }
-  switch (name) {
-    case 'twin':
-      return (await import('./twin-maker.js')).twinEngine(vehicle, design.controller);
-    case 'chip':
-      return (await import('./chip-engine.js')).chipEngine(sheet, design);
-    case 'micropython':
-      return (await import('./micropython-engine.js')).micropythonEngine(sheet, design);
-  }
+  return enginePartsFor(name, sheet, design);
 }

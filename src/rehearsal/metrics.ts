@@ -4,7 +4,8 @@
  * Times of laps are those of flying laps (the second lap on); where no run has one, those from standing. Errors are over all runs,
  * lost ones too, up to where they were lost.
  */
-import { mToMm } from '../sheet/units.js';
+import { fractionToPercent, mToMm } from '../sheet/units.js';
+import { CONFIDENCE_SHARE, clopperPearson } from '../statistics/rates.js';
 import type { EngineName, LossReason, RunResult } from './engine.js';
 
 /** One run, as `rehearse --json` lists it. */
@@ -40,6 +41,8 @@ export interface RehearsalReport {
   ratio: number | null;
   rmsLateralMm: number;
   maxLateralMm: number;
+  /** Interval of the share of all such vehicles that finish, by Clopper and Pearson; null of a single run. */
+  finishRate: { lowPercent: number; highPercent: number; confidencePercent: number } | null;
   /** Seed of the first run; run i has seed + i. */
   seed: number;
   engine: EngineName;
@@ -82,9 +85,20 @@ export function summarise(
     ratio: lapS === null ? null : lapS / boundLapS,
     rmsLateralMm: mToMm(Math.sqrt(squares / Math.max(totalS, Number.MIN_VALUE))),
     maxLateralMm: mToMm(Math.max(...results.map((result) => result.maxLateralM))),
+    finishRate: finishRateOf(finished.length, results.length),
     seed: results[0]?.seed ?? 0,
     engine,
     list: results.map((result) => toRecord(result, lapM)),
+  };
+}
+
+function finishRateOf(finished: number, runs: number): RehearsalReport['finishRate'] {
+  if (runs < 2) return null;
+  const { low, high } = clopperPearson(finished, runs);
+  return {
+    lowPercent: fractionToPercent(low),
+    highPercent: fractionToPercent(high),
+    confidencePercent: fractionToPercent(CONFIDENCE_SHARE),
   };
 }
 

@@ -1,6 +1,6 @@
 /**
  * Several runs of one vehicle on one lane, each a pure function of vehicle, lane and seed, so that any one can be repeated alone
- * and runs can be spread over workers and machines.
+ * and runs can be spread over workers (workers.ts) and machines (shards.ts).
  */
 import { lapBound, type Bound } from '../course/bound.js';
 import type { Lane } from '../course/lane.js';

@@ -2,7 +2,7 @@
 import type { Lane } from '../course/lane.js';
 import type { EngineName, LossReason, RunResult } from '../rehearsal/engine.js';
 import { countedLapsS, median, type RehearsalReport, type RunRecord } from '../rehearsal/metrics.js';
-import { fractionToPercent, mmToM, mToMm } from '../sheet/units.js';
+import { mmToM, mToMm } from '../sheet/units.js';
 import { table } from './text-table.js';
 
 /** Lost runs that are told one by one. */
@@ -68,10 +68,19 @@ export function runSummary(result: RunResult, engine: EngineName, boundLapS: num
   return [`${engine}, seed ${result.seed}: ${verdict}`, ...lap, error].join('; ');
 }
 
-function finishedWords({ runs, finished, lost }: RehearsalReport): string {
-  if (runs === 1) return finished === 1 ? 'yes' : 'no, lost';
-  const percent = fractionToPercent(finished / runs).toFixed(1);
-  return `${finished} of ${runs} (${percent} %)${lost > 0 ? `, ${lost} lost` : ''}`;
+function finishedWords({ runs, finished, finishRate }: RehearsalReport): string {
+  if (finishRate === null) return finished === 1 ? 'yes' : 'no, lost';
+  const { confidencePercent } = finishRate;
+  return `${finished} of ${runs}: ${rangeWords(finishRate, runs)} % with ${confidencePercent.toFixed(0)} % confidence`;
+}
+
+/** An interval with as many digits as so many runs can tell apart. */
+function rangeWords(
+  { lowPercent, highPercent }: { lowPercent: number; highPercent: number },
+  runs: number,
+): string {
+  const digits = runs < 10_000 ? 1 : 2;
+  return `${lowPercent.toFixed(digits)} to ${highPercent.toFixed(digits)}`;
 }
 
 function extremes(report: RehearsalReport): string {

@@ -12,6 +12,8 @@ export const EXIT = {
   noDesign: 3,
   filesDiffer: 4,
   toolMissing: 5,
+  /** By Ctrl-C: 128 and the number of the signal, as shells count. */
+  interrupted: 130,
 } as const;
 
 export type ExitCode = (typeof EXIT)[keyof typeof EXIT];

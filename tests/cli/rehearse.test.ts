@@ -67,11 +67,14 @@ describe('fairlead rehearse', () => {
     const report = json[0] as RehearsalReport;
     expect(report).toMatchObject({ runs: 3, seed: 1, engine: 'twin' });
     expect(report.finished + report.lost).toBe(3);
+    // 3 of 3: the lower end is the cube root of 0.025
+    expect(report.finishRate!.lowPercent).toBeCloseTo(100 * Math.cbrt(0.025), 9);
+    expect(report.finishRate).toMatchObject({ highPercent: 100, confidencePercent: 95 });
     expect(report.list.map((run) => run.seed)).toEqual([1, 2, 3]);
     expect(report.ratio).toBeCloseTo(report.lapS! / report.boundLapS, 12);
     expect(Object.keys(report)).toEqual([
       ...['runs', 'finished', 'lost', 'lapS', 'boundLapS', 'ratio'],
-      ...['rmsLateralMm', 'maxLateralMm', 'seed', 'engine', 'list', 'notes'],
+      ...['rmsLateralMm', 'maxLateralMm', 'finishRate', 'seed', 'engine', 'list', 'notes'],
     ]);
     const alone = await rehearse([SHEET, '--course', COURSE, '--seed', '2', '--json']);
     expect((alone.json[0] as RehearsalReport).list[0]).toEqual(report.list[1]);
@@ -95,6 +98,9 @@ describe('fairlead rehearse', () => {
     [['--course', COURSE, '--svg', SHEET], 'Its name must end in .svg.'],
     [['--course', COURSE, '--on', 'paper'], 'Allowed choices are twin, chip, micropython.'],
     [[], "required option '--course <file>' not specified"],
+    [['--course', COURSE, '--shard', '5/4'], 'It takes K/N, part K of N'],
+    [['--course', COURSE, '--out', 'part.json'], '--out goes with --shard'],
+    [['--course', COURSE, '--merge', 'part.json'], '--merge takes the parts alone'],
   ])('refuses %j', async (words, message) => {
     await expect(rehearse([SHEET, ...words])).rejects.toThrow(message);
   });

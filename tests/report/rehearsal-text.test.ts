@@ -51,7 +51,7 @@ describe('rehearsalText', () => {
     ];
     const text = textOf(results);
     expect(text).toContain('15 vehicles drawn by seeds 0 to 14');
-    expect(text).toMatch(/Finished +2 of 15 \(13\.3 %\), 13 lost/);
+    expect(text).toMatch(/Finished +2 of 15: 1\.7 to 40\.5 % with 95 % confidence/);
     expect(text).toMatch(/Quickest, slowest +(\d+\.\d\d) s, \1 s/);
     expect(text).toContain('and 3 more');
     expect(text).toContain('--runs 1 --seed 1');
