@@ -5,16 +5,15 @@ import { classConstants, firmwareGains, tableGainPerM2 } from './class-constants
 import { biasRemarks } from './bias.js';
 import { controllerConstants } from './controller-constants.js';
 import { delayBudget } from './delay.js';
-import type { ClassSettings, Design, DesignedClass, SpeedLimits } from './design.js';
+import { type ClassBase, classBases } from './class-base.js';
+import type { ClassSettings, Design, DesignedClass } from './design.js';
 import { overrideRemarks } from './override-remarks.js';
 import { Proving, type SpeedScale, slowestScale } from './proving.js';
-import { type ClassRange, bindingLimit, classRanges, speedLimits } from './speed-classes.js';
-import { designLaw, givenGains } from './steering-gains.js';
+import { bindingLimit } from './speed-classes.js';
 import { keeps, lanePlantOf, marginsAt, worstMargins } from './tolerance-box.js';
 import { overflows } from './intervals.js';
 import { type SteeringGains, controllerOf } from './steering-loop.js';
 import { EXIT, FairleadError, type Problem } from '../sheet/problem.js';
-import { mToMm } from '../sheet/units.js';
 
 const NOMINAL = { gain: 1, lag: 1 };
 /** The scale that leaves speeds at what the limits or the sheet allow. */
@@ -25,42 +24,6 @@ const UNPROVEN_AS_GIVEN =
 
 const UNPROVEN =
   'Perturbed rehearsals on the proving lane (straights into the tightest bend, S-bends, gap, crossing) miss the finish target even at a quarter of full speed. Widen the bar, move it further ahead, or lower the tolerances by measuring.';
-
-/** One class before its speed is proven: its limits and its law. */
-interface ClassBase {
-  range: ClassRange;
-  limits: SpeedLimits;
-  /** Speed that the limits or the sheet allow, m/s. */
-  allowedMps: number;
-  gains: SteeringGains;
-}
-
-function noDesign(range: ClassRange, speedMps: number, limits: SpeedLimits): FairleadError {
-  const radiusMm = Math.round(mToMm(range.minRadiusM));
-  const problem: Problem = {
-    pointer: range.speedMps === undefined ? '/line/tightestRadiusMm' : '/speeds/classes',
-    message: `class ${range.name}: no steering keeps its margins on bends of ${radiusMm} mm radius at ${speedMps.toFixed(2)} m/s.`,
-    got: `${speedMps.toFixed(2)} m/s`,
-    allowed: `control limit ${limits.control.toFixed(2)} m/s, view limit ${limits.view.toFixed(2)} m/s`,
-    fix: 'Move the sensor bar further ahead, make it wider, take motors with a smaller time constant, or lower the speed.',
-  };
-  return new FairleadError('No design meets the sheet.', { exitCode: EXIT.noDesign, problems: [problem] });
-}
-
-function classBase(vehicle: Vehicle, range: ClassRange): ClassBase {
-  const limits = speedLimits(vehicle, range);
-  const given = givenGains(vehicle);
-  if (given) {
-    // gains by hand are judged, not refused: where they never keep the margins, motor and grip alone limit the speed
-    const least = limits[bindingLimit(limits)];
-    const allowedMps = range.speedMps ?? (least > 0 ? least : Math.min(limits.motor, limits.grip));
-    return { range, limits, allowedMps, gains: given };
-  }
-  const allowedMps = range.speedMps ?? limits[bindingLimit(limits)];
-  const law = allowedMps > 0 ? designLaw(vehicle, allowedMps, range.lawRadiusM) : undefined;
-  if (law === undefined) throw noDesign(range, allowedMps, limits);
-  return { range, limits, allowedMps, gains: law.gains };
-}
 
 /** A class at the speed that a scale leaves it. */
 function settingsAt({ range, allowedMps, gains }: ClassBase, scale: SpeedScale): ClassSettings {
@@ -138,7 +101,7 @@ function remarksOn(vehicle: Vehicle, classes: readonly DesignedClass[], proven: 
  * @throws FairleadError with exit code 3 when nothing meets the sheet
  */
 export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Design {
-  const bases = classRanges(vehicle).map((range) => classBase(vehicle, range));
+  const bases = classBases(vehicle);
   const settings = (scale: SpeedScale) => bases.map((base) => settingsAt(base, scale));
   const unscaled = controllerConstants(vehicle, settings(AS_ALLOWED));
   const tableGain = tableGainPerM2(vehicle, settings(AS_ALLOWED));

@@ -18,6 +18,16 @@ export const EXIT = {
 
 export type ExitCode = (typeof EXIT)[keyof typeof EXIT];
 
+/** A change of one number in a sheet. */
+export interface SheetChange {
+  /** JSON pointer of the field. */
+  pointer: string;
+  from: number;
+  to: number;
+  /** Unit of both, "" where there is none. */
+  unit: string;
+}
+
 /** One thing wrong with the input. */
 export interface Problem {
   /** JSON pointer (RFC 6901) into the file, "" for the whole. */
@@ -30,6 +40,8 @@ export interface Problem {
   allowed?: string;
   /** What to do about it. */
   fix?: string;
+  /** Changes, each of which alone does it, the smallest first. */
+  changes?: SheetChange[];
 }
 
 /** An expected failure: reported without a stack, ends the process with its exit code. */

@@ -76,7 +76,7 @@ describe('exit codes', () => {
     const { exitCode, stdout, stderr } = await runFairlead(['derive', fast]);
     expect({ exitCode, stdout }).toEqual({ exitCode: 3, stdout: '' });
     expect(stderr).toMatch(
-      /fast\.json \/speeds\/classes: class fast: no steering keeps its margins.* control limit 0\.\d+ m\/s/,
+      /fast\.json \/speeds\/classes: class fast, bends of 120 mm radius: at 1\.40 m\/s no steering law keeps.* control limit 0\.\d+ m\/s\. Smallest changes.* \/sensors\/aheadOfAxleMm from 15 to \d+ mm/,
     );
   });
 

@@ -68,7 +68,7 @@ test('a speed at which no steering keeps its margins is refused with the limits'
     const { exitCode, problems } = error as FairleadError;
     expect(exitCode).toBe(3);
     expect(problems[0]?.message).toMatch(
-      /class all: no steering keeps its margins on bends of 120 mm radius at 1\.40 m\/s/,
+      /class all, bends of 120 mm radius: at 1\.40 m\/s no steering law keeps the required margins/,
     );
     expect(problems[0]?.allowed).toMatch(/control limit \d\.\d\d m\/s/);
   }

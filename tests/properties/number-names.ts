@@ -73,10 +73,10 @@ export const LISTED: readonly Listed[] = [
   },
   {
     why: 'places in a text and limits of a schema, in the unit of its field',
-    where: /^(sheet\/(json-text|schema|words|units)|survey\/.*|cli\/whole-number)\.ts$/,
+    where: /^(sheet\/(json-text|schema|words|units|problem)|survey\/.*|cli\/whole-number)\.ts$/,
     names:
       words(`offset line column minimum maximum exclusiveMinimum maxLength minItems maxItems value values parts default
-      defaultValue given get number tree valueAt leavesOf a b before after spread pinValues`),
+      defaultValue given get number tree valueAt leavesOf a b before after spread pinValues from to`),
   },
   {
     why: 'pins, converter channels, timers and causes of a reset by their numbers, levels 0 and 1, ticks of a clock that wraps',
