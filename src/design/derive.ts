@@ -7,6 +7,7 @@ import { controllerConstants } from './controller-constants.js';
 import { delayBudget } from './delay.js';
 import { type ClassBase, classBases } from './class-base.js';
 import type { ClassSettings, Design, DesignedClass } from './design.js';
+import { lawBinding } from './law-binding.js';
 import { overrideRemarks } from './override-remarks.js';
 import { Proving, type SpeedScale, slowestScale } from './proving.js';
 import { bindingLimit } from './speed-classes.js';
@@ -56,6 +57,7 @@ function designedClass(
     controller: controllerOf(gains, speedMps, plant.samplePeriodS),
     margins: marginsAt(vehicle, speedMps, gains, NOMINAL),
     worstMargins: worstMargins(vehicle, speedMps, gains),
+    binding: lawBinding(vehicle, gains, speedMps, base.range.lawRadiusM),
   };
 }
 

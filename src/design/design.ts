@@ -1,5 +1,6 @@
 /** What the design finds for one vehicle: the numbers of `derive`, and the controller that is rendered. */
 import type { ControllerConstants } from '../controller/constants.js';
+import type { LawBinding } from './law-binding.js';
 import type { SampledController } from './sampled-controller.js';
 import type { SteeringGains } from './steering-loop.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
@@ -50,6 +51,8 @@ export interface DesignedClass extends ClassSettings {
   margins: Margins;
   /** Worst over the tolerance box. */
   worstMargins: Margins;
+  /** What keeps the law from being stronger, and where. */
+  binding: LawBinding;
 }
 
 /** One state of the bar and what is done in it. */

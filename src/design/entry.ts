@@ -36,7 +36,8 @@ function offsetAtBar(x: number, y: number, heading: number, aheadM: number, radi
  * Largest offset at the bar, m, while entering a bend; Infinity when the line is lost.
  *
  * @param onSample told each sample: distance driven since the bar reached the bend, m, and the offset at the bar, m,
- * positive to the inner side; NaN when the bar no longer meets the line
+ * positive to the inner side, NaN when the bar no longer meets the line; and the turn rate that the law asks for, as a share of
+ * what the wheels can do
  */
 export function entryPeakM(
   vehicle: Vehicle,
@@ -44,7 +45,7 @@ export function entryPeakM(
   speedMps: number,
   radiusM: number,
   corner: Corner,
-  onSample?: (distanceM: number, offsetM: number) => void,
+  onSample?: (distanceM: number, offsetM: number, wheelShare: number) => void,
 ): number {
   const { drive, bar, board } = vehicle;
   const period = board.samplePeriodS;
@@ -66,13 +67,14 @@ export function entryPeakM(
   const steps = Math.ceil((bar.aheadM + ENTERED_RAD * radiusM) / (speed * period));
   for (let i = 0; i < steps; i++) {
     const offset = offsetAtBar(x, y, heading, bar.aheadM, radiusM);
-    onSample?.((i - 1) * speed * period, offset);
+    const change = offset - filtered;
+    const wanted = speed * gains.proportionalPerM2 * (offset + ratio * change);
+    onSample?.((i - 1) * speed * period, offset, wanted / turnLimit);
     const size = Math.abs(offset);
     if (!(size <= limit)) return Infinity;
     peak = Math.max(peak, size);
-    const change = offset - filtered;
     filtered += gains.filterCoefficient * change;
-    pending.push(speed * gains.proportionalPerM2 * (offset + ratio * change));
+    pending.push(wanted);
     const command = Math.max(-turnLimit, Math.min(turnLimit, pending.shift() as number));
     const next = command + (turn - command) * decay;
     const mean = (turn + next) / 2;

@@ -19,7 +19,7 @@ const NOISE_SHARE = 0.4;
 /** Uncertainty of a measured offset: share of the pitch, analog and digital sensors. */
 const OFFSET_NOISE_SHARE = { analog: 0.03, digital: 0.5 } as const;
 /** Fastest derivative filter: two samples. */
-const FASTEST_FILTER_SAMPLES = 2;
+export const FASTEST_FILTER_SAMPLES = 2;
 /** Steps of the golden-section search for the derivative time. */
 const SEARCH_STEPS = 9;
 

@@ -1,6 +1,7 @@
 /** The design as `derive --json` gives it. */
 import type { Design, Margins } from '../design/design.js';
 import { biasOffsetM } from '../design/bias.js';
+import { cornerText } from '../design/law-binding.js';
 import { quantisedConstants } from '../design/quantisation.js';
 import { predictCycles } from '../design/rule-cycle.js';
 import { stateTable } from '../design/state-table.js';
@@ -30,6 +31,7 @@ export function designJson(design: Design) {
       controller: each.controller,
       margins: marginsJson(each.margins),
       worstMargins: marginsJson(each.worstMargins),
+      binding: { ...each.binding, corner: { ...each.binding.corner, text: cornerText(each.binding.corner) } },
     })),
     rules: controller.rules
       ? stateTable(vehicle, controller).map(({ state, kind, left, right, fromM, toM }) => ({

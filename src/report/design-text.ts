@@ -4,6 +4,7 @@ import type { Design, DesignedClass } from '../design/design.js';
 import { LEAST_MARGINS } from '../design/tolerance-box.js';
 import { filterTimeS } from '../design/steering-loop.js';
 import { biasOffsetM } from '../design/bias.js';
+import { cornerText } from '../design/law-binding.js';
 import { quantisedConstants, worstQuantised } from '../design/quantisation.js';
 import { viewM } from '../design/bar-view.js';
 import { fractionToPercent, mToMm, sToMs } from '../sheet/units.js';
@@ -61,6 +62,19 @@ function lawTable(classes: readonly DesignedClass[]): string {
   return table([head, ...rows]);
 }
 
+function bindingTable(classes: readonly DesignedClass[]): string {
+  const rows = classes.map(({ name, binding }) => [
+    name,
+    binding.proportional,
+    binding.filter,
+    binding.nearest,
+    cornerText(binding.corner),
+    fractionToPercent(binding.wheelShare).toFixed(0),
+  ]);
+  const head = ['class', 'kp set by', 'Tf set by', 'least room', 'in the corner', 'wheels used, %'];
+  return table([head, ...rows]);
+}
+
 function vehicleLines(design: Design): string {
   const { vehicle, controller } = design;
   const { drive, bar, line } = vehicle;
@@ -112,6 +126,8 @@ export function designText(design: Design): string {
     'Steering: curvature = kp (offset + Td d offset/dt), derivative filtered with Tf',
     lawTable(classes),
     required,
+    bindingTable(classes),
+    'Wheels used: largest turn rate asked for on entry into the bend, of what the wheels can do; above 100 % they saturate and keep their difference.',
     ...ruleLines(design),
     ...design.remarks.map((remark) => `Note: ${remark}`),
   ];

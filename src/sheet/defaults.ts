@@ -6,10 +6,14 @@
  */
 import { SCHEMAS, resolved, type SchemaNode } from './schema.js';
 import type { MotorPins, Sheet } from './sheet-types.js';
+import { degToRad } from './units.js';
 
 type Filled<T, Given extends keyof T = never> = Required<Omit<T, Given>> & Pick<T, Given>;
 type Motor = Filled<MotorPins, 'pwm' | 'dir' | 'in1' | 'in2'>;
 type Drive = Sheet['drive'];
+type GivenClass = Exclude<Sheet['speeds']['classes'], 'auto'>[number];
+/** A speed class with its radius, whichever way its bends are given. */
+export type SpeedClass = GivenClass & { minRadiusMm: number };
 
 /** A sheet with every default filled in. What has none stays optional. */
 export interface ResolvedSheet extends Required<Sheet> {
@@ -21,7 +25,7 @@ export interface ResolvedSheet extends Required<Sheet> {
     trim: Required<NonNullable<Drive['trim']>>;
   };
   control: Sheet['control'] & { gains?: Required<NonNullable<Sheet['control']['gains']>> };
-  speeds: Required<Sheet['speeds']>;
+  speeds: Omit<Required<Sheet['speeds']>, 'classes'> & { classes: 'auto' | SpeedClass[] };
   start: Required<Sheet['start']>;
   tolerances: Required<NonNullable<Sheet['tolerances']>>;
 }
@@ -34,7 +38,19 @@ const NEVER_FILLED = ['pitchMm'];
 
 /** A copy of the sheet with every default filled in. `sheet` has to fit the schema. */
 export function withDefaults(sheet: Sheet): ResolvedSheet {
-  return filled(SCHEMAS.sheet, SCHEMAS.sheet, sheet) as ResolvedSheet;
+  const whole = filled(SCHEMAS.sheet, SCHEMAS.sheet, sheet) as ResolvedSheet;
+  const classes = sheet.speeds.classes;
+  if (classes !== 'auto') {
+    // a class without either is told by the rule class-bends; until then it counts as one for the tightest bend
+    const usual = sheet.line.tightestRadiusMm;
+    whole.speeds.classes = classes.map((each) => ({ ...each, minRadiusMm: classRadiusMm(each) ?? usual }));
+  }
+  return whole;
+}
+
+/** Smallest radius of a class: as given, or length / angle of its sharpest bend. */
+function classRadiusMm({ minRadiusMm, sharpness }: GivenClass): number | undefined {
+  return minRadiusMm ?? (sharpness && sharpness.withinMm / degToRad(sharpness.turnDeg));
 }
 
 function filled(root: SchemaNode, node: SchemaNode, value: unknown): unknown {

@@ -280,7 +280,20 @@ export interface Sheet {
           /**
            * The class serves bends of at least this centre-line radius. [mm]
            */
-          minRadiusMm: number;
+          minRadiusMm?: number;
+          /**
+           * In place of the radius: the class serves bends that turn by at most this angle within this length of lane.
+           */
+          sharpness?: {
+            /**
+             * Angle by which the lane turns. [deg]
+             */
+            turnDeg: number;
+            /**
+             * Length along the centre line in which it turns. [mm]
+             */
+            withinMm: number;
+          };
           /**
            * Speed of the axle's middle in such bends. [m/s]
            */

@@ -122,19 +122,35 @@ export function positionsQuestion(pointer: string, facts: Facts): Question {
   };
 }
 
-const CLASS_FORM = 'name, smallest radius, speed; for example: wide 400 mm 0.9 m/s; tight 120 mm 0.5 m/s';
-const CLASS = /^(.+?)\s+([\d.,]+\s*[a-z"]*)\s+([\d.,]+\s*[a-z/]*)$/i;
+const CLASS_FORM =
+  'name, smallest radius or sharpest bend, speed; for example: wide 400 mm 0.9 m/s; tight 90 deg in 190 mm 0.5 m/s';
+const CLASS = /^(.+?)\s+(?:([\d.,]+\s*(?:deg|°)?)\s+in\s+)?([\d.,]+\s*[a-z"]*)\s+([\d.,]+\s*[a-z/]*)$/i;
 
 function readClass(pointer: string, text: string): Read {
-  const [, name = '', radius = '', speed = ''] = CLASS.exec(text.trim()) ?? [];
+  const [, name = '', turn, length = '', speed = ''] = CLASS.exec(text.trim()) ?? [];
   if (!new RegExp(nodeAt(`${pointer}/0/name`).pattern ?? '').test(name)) {
     return { problem: `${quote(text.trim())} is no speed class. Write ${CLASS_FORM}.` };
   }
-  const minRadiusMm = readNumber(nodeAt(`${pointer}/0/minRadiusMm`), radius);
-  if ('problem' in minRadiusMm) return minRadiusMm;
+  const bends = turn === undefined ? readRadius(pointer, length) : readSharpness(pointer, turn, length);
+  if ('problem' in bends) return bends;
   const speedMps = readNumber(nodeAt(`${pointer}/0/speedMps`), speed);
   if ('problem' in speedMps) return speedMps;
-  return { value: { name, minRadiusMm: minRadiusMm.value, speedMps: speedMps.value } };
+  return { value: { name, ...bends.value, speedMps: speedMps.value } };
+}
+
+type Bends = { value: Record<string, Json> } | { problem: string };
+
+function readRadius(pointer: string, text: string): Bends {
+  const read = readNumber(nodeAt(`${pointer}/0/minRadiusMm`), text);
+  return 'problem' in read ? read : { value: { minRadiusMm: read.value } };
+}
+
+function readSharpness(pointer: string, turn: string, length: string): Bends {
+  const turnDeg = readNumber(nodeAt(`${pointer}/0/sharpness/turnDeg`), turn);
+  if ('problem' in turnDeg) return turnDeg;
+  const withinMm = readNumber(nodeAt(`${pointer}/0/sharpness/withinMm`), length);
+  if ('problem' in withinMm) return withinMm;
+  return { value: { sharpness: { turnDeg: turnDeg.value, withinMm: withinMm.value } } };
 }
 
 /** "auto", or classes with semicolons between. */
@@ -165,6 +181,9 @@ export function classesQuestion(pointer: string, facts: Facts): Question {
 }
 
 function showClass(each: Record<string, Json>): string {
-  const { name, minRadiusMm, speedMps } = each;
-  return `${plainly(name)} ${describeValue(minRadiusMm, 'mm')} ${describeValue(speedMps, 'm/s')}`;
+  const { name, minRadiusMm, sharpness, speedMps } = each;
+  const bends = isObject(sharpness)
+    ? `${describeValue(sharpness['turnDeg'], 'deg')} in ${describeValue(sharpness['withinMm'], 'mm')}`
+    : describeValue(minRadiusMm, 'mm');
+  return `${plainly(name)} ${bends} ${describeValue(speedMps, 'm/s')}`;
 }

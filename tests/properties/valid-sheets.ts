@@ -70,12 +70,21 @@ function calibration({ board, request }: Wiring): fc.Arbitrary<Pick<Sheet['senso
 
 function speeds(radiusMm: number, topSpeedMps: number): fc.Arbitrary<Sheet['speeds']> {
   const finishTargetPercent = decimal(80, 99.9);
+  const inTurn = (minRadiusMm: number, turnDeg: number) => ({
+    sharpness: { turnDeg, withinMm: Math.floor((minRadiusMm * turnDeg * Math.PI) / 180) },
+  });
   const byHand = fc.array(decimal(0.1, 0.9, 2), { minLength: 1, maxLength: 5 }).map((shares) =>
     shares
       .sort((a, b) => a - b)
       .map((share, index) => ({
-        name: `class ${index + 1}`,
+        share,
+        index,
         minRadiusMm: Math.max(40, Math.floor(radiusMm)) * (index + 1),
+      }))
+      .map(({ share, index, minRadiusMm }) => ({
+        name: `class ${index + 1}`,
+        // every other class tells its bends by sharpness
+        ...(index % 2 === 0 ? { minRadiusMm } : inTurn(minRadiusMm, 90)),
         speedMps: Math.max(0.02, Math.round(share * topSpeedMps * 1000) / 1000),
       })),
   );

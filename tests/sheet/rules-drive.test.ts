@@ -48,6 +48,37 @@ testRules({
     },
     { when: 'four times the demo speed', changes: { '/drive/motor/noLoadRpm': 2728 }, want: [] },
   ],
+  'class-bends': [
+    {
+      when: 'a radius and a sharpness, and neither',
+      changes: {
+        '/speeds/classes': [
+          { name: 'wide', speedMps: 0.8 },
+          {
+            name: 'bend',
+            minRadiusMm: 120,
+            sharpness: { turnDeg: 90, withinMm: 188 },
+            speedMps: 0.5,
+          },
+        ],
+      },
+      want: [
+        '/speeds/classes/0: Class "wide" has neither of a radius (minRadiusMm) and a sharpness.',
+        '/speeds/classes/1: Class "bend" has both of a radius (minRadiusMm) and a sharpness.',
+      ],
+    },
+    {
+      // a quarter turn of 119.7 mm radius is 188 mm long
+      when: 'one by radius, one by sharpness',
+      changes: {
+        '/speeds/classes': [
+          { name: 'wide', minRadiusMm: 500, speedMps: 0.8 },
+          { name: 'bend', sharpness: { turnDeg: 90, withinMm: 188 }, speedMps: 0.5 },
+        ],
+      },
+      want: [],
+    },
+  ],
   'speed-classes': [
     {
       when: 'two names that the firmware cannot tell apart',

@@ -137,7 +137,7 @@ export const SCHEMA_PROBLEM_CASES: SchemaProblemCase[] = [
         message: '7 is not an object.',
         got: '7',
         allowed: 'an object: { ... }',
-        fix: 'Write an object with the keys name, minRadiusMm and speedMps.',
+        fix: 'Write an object with the keys name and speedMps.',
       },
     ],
   },

@@ -93,10 +93,23 @@ describe('speed classes', () => {
     expect(question.read(question.show(classes))).toEqual({ value: classes });
   });
 
+  it('may be told by sharpness', () => {
+    const sharp = [
+      { name: 'wide', minRadiusMm: 400, speedMps: 0.9 },
+      { name: 'tight', sharpness: { turnDeg: 90, withinMm: 190 }, speedMps: 0.5 },
+    ];
+    expect(question.read('wide 400 0.9; tight 90 deg in 19 cm 0.5 m/s')).toEqual({ value: sharp });
+    expect(question.read('wide 400 0.9; tight 90 in 190 0.5')).toEqual({ value: sharp });
+    expect(question.read(question.show(sharp))).toEqual({ value: sharp });
+    expect(question.read('tight 270 deg in 190 mm 0.5')).toMatchObject({
+      problem: expect.stringContaining('270 deg is outside 1 to 180 deg') as string,
+    });
+  });
+
   it('say how they are written', () => {
     expect(question.read('fast')).toEqual({
       problem:
-        '"fast" is no speed class. Write name, smallest radius, speed; for example: wide 400 mm 0.9 m/s; tight 120 mm 0.5 m/s.',
+        '"fast" is no speed class. Write name, smallest radius or sharpest bend, speed; for example: wide 400 mm 0.9 m/s; tight 90 deg in 190 mm 0.5 m/s.',
     });
     expect(question.read('wide 10 mm 0.9')).toMatchObject({
       problem: expect.stringContaining('10 mm is outside 40 to 100000 mm') as string,

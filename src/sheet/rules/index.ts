@@ -21,6 +21,7 @@ import type { SheetRule } from './rule.js';
 import { rule as sensorCounts } from './sensor-counts.js';
 import { rule as sensorPositions } from './sensor-positions.js';
 import { rule as slowClass } from './slow-class.js';
+import { rule as classBends } from './class-bends.js';
 import { rule as speedClasses } from './speed-classes.js';
 import { rule as spotFitsLine } from './spot-fits-line.js';
 import { rule as startDuty } from './start-duty.js';
@@ -47,6 +48,7 @@ export const RULES: readonly SheetRule[] = [
   voltageOrder,
   startDuty,
   topSpeed,
+  classBends,
   speedClasses,
   ruleOverrides,
   bendIsCut,
