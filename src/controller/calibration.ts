@@ -59,7 +59,8 @@ export class SweepCalibration {
         if (flatSensor < 0) flatSensor = i;
         continue;
       }
-      const scale = Math.floor((FULL_COVERAGE << CALIBRATION_BITS) / span);
+      // up, so that the line itself is a full coverage
+      const scale = Math.floor(((FULL_COVERAGE << CALIBRATION_BITS) + span - 1) / span);
       ground[i] = rise >= 0 ? (this.least[i] as number) : (this.most[i] as number);
       gain[i] = rise >= 0 ? scale : -scale;
     }

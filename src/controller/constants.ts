@@ -1,54 +1,8 @@
 /**
  * The integers that make up one controller. The design computes them, the twin runs on them and the
  * firmware prints them: there is no second copy of any of these numbers.
- *
- * Scales (a value of 1 stands for):
- *   offset        1/64 mm      left of the bar's centre is positive
- *   coverage      1/256        256 = the sensor's spot lies wholly on the line
- *   curvature     1/256 per m  left turns are positive
- *   speed (model) 1/64 mm/s
- *   wheel speed   1 mm/s
- *   duty          1/4096       4096 = full
- *   distance      sum of model speeds over samples: 1/64 mm/s times one sample period
  */
-
-/** Offset units in one metre. */
-export const OFFSET_PER_M = 64_000;
-/** Coverage of a sensor that lies wholly on the line. */
-export const FULL_COVERAGE = 256;
-/** Curvature units in 1/m. */
-export const CURVATURE_PER_INV_M = 256;
-/** Model speed units in one m/s. */
-export const SPEED_PER_MPS = 64_000;
-/** Duty of a motor at full voltage. */
-export const FULL_DUTY = 4096;
-/** Extra bits of the filtered input over the input. */
-export const FILTER_BITS = 4;
-/** Bits of the filter and model coefficients. */
-export const COEFFICIENT_BITS = 15;
-/** Bits of the calibration gain. */
-export const CALIBRATION_BITS = 12;
-/** Bits of the half track width. */
-export const TRACK_BITS = 16;
-/** Bits of the duty slope. */
-export const SLOPE_BITS = 12;
-/** Bits of a rule table's wheel-speed fractions: 64 = base speed. */
-export const FRACTION_BITS = 6;
-/** Bits of the rule table's curvature factor. */
-export const RULE_CURVATURE_BITS = 4;
-/** Bits of the edge table's values: 1024 = half the distance between two sensors. */
-export const EDGE_BITS = 10;
-/** Bits of coverage between two entries of the edge table; the table has (512 >> 5) + 1 entries. */
-export const EDGE_STEP_BITS = 5;
-/** Entries of the edge table. */
-export const EDGE_ENTRIES = 17;
-/** Bits of a class's speed slope. */
-export const SPEED_SLOPE_BITS = 4;
-/** How much faster than the motor the speed model closes a small speed error, as a shift. */
-export const SPEED_GAIN_BITS = 2;
-
-/** Bits dropped from a speed difference before it meets the motor model's coefficient. */
-export const SPEED_MODEL_BITS = 4;
+export * from './scales.js';
 
 /** Where in the course of following a line the controller is. */
 export const PHASE = { follow: 0, crossing: 1, gap: 2, search: 3, stopped: 4 } as const;
@@ -65,7 +19,7 @@ export interface SensingConstants {
   gain: readonly number[];
   /** sensorCount + 1 places: half way between neighbours, with one beyond each end; offset units. */
   gapMiddle: readonly number[];
-  /** Half the distance between neighbours, same indices; offset units. */
+  /** Half the distance between neighbours, same indices; offset units with GAP_HALF_BITS more bits. */
   gapHalf: readonly number[];
   /** Where an edge lies between two sensors, by the sum of their coverages; EDGE_ENTRIES values. */
   edgeTable: readonly number[];
@@ -85,9 +39,9 @@ export interface ClassConstants {
   name: string;
   /** Largest curvature of the class, 1 / its smallest radius, curvature units. */
   curvature: number;
-  /** Speed at that curvature, model speed units. */
+  /** Speed at that curvature, class speed units. */
   speed: number;
-  /** Speed gained per curvature unit below that, in 1/2^SPEED_SLOPE_BITS; 0 where one speed serves the whole class. */
+  /** Class speed gained per curvature unit below that, in 1/2^slopeBits; 0 where one speed serves the whole class. */
   speedSlope: number;
   /** Proportional gain: curvature units per input unit, in 1/2^gainBits. */
   proportional: number;
@@ -111,26 +65,26 @@ export interface SteeringConstants {
 }
 
 export interface DriveConstants {
+  /** Speed at full duty, um/s: what the speeds are shares of. The arithmetic does without it. */
+  fullSpeedUmS: number;
   /** Half the track width in m, in 1/2^TRACK_BITS. */
   halfTrack: number;
-  /** Largest turn rate, mrad/s. */
-  turnLimit: number;
-  /** Wheel speed at full duty, mm/s. */
-  wheelLimit: number;
-  /** Wheel speed up to which a wheel is left without duty, mm/s. */
+  /** Wheel speed up to which a wheel is left without duty, speed units. */
   wheelDead: number;
+  /** Bits of the classes' speed slopes. */
+  slopeBits: number;
   /** Motor model: share of a speed difference that a wheel makes up in one sample, 1/2^COEFFICIENT_BITS. */
   motorStep: number;
-  /** Wheel speed command above the present speed when speeding up, model speed units. */
+  /** Wheel speed command above the present speed when speeding up, speed units. */
   leadUp: number;
-  /** Wheel speed command below the present speed when braking, model speed units. */
+  /** Wheel speed command below the present speed when braking, speed units. */
   leadDown: number;
-  /** Speed during the search for a lost line, model speed units. */
+  /** Speed during the search for a lost line, class speed units. */
   searchSpeed: number;
   /** Duty at which each wheel begins to turn. */
   startDutyLeft: number;
   startDutyRight: number;
-  /** Duty per mm/s above that, in 1/2^SLOPE_BITS. */
+  /** Duty per speed unit above that, in 1/2^SLOPE_BITS. */
   slopeLeft: number;
   slopeRight: number;
 }
@@ -192,4 +146,9 @@ export interface ControllerConstants {
   classes: readonly ClassConstants[];
   /** Present with kind `rules` only. */
   rules?: RuleConstants;
+}
+
+/** Speed at full duty of a controller, m/s. */
+export function fullSpeedMps({ drive }: ControllerConstants): number {
+  return drive.fullSpeedUmS / 1e6;
 }

@@ -1,7 +1,7 @@
 /**
  * What is done while the line is not seen as usual: crossing, gap, corner, search, and the stop in the end.
  *
- * Distances are sums of model speeds over samples (constants.ts).
+ * Distances are sums of speeds over samples (constants.ts).
  */
 import { type MemoryConstants, PHASE, type Phase } from './constants.js';
 import type { Sensing } from './sensing.js';
@@ -29,7 +29,7 @@ export class LineMemory {
     this.travelled = this.searched = this.corner = 0;
   }
 
-  /** One sample, after the sensors were read; `speed` is the modelled one. */
+  /** One sample, after the sensors were read; `speed` is the modelled one, speed units. */
   update(speed: number): void {
     if (this.corner > 0) this.corner -= speed;
     // a bar that stays on the line everywhere ends a search, and with it the run, like one that sees none

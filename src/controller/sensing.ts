@@ -1,7 +1,7 @@
 /**
  * From raw readings to the line's offset at the bar: the integer arithmetic that the firmware repeats.
  *
- * Each reading becomes a coverage 0..256. Neighbouring sensors on the line form a run. The edge of the
+ * Each reading becomes a coverage 0..255. Neighbouring sensors on the line form a run. The edge of the
  * line at an end of the run lies between a covered and an uncovered sensor; the sum of their two
  * coverages says where (edge table). Two edges give the centre; where one lies outside the bar, the
  * other and the line width do.
@@ -11,25 +11,30 @@ import {
   EDGE_BITS,
   EDGE_STEP_BITS,
   FULL_COVERAGE,
+  GAP_HALF_BITS,
   type SensingConstants,
 } from './constants.js';
 
-/** Position of an edge beside the middle of its gap, offset units; `sum` of coverages 0..512. */
+/**
+ * Position of an edge beside the middle of its gap, offset units.
+ *
+ * @param halfGap half the gap, offset units with GAP_HALF_BITS more bits
+ * @param sum of the coverages on both sides, 0..510
+ */
 export function edgeShift(constants: SensingConstants, halfGap: number, sum: number): number {
   const table = constants.edgeTable;
-  const index = sum >> EDGE_STEP_BITS;
+  // one more, so that an entry stands for just one full coverage: an edge in the middle
+  const place = sum + 1;
+  const index = place >> EDGE_STEP_BITS;
   const low = table[index] as number;
-  if (index >= table.length - 1) return (halfGap * low) >> EDGE_BITS;
-  const part = sum & ((1 << EDGE_STEP_BITS) - 1);
+  const part = place & ((1 << EDGE_STEP_BITS) - 1);
   const value = low + ((((table[index + 1] as number) - low) * part) >> EDGE_STEP_BITS);
-  return (halfGap * value) >> EDGE_BITS;
+  return (halfGap * value) >> (EDGE_BITS + GAP_HALF_BITS);
 }
 
 export class Sensing {
-  /** Coverage of each sensor, 0..256; with rules 0 or 256. */
+  /** Coverage of each sensor, 0..255; with rules 0 or 255. */
   readonly coverage: Int32Array;
-  /** What `centre` saw of `reach`. */
-  private seenReach = 0;
   /** Whether the line is under the bar. */
   found = false;
   /** Whether the bar lies on a crossing. */
@@ -69,10 +74,10 @@ export class Sensing {
     return total;
   }
 
-  /** Centre of the line whose run of sensors is first..last, offset units. */
-  private centre(first: number, last: number): number {
+  /** Takes the run of sensors first..last for the line: offset and reach. */
+  private measure(): void {
     const { sensorCount, gapMiddle, gapHalf, halfLine, cornerWidth } = this.constants;
-    const coverage = this.coverage;
+    const { coverage, first, last } = this;
     let leftEdge = 0;
     let rightEdge = 0;
     if (first > 0) {
@@ -84,17 +89,28 @@ export class Sensing {
       rightEdge =
         (gapMiddle[last + 1] as number) - edgeShift(this.constants, gapHalf[last + 1] as number, sum);
     }
-    this.seenReach = 0;
-    if (first > 0 && last < sensorCount - 1) return (leftEdge + rightEdge) >> 1;
-    if (first > 0) {
-      if (leftEdge - (gapMiddle[sensorCount] as number) > cornerWidth) this.seenReach = -1;
-      return leftEdge - halfLine;
+    if (first > 0 && last < sensorCount - 1) {
+      this.offset = (leftEdge + rightEdge) >> 1;
+    } else if (first > 0) {
+      if (leftEdge - (gapMiddle[sensorCount] as number) > cornerWidth) this.reach = -1;
+      this.offset = leftEdge - halfLine;
+    } else if (last < sensorCount - 1) {
+      if ((gapMiddle[0] as number) - rightEdge > cornerWidth) this.reach = 1;
+      this.offset = rightEdge + halfLine;
+    } else {
+      this.offset = 0;
     }
-    if (last < sensorCount - 1) {
-      if ((gapMiddle[0] as number) - rightEdge > cornerWidth) this.seenReach = 1;
-      return rightEdge + halfLine;
-    }
-    return 0;
+  }
+
+  /** How far the run of sensors first..last lies from the last offset, by the middles of its gaps; offset units. */
+  private distance(first: number, last: number): number {
+    const { sensorCount, gapMiddle, halfLine } = this.constants;
+    const leftEdge = gapMiddle[first] as number;
+    const rightEdge = gapMiddle[last + 1] as number;
+    let middle = (leftEdge + rightEdge) >> 1;
+    if (first === 0) middle = rightEdge + halfLine;
+    else if (last === sensorCount - 1) middle = leftEdge - halfLine;
+    return middle > this.offset ? middle - this.offset : this.offset - middle;
   }
 
   /** With no sensor on the line: a line just beyond an end of the bar still half covers the end sensor. */
@@ -118,7 +134,6 @@ export class Sensing {
   /** Feedback: of several runs, the one nearest to the last offset is the line. */
   private takeNearestRun(): void {
     const { sensorCount, highCoverage } = this.constants;
-    const before = this.offset;
     let nearest = 0;
     let i = 0;
     while (i < sensorCount) {
@@ -128,18 +143,16 @@ export class Sensing {
       }
       const first = i;
       while (i < sensorCount && (this.coverage[i] as number) >= highCoverage) i++;
-      const offset = this.centre(first, i - 1);
-      const distance = offset > before ? offset - before : before - offset;
+      const distance = this.distance(first, i - 1);
       if (!this.found || distance < nearest) {
         this.found = true;
         nearest = distance;
-        this.offset = offset;
-        this.reach = this.seenReach;
         this.first = first;
         this.last = i - 1;
       }
     }
-    if (!this.found) this.findBeyondEnds();
+    if (this.found) this.measure();
+    else this.findBeyondEnds();
   }
 
   /** Rules: of several runs the widest is the line; between equally wide ones, the span of all of them. */
@@ -164,9 +177,7 @@ export class Sensing {
         this.last = i - 1;
       }
     }
-    if (!this.found) return;
-    this.offset = this.centre(this.first, this.last);
-    this.reach = this.seenReach;
+    if (this.found) this.measure();
   }
 
   /** Reads one set of counts. */

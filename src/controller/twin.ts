@@ -7,33 +7,30 @@
  * very command that the wheels get, stands in for it. The duty inverts the motors' dead zone and speed line.
  *
  * Only additions, products, comparisons and arithmetic right shifts are used; these agree in C++, Python and
- * JavaScript. No intermediate leaves 32 bits (design/intervals.ts shows it for each sheet).
+ * JavaScript. No intermediate leaves 32 bits, no factor 16 (design/intervals.ts shows it for each sheet).
  */
 import {
+  CLASS_SPEED_BITS,
   COEFFICIENT_BITS,
+  CURVATURE_BITS,
   type ControllerConstants,
   FILTER_BITS,
   FRACTION_BITS,
+  FULL_SPEED,
   PHASE,
   type Phase,
   RULE_CURVATURE_BITS,
-  SPEED_GAIN_BITS,
+  SPEED_BITS,
   SPEED_MODEL_BITS,
-  SPEED_SLOPE_BITS,
   TRACK_BITS,
 } from './constants.js';
+import { clamp } from './clamp.js';
 import { runIndex } from './run-index.js';
 import { wheelDuty } from './wheel-duty.js';
 import { LineMemory } from './line-memory.js';
 import { Sensing } from './sensing.js';
 
 const INT16_MAX = 32767;
-
-function clamp(value: number, limit: number): number {
-  if (value > limit) return limit;
-  if (value < -limit) return -limit;
-  return value;
-}
 
 export class Twin {
   readonly sensing: Sensing;
@@ -42,7 +39,7 @@ export class Twin {
   classIndex = 0;
   /** Curvature command, curvature units. */
   curvature = 0;
-  /** Modelled vehicle speed, model speed units. */
+  /** Modelled vehicle speed, 1/2^SPEED_MODEL_BITS of the speed at full duty. */
   speed = 0;
   /** Duties, -4096..4096; positive drives forward. */
   dutyLeft = 0;
@@ -50,7 +47,7 @@ export class Twin {
 
   /** Low-passed input, FILTER_BITS more bits. */
   private filtered = 0;
-  /** Low-passed curvature demand and held curvature, FILTER_BITS more bits. */
+  /** Low-passed curvature demand and held curvature, COEFFICIENT_BITS more bits. */
   private demand = 0;
   private held = 0;
   /** Curvature of the bend that the vehicle is in, curvature units, and distance yet to go until it is over. */
@@ -69,6 +66,11 @@ export class Twin {
   /** Whether the line is lost for good: motors off, and so until the next start. */
   get stopped(): boolean {
     return this.phase === PHASE.stopped;
+  }
+
+  /** Modelled vehicle speed, speed units. */
+  private get wholeSpeed(): number {
+    return this.speed >> (SPEED_MODEL_BITS - SPEED_BITS);
   }
 
   /** Puts the controller into the state at the start of a run. */
@@ -90,7 +92,7 @@ export class Twin {
     if (this.phase === PHASE.stopped) return;
     this.sensing.read(counts);
     const before = this.phase;
-    this.memory.update(this.speed);
+    this.memory.update(this.wholeSpeed);
     if (this.stopped) {
       this.dutyLeft = this.dutyRight = this.speed = 0;
       return;
@@ -98,7 +100,7 @@ export class Twin {
     if (this.phase === PHASE.follow) this.steer(before !== PHASE.follow);
     else if (this.phase === PHASE.search)
       this.curvature = this.memory.side * this.constants.steering.searchCurvature;
-    else this.curvature = this.held >> FILTER_BITS;
+    else this.curvature = this.held >> COEFFICIENT_BITS;
     this.pickClass();
     this.drive();
   }
@@ -107,14 +109,13 @@ export class Twin {
   private steer(regained: boolean): void {
     const { steering, classes } = this.constants;
     const gains = classes[this.classIndex]!;
-    const input = clamp(this.input(), INT16_MAX);
+    const input = this.input();
     if (regained) this.filtered = input << FILTER_BITS;
     const change = clamp((input << FILTER_BITS) - this.filtered, INT16_MAX);
     this.filtered += (change * gains.derivativeFilter) >> COEFFICIENT_BITS;
     const sum = (input * gains.proportional + change * gains.derivative) >> steering.gainBits;
     this.curvature = clamp(sum, steering.curvatureLimit);
-    const heldChange = (this.curvature << FILTER_BITS) - this.held;
-    this.held += (clamp(heldChange, INT16_MAX) * steering.holdFilter) >> COEFFICIENT_BITS;
+    this.held += (this.curvature - (this.held >> COEFFICIENT_BITS)) * steering.holdFilter;
   }
 
   /** What is steered on: the offset, or with rules the curvature that the table asks for. */
@@ -130,16 +131,15 @@ export class Twin {
   private pickClass(): void {
     const { classes, steering, memory } = this.constants;
     const size = this.curvature < 0 ? -this.curvature : this.curvature;
-    const change = clamp((size << FILTER_BITS) - this.demand, INT16_MAX);
-    this.demand += (change * steering.demandFilter) >> COEFFICIENT_BITS;
+    this.demand += (size - (this.demand >> COEFFICIENT_BITS)) * steering.demandFilter;
     const last = classes.length - 1;
-    let demand = this.demand >> FILTER_BITS;
+    let demand = this.demand >> COEFFICIENT_BITS;
     if (demand > classes[last]!.curvature) demand = classes[last]!.curvature;
     if (demand >= this.bend) {
       this.bend = demand;
       this.release = memory.releaseDistance;
     } else {
-      this.release -= this.speed;
+      this.release -= this.wholeSpeed;
       if (this.release <= 0) {
         this.release = 0;
         this.bend = demand;
@@ -150,48 +150,49 @@ export class Twin {
     this.classIndex = index;
   }
 
-  /** Speed for the bend that the vehicle is in, model speed units. */
+  /** Speed for the bend that the vehicle is in, class speed units. */
   private targetSpeed(): number {
     const { classes, drive } = this.constants;
     if (this.phase === PHASE.search) return drive.searchSpeed;
     const { curvature, speed, speedSlope } = classes[this.classIndex]!;
-    return speed + (((curvature - this.bend) * speedSlope) >> SPEED_SLOPE_BITS);
+    return speed + (((curvature - this.bend) * speedSlope) >> drive.slopeBits);
   }
 
   /** From speed class and curvature to duties; the wheel difference is kept when a wheel saturates. */
   private drive(): void {
     const { drive } = this.constants;
-    let lead = (this.targetSpeed() - this.speed) << SPEED_GAIN_BITS;
+    const speed = this.wholeSpeed;
+    // in class speed units a difference is larger than in speed units: the gain
+    let lead = this.targetSpeed() - (this.speed >> (SPEED_MODEL_BITS - CLASS_SPEED_BITS));
     if (lead > drive.leadUp) lead = drive.leadUp;
     if (lead < -drive.leadDown) lead = -drive.leadDown;
-    const base = this.base((this.speed + lead) >> 6);
+    const base = this.base(speed + lead);
 
-    const turn = clamp(((this.speed >> 6) * this.curvature) >> 8, drive.turnLimit);
-    const half = (turn * drive.halfTrack) >> TRACK_BITS;
+    const perSpeed = (this.curvature * drive.halfTrack) >> CURVATURE_BITS;
+    const half = (speed * perSpeed) >> TRACK_BITS;
     let left = base - half;
     let right = base + half;
     const outer = left > right ? left : right;
-    if (outer > drive.wheelLimit) {
-      left -= outer - drive.wheelLimit;
-      right -= outer - drive.wheelLimit;
+    if (outer > FULL_SPEED) {
+      left -= outer - FULL_SPEED;
+      right -= outer - FULL_SPEED;
     }
-    left = clamp(left, drive.wheelLimit);
-    right = clamp(right, drive.wheelLimit);
+    left = clamp(left, FULL_SPEED);
+    right = clamp(right, FULL_SPEED);
 
-    const middle = (left + right) << 5;
-    const lag = (middle - this.speed) >> SPEED_MODEL_BITS;
-    this.speed += (lag * drive.motorStep) >> (COEFFICIENT_BITS - SPEED_MODEL_BITS);
+    // twice the difference in speed units, times a coefficient: SPEED_BITS + 1 + COEFFICIENT_BITS = SPEED_MODEL_BITS
+    this.speed += (left + right - 2 * speed) * drive.motorStep;
     if (this.speed < 0) this.speed = 0;
     this.dutyLeft = wheelDuty(left, drive.wheelDead, drive.startDutyLeft, drive.slopeLeft);
     this.dutyRight = wheelDuty(right, drive.wheelDead, drive.startDutyRight, drive.slopeRight);
   }
 
-  /** Wheel speed for both wheels, mm/s; a rule's mean fraction scales it. */
+  /** Wheel speed for both wheels, speed units; a rule's mean fraction scales it. */
   private base(speed: number): number {
     const { rules, sensing } = this.constants;
     if (rules === undefined || this.phase !== PHASE.follow) return speed;
     const index = runIndex(this.sensing.first, this.sensing.last, sensing.sensorCount);
     const sum = (rules.left[index] as number) + (rules.right[index] as number);
-    return (speed * sum) >> (FRACTION_BITS + 1);
+    return clamp((speed * sum) >> (FRACTION_BITS + 1), 2 * FULL_SPEED);
   }
 }

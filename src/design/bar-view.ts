@@ -27,15 +27,16 @@ export function weakestPeak(vehicle: Vehicle): number {
   return weakest;
 }
 
-/** Coverage 0..256 from which a sensor counts as on the line: half, or less where the line can slip between two. */
+/** Coverage 0..255 from which a sensor counts as on the line: half, or less where the line can slip between two. */
 export function highCoverage(vehicle: Vehicle): number {
   const weakest = Math.round(weakestPeak(vehicle) * FULL_COVERAGE);
-  return Math.max(16, Math.min(FULL_COVERAGE / 2, weakest >> 1));
+  return Math.max(16, (weakest + 1) >> 1);
 }
 
 /** Distance from a sensor to the line's middle at which the sensor just counts as on the line, m. */
 export function switchingDistanceM(vehicle: Vehicle): number {
-  const share = highCoverage(vehicle) / FULL_COVERAGE;
+  // a coverage stands for a step of shares; its middle makes half of full coverage one half
+  const share = (highCoverage(vehicle) - 0.5) / FULL_COVERAGE;
   return seeingReach(vehicle.line.widthM, vehicle.bar.spotRadiusM, share) ?? 0;
 }
 

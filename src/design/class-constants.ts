@@ -6,12 +6,11 @@ import {
   type ControllerConstants,
   FILTER_BITS,
   OFFSET_PER_M,
-  SPEED_SLOPE_BITS,
 } from '../controller/constants.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { classForBend } from './class-for-bend.js';
 import type { ClassSettings } from './design.js';
-import { INT16_MAX, coefficientOf, curvatureUnits, speedUnits } from './scales.js';
+import { INT16_MAX, classSpeedUnits, coefficientOf, curvatureUnits } from './scales.js';
 import type { SteeringGains } from './steering-loop.js';
 
 const LARGEST_GAIN_BITS = 14;
@@ -67,28 +66,42 @@ export function gainBits(gains: readonly { proportional: number; derivative: num
   return Math.max(0, Math.min(LARGEST_GAIN_BITS, bits));
 }
 
+/** Bits that a speed slope may have: whole bytes where the slopes are gentle. */
+const SLOPE_BITS_TRIED = [8, 4, 0];
+
+/** Class speed units gained for each curvature unit below the class's own; 0 where one speed serves the whole class. */
+function speedSlope(vehicle: Vehicle, classes: readonly ClassSettings[], index: number): number {
+  const [own, wider] = [classes[index]!, classes[index - 1]];
+  if (wider === undefined || vehicle.speeds.classes !== 'auto') return 0;
+  const range = curvatureUnits(1 / own.minRadiusM) - curvatureUnits(1 / wider.minRadiusM);
+  const { topSpeedMps } = vehicle.drive;
+  const gained = classSpeedUnits(wider.speedMps, topSpeedMps) - classSpeedUnits(own.speedMps, topSpeedMps);
+  return range === 0 ? 0 : gained / range;
+}
+
+/** The most bits with which every speed slope fits a 16-bit integer. */
+export function speedSlopeBits(vehicle: Vehicle, classes: readonly ClassSettings[]): number {
+  const steepest = Math.max(...classes.map((_, i) => Math.abs(speedSlope(vehicle, classes, i))));
+  return SLOPE_BITS_TRIED.find((bits) => steepest * (1 << bits) <= INT16_MAX) ?? 0;
+}
+
 export function classConstants(
   vehicle: Vehicle,
   classes: readonly ClassSettings[],
   tableGain: number,
-  bits: number,
+  bits: { gainBits: number; slopeBits: number },
 ): ClassConstants[] {
   return classes.map((designed, i) => {
     const gains = realGains(vehicle, designed, tableGain);
-    const curvature = curvatureUnits(1 / designed.minRadiusM);
-    const speed = speedUnits(designed.speedMps);
-    const wider = classes[i - 1];
-    const range = wider === undefined ? 0 : curvature - curvatureUnits(1 / wider.minRadiusM);
-    const stepped = wider === undefined || range === 0 || vehicle.speeds.classes !== 'auto';
-    const slope = stepped ? 0 : (speedUnits(wider.speedMps) - speed) / range;
     return {
       name: designed.name,
-      curvature,
-      speed,
-      speedSlope: Math.round(slope * (1 << SPEED_SLOPE_BITS)),
+      curvature: curvatureUnits(1 / designed.minRadiusM),
+      speed: classSpeedUnits(designed.speedMps, vehicle.drive.topSpeedMps),
+      // down, so that the speed never passes that of the wider class
+      speedSlope: Math.min(INT16_MAX, Math.floor(speedSlope(vehicle, classes, i) * (1 << bits.slopeBits))),
       derivativeFilter: coefficientOf(designed.gains.filterCoefficient),
-      proportional: Math.round(gains.proportional * (1 << bits)),
-      derivative: Math.min(INT16_MAX, Math.round(gains.derivative * (1 << bits))),
+      proportional: Math.round(gains.proportional * (1 << bits.gainBits)),
+      derivative: Math.min(INT16_MAX, Math.round(gains.derivative * (1 << bits.gainBits))),
     };
   });
 }

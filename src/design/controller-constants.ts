@@ -1,5 +1,6 @@
 /** From the design in SI units to the integers of the controller. Each rounding is to the nearest. */
 import {
+  CURVATURE_BITS,
   CURVATURE_PER_INV_M,
   type ControllerConstants,
   type DriveConstants,
@@ -9,19 +10,37 @@ import {
   OFFSET_PER_M,
   RULE_CURVATURE_BITS,
   SLOPE_BITS,
+  SPEED_BITS,
   type SteeringConstants,
   type SweepConstants,
   TRACK_BITS,
 } from '../controller/constants.js';
-import { mToMm } from '../sheet/units.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { meanPitchM } from './bar-view.js';
-import { classConstants, gainBits, realGains, tableGainPerM2 } from './class-constants.js';
+import { classConstants, gainBits, realGains, speedSlopeBits, tableGainPerM2 } from './class-constants.js';
 import type { ClassSettings } from './design.js';
 import * as choice from './drive-choices.js';
 import { runActions } from './rule-runs.js';
-import { coefficient, curvatureUnits, distanceUnits, speedUnits } from './scales.js';
+import {
+  INT16_MAX,
+  classSpeedUnits,
+  coefficient,
+  curvatureUnits,
+  distanceUnits,
+  speedUnits,
+} from './scales.js';
 import { sensingConstants } from './sensing-constants.js';
+
+/** Half the track width, in m with TRACK_BITS. */
+function halfTrack(vehicle: Vehicle): number {
+  return Math.round((vehicle.drive.trackM / 2) * (1 << TRACK_BITS));
+}
+
+/** Curvature units of a command, cut to where half the wheels' difference for each speed fits 16 bits: it is 2 there. */
+function commandUnits(vehicle: Vehicle, curvaturePerM: number): number {
+  const largest = Math.floor((INT16_MAX << CURVATURE_BITS) / halfTrack(vehicle));
+  return Math.min(curvatureUnits(curvaturePerM), largest);
+}
 
 function steeringConstants(vehicle: Vehicle, bits: number): SteeringConstants {
   const period = vehicle.board.samplePeriodS;
@@ -29,24 +48,24 @@ function steeringConstants(vehicle: Vehicle, bits: number): SteeringConstants {
     gainBits: bits,
     demandFilter: coefficient(choice.demandFilterS(vehicle), period),
     holdFilter: coefficient(choice.HOLD_FILTER_S, period),
-    curvatureLimit: curvatureUnits(choice.curvatureLimitPerM(vehicle)),
-    searchCurvature: curvatureUnits(choice.searchCurvaturePerM(vehicle)),
+    curvatureLimit: commandUnits(vehicle, choice.curvatureLimitPerM(vehicle)),
+    searchCurvature: commandUnits(vehicle, choice.searchCurvaturePerM(vehicle)),
   };
 }
 
-function driveConstants(vehicle: Vehicle): DriveConstants {
+function driveConstants(vehicle: Vehicle, slopeBits: number): DriveConstants {
   const { drive, board } = vehicle;
-  const wheelLimit = Math.round(mToMm(drive.topSpeedMps));
-  const slope = ((1 - drive.startDuty) * FULL_DUTY * (1 << SLOPE_BITS)) / wheelLimit;
+  const top = drive.topSpeedMps;
+  const slope = ((1 - drive.startDuty) * FULL_DUTY * (1 << SLOPE_BITS)) / (1 << SPEED_BITS);
   return {
-    halfTrack: Math.round((drive.trackM / 2) * (1 << TRACK_BITS)),
-    turnLimit: Math.round((2.2 * drive.topSpeedMps * 1000) / drive.trackM),
-    wheelLimit,
-    wheelDead: Math.round(wheelLimit * choice.WHEEL_DEAD_SHARE),
+    fullSpeedUmS: Math.round(top * 1e6),
+    halfTrack: halfTrack(vehicle),
+    wheelDead: Math.round((1 << SPEED_BITS) * choice.WHEEL_DEAD_SHARE),
+    slopeBits,
     motorStep: coefficient(drive.lagS, board.samplePeriodS),
-    leadUp: speedUnits(drive.lagS * choice.speedUpMps2(vehicle)),
-    leadDown: speedUnits(drive.lagS * choice.brakingMps2(vehicle)),
-    searchSpeed: speedUnits(choice.searchSpeedMps(vehicle)),
+    leadUp: speedUnits(drive.lagS * choice.speedUpMps2(vehicle), top),
+    leadDown: speedUnits(drive.lagS * choice.brakingMps2(vehicle), top),
+    searchSpeed: classSpeedUnits(choice.searchSpeedMps(vehicle), top),
     startDutyLeft: Math.round(drive.startDuty * FULL_DUTY * drive.trimLeft),
     startDutyRight: Math.round(drive.startDuty * FULL_DUTY * drive.trimRight),
     slopeLeft: Math.round(slope * drive.trimLeft),
@@ -56,7 +75,7 @@ function driveConstants(vehicle: Vehicle): DriveConstants {
 
 function memoryConstants(vehicle: Vehicle): MemoryConstants {
   const period = vehicle.board.samplePeriodS;
-  const units = (m: number) => distanceUnits(m, period);
+  const units = (m: number) => distanceUnits(m, vehicle.drive.topSpeedMps, period);
   const outermost = vehicle.bar.positionsM[0] as number;
   const pitch = meanPitchM(vehicle.bar.positionsM);
   const side = Math.max(outermost - pitch / 2 + vehicle.line.widthM / 4, outermost / 2);
@@ -74,7 +93,7 @@ function sweepConstants(vehicle: Vehicle, drive: DriveConstants): SweepConstants
   const period = vehicle.board.samplePeriodS;
   const { turnTimeS, wheelSpeedMps } = choice.sweepTurn(vehicle);
   const duty = (start: number, slope: number) =>
-    start + ((Math.round(mToMm(wheelSpeedMps)) * slope) >> SLOPE_BITS);
+    start + ((speedUnits(wheelSpeedMps, vehicle.drive.topSpeedMps) * slope) >> SLOPE_BITS);
   return {
     dutyLeft: duty(drive.startDutyLeft, drive.slopeLeft),
     dutyRight: duty(drive.startDutyRight, drive.slopeRight),
@@ -91,9 +110,12 @@ export function controllerConstants(
   classes: readonly ClassSettings[],
 ): ControllerConstants {
   const tableGain = tableGainPerM2(vehicle, classes);
-  const bits = gainBits(classes.map((designed) => realGains(vehicle, designed, tableGain)));
+  const bits = {
+    gainBits: gainBits(classes.map((designed) => realGains(vehicle, designed, tableGain))),
+    slopeBits: speedSlopeBits(vehicle, classes),
+  };
   const sensing = sensingConstants(vehicle);
-  const drive = driveConstants(vehicle);
+  const drive = driveConstants(vehicle, bits.slopeBits);
   const period = vehicle.board.samplePeriodS;
   const constants: ControllerConstants = {
     kind: vehicle.control.kind,
@@ -101,7 +123,7 @@ export function controllerConstants(
     countdownSamples: Math.round(vehicle.start.countdownS / period),
     runLimitSamples: Math.round(vehicle.start.runLimitS / period),
     sensing,
-    steering: steeringConstants(vehicle, bits),
+    steering: steeringConstants(vehicle, bits.gainBits),
     drive,
     memory: memoryConstants(vehicle),
     classes: classConstants(vehicle, classes, tableGain, bits),

@@ -110,7 +110,10 @@ export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Des
   // a scale changes the classes' speeds and nothing else of the controller
   const controllerAt = (scale: SpeedScale): ControllerConstants => ({
     ...unscaled,
-    classes: classConstants(vehicle, settings(scale), tableGain, unscaled.steering.gainBits),
+    classes: classConstants(vehicle, settings(scale), tableGain, {
+      gainBits: unscaled.steering.gainBits,
+      slopeBits: unscaled.drive.slopeBits,
+    }),
   });
   const proving = new Proving(vehicle, provenOn);
   const given = vehicle.speeds.classes !== 'auto';

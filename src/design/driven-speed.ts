@@ -5,20 +5,21 @@
  * curvature kappa: v = v_class + slope (kappa_class - kappa); a slope of 0 makes steps (controller/twin.ts).
  */
 import {
+  CLASS_SPEED_BITS,
   CURVATURE_PER_INV_M,
   type ControllerConstants,
-  SPEED_PER_MPS,
-  SPEED_SLOPE_BITS,
+  fullSpeedMps,
 } from '../controller/constants.js';
 
 /**
  * @param radiusM radius of the bend, above 0, m
  * @returns speed of the axle's middle, m/s
  */
-export function drivenSpeedMps({ classes }: ControllerConstants, radiusM: number): number {
+export function drivenSpeedMps(controller: ControllerConstants, radiusM: number): number {
+  const { classes, drive } = controller;
   const last = classes[classes.length - 1]!;
   const curvature = Math.min(CURVATURE_PER_INV_M / radiusM, last.curvature);
   const serving = classes.find((each) => curvature <= each.curvature) ?? last;
-  const gained = ((serving.curvature - curvature) * serving.speedSlope) / (1 << SPEED_SLOPE_BITS);
-  return (serving.speed + gained) / SPEED_PER_MPS;
+  const gained = ((serving.curvature - curvature) * serving.speedSlope) / (1 << drive.slopeBits);
+  return ((serving.speed + gained) / (1 << CLASS_SPEED_BITS)) * fullSpeedMps(controller);
 }

@@ -8,8 +8,9 @@
  * S(x) = A((x + g)/r) + A((x - g)/r), which rises with x. The table is its inverse. Where spots do not
  * touch, S keeps the value 1 while the edge crosses the blind part; the table passes through its middle.
  */
-import { EDGE_BITS, EDGE_ENTRIES } from '../controller/constants.js';
+import { EDGE_BITS, EDGE_ENTRIES, EDGE_STEP_BITS, FULL_COVERAGE } from '../controller/constants.js';
 import { discShare } from '../vehicle/sensor-bar.js';
+import { INT16_MAX } from './scales.js';
 
 /** Edge position from the middle of the gap, in half gaps, at which two sensors see `sum` (0..2) together. */
 function edgeAt(sum: number, spotInHalfGaps: number): number {
@@ -34,12 +35,17 @@ function edgeAt(sum: number, spotInHalfGaps: number): number {
  *
  * @param spotRadiusM radius of a sensor's spot
  * @param pitchM distance between neighbouring sensors (the mean, where it varies)
- * @returns EDGE_ENTRIES integers, in 1/2^EDGE_BITS of half the distance between the sensors
+ * @returns EDGE_ENTRIES integers, in 1/2^EDGE_BITS of half the distance between the sensors; places that only the ends of
+ *   very large spots reach, where no edge is looked for, are cut to 16 bits
  */
 export function edgeTable(spotRadiusM: number, pitchM: number): number[] {
   const spot = spotRadiusM / (pitchM / 2);
-  const steps = EDGE_ENTRIES - 1;
-  return Array.from({ length: EDGE_ENTRIES }, (_, i) =>
-    Math.round(edgeAt((2 * i) / steps, spot) * (1 << EDGE_BITS)),
-  );
+  const middle = (EDGE_ENTRIES - 1) / 2;
+  return Array.from({ length: EDGE_ENTRIES }, (_, i) => {
+    // odd about the middle, to the last bit
+    const above = Math.abs(i - middle) + middle;
+    const sum = Math.min(2, ((above << EDGE_STEP_BITS) - 1) / FULL_COVERAGE);
+    const place = Math.min(INT16_MAX, Math.round(edgeAt(sum, spot) * (1 << EDGE_BITS)));
+    return i < middle ? -place : place;
+  });
 }

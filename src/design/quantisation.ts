@@ -4,16 +4,17 @@
  * The margins of the design are those of the held values; this says how far they are from the wanted ones.
  */
 import {
+  CLASS_SPEED_BITS,
   COEFFICIENT_BITS,
   CURVATURE_PER_INV_M,
   FULL_COVERAGE,
   CALIBRATION_BITS,
   SLOPE_BITS,
-  SPEED_PER_MPS,
+  SPEED_BITS,
   TRACK_BITS,
   FULL_DUTY,
+  fullSpeedMps,
 } from '../controller/constants.js';
-import { mToMm } from '../sheet/units.js';
 import type { Design } from './design.js';
 
 /** One constant. */
@@ -35,22 +36,20 @@ export function quantisedConstants({ vehicle, classes, controller }: Design): Qu
   const { drive, bar, board } = vehicle;
   const { sensing, drive: held } = controller;
   const rows = bar.kind === 'digital' ? [] : gainsOfSensors(bar.calibration, sensing.gain);
-  const topMmS = mToMm(drive.topSpeedMps);
-  const slope = ((1 - drive.startDuty) * FULL_DUTY) / topMmS;
+  const slope = ((1 - drive.startDuty) * FULL_DUTY) / (1 << SPEED_BITS);
   rows.push(
     quantised('half track width', 'm', drive.trackM / 2, held.halfTrack / 2 ** TRACK_BITS),
-    quantised('wheel speed at full duty', 'mm/s', topMmS, held.wheelLimit),
     quantised('start duty, left', '1', drive.startDuty * drive.trimLeft, held.startDutyLeft / FULL_DUTY),
     quantised('start duty, right', '1', drive.startDuty * drive.trimRight, held.startDutyRight / FULL_DUTY),
     quantised(
       'duty per speed, left',
-      '1/4096 per mm/s',
+      '1/4096 per speed unit',
       slope * drive.trimLeft,
       held.slopeLeft / 2 ** SLOPE_BITS,
     ),
     quantised(
       'duty per speed, right',
-      '1/4096 per mm/s',
+      '1/4096 per speed unit',
       slope * drive.trimRight,
       held.slopeRight / 2 ** SLOPE_BITS,
     ),
@@ -64,7 +63,12 @@ export function quantisedConstants({ vehicle, classes, controller }: Design): Qu
   classes.forEach((each, i) => {
     const integers = controller.classes[i]!;
     rows.push(
-      quantised(`${each.name}: speed`, 'm/s', each.speedMps, integers.speed / SPEED_PER_MPS),
+      quantised(
+        `${each.name}: speed`,
+        'm/s',
+        each.speedMps,
+        (integers.speed / (1 << CLASS_SPEED_BITS)) * fullSpeedMps(controller),
+      ),
       quantised(
         `${each.name}: curvature`,
         '1/m',
@@ -94,7 +98,7 @@ function gainsOfSensors(
 ): Quantised[] {
   return gain.map((held, i) => {
     const wanted = FULL_COVERAGE / ((line[i] as number) - (ground[i] as number));
-    return quantised(`sensor ${i + 1}: coverage per count`, '1/256', wanted, held / 2 ** CALIBRATION_BITS);
+    return quantised(`sensor ${i + 1}: coverage per count`, '1/255', wanted, held / 2 ** CALIBRATION_BITS);
   });
 }
 

@@ -1,5 +1,12 @@
 /** From SI units to the firmware's scales (controller/constants.ts), rounded to the nearest. */
-import { COEFFICIENT_BITS, CURVATURE_PER_INV_M, SPEED_PER_MPS } from '../controller/constants.js';
+import {
+  CLASS_SPEED_BITS,
+  COEFFICIENT_BITS,
+  CURVATURE_PER_INV_M,
+  FULL_SPEED,
+  LARGEST_CURVATURE,
+  SPEED_BITS,
+} from '../controller/constants.js';
 
 export const INT16_MAX = 32767;
 
@@ -13,17 +20,22 @@ export function coefficientOf(share: number): number {
   return Math.min(INT16_MAX, Math.max(1, Math.round(share * (1 << COEFFICIENT_BITS))));
 }
 
-/** Curvature units of a curvature in 1/m, at most 32767. */
+/** Curvature units of a curvature in 1/m, at most LARGEST_CURVATURE. */
 export function curvatureUnits(curvaturePerM: number): number {
-  return Math.min(INT16_MAX, Math.round(curvaturePerM * CURVATURE_PER_INV_M));
+  return Math.min(LARGEST_CURVATURE, Math.round(curvaturePerM * CURVATURE_PER_INV_M));
 }
 
-/** Model speed units of a speed in m/s. */
-export function speedUnits(speedMps: number): number {
-  return Math.round(speedMps * SPEED_PER_MPS);
+/** Speed units of a speed, at most FULL_SPEED. */
+export function speedUnits(speedMps: number, fullSpeedMps: number): number {
+  return Math.min(FULL_SPEED, Math.round((speedMps / fullSpeedMps) * (1 << SPEED_BITS)));
 }
 
-/** Distance in m as a sum of model speeds over samples. */
-export function distanceUnits(distanceM: number, samplePeriodS: number): number {
-  return Math.round((distanceM * SPEED_PER_MPS) / samplePeriodS);
+/** Class speed units of a speed, at most 32767. */
+export function classSpeedUnits(speedMps: number, fullSpeedMps: number): number {
+  return Math.min(INT16_MAX, Math.round((speedMps / fullSpeedMps) * (1 << CLASS_SPEED_BITS)));
+}
+
+/** Distance in m as a sum of speeds over samples. */
+export function distanceUnits(distanceM: number, fullSpeedMps: number, samplePeriodS: number): number {
+  return Math.round((distanceM / (fullSpeedMps * samplePeriodS)) * (1 << SPEED_BITS));
 }

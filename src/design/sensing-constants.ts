@@ -2,6 +2,7 @@
 import {
   CALIBRATION_BITS,
   FULL_COVERAGE,
+  GAP_HALF_BITS,
   OFFSET_PER_M,
   type SensingConstants,
 } from '../controller/constants.js';
@@ -45,7 +46,7 @@ export function sensingConstants(vehicle: Vehicle): SensingConstants {
     const left = i > 0 ? (positionsM[i - 1] as number) : (positionsM[0] as number) + pitch;
     const right = i < count ? (positionsM[i] as number) : (positionsM[count - 1] as number) - pitch;
     middles.push(offsetUnits((left + right) / 2));
-    halves.push(offsetUnits((left - right) / 2));
+    halves.push(Math.round(((left - right) / 2) * OFFSET_PER_M * (1 << GAP_HALF_BITS)));
   }
   const spans = calibration.ground.map((ground, i) => (calibration.line[i] as number) - ground);
   return {

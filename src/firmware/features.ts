@@ -17,6 +17,10 @@ export interface Features {
   /** Lanes cross, and the bar can tell. */
   crossings: boolean;
   severalClasses: boolean;
+  /** The firmware reckons with shares of coverage, not only with sensors that are on or off the line. */
+  coverages: boolean;
+  /** More sensors than a byte has bits. */
+  manySensors: boolean;
   /** The board has an LED that this vehicle does not use otherwise. */
   led: boolean;
   /** The firmware can tell a start after the supply broke down from switching on; MicroPython does not say. */
@@ -35,6 +39,7 @@ export function featuresOf(
 ): Features {
   const { sensing, sweep, kind } = controller;
   const binary = sensing.digital || kind === 'rules';
+  const crossings = sensing.wideCoverage <= sensing.sensorCount * FULL_COVERAGE;
   return {
     analog: !sensing.digital,
     digital: sensing.digital,
@@ -44,8 +49,10 @@ export function featuresOf(
     stored: !sensing.digital && sweep === undefined,
     binary,
     graded: !binary,
-    crossings: sensing.wideCoverage <= sensing.sensorCount * FULL_COVERAGE,
+    crossings,
     severalClasses: controller.classes.length > 1,
+    coverages: language === 'micropython' || !binary || sweep !== undefined || crossings,
+    manySensors: sensing.sensorCount > 8,
     led,
     brownOut: language === 'arduino',
   };

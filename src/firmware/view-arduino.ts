@@ -56,6 +56,7 @@ function filesOf(view: ArduinoView): TemplateFile[] {
     { ...file('sketch.ino'), path: `${folder}/${folder}.ino` },
     file('constants.h'),
     file('pins.h'),
+    file('arithmetic.h'),
     ...pair('sensing'),
     ...pair('steering'),
     file('rule_table.h', view.rules),

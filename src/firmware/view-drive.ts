@@ -1,20 +1,21 @@
 /** Constants of steering, drive and the memory of the line, with their comments. */
 import {
+  CLASS_SPEED_BITS,
   COEFFICIENT_BITS,
   CURVATURE_PER_INV_M,
   type ControllerConstants,
-  type DriveConstants,
   FULL_DUTY,
+  FULL_SPEED,
   OFFSET_PER_M,
-  SPEED_PER_MPS,
+  SPEED_BITS,
+  fullSpeedMps,
 } from '../controller/constants.js';
 import { mToMm, sToMs } from '../sheet/units.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
-import { numberText, signedTypeOf } from './literals.js';
+import { numberText } from './literals.js';
 import { type Constant, constant } from './constant.js';
 import type { Features } from './features.js';
 
-const mps = (units: number) => numberText(units / SPEED_PER_MPS, 3);
 const perM = (units: number) => numberText(units / CURVATURE_PER_INV_M, 3);
 const percent = (duty: number) => numberText((100 * duty) / FULL_DUTY, 3);
 
@@ -56,7 +57,7 @@ export function steeringConstants(controller: ControllerConstants, features: Fea
   if (rules !== undefined)
     constants.push(
       constant(
-        'CURVATURE_PER_DIFFERENCE_Q4',
+        'CURVATURE_PER_DIFFERENCE_Q8',
         'int16_t',
         rules.curvatureFactor,
         "Curvature for each step of difference between the wheels' fractions. From drive.trackWidthMm.",
@@ -65,33 +66,30 @@ export function steeringConstants(controller: ControllerConstants, features: Fea
   return constants;
 }
 
-export function driveConstants(vehicle: Vehicle, drive: DriveConstants): Constant[] {
+export function driveConstants(vehicle: Vehicle, controller: ControllerConstants): Constant[] {
+  const { drive } = controller;
+  const fullMps = fullSpeedMps(controller);
   const { trackM, lagS } = vehicle.drive;
-  const wheelType = signedTypeOf([drive.wheelLimit, drive.slopeLeft, drive.slopeRight]);
+  const mps = (units: number, bits: number) => numberText((units / (1 << bits)) * fullMps, 3);
+  const full = numberText(fullMps, 3);
   return [
     constant(
-      'HALF_TRACK_M_Q16',
-      signedTypeOf([drive.halfTrack]),
+      'HALF_TRACK_M_Q14',
+      'int16_t',
       drive.halfTrack,
       `Half the track width: ${numberText(mToMm(trackM / 2))} mm. From drive.trackWidthMm.`,
     ),
     constant(
-      'TURN_LIMIT_MRAD_S',
-      'int32_t',
-      drive.turnLimit,
-      'Largest turn rate commanded, mrad/s. From drive.motor and drive.trackWidthMm.',
+      'FULL_SPEED_Q13',
+      'int16_t',
+      FULL_SPEED,
+      `Wheel speed at full duty, of which all speeds are shares: ${full} m/s. From drive.motor, drive.wheelDiameterMm and power.nominalV.`,
     ),
     constant(
-      'WHEEL_LIMIT_MM_S',
-      wheelType,
-      drive.wheelLimit,
-      'Wheel speed at full duty, mm/s. From drive.motor, drive.wheelDiameterMm and power.nominalV.',
-    ),
-    constant(
-      'WHEEL_DEAD_MM_S',
+      'WHEEL_DEAD_SPEED_Q13',
       'int16_t',
       drive.wheelDead,
-      'Wheel speed up to which a wheel is left without duty, mm/s.',
+      `Wheel speed up to which a wheel is left without duty: ${mps(drive.wheelDead, SPEED_BITS)} m/s.`,
     ),
     constant(
       'MOTOR_STEP_Q15',
@@ -100,22 +98,22 @@ export function driveConstants(vehicle: Vehicle, drive: DriveConstants): Constan
       `Share of a speed difference that the motors make up in one sample; time constant ${numberText(sToMs(lagS))} ms. From drive.motor.timeConstantMs.`,
     ),
     constant(
-      'LEAD_UP_MM_S_Q6',
-      'int32_t',
+      'LEAD_UP_SPEED_Q13',
+      'int16_t',
       drive.leadUp,
-      `Speed command above the present speed when speeding up: ${mps(drive.leadUp)} m/s. From drive.gripCoefficient.`,
+      `Speed command above the present speed when speeding up: ${mps(drive.leadUp, SPEED_BITS)} m/s. From drive.gripCoefficient.`,
     ),
     constant(
-      'LEAD_DOWN_MM_S_Q6',
-      'int32_t',
+      'LEAD_DOWN_SPEED_Q13',
+      'int16_t',
       drive.leadDown,
-      `Speed command below the present speed when braking: ${mps(drive.leadDown)} m/s. From drive.gripCoefficient.`,
+      `Speed command below the present speed when braking: ${mps(drive.leadDown, SPEED_BITS)} m/s. From drive.gripCoefficient.`,
     ),
     constant(
-      'SEARCH_SPEED_MM_S_Q6',
-      'int32_t',
+      'SEARCH_SPEED_Q15',
+      'int16_t',
       drive.searchSpeed,
-      `Speed of the search for a lost line: ${mps(drive.searchSpeed)} m/s. From drive.gripCoefficient.`,
+      `Speed of the search for a lost line: ${mps(drive.searchSpeed, CLASS_SPEED_BITS)} m/s. From drive.gripCoefficient.`,
     ),
     constant(
       'START_DUTY_LEFT_Q12',
@@ -130,23 +128,24 @@ export function driveConstants(vehicle: Vehicle, drive: DriveConstants): Constan
       `Duty at which the right wheel begins to turn: ${percent(drive.startDutyRight)} %. From drive.motor.startDutyPercent and trim.`,
     ),
     constant(
-      'DUTY_LEFT_PER_MM_S_Q24',
-      wheelType,
+      'DUTY_LEFT_PER_SPEED_Q14',
+      'int16_t',
       drive.slopeLeft,
-      'Duty of the left wheel for each mm/s beyond that. From drive.motor, drive.wheelDiameterMm and trim.',
+      'Duty of the left wheel for each speed beyond that, both as shares. From drive.motor and trim.',
     ),
     constant(
-      'DUTY_RIGHT_PER_MM_S_Q24',
-      wheelType,
+      'DUTY_RIGHT_PER_SPEED_Q14',
+      'int16_t',
       drive.slopeRight,
-      'Duty of the right wheel for each mm/s beyond that. From drive.motor, drive.wheelDiameterMm and trim.',
+      'Duty of the right wheel for each speed beyond that, both as shares. From drive.motor and trim.',
     ),
   ];
 }
 
 export function memoryConstants(controller: ControllerConstants, features: Features): Constant[] {
   const { memory, samplePeriodUs } = controller;
-  const distanceMm = (sum: number) => numberText(mToMm(((sum / SPEED_PER_MPS) * samplePeriodUs) / 1e6), 3);
+  const distanceMm = (sum: number) =>
+    numberText(mToMm(((sum / (1 << SPEED_BITS)) * fullSpeedMps(controller) * samplePeriodUs) / 1e6), 3);
   const searchS = numberText((memory.searchSamples * samplePeriodUs) / 1e6, 3);
   const constants = [
     constant(
@@ -156,7 +155,7 @@ export function memoryConstants(controller: ControllerConstants, features: Featu
       `Offset beyond which a vanished line has left by that side: ${numberText(mToMm(memory.sideOffset / OFFSET_PER_M))} mm. From sensors and line.widthMm.`,
     ),
     constant(
-      'GAP_MM_S_Q6_SAMPLES',
+      'GAP_SPEED_Q13_SAMPLES',
       'int32_t',
       memory.gapDistance,
       `Way over which a vanished line is taken for a gap: ${distanceMm(memory.gapDistance)} mm, as a sum of speeds over samples. From line.longestGapMm.`,
@@ -165,7 +164,7 @@ export function memoryConstants(controller: ControllerConstants, features: Featu
   if (features.crossings)
     constants.push(
       constant(
-        'CROSSING_MM_S_Q6_SAMPLES',
+        'CROSSING_SPEED_Q13_SAMPLES',
         'int32_t',
         memory.crossingDistance,
         `Way over which a crossing may last: ${distanceMm(memory.crossingDistance)} mm. From line.widthMm.`,
@@ -173,13 +172,13 @@ export function memoryConstants(controller: ControllerConstants, features: Featu
     );
   constants.push(
     constant(
-      'CORNER_MM_S_Q6_SAMPLES',
+      'CORNER_SPEED_Q13_SAMPLES',
       'int32_t',
       memory.cornerDistance,
       `Way after a corner on which a vanished line is looked for on its side: ${distanceMm(memory.cornerDistance)} mm. From line.widthMm.`,
     ),
     constant(
-      'RELEASE_MM_S_Q6_SAMPLES',
+      'RELEASE_SPEED_Q13_SAMPLES',
       'int32_t',
       memory.releaseDistance,
       `Way out of a bend before a faster class is taken: ${distanceMm(memory.releaseDistance)} mm. From sensors.aheadOfAxleMm.`,

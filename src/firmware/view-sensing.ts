@@ -1,13 +1,9 @@
 /** Constants of the sensor bar, with their comments. */
-import {
-  EDGE_STEP_BITS,
-  FULL_COVERAGE,
-  OFFSET_PER_M,
-  type SensingConstants,
-} from '../controller/constants.js';
+import { FULL_COVERAGE, OFFSET_PER_M, type SensingConstants } from '../controller/constants.js';
+import { edgeShift } from '../controller/sensing.js';
 import { mToMm } from '../sheet/units.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
-import { numberText, signedTypeOf } from './literals.js';
+import { numberText } from './literals.js';
 import { type Constant, constant, table } from './constant.js';
 import type { Features } from './features.js';
 
@@ -16,7 +12,7 @@ const coveragePercent = (coverage: number) => numberText((100 * coverage) / FULL
 
 /** With sensors that are on or off, an edge lies half way between two of them; the table must say so too. */
 function checkEdgeOfBinary(sensing: SensingConstants): void {
-  if (sensing.edgeTable[FULL_COVERAGE >> EDGE_STEP_BITS] !== 0)
+  if (edgeShift(sensing, sensing.gapHalf[0]!, FULL_COVERAGE) !== 0)
     throw new Error('The edge table does not put an edge of on-off sensors half way between them.');
 }
 
@@ -29,8 +25,8 @@ function calibration(sensing: SensingConstants): Constant[] {
       'Reading of each sensor over ground, counts. From sensors.calibration.ground.',
     ),
     table(
-      'COVERAGE_PER_COUNT_Q20',
-      signedTypeOf(sensing.gain),
+      'COVERAGE_255THS_PER_COUNT_Q12',
+      'int16_t',
       sensing.gain,
       'Share of a sensor on the line for each count above ground; negative where the line reads lower. From sensors.calibration.',
     ),
@@ -40,13 +36,13 @@ function calibration(sensing: SensingConstants): Constant[] {
 function edges(sensing: SensingConstants): Constant[] {
   return [
     table(
-      'GAP_HALF_MM_Q6',
+      'GAP_HALF_MM_Q9',
       'int16_t',
       sensing.gapHalf,
       'Half the way between neighbouring sensors, same places. From sensors.pitchMm or positionsMm.',
     ),
     table(
-      'EDGE_TABLE_Q10',
+      'EDGE_TABLE_Q12',
       'int16_t',
       sensing.edgeTable,
       'Where an edge of the line lies between two sensors, by the sum of their coverages; the spots are discs. From sensors.spotRadiusMm and pitchMm.',
@@ -87,8 +83,8 @@ export function sensingConstants(
   if (features.analog)
     constants.push(
       constant(
-        'HIGH_COVERAGE_Q8',
-        'int16_t',
+        'HIGH_COVERAGE_255THS',
+        'uint8_t',
         sensing.highCoverage,
         `Coverage from which a sensor counts as on the line: ${coveragePercent(sensing.highCoverage)} %. From line.widthMm, sensors.pitchMm and spotRadiusMm.`,
       ),
@@ -96,8 +92,8 @@ export function sensingConstants(
   if (features.graded)
     constants.push(
       constant(
-        'LOW_COVERAGE_Q8',
-        'int16_t',
+        'LOW_COVERAGE_255THS',
+        'uint8_t',
         sensing.lowCoverage,
         `Coverage of an end sensor from which a line just outside the bar is still measured: ${coveragePercent(sensing.lowCoverage)} %.`,
       ),
@@ -119,7 +115,7 @@ export function sensingConstants(
   if (features.crossings)
     constants.push(
       constant(
-        'WIDE_COVERAGE_Q8',
+        'WIDE_COVERAGE_255THS',
         'int16_t',
         sensing.wideCoverage,
         `Sum of coverages from which the bar lies on a crossing: ${numberText(sensing.wideCoverage / FULL_COVERAGE)} sensors. From line.widthMm and sensors.pitchMm.`,

@@ -1,21 +1,22 @@
 /** Constants of time, of the integers' scales, and of the sweep, with their comments. */
 import {
   CALIBRATION_BITS,
+  CLASS_SPEED_BITS,
   COEFFICIENT_BITS,
+  CURVATURE_BITS,
   type ControllerConstants,
   EDGE_BITS,
-  EDGE_ENTRIES,
   EDGE_STEP_BITS,
   FILTER_BITS,
   FRACTION_BITS,
   FULL_COVERAGE,
   FULL_DUTY,
+  GAP_HALF_BITS,
   OFFSET_PER_M,
   RULE_CURVATURE_BITS,
   SLOPE_BITS,
-  SPEED_GAIN_BITS,
+  SPEED_BITS,
   SPEED_MODEL_BITS,
-  SPEED_SLOPE_BITS,
   type SweepConstants,
   TRACK_BITS,
 } from '../controller/constants.js';
@@ -87,9 +88,14 @@ export function timeConstants(
 }
 
 /** The scales; each vehicle gets those that its arithmetic uses. */
-export function scaleConstants(features: Features): Constant[] {
+export function scaleConstants(controller: ControllerConstants, features: Features): Constant[] {
   const rows: [wanted: boolean, name: string, value: number, about: string][] = [
-    [true, 'FULL_COVERAGE_Q8', FULL_COVERAGE, 'Coverage of a sensor whose spot lies wholly on the line.'],
+    [
+      features.coverages,
+      'FULL_COVERAGE_255THS',
+      FULL_COVERAGE,
+      'Coverage of a sensor whose spot lies wholly on the line.',
+    ],
     [true, 'FULL_DUTY_Q12', FULL_DUTY, 'Duty of a motor at full voltage.'],
     [
       features.analog,
@@ -101,7 +107,7 @@ export function scaleConstants(features: Features): Constant[] {
       features.graded,
       'EDGE_BITS',
       EDGE_BITS,
-      'Bits of the edge table: 1024 is half the way between two sensors.',
+      'Bits of the edge table: 4096 is half the way between two sensors.',
     ],
     [
       features.graded,
@@ -109,7 +115,12 @@ export function scaleConstants(features: Features): Constant[] {
       EDGE_STEP_BITS,
       'Bits of coverage from one entry of the edge table to the next.',
     ],
-    [features.graded, 'EDGE_ENTRIES', EDGE_ENTRIES, 'Entries of the edge table.'],
+    [
+      features.graded,
+      'GAP_HALF_BITS',
+      GAP_HALF_BITS,
+      "Bits of a gap's half width beyond those of an offset.",
+    ],
     [true, 'FILTER_BITS', FILTER_BITS, 'Bits that a filtered value has beyond its input.'],
     [true, 'COEFFICIENT_BITS', COEFFICIENT_BITS, 'Bits of the filter and motor model coefficients.'],
     [
@@ -119,23 +130,18 @@ export function scaleConstants(features: Features): Constant[] {
       'Bits of the curvature per wheel-speed difference.',
     ],
     [features.rules, 'FRACTION_BITS', FRACTION_BITS, "Bits of the rule table's wheel-speed fractions."],
-    [true, 'SPEED_BITS', Math.log2(OFFSET_PER_M / 1000), 'Bits of a modelled speed beyond mm/s.'],
-    [true, 'CURVATURE_BITS', 8, 'Bits of a curvature beyond 1/m.'],
-    [true, 'SPEED_SLOPE_BITS', SPEED_SLOPE_BITS, "Bits of a class's speed slope."],
+    [true, 'CURVATURE_BITS', CURVATURE_BITS, 'Bits of a curvature beyond 1/m.'],
+    [true, 'SPEED_BITS', SPEED_BITS, 'Bits of a speed: 8192 is the speed at full duty.'],
     [
       true,
-      'SPEED_GAIN_BITS',
-      SPEED_GAIN_BITS,
-      'How much faster than the motors a small speed error is closed: 2^n times.',
+      'CLASS_SPEED_BITS',
+      CLASS_SPEED_BITS,
+      "Bits of a class's speed; the two more make the firmware close a speed error 4 times as fast as the motors.",
     ],
-    [
-      true,
-      'SPEED_MODEL_BITS',
-      SPEED_MODEL_BITS,
-      "Bits dropped from a speed difference before the motor model's product.",
-    ],
-    [true, 'TRACK_BITS', TRACK_BITS, 'Bits of the half track width beyond m.'],
-    [true, 'SLOPE_BITS', SLOPE_BITS, 'Bits of the duty per wheel speed beyond duty.'],
+    [true, 'SPEED_MODEL_BITS', SPEED_MODEL_BITS, 'Bits of the modelled speed.'],
+    [true, 'SPEED_SLOPE_BITS', controller.drive.slopeBits, "Bits of a class's speed slope."],
+    [true, 'TRACK_BITS', TRACK_BITS, 'Bits of the half track width beyond m, and of a turn for each speed.'],
+    [true, 'SLOPE_BITS', SLOPE_BITS, 'Bits of the duty for each speed, in units of both.'],
   ];
   return rows
     .filter(([wanted]) => wanted)

@@ -60,10 +60,10 @@ export function commonView(sheet: SheetIdentity, design: FirmwareDesign, led: bo
   const features = featuresOf(controller, vehicle.language, led);
   const groups: ConstantGroup[] = [
     { title: 'Time', constants: timeConstants(vehicle, controller, features) },
-    { title: 'Scales of the integers', constants: scaleConstants(features) },
+    { title: 'Scales of the integers', constants: scaleConstants(controller, features) },
     { title: 'Sensor bar', constants: sensingConstants(vehicle, controller.sensing, features) },
     { title: 'Steering', constants: steeringConstants(controller, features) },
-    { title: 'Drive', constants: driveConstants(vehicle, controller.drive) },
+    { title: 'Drive', constants: driveConstants(vehicle, controller) },
     { title: 'Memory of the line', constants: memoryConstants(controller, features) },
   ];
   if (controller.sweep !== undefined)

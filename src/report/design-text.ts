@@ -1,5 +1,5 @@
 /** The design as a person reads it: each number with its unit and where it comes from. */
-import { OFFSET_PER_M, SPEED_PER_MPS } from '../controller/constants.js';
+import { CLASS_SPEED_BITS, OFFSET_PER_M, fullSpeedMps } from '../controller/constants.js';
 import type { Design, DesignedClass } from '../design/design.js';
 import { LEAST_MARGINS } from '../design/tolerance-box.js';
 import { filterTimeS } from '../design/steering-loop.js';
@@ -99,7 +99,11 @@ function vehicleLines(design: Design): string {
       `${mToMm(biasOffsetM(design)).toFixed(1)} mm to the side at most`,
       'steady offset at the bar without an integral part',
     ],
-    ['search speed', `${(controller.drive.searchSpeed / SPEED_PER_MPS).toFixed(2)} m/s`, 'for a lost line'],
+    [
+      'search speed',
+      `${((controller.drive.searchSpeed / (1 << CLASS_SPEED_BITS)) * fullSpeedMps(controller)).toFixed(2)} m/s`,
+      'for a lost line',
+    ],
     [
       'side memory from',
       `${mToMm(controller.memory.sideOffset / OFFSET_PER_M).toFixed(1)} mm`,

@@ -114,7 +114,7 @@ describe('what is no line', () => {
 
   test('readings beyond both ends of the calibration are clamped', () => {
     sensing.read(Int32Array.from([0, 0, 1023, 1023, 0, 0]));
-    expect([...sensing.coverage]).toEqual([0, 0, 256, 256, 0, 0]);
+    expect([...sensing.coverage]).toEqual([0, 0, 255, 255, 0, 0]);
   });
 });
 
@@ -132,8 +132,10 @@ test('a digital bar finds the line to half the spacing', () => {
 });
 
 test('the edge table is odd about the middle of the gap', () => {
-  for (let sum = 0; sum <= 512; sum += 4) {
-    expect(edgeShift(constants, 320, sum) + edgeShift(constants, 320, 512 - sum)).toBeGreaterThanOrEqual(-2);
-    expect(edgeShift(constants, 320, sum) + edgeShift(constants, 320, 512 - sum)).toBeLessThanOrEqual(0);
+  const half = constants.gapHalf[1]!;
+  for (let sum = 0; sum <= 510; sum += 3) {
+    const both = edgeShift(constants, half, sum) + edgeShift(constants, half, 510 - sum);
+    expect(both).toBeGreaterThanOrEqual(-2);
+    expect(both).toBeLessThanOrEqual(0);
   }
 });

@@ -1,5 +1,11 @@
 import { describe, expect, test } from 'vitest';
-import { FULL_DUTY, PHASE, SPEED_PER_MPS } from '../../src/controller/constants.js';
+import {
+  CLASS_SPEED_BITS,
+  FULL_DUTY,
+  PHASE,
+  SPEED_MODEL_BITS,
+  fullSpeedMps,
+} from '../../src/controller/constants.js';
 import { Twin } from '../../src/controller/twin.js';
 import { deriveDesign } from '../../src/design/derive.js';
 import { intermediateBounds, INT32_MAX } from '../../src/design/intervals.js';
@@ -11,6 +17,12 @@ const GROUND = Int32Array.from({ length: 6 }, () => 123);
 const LINE = Int32Array.from({ length: 6 }, () => 839);
 const CENTRE = Int32Array.from([123, 123, 839, 839, 123, 123]);
 const LEFT = Int32Array.from([839, 839, 123, 123, 123, 123]);
+
+/** Modelled speed, m/s. */
+const speedMps = (twin: Twin) => (twin.speed / 2 ** SPEED_MODEL_BITS) * fullSpeedMps(controller);
+/** Speed of a class, m/s. */
+const classMps = (index: number) =>
+  (controller.classes[index]!.speed / 2 ** CLASS_SPEED_BITS) * fullSpeedMps(controller);
 
 function running(counts = CENTRE, samples = 1000): Twin {
   const twin = new Twin(controller);
@@ -31,7 +43,7 @@ function samplesUntil(twin: Twin, counts: Int32Array, phase: number, most: numbe
 describe('on the line', () => {
   test('runs straight up to the speed of the fastest class', () => {
     const twin = running();
-    expect(twin.speed / SPEED_PER_MPS).toBeCloseTo(controller.classes[0]!.speed / SPEED_PER_MPS, 2);
+    expect(speedMps(twin)).toBeCloseTo(classMps(0), 2);
     expect(twin.dutyLeft).toBe(twin.dutyRight);
     expect(twin.classIndex).toBe(0);
   });
@@ -56,12 +68,12 @@ describe('on the line', () => {
     const inBend = LEFT;
     for (let i = 0; i < 300; i++) twin.step(inBend);
     expect(twin.classIndex).toBeGreaterThan(1);
-    const slow = twin.speed;
-    expect(slow).toBeLessThan(0.9 * controller.classes[0]!.speed);
+    const slow = speedMps(twin);
+    expect(slow).toBeLessThan(0.9 * classMps(0));
     let drivenM = 0;
-    while (twin.speed <= slow * 1.02) {
+    while (speedMps(twin) <= slow * 1.02) {
       twin.step(CENTRE);
-      drivenM += (twin.speed / SPEED_PER_MPS) * 0.002;
+      drivenM += speedMps(twin) * 0.002;
       expect(drivenM).toBeLessThan(0.2);
     }
     expect(drivenM).toBeGreaterThan(0.03);
@@ -73,10 +85,10 @@ describe('when the line vanishes', () => {
     const twin = running();
     expect(samplesUntil(twin, GROUND, PHASE.gap, 1)).toBe(1);
     expect(Math.abs(twin.curvature)).toBeLessThan(50);
-    const speedMps = twin.speed / SPEED_PER_MPS;
+    const cruiseMps = speedMps(twin);
     const gapSamples = samplesUntil(twin, GROUND, PHASE.search, 500);
     // 40 mm of gap, 30 % reserve, spots' blur
-    expect(gapSamples * 0.002 * speedMps).toBeCloseTo(0.07, 2);
+    expect(gapSamples * 0.002 * cruiseMps).toBeCloseTo(0.07, 2);
     const searched = samplesUntil(twin, GROUND, PHASE.stopped, 2000);
     expect(searched).toBeLessThanOrEqual(controller.memory.searchSamples + 1);
     expect(twin).toMatchObject({ dutyLeft: 0, dutyRight: 0, stopped: true });

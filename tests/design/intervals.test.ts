@@ -4,12 +4,12 @@ import { overflows } from '../../src/design/intervals.js';
 import { cart, quickDesign } from '../firmware/cart.js';
 
 const { controller } = quickDesign(cart());
-/** The largest wheel speed whose product with a 16-bit curvature stays within a number of bits. */
-const fastest = (bits: number) => Math.floor(2 ** bits / 32767);
+/** The largest gain whose product with a reading stays within a number of bits. */
+const most = (bits: number) => Math.floor(2 ** bits / 1023);
 
-function named(wheelLimit: number, language: 'arduino' | 'micropython'): string[] {
-  const faster = { ...controller, drive: { ...controller.drive, wheelLimit } };
-  return overflows(faster, 1023, language).map(({ name }) => name);
+function named(gain: number, language: 'arduino' | 'micropython'): string[] {
+  const sensing = { ...controller.sensing, gain: [gain] };
+  return overflows({ ...controller, sensing }, 1023, language).map(({ name }) => name);
 }
 
 test('the demo cart fits both languages', () => {
@@ -18,10 +18,11 @@ test('the demo cart fits both languages', () => {
 });
 
 test('MicroPython has one bit less than C++', () => {
-  expect(named(fastest(30) - 1, 'micropython')).not.toContain('speed times curvature');
-  expect(named(fastest(30) + 1, 'micropython')).toContain('speed times curvature');
-  expect(named(fastest(31) - 1, 'arduino')).not.toContain('speed times curvature');
-  expect(named(fastest(31) + 1, 'arduino')).toContain('speed times curvature');
+  const product = 'reading times calibration gain';
+  expect(named(most(30) - 1, 'micropython')).not.toContain(product);
+  expect(named(most(30) + 1, 'micropython')).toContain(product);
+  expect(named(most(31) - 1, 'arduino')).not.toContain(product);
+  expect(named(most(31) + 1, 'arduino')).toContain(product);
 });
 
 test('an offset beyond 16 bits is named with its limit', () => {

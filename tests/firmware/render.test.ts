@@ -8,7 +8,7 @@ import { type RenderedFile, fillTemplates, renderFirmware } from '../../src/firm
 import { VERSION } from '../../src/version.js';
 import { CARTS, SHEET, cart, quickDesign } from './cart.js';
 
-const UNITS = /_(Q\d+|US|SAMPLES|COUNTS|MM_S|MRAD_S|BITS|ENTRIES|COUNT|LEVEL|LIMIT|CLASSES)$/;
+const UNITS = /_(Q\d+|255THS|US|SAMPLES|COUNTS|BITS|ENTRIES|COUNT|LEVEL|LIMIT|CLASSES)$/;
 
 describe.each(Object.keys(CARTS))('the sketch of %s', (name) => {
   let files: RenderedFile[];
@@ -22,7 +22,7 @@ describe.each(Object.keys(CARTS))('the sketch of %s', (name) => {
     [...text('constants.h').matchAll(/^constexpr \w+ (\w+)(?:\[\])? =/gm)].map((match) => match[1]!);
 
   it('defines constants that end in a unit, and uses every one of them', () => {
-    const names = constants().filter((each) => each !== 'MOST_MM_S_Q6');
+    const names = constants().filter((each) => !/^EDGE_ENTRIES$/.test(each));
     expect(names.length).toBeGreaterThan(25);
     const others = files.filter(({ path }) => !path.endsWith('constants.h'));
     for (const each of names) {
@@ -36,7 +36,7 @@ describe.each(Object.keys(CARTS))('the sketch of %s', (name) => {
   it('comments every constant', () => {
     const lines = text('constants.h').split('\n');
     for (const [i, line] of lines.entries())
-      if (/^constexpr \w+ \w+(\[\])? = /.test(line) && !/MOST_MM_S_Q6|CLASS_COUNT/.test(line))
+      if (/^constexpr \w+ \w+(\[\])? = /.test(line) && !/EDGE_ENTRIES|CLASS_COUNT/.test(line))
         expect(lines[i - 1], line).toMatch(/^\/\/ \S/);
   });
 

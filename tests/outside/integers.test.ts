@@ -100,12 +100,12 @@ describe('the twin rounds as the shifts of all three languages: down', () => {
 
   test('edge positions, negative ones too', () => {
     let negative = 0;
-    for (let sum = 0; sum < 512; sum++) {
-      const part = (sum % 32) / 32;
-      const [low, high] = [sensing.edgeTable[sum >> 5]!, sensing.edgeTable[(sum >> 5) + 1]!];
+    for (let sum = 0; sum <= 510; sum++) {
+      const [place, part] = [(sum + 1) >> 5, ((sum + 1) % 32) / 32];
+      const [low, high] = [sensing.edgeTable[place]!, sensing.edgeTable[place + 1]!];
       const value = low + Math.floor((high - low) * part);
-      const exact = (320 * value) / 1024;
-      expect(edgeShift(sensing, 320, sum)).toBe(Math.floor(exact));
+      const exact = (2560 * value) / 32768;
+      expect(edgeShift(sensing, 2560, sum)).toBe(Math.floor(exact));
       if (exact < 0 && !Number.isInteger(exact)) negative++;
     }
     expect(negative).toBeGreaterThan(100);
@@ -113,7 +113,7 @@ describe('the twin rounds as the shifts of all three languages: down', () => {
 
   test('duties, forward and backward alike', () => {
     for (const speed of [11, 137, 999]) {
-      expect(wheelDuty(speed, 5, 400, 9001)).toBe(400 + Math.floor((speed * 9001) / 4096));
+      expect(wheelDuty(speed, 5, 400, 9001)).toBe(400 + Math.floor((speed * 9001) / 32768));
       expect(wheelDuty(-speed, 5, 400, 9001)).toBe(-wheelDuty(speed, 5, 400, 9001));
     }
   });

@@ -36,7 +36,7 @@ def step():
     put(steering.class_index)
     put(sensing.offset_mm_q6)
     put(steering.curvature_per_m_q8)
-    put(steering.speed_mm_s_q6)
+    put(steering.speed_q29)
     put(steering.duty_left_q12)
     put(steering.duty_right_q12)
 
@@ -58,10 +58,10 @@ calibration.start()
 for _ in range(next()):
     read_counts()
     calibration.observe(counts)
-put(calibration.finish(sensing.ground_counts, sensing.coverage_per_count_q20))
+put(calibration.finish(sensing.ground_counts, sensing.coverage_255ths_per_count_q12))
 for value in sensing.ground_counts:
     put(value)
-for value in sensing.coverage_per_count_q20:
+for value in sensing.coverage_255ths_per_count_q12:
     put(value)
 `;
 

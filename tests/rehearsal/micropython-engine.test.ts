@@ -51,7 +51,7 @@ def setup():
     pass
 
 def sample(steering):
-    if steering.speed_mm_s_q6 > 20000:
+    if steering.speed_q29 > 0x0C000000:
         steering.no_such_thing
 
 def stopped(reason):

@@ -55,10 +55,10 @@ int main() {
     const Steering& now = steer(counts);
     markStep(false);
     putNumber(static_cast<int32_t>(now.phase));
-    putNumber(now.classIndex);
+    putNumber(classInForce());
     putNumber(sight.offsetMmQ6);
     putNumber(now.curvaturePerMQ8);
-    putNumber(now.speedMmSQ6);
+    putNumber(now.speedQ29);
     putNumber(now.dutyLeftQ12);
     putNumber(now.dutyRightQ12);
   }

@@ -33,21 +33,21 @@ void observe(const int16_t (&counts)[SENSOR_COUNT]) {
 }
 
 uint8_t finishCalibration(int16_t (&groundCounts)[SENSOR_COUNT],
-                          int16_t (&coveragePerCountQ20)[SENSOR_COUNT]) {
+                          int16_t (&coverage255thsPerCountQ12)[SENSOR_COUNT]) {
   const bool lineReadsHigher = riseOf(0) + riseOf(SENSOR_COUNT - 1) >= 0;
   uint8_t flatSensor = 0;
   for (uint8_t i = 0; i < SENSOR_COUNT; i++) {
     const int16_t span = static_cast<int16_t>(most[i] - least[i]);
-    groundCounts[i] = coveragePerCountQ20[i] = 0;
+    groundCounts[i] = coverage255thsPerCountQ12[i] = 0;
     if (span < SWEEP_LEAST_SPAN_COUNTS) {
       if (flatSensor == 0) flatSensor = static_cast<uint8_t>(i + 1);
       continue;
     }
-    // The only division, of positive numbers.
-    const int16_t scale =
-        static_cast<int16_t>((int32_t{FULL_COVERAGE_Q8} << CALIBRATION_BITS) / span);
+    // The only division, of positive numbers; up, so that the line itself is a full coverage.
+    const int16_t scale = static_cast<int16_t>(
+        ((int32_t{FULL_COVERAGE_255THS} << CALIBRATION_BITS) + span - 1) / span);
     groundCounts[i] = lineReadsHigher ? least[i] : most[i];
-    coveragePerCountQ20[i] = static_cast<int16_t>(lineReadsHigher ? scale : -scale);
+    coverage255thsPerCountQ12[i] = static_cast<int16_t>(lineReadsHigher ? scale : -scale);
   }
   return flatSensor;
 }

@@ -18,4 +18,4 @@ void observe(const int16_t (&counts)[SENSOR_COUNT]);
 // Works out what was seen. Returns the number, from the left and from 1, of the first sensor with
 // too little contrast between line and ground, or 0 when all are well.
 uint8_t finishCalibration(int16_t (&groundCounts)[SENSOR_COUNT],
-                          int16_t (&coveragePerCountQ20)[SENSOR_COUNT]);
+                          int16_t (&coverage255thsPerCountQ12)[SENSOR_COUNT]);

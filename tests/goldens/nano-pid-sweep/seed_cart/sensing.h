@@ -11,7 +11,7 @@
 struct Sight {
   bool found;  // the line is under the bar
   bool wide;   // the bar lies on a crossing
-  int32_t
+  int16_t
       offsetMmQ6;  // the line's middle, left of the bar's middle; the last one seen while not found
   int8_t reach;    // end of the bar that a too wide line reaches, as at a corner: 1 left, -1 right
 };
@@ -21,7 +21,7 @@ void resetSensing();
 
 // Takes over what a calibration found: reading over ground and coverage per count of each sensor.
 void setCalibration(const int16_t (&groundCounts)[SENSOR_COUNT],
-                    const int16_t (&coveragePerCountQ20)[SENSOR_COUNT]);
+                    const int16_t (&coverage255thsPerCountQ12)[SENSOR_COUNT]);
 
 // Finds the line in one set of readings, leftmost sensor first.
 const Sight& findLine(const int16_t (&counts)[SENSOR_COUNT]);

@@ -25,13 +25,13 @@ void end(SweepResult result) {
 
 void takeOverCalibration() {
   int16_t groundCounts[SENSOR_COUNT];
-  int16_t coveragePerCountQ20[SENSOR_COUNT];
-  sweep.flatSensor = finishCalibration(groundCounts, coveragePerCountQ20);
+  int16_t coverage255thsPerCountQ12[SENSOR_COUNT];
+  sweep.flatSensor = finishCalibration(groundCounts, coverage255thsPerCountQ12);
   if (sweep.flatSensor != 0) {
     end(SweepResult::FlatSensor);
     return;
   }
-  setCalibration(groundCounts, coveragePerCountQ20);
+  setCalibration(groundCounts, coverage255thsPerCountQ12);
   resetSensing();
 }
 

@@ -1,10 +1,15 @@
 // Part of the firmware of misting-cart. Written by fairlead 0.1.0; change the build sheet, not
 // this file.
 //
-// Each reading becomes a coverage, 0 to 256. Neighbouring sensors on the line form a run.
+// Each reading becomes a coverage, 0 to 255. Neighbouring sensors on the line form a run.
 // An edge of the line lies half way between a covered and an uncovered sensor. Two edges give the
 // middle of the line; where one lies outside the bar, the other and the line's width do.
+// What runs in each sample is compiled for speed, not for size.
+#pragma GCC optimize("O2")
+
 #include "sensing.h"
+
+#include "arithmetic.h"
 
 // The arithmetic here and in steering.cpp shifts negative numbers to the right.
 static_assert((-1 >> 1) == -1, "shifts to the right keep the sign");
@@ -13,51 +18,48 @@ namespace {
 
 constexpr uint8_t LAST = SENSOR_COUNT - 1;
 
-int16_t coverageQ8[SENSOR_COUNT];
+using SensorBits = uint8_t;
+static_assert(SENSOR_COUNT <= 8 * sizeof(SensorBits), "a bit for each sensor");
+SensorBits onLine;  // sensors on the line; bit 0 is the leftmost
 Sight sight;
-int8_t runReach;  // what middleOf() saw of Sight::reach
 
-// Turns readings into coverages.
-void cover(const int16_t (&counts)[SENSOR_COUNT]) {
-  for (uint8_t i = 0; i < SENSOR_COUNT; i++) {
-    coverageQ8[i] = counts[i] == LINE_LEVEL ? FULL_COVERAGE_Q8 : 0;
-  }
+// Takes one sensor's reading. Written out for each sensor, its numbers become part of the code.
+inline void cover(uint8_t i, int16_t count) {
+  const bool on = count == LINE_LEVEL;
+  if (on) onLine = static_cast<SensorBits>(onLine | static_cast<SensorBits>(1) << i);
 }
 
-// Middle of the line whose run of sensors is first to last.
-int32_t middleOf(uint8_t first, uint8_t last) {
-  runReach = 0;
-  int32_t leftEdge = 0;
-  int32_t rightEdge = 0;
-  if (first > 0) leftEdge = GAP_MIDDLE_MM_Q6[first];
-  if (last < LAST) rightEdge = GAP_MIDDLE_MM_Q6[last + 1];
-  if (first > 0 && last < LAST) return (leftEdge + rightEdge) >> 1;
+// Takes the run of sensors first to last for the line.
+void measure(uint8_t first, uint8_t last) {
+  int16_t leftEdge = 0;
+  int16_t rightEdge = 0;
   if (first > 0) {
-    if (leftEdge - GAP_MIDDLE_MM_Q6[SENSOR_COUNT] > CORNER_WIDTH_MM_Q6) runReach = -1;
-    return leftEdge - HALF_LINE_MM_Q6;
+    leftEdge = GAP_MIDDLE_MM_Q6[first];
   }
   if (last < LAST) {
-    if (GAP_MIDDLE_MM_Q6[0] - rightEdge > CORNER_WIDTH_MM_Q6) runReach = 1;
-    return rightEdge + HALF_LINE_MM_Q6;
+    rightEdge = GAP_MIDDLE_MM_Q6[last + 1];
   }
-  return 0;
-}
-
-bool onLine(uint8_t i) {
-  return coverageQ8[i] != 0;
+  if (first > 0 && last < LAST) {
+    sight.offsetMmQ6 = static_cast<int16_t>((int32_t{leftEdge} + rightEdge) >> 1);
+  } else if (first > 0) {
+    if (int32_t{leftEdge} - GAP_MIDDLE_MM_Q6[SENSOR_COUNT] > CORNER_WIDTH_MM_Q6) sight.reach = -1;
+    sight.offsetMmQ6 = static_cast<int16_t>(leftEdge - HALF_LINE_MM_Q6);
+  } else if (last < LAST) {
+    if (int32_t{GAP_MIDDLE_MM_Q6[0]} - rightEdge > CORNER_WIDTH_MM_Q6) sight.reach = 1;
+    sight.offsetMmQ6 = static_cast<int16_t>(rightEdge + HALF_LINE_MM_Q6);
+  } else {
+    sight.offsetMmQ6 = 0;
+  }
 }
 
 // Of several runs the widest is the line; between equally wide ones, the span of all of them.
 void takeWidestRun() {
   uint8_t widest = 0;
   uint8_t i = 0;
-  while (i < SENSOR_COUNT) {
-    if (!onLine(i)) {
-      i++;
-      continue;
-    }
+  for (unsigned rest = onLine; rest != 0;) {
+    for (; (rest & 1) == 0; rest >>= 1) i++;
     const uint8_t first = i;
-    while (i < SENSOR_COUNT && onLine(i)) i++;
+    for (; (rest & 1) != 0; rest >>= 1) i++;
     const uint8_t width = static_cast<uint8_t>(i - first);
     if (width > widest) {
       widest = width;
@@ -68,9 +70,7 @@ void takeWidestRun() {
       sight.last = static_cast<uint8_t>(i - 1);
     }
   }
-  if (!sight.found) return;
-  sight.offsetMmQ6 = middleOf(sight.first, sight.last);
-  sight.reach = runReach;
+  if (sight.found) measure(sight.first, sight.last);
 }
 
 }  // namespace
@@ -80,7 +80,13 @@ void resetSensing() {
 }
 
 const Sight& findLine(const int16_t (&counts)[SENSOR_COUNT]) {
-  cover(counts);
+  onLine = 0;
+  cover(0, counts[0]);
+  cover(1, counts[1]);
+  cover(2, counts[2]);
+  cover(3, counts[3]);
+  cover(4, counts[4]);
+  cover(5, counts[5]);
   sight.found = false;
   sight.reach = 0;
   takeWidestRun();

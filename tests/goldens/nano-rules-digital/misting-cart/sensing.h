@@ -10,7 +10,7 @@
 
 struct Sight {
   bool found;  // the line is under the bar
-  int32_t
+  int16_t
       offsetMmQ6;  // the line's middle, left of the bar's middle; the last one seen while not found
   int8_t reach;    // end of the bar that a too wide line reaches, as at a corner: 1 left, -1 right
   uint8_t first;   // the run of sensors taken for the line

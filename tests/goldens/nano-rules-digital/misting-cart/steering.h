@@ -19,15 +19,17 @@ enum class Phase : uint8_t {
 
 struct Steering {
   Phase phase;
-  uint8_t classIndex;       // speed class in force
-  int32_t curvaturePerMQ8;  // commanded
-  int32_t speedMmSQ6;       // of the vehicle, modelled
+  int16_t curvaturePerMQ8;  // commanded
+  int32_t speedQ29;         // of the vehicle, modelled: share of the speed at full duty
   int16_t dutyLeftQ12;      // -FULL_DUTY_Q12 to FULL_DUTY_Q12; positive drives forward
   int16_t dutyRightQ12;
 };
 
 // Puts the controller into the state at the start of a run.
 void startSteering();
+
+// Number of the speed class in force, from 0, the fastest.
+uint8_t classInForce();
 
 // One sample period: readings, leftmost sensor first, to duties. Phase::Stopped lasts until the
 // next start.

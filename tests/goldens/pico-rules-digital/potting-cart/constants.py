@@ -27,7 +27,7 @@ BLINK_SAMPLES = const(40)
 # Scales of the integers
 
 # Coverage of a sensor whose spot lies wholly on the line.
-FULL_COVERAGE_Q8 = const(256)
+FULL_COVERAGE_255THS = const(255)
 # Duty of a motor at full voltage.
 FULL_DUTY_Q12 = const(4096)
 # Bits that a filtered value has beyond its input.
@@ -35,23 +35,24 @@ FILTER_BITS = const(4)
 # Bits of the filter and motor model coefficients.
 COEFFICIENT_BITS = const(15)
 # Bits of the curvature per wheel-speed difference.
-RULE_CURVATURE_BITS = const(4)
+RULE_CURVATURE_BITS = const(8)
 # Bits of the rule table's wheel-speed fractions.
 FRACTION_BITS = const(6)
-# Bits of a modelled speed beyond mm/s.
-SPEED_BITS = const(6)
 # Bits of a curvature beyond 1/m.
 CURVATURE_BITS = const(8)
+# Bits of a speed: 8192 is the speed at full duty.
+SPEED_BITS = const(13)
+# Bits of a class's speed; the two more make the firmware close a speed error 4 times as fast as
+# the motors.
+CLASS_SPEED_BITS = const(15)
+# Bits of the modelled speed.
+SPEED_MODEL_BITS = const(29)
 # Bits of a class's speed slope.
-SPEED_SLOPE_BITS = const(4)
-# How much faster than the motors a small speed error is closed: 2^n times.
-SPEED_GAIN_BITS = const(2)
-# Bits dropped from a speed difference before the motor model's product.
-SPEED_MODEL_BITS = const(4)
-# Bits of the half track width beyond m.
-TRACK_BITS = const(16)
-# Bits of the duty per wheel speed beyond duty.
-SLOPE_BITS = const(12)
+SPEED_SLOPE_BITS = const(8)
+# Bits of the half track width beyond m, and of a turn for each speed.
+TRACK_BITS = const(14)
+# Bits of the duty for each speed, in units of both.
+SLOPE_BITS = const(15)
 
 # Sensor bar
 
@@ -67,9 +68,9 @@ HALF_LINE_MM_Q6 = const(608)
 # Width of line reaching an end of the bar from which it is taken for a corner: 33.34 mm. From
 # line.widthMm and tightestRadiusMm.
 CORNER_WIDTH_MM_Q6 = const(2134)
-# Sum of coverages from which the bar lies on a crossing: 3.703 sensors. From line.widthMm and
+# Sum of coverages from which the bar lies on a crossing: 3.706 sensors. From line.widthMm and
 # sensors.pitchMm.
-WIDE_COVERAGE_Q8 = const(948)
+WIDE_COVERAGE_255THS = const(945)
 
 # Steering
 
@@ -85,38 +86,35 @@ CURVATURE_LIMIT_PER_M_Q8 = const(8533)
 # line.tightestRadiusMm.
 SEARCH_CURVATURE_PER_M_Q8 = const(4267)
 # Curvature for each step of difference between the wheels' fractions. From drive.trackWidthMm.
-CURVATURE_PER_DIFFERENCE_Q4 = const(533)
+CURVATURE_PER_DIFFERENCE_Q8 = const(8533)
 
 # Drive
 
 # Half the track width: 60 mm. From drive.trackWidthMm.
-HALF_TRACK_M_Q16 = const(3932)
-# Largest turn rate commanded, mrad/s. From drive.motor and drive.trackWidthMm.
-TURN_LIMIT_MRAD_S = const(27496)
-# Wheel speed at full duty, mm/s. From drive.motor, drive.wheelDiameterMm and power.nominalV.
-WHEEL_LIMIT_MM_S = const(1500)
-# Wheel speed up to which a wheel is left without duty, mm/s.
-WHEEL_DEAD_MM_S = const(15)
+HALF_TRACK_M_Q14 = const(983)
+# Wheel speed at full duty, of which all speeds are shares: 1.5 m/s. From drive.motor,
+# drive.wheelDiameterMm and power.nominalV.
+FULL_SPEED_Q13 = const(8191)
+# Wheel speed up to which a wheel is left without duty: 0.015 m/s.
+WHEEL_DEAD_SPEED_Q13 = const(82)
 # Share of a speed difference that the motors make up in one sample; time constant 80 ms. From
 # drive.motor.timeConstantMs.
 MOTOR_STEP_Q15 = const(1985)
 # Speed command above the present speed when speeding up: 0.395 m/s. From drive.gripCoefficient.
-LEAD_UP_MM_S_Q6 = const(25306)
+LEAD_UP_SPEED_Q13 = const(2160)
 # Speed command below the present speed when braking: 0.417 m/s. From drive.gripCoefficient.
-LEAD_DOWN_MM_S_Q6 = const(26712)
+LEAD_DOWN_SPEED_Q13 = const(2280)
 # Speed of the search for a lost line: 0.344 m/s. From drive.gripCoefficient.
-SEARCH_SPEED_MM_S_Q6 = const(22043)
+SEARCH_SPEED_Q15 = const(7525)
 # Duty at which the left wheel begins to turn: 10 %. From drive.motor.startDutyPercent and trim.
 START_DUTY_LEFT_Q12 = const(410)
 # Duty at which the right wheel begins to turn: 10 %. From drive.motor.startDutyPercent and
 # trim.
 START_DUTY_RIGHT_Q12 = const(410)
-# Duty of the left wheel for each mm/s beyond that. From drive.motor, drive.wheelDiameterMm and
-# trim.
-DUTY_LEFT_PER_MM_S_Q24 = const(10066)
-# Duty of the right wheel for each mm/s beyond that. From drive.motor, drive.wheelDiameterMm and
-# trim.
-DUTY_RIGHT_PER_MM_S_Q24 = const(10066)
+# Duty of the left wheel for each speed beyond that, both as shares. From drive.motor and trim.
+DUTY_LEFT_PER_SPEED_Q14 = const(14746)
+# Duty of the right wheel for each speed beyond that, both as shares. From drive.motor and trim.
+DUTY_RIGHT_PER_SPEED_Q14 = const(14746)
 
 # Memory of the line
 
@@ -125,14 +123,14 @@ DUTY_RIGHT_PER_MM_S_Q24 = const(10066)
 SIDE_OFFSET_MM_Q6 = const(2032)
 # Way over which a vanished line is taken for a gap: 70 mm, as a sum of speeds over samples.
 # From line.longestGapMm.
-GAP_MM_S_Q6_SAMPLES = const(896000)
+GAP_SPEED_Q13_SAMPLES = const(76469)
 # Way over which a crossing may last: 65 mm. From line.widthMm.
-CROSSING_MM_S_Q6_SAMPLES = const(832000)
+CROSSING_SPEED_Q13_SAMPLES = const(71007)
 # Way after a corner on which a vanished line is looked for on its side: 46 mm. From
 # line.widthMm.
-CORNER_MM_S_Q6_SAMPLES = const(588800)
+CORNER_SPEED_Q13_SAMPLES = const(50251)
 # Way out of a bend before a faster class is taken: 26.3 mm. From sensors.aheadOfAxleMm.
-RELEASE_MM_S_Q6_SAMPLES = const(336000)
+RELEASE_SPEED_Q13_SAMPLES = const(28676)
 # Longest search for a lost line: 1.21 s; then the vehicle stops. From drive and
 # line.tightestRadiusMm.
 SEARCH_SAMPLES = const(241)
@@ -144,7 +142,7 @@ class SpeedClass:
     def __init__(
         self,
         curvature_per_m_q8,
-        speed_mm_s_q6,
+        speed_q15,
         speed_slope,
         proportional,
         derivative,
@@ -152,8 +150,8 @@ class SpeedClass:
     ):
         # Largest curvature of the class, and the speed at that.
         self.curvature_per_m_q8 = curvature_per_m_q8
-        self.speed_mm_s_q6 = speed_mm_s_q6
-        # Speed gained for each step of curvature below that.
+        self.speed_q15 = speed_q15
+        # Speed gained for each step of curvature below that, SPEED_SLOPE_BITS more bits.
         self.speed_slope = speed_slope
         # Curvature for each step of the table's curvature, GAIN_BITS more bits.
         self.proportional = proportional
@@ -167,7 +165,7 @@ SPEED_CLASSES = (
     # Avenue: bends from 600 mm radius at 0.8 m/s, as speeds.classes says
     SpeedClass(
         curvature_per_m_q8=427,
-        speed_mm_s_q6=51200,
+        speed_q15=17479,
         speed_slope=0,
         proportional=18330,
         derivative=7215,
@@ -176,7 +174,7 @@ SPEED_CLASSES = (
     # Bay turn: bends from 120 mm radius at 0.4 m/s, as speeds.classes says
     SpeedClass(
         curvature_per_m_q8=2133,
-        speed_mm_s_q6=25600,
+        speed_q15=8739,
         speed_slope=0,
         proportional=16384,
         derivative=7478,

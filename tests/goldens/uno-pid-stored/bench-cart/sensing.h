@@ -11,7 +11,7 @@
 struct Sight {
   bool found;  // the line is under the bar
   bool wide;   // the bar lies on a crossing
-  int32_t
+  int16_t
       offsetMmQ6;  // the line's middle, left of the bar's middle; the last one seen while not found
   int8_t reach;    // end of the bar that a too wide line reaches, as at a corner: 1 left, -1 right
 };
