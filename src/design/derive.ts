@@ -5,6 +5,7 @@ import { classConstants, firmwareGains, tableGainPerM2 } from './class-constants
 import { biasRemarks } from './bias.js';
 import { controllerConstants } from './controller-constants.js';
 import { delayBudget } from './delay.js';
+import { calmLaws, swingRemarks } from './calm-laws.js';
 import { type ClassBase, classBases } from './class-base.js';
 import type { ClassSettings, Design, DesignedClass } from './design.js';
 import { lawBinding } from './law-binding.js';
@@ -103,7 +104,7 @@ function remarksOn(vehicle: Vehicle, classes: readonly DesignedClass[], proven: 
  * @throws FairleadError with exit code 3 when nothing meets the sheet
  */
 export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Design {
-  const bases = classBases(vehicle);
+  const bases = calmLaws(vehicle, classBases(vehicle));
   const settings = (scale: SpeedScale) => bases.map((base) => settingsAt(base, scale));
   const unscaled = controllerConstants(vehicle, settings(AS_ALLOWED));
   const tableGain = tableGainPerM2(vehicle, settings(AS_ALLOWED));
@@ -133,6 +134,7 @@ export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Des
     remarks: [
       ...remarksOn(vehicle, classes, proven !== undefined),
       ...biasRemarks({ vehicle, classes }),
+      ...swingRemarks(vehicle, classes),
       ...overrideRemarks(vehicle, classes, tableGain),
     ],
   };

@@ -74,6 +74,10 @@ export function bestLaw(
   proportional: number,
 ): { gains: SteeringGains; worst: Margins } {
   const law = (time: number) => lawWith(vehicle, speedMps, proportional, time);
+  if (vehicle.control.kind === 'rules' && !vehicle.control.stateMemory) {
+    const gains = law(0);
+    return { gains, worst: worstMargins(vehicle, speedMps, gains) };
+  }
   const outer = toleranceCorners(vehicle).slice(1);
   const plants = outer.map((corner) => lanePlantOf(vehicle, speedMps, corner));
   const cost = (time: number) => {

@@ -75,10 +75,27 @@ export function loopMargins(plant: LanePlant, controller: SampledController): Ma
   return stable ? { gainMargin, phaseMarginDeg, ms } : { gainMargin: 0, phaseMarginDeg: 0, ms: Infinity };
 }
 
-/** Frequency at which the loop crosses -180 deg with the gain margin, rad/s; undefined without such a crossing. */
-export function phaseCrossover(plant: LanePlant, controller: SampledController): number | undefined {
+/** Where a loop just oscillates. */
+export interface Oscillation {
+  /** Loop gain at which it does, over the present one; 0 where it does at any gain. */
+  gainRatio: number;
+  /** Absent where no gain keeps an oscillation of one size. */
+  frequencyRadS?: number;
+}
+
+/** Share of the gain at which every crossing of -180 deg lies within the unit circle. */
+const SMALL = 1e-9;
+
+/** The smallest gain at which the loop oscillates, and how fast; found for unstable loops too. */
+export function oscillation(plant: LanePlant, controller: SampledController): Oscillation {
   const loop = openLoop(samplePlant(plant), controller);
-  return scanLoop(loop, LOWEST_SHARE / plant.lagS, Math.PI / plant.samplePeriodS).phaseCrossoverRadS;
+  const lowest = LOWEST_SHARE / plant.lagS;
+  const small: Response = (w) => loop(w).map((part) => SMALL * part) as [number, number];
+  const { gainMargin, phaseCrossoverRadS } = scanLoop(small, lowest, Math.PI / plant.samplePeriodS);
+  if (phaseCrossoverRadS !== undefined)
+    return { gainRatio: SMALL * gainMargin, frequencyRadS: phaseCrossoverRadS };
+  // two integrators whose phase lag is never made up for: no gain is small enough
+  return { gainRatio: loop(lowest)[1] > 0 ? 0 : Infinity };
 }
 
 /** Time constant of the derivative filter, s. */

@@ -1,6 +1,7 @@
 /** The rule table as a strip of the bar for each state, for reading and annotating. */
 import type { Design, RuleRow } from '../design/design.js';
-import { predictCycles } from '../design/rule-cycle.js';
+import { tableGainPerM2 } from '../design/class-constants.js';
+import { largestSwingM, predictCycles } from '../design/rule-cycle.js';
 import { stateTable } from '../design/state-table.js';
 import { mToMm } from '../sheet/units.js';
 import { table } from './text-table.js';
@@ -43,6 +44,14 @@ export function ruleLines(design: Design): string[] {
 
 /** What the steps of the table do to the loop, by the describing function. */
 function cycleLines({ vehicle, classes }: Design): string[] {
+  const tableGain = tableGainPerM2(vehicle, classes);
+  const swingM = Math.max(...classes.map((each) => largestSwingM(vehicle, each, tableGain)));
+  const allowed = `the sheet allows ${mToMm(vehicle.control.swingM)} mm`;
+  const kept = !Number.isFinite(swingM)
+    ? `In some corner of the tolerances a swing grows until the line is lost; ${allowed}.`
+    : swingM > 0
+      ? `Largest swing in any corner of the tolerances: ${mToMm(swingM).toFixed(1)} mm; ${allowed}.`
+      : 'In no corner of the tolerances either.';
   const predictions = predictCycles(vehicle, classes);
   const steepest = Math.max(...predictions.map((each) => each.gainRatio));
   const nearest = Math.min(...predictions.map((each) => each.criticalRatio));
@@ -54,6 +63,6 @@ function cycleLines({ vehicle, classes }: Design): string[] {
   );
   const measure = `the table's steps act like up to ${steepest.toFixed(2)} times the gain, the loop bears ${nearest.toFixed(1)} times`;
   return cycling.length > 0
-    ? [`Limit cycles predicted (describing function; ${measure}): ${cycling.join('; ')}.`]
-    : [`No limit cycle is predicted (describing function): ${measure}.`];
+    ? [`Limit cycles predicted (describing function; ${measure}): ${cycling.join('; ')}. ${kept}`]
+    : [`No limit cycle is predicted (describing function): ${measure}. ${kept}`];
 }

@@ -24,7 +24,9 @@ export interface ResolvedSheet extends Required<Sheet> {
     driver: Omit<Drive['driver'], 'left' | 'right'> & { left: Motor; right: Motor };
     trim: Required<NonNullable<Drive['trim']>>;
   };
-  control: Sheet['control'] & { gains?: Required<NonNullable<Sheet['control']['gains']>> };
+  control: Sheet['control'] & { stateMemory: boolean; swingMm: number } & {
+    gains?: Required<NonNullable<Sheet['control']['gains']>>;
+  };
   speeds: Omit<Required<Sheet['speeds']>, 'classes'> & { classes: 'auto' | SpeedClass[] };
   start: Required<Sheet['start']>;
   tolerances: Required<NonNullable<Sheet['tolerances']>>;

@@ -224,6 +224,14 @@ export interface Sheet {
      */
     kind: 'pid' | 'rules';
     /**
+     * Rules only: how the state changed since the sample before damps the steering. Without it each state alone decides.
+     */
+    stateMemory?: boolean;
+    /**
+     * Rules only: the steps of the table may let the vehicle swing about the line by at most this much at the bar; the wheel-speed proportion is chosen to keep it. [mm]
+     */
+    swingMm?: number;
+    /**
      * Actions of your own for single states of the rule table, in place of the computed ones; with the controller kind rules only.
      *
      * @minItems 1

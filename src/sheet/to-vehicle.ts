@@ -125,9 +125,11 @@ function classesOf(classes: ResolvedSheet['speeds']['classes']): Vehicle['speeds
     .sort((a, b) => a.minRadiusM - b.minRadiusM);
 }
 
-function controlOf({ kind, gains, overrides }: ResolvedSheet['control']): Vehicle['control'] {
+function controlOf({ kind, stateMemory, swingMm, gains, overrides }: ResolvedSheet['control']): Vehicle['control'] {
   return {
     kind,
+    stateMemory,
+    swingM: mmToM(swingMm),
     ...(gains && {
       gains: {
         proportionalPerM2: gains.proportionalPerM2,

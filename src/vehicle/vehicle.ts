@@ -64,6 +64,10 @@ export interface Vehicle {
   power: { nominalV: number; fullV: number; emptyV: number };
   control: {
     kind: 'pid' | 'rules';
+    /** Rules: whether the change of state damps the steering. */
+    stateMemory: boolean;
+    /** Rules: largest swing about the line that the table's steps may keep going, at the bar, m. */
+    swingM: number;
     /** Steering gains given in the sheet, for every class. */
     gains?: { proportionalPerM2: number; derivativeTimeS: number; filterTimeS: number };
     /** Actions given in the sheet for runs of sensors on the line: wheel speeds as fractions of base speed. */

@@ -127,7 +127,7 @@ describe('gains by hand', () => {
   const withGains = (proportionalPerM2: number, derivativeTimeS: number) =>
     deriveDesign({
       ...vehicle,
-      control: { kind: 'pid', gains: { proportionalPerM2, derivativeTimeS, filterTimeS: 0.004 } },
+      control: { ...vehicle.control, gains: { proportionalPerM2, derivativeTimeS, filterTimeS: 0.004 } },
     });
 
   test('are kept, and limit the speed to where they keep the margins', () => {

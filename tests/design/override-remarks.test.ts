@@ -8,7 +8,7 @@ type Overrides = NonNullable<Vehicle['control']['overrides']>;
 
 function designWith(overrides: Overrides) {
   const vehicle = demoVehicle('rules');
-  return deriveDesign({ ...vehicle, control: { kind: 'rules', overrides } });
+  return deriveDesign({ ...vehicle, control: { ...vehicle.control, overrides } });
 }
 
 describe('rules by hand', () => {

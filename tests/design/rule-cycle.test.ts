@@ -1,7 +1,14 @@
-import { expect, test } from 'vitest';
+import { describe, expect, test } from 'vitest';
+import { FULL_DUTY } from '../../src/controller/constants.js';
+import { Twin } from '../../src/controller/twin.js';
+import { compileCourse } from '../../src/course/lane.js';
+import { twinDelayS } from '../../src/design/delay.js';
 import { deriveDesign } from '../../src/design/derive.js';
-import { predictCycles, staircase } from '../../src/design/rule-cycle.js';
+import type { Design } from '../../src/design/design.js';
+import { largestSwingM, predictCycles, staircase } from '../../src/design/rule-cycle.js';
 import { LEAST_MARGINS } from '../../src/design/tolerance-box.js';
+import { perturbedPlant } from '../../src/rehearsal/plant-parameters.js';
+import { Plant } from '../../src/rehearsal/plant.js';
 import { demoVehicle } from '../design/demo-vehicle.js';
 
 const vehicle = demoVehicle('rules');
@@ -24,14 +31,74 @@ test('the margins that every law keeps rule a limit cycle out', () => {
   }
 });
 
-test('a law at the edge of stability is told to cycle, with amplitude and frequency', () => {
-  const [first] = classes;
-  const edge = { ...first!, margins: { ...first!.margins, gainMargin: 1.05 } };
-  const [prediction] = predictCycles(vehicle, [edge]);
-  expect(prediction!.cycles.length).toBeGreaterThan(0);
-  for (const { amplitude, frequencyRadS } of prediction!.cycles) {
-    expect(amplitude).toBeGreaterThan(0.004);
-    expect(amplitude).toBeLessThan(0.0345);
-    expect(frequencyRadS).toBeGreaterThan(10);
+describe('cycles of laws without damping, against the twin on a straight', () => {
+  const lane = compileCourse({
+    courseVersion: 1,
+    closed: false,
+    lineWidthMm: 19,
+    pieces: [{ straightMm: 20_000 }],
+  });
+
+  /** The middle of the bar beside the line, m, over the second half of 15 m, and the sample period. */
+  function swing(design: Design): { offsetM: number[]; periodS: number } {
+    const twin = new Twin(design.controller);
+    twin.start();
+    const nominal = perturbedPlant(design.vehicle, 0);
+    const plant = new Plant({ ...nominal, noiseShare: 0, startLateralM: 0.006 }, lane);
+    const counts = new Int32Array(plant.sensorCount);
+    const { samplePeriodS: periodS } = design.vehicle.board;
+    const delayS = twinDelayS(design.vehicle);
+    const samples = Math.round(15 / design.classes[0]!.speedMps / periodS);
+    const offsetM: number[] = [];
+    let [left, right] = [0, 0];
+    for (let i = 0; i < samples; i++) {
+      plant.readCounts(counts);
+      twin.step(counts);
+      plant.step(left, right, delayS);
+      [left, right] = [twin.dutyLeft / FULL_DUTY, twin.dutyRight / FULL_DUTY];
+      plant.step(left, right, periodS - delayS);
+      offsetM.push(plant.yM + design.vehicle.bar.aheadM * Math.sin(plant.headingRad));
+    }
+    return { offsetM: offsetM.slice(samples / 2), periodS };
   }
+
+  // proportional gain (1/m^2), speed (m/s): a gain margin below that of the staircase, or below 1
+  test.each([
+    [356, 0.85],
+    [250, 0.87],
+    [600, 0.83],
+    [1000, 0.8],
+  ])('kp %d at %d m/s: amplitude within 20 %%, frequency within 12 %%', (proportionalPerM2, speedMps) => {
+    const none = { motorGain: 0, lag: 0, grip: 0 };
+    const design = deriveDesign({
+      ...vehicle,
+      tolerance: none,
+      speeds: { ...vehicle.speeds, classes: [{ name: 'all', minRadiusM: 0.12, speedMps }] },
+      control: { ...vehicle.control, gains: { proportionalPerM2, derivativeTimeS: 0, filterTimeS: 0.004 } },
+    });
+    const { cycles } = predictCycles(design.vehicle, design.classes)[0]!;
+    const { offsetM, periodS } = swing(design);
+    const amplitude = (Math.max(...offsetM) - Math.min(...offsetM)) / 2;
+    const rises = offsetM.filter((y, i) => y >= 0 && (offsetM[i - 1] ?? 0) < 0).length;
+    const frequencyRadS = (2 * Math.PI * rises) / (offsetM.length * periodS);
+    // a swing that grows from the start of a run settles at the first stable cycle
+    expect(Math.abs(cycles[0]!.amplitude / amplitude - 1)).toBeLessThan(0.2);
+    expect(Math.abs(cycles[0]!.frequencyRadS / frequencyRadS - 1)).toBeLessThan(0.12);
+  });
+});
+
+test('a lag beyond look-ahead over speed is told to swing until the line is lost', () => {
+  const design = deriveDesign({
+    ...vehicle,
+    speeds: { ...vehicle.speeds, classes: [{ name: 'all', minRadiusM: 0.12, speedMps: 1.2 }] },
+    control: {
+      ...vehicle.control,
+      gains: { proportionalPerM2: 356, derivativeTimeS: 0, filterTimeS: 0.004 },
+    },
+  });
+  expect(predictCycles(design.vehicle, design.classes)).toMatchObject([
+    { criticalRatio: 0, cycles: [], grows: true },
+  ]);
+  expect(largestSwingM(design.vehicle, design.classes[0]!, 356)).toBe(Infinity);
+  expect(design.remarks.join(' ')).toMatch(/larger than the 10 mm of the sheet: all until the line is lost/);
 });

@@ -24,7 +24,7 @@ const setup = (vehicle: Vehicle, seed: number) => runSetup(vehicle, lane, seed, 
 describe.each(['pico', 'esp32'])('tray-cart-%s', (board) => {
   it.each(['pid', 'rules'] as const)('drives two laps with %s, as the twin does', async (kind) => {
     const { sheet, digest } = await loadSheet(`examples/tray-cart/tray-cart-${board}.json`);
-    const design = designFor({ ...sheet, control: { kind } });
+    const design = designFor({ ...sheet, control: { ...sheet.control, kind } });
     const { vehicle, controller } = design;
     const engine = await micropythonEngine({ digest }, design);
     const result = await engine.run(setup(vehicle, 0));

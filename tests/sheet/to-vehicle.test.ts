@@ -25,7 +25,7 @@ test('the demo cart in SI units', () => {
       crossings: true,
     },
     power: { nominalV: 6, fullV: 6.6, emptyV: 5.2 },
-    control: { kind: 'pid' },
+    control: { kind: 'pid', stateMemory: true, swingM: 0.01 },
     speeds: { classes: 'auto', finishTarget: 0.995 },
     tolerance: { motorGain: 0.07, lag: 0.35, grip: 0.2 },
   });

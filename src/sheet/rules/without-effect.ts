@@ -16,6 +16,12 @@ export const rule: SheetRule = {
       const message = 'The level over the line is for digital sensors, so it has no effect.';
       notes.push({ pointer: '/sensors/lineLevel', message, fix: 'Remove it, or write "kind": "digital".' });
     }
+    const { kind: controller, stateMemory, swingMm } = given.control;
+    if (controller === 'pid' && (stateMemory !== undefined || swingMm !== undefined)) {
+      const pointer = stateMemory === undefined ? '/control/swingMm' : '/control/stateMemory';
+      const message = 'Memory of the state and largest swing are for a rule table, so they have no effect.';
+      notes.push({ pointer, message, fix: 'Remove it, or write "kind": "rules".' });
+    }
     return notes;
   },
 };

@@ -50,7 +50,10 @@ const CARTS = {
     ]),
   'unstable gains': () => ({
     ...withClasses([{ name: 'all', minRadiusM: 0.12, speedMps: 0.9 }]),
-    control: { kind: 'pid', gains: { proportionalPerM2: 3000, derivativeTimeS: 0, filterTimeS: 0.004 } },
+    control: {
+      ...demoVehicle().control,
+      gains: { proportionalPerM2: 3000, derivativeTimeS: 0, filterTimeS: 0.004 },
+    },
   }),
   'too fast': () => withClasses([{ name: 'all', minRadiusM: 0.12, speedMps: 1.49 }]),
 } satisfies Record<string, () => Vehicle>;
