@@ -25,7 +25,7 @@ import { Random } from './random.js';
 import { WheelDrive } from './wheel-drive.js';
 
 /** Longest substep, s. */
-const SUBSTEP_S = 1e-3;
+const SUBSTEP_S = 2e-3;
 /** Longest step, s. */
 const LONGEST_STEP_S = 5e-3;
 
@@ -129,7 +129,7 @@ export class Plant {
     const xM = this.xM + aheadM * this.cosHeading - sideM * this.sinHeading;
     const yM = this.yM + aheadM * this.sinHeading + sideM * this.cosHeading;
     const share = this.light.contrast * this.lane.coverage(xM, yM, spotRadiusM) + this.light.ambient;
-    const noise = noiseShare === 0 ? 0 : noiseShare * this.noise.normal();
+    const noise = noiseShare === 0 ? 0 : noiseShare * this.noise.noise();
     if (kind === 'digital') return share + noise > 0.5 === (lineLevel === 'high') ? 1 : 0;
     const ground = this.ground[i]!;
     const reading = Math.round(ground + share * (this.line[i]! - ground) + noise * adcMaxCount);

@@ -4,7 +4,8 @@
  * Generator: xoshiro128++ (Blackman and Vigna, Scrambled linear pseudorandom number generators, ACM Trans. Math. Softw. 47:36,
  * 2021). Seeding: the state is filled from seed and stream by a Weyl sequence through the finaliser of MurmurHash3 (Appleby,
  * public domain), the manner of SplitMix (Steele, Lea and Flood, OOPSLA 2014), so that neighbouring seeds have nothing in common.
- * Normal numbers: the polar method (Marsaglia and Bray, SIAM Review 6:260, 1964).
+ * Normal numbers: the polar method (Marsaglia and Bray, SIAM Review 6:260, 1964); for noise in bulk the sum of four uniform ones
+ * (Irwin 1927, Hall 1927), whose tails end at 3.45 standard deviations.
  */
 export class Random {
   private s0: number;
@@ -69,7 +70,17 @@ export class Random {
       return u * scale;
     }
   }
+
+  /** Nearly normal with mean 0 and standard deviation 1, from one draw: the sum of its four bytes. */
+  noise(): number {
+    const bits = this.bits();
+    const sum = (bits & 255) + ((bits >>> 8) & 255) + ((bits >>> 16) & 255) + (bits >>> 24);
+    return (sum - 2 * 255) * BYTES_SCALE;
+  }
 }
+
+/** Four uniform whole numbers 0 to 255 have together the variance 4 (256^2 - 1)/12. */
+const BYTES_SCALE = Math.sqrt(12 / (4 * (256 ** 2 - 1)));
 
 /** 2^32 divided by the golden ratio, odd. */
 const WEYL = 0x9e3779b9 | 0;

@@ -16,6 +16,8 @@ import { WARM_UP_S } from './plant-table.js';
 
 /** A wheel slower than this stands, m/s. */
 const STANDING_MPS = 1e-3;
+/** Time between two looks at how warm the motors are, s. */
+const WARMER_S = 0.1;
 /** Below this speed the castor's drag fades, m/s. */
 const CASTOR_CREEP_MPS = 0.01;
 
@@ -27,26 +29,27 @@ export class WheelDrive {
   batteryFactor: number;
   private readonly startLeft: number;
   private readonly startRight: number;
-  private readonly drifts: boolean;
+  /** Top speeds of the motors as warm as they are, and when to look again, s. */
+  private topLeft: number;
+  private topRight: number;
+  private warmerS: number;
 
   constructor(private readonly parameters: Readonly<PlantParameters>) {
     const { startDuty, frictionLeft, frictionRight, driftLeft, driftRight } = parameters;
     this.batteryFactor = parameters.batteryFactor;
     this.startLeft = Math.min(0.99, startDuty * frictionLeft);
     this.startRight = Math.min(0.99, startDuty * frictionRight);
-    this.drifts = driftLeft !== 0 || driftRight !== 0;
+    this.topLeft = parameters.topLeftMps;
+    this.topRight = parameters.topRightMps;
+    this.warmerS = driftLeft !== 0 || driftRight !== 0 ? 0 : Infinity;
   }
 
   /** To be called with the wheel speeds (m/s) and duties (-1 to 1) at the start of each step. */
   update(dutyLeft: number, dutyRight: number, leftMps: number, rightMps: number, timeS: number): void {
-    const { trimLeft, trimRight, topLeftMps, topRightMps, driftLeft, driftRight, castorDrag } =
-      this.parameters;
-    let [topLeft, topRight] = [topLeftMps, topRightMps];
-    if (this.drifts) {
-      const warm = 1 - Math.exp(-timeS / WARM_UP_S);
-      topLeft *= 1 + driftLeft * warm;
-      topRight *= 1 + driftRight * warm;
-    }
+    const { trimLeft, trimRight, castorDrag } = this.parameters;
+    if (timeS >= this.warmerS) this.warmUp(timeS);
+    const topLeft = this.topLeft;
+    const topRight = this.topRight;
     const left = dutyLeft / trimLeft;
     const right = dutyRight / trimRight;
     this.sag(
@@ -68,6 +71,15 @@ export class WheelDrive {
     }
     this.steadyLeftMps = this.steady(left, this.startLeft, loadLeft, leftMps) * topLeft;
     this.steadyRightMps = this.steady(right, this.startRight, loadRight, rightMps) * topRight;
+  }
+
+  /** Motors get warmer by an exponential. */
+  private warmUp(timeS: number): void {
+    const { topLeftMps, topRightMps, driftLeft, driftRight } = this.parameters;
+    const warm = 1 - Math.exp(-timeS / WARM_UP_S);
+    this.topLeft = topLeftMps * (1 + driftLeft * warm);
+    this.topRight = topRightMps * (1 + driftRight * warm);
+    this.warmerS = timeS + WARMER_S;
   }
 
   /** Battery under load; counter-voltages over nominal. */
