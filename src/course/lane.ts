@@ -45,12 +45,19 @@ export class Lane {
   }
 
   /**
-   * Share of a round sensor spot that is painted, 0 to 1; paint.ts has the equations. Allocates nothing.
+   * Share of a round sensor spot that is painted, 0 to 1; paint.ts has the equations.
    *
    * @param spotRadiusM above 0 and at most MAX_SPOT_RADIUS_M
    */
   coverage(xM: number, yM: number, spotRadiusM: number): number {
-    return this.paint.coverage(xM, yM, spotRadiusM);
+    const share = new Float64Array(1);
+    this.paint.cover(Float64Array.of(xM, yM), spotRadiusM, share);
+    return share[0]!;
+  }
+
+  /** The same for many spots at once, allocating nothing: x and y of each, m; writes one share each. */
+  cover(spotsM: Float64Array, spotRadiusM: number, shares: Float64Array): void {
+    this.paint.cover(spotsM, spotRadiusM, shares);
   }
 
   /**

@@ -117,53 +117,57 @@ export class Paint {
   }
 
   /**
-   * Share of a round spot that is painted, 0 to 1.
+   * Writes of each round spot the share that is painted, 0 to 1. Allocates nothing.
    *
+   * All in one loop over plain arrays: numbers handed from function to function would each be put on the heap.
+   *
+   * @param spotsM x and y of each spot, m
    * @param spotRadiusM above 0 and at most MAX_SPOT_RADIUS_M
    */
-  coverage(xM: number, yM: number, spotRadiusM: number): number {
-    const { grid, strips } = this;
-    const column = Math.floor((xM - grid.left) * grid.perM);
-    const row = Math.floor((yM - grid.bottom) * grid.perM);
-    if (!(column >= 0 && column < grid.columns && row >= 0 && row < grid.rows)) return 0;
-    const cell = row * grid.columns + column;
-    const last = grid.starts[cell + 1]!;
-    let most = 0;
-    for (let i = grid.starts[cell]!; i < last; i++) {
-      const share = stripShare(strips, grid.items[i]! * F.size, xM, yM, spotRadiusM, this.halfWidthM);
-      if (share >= 1) return 1;
-      if (share > most) most = share;
+  cover(spotsM: Float64Array, spotRadiusM: number, shares: Float64Array): void {
+    const { grid, strips: s, halfWidthM: halfM } = this;
+    const { left, bottom, perM, columns, rows, starts, items } = grid;
+    const r = spotRadiusM;
+    for (let spot = 0; spot < shares.length; spot++) {
+      const xM = spotsM[2 * spot]!;
+      const yM = spotsM[2 * spot + 1]!;
+      shares[spot] = 0;
+      const column = Math.floor((xM - left) * perM);
+      const row = Math.floor((yM - bottom) * perM);
+      if (!(column >= 0 && column < columns && row >= 0 && row < rows)) continue;
+      const cell = row * columns + column;
+      const last = starts[cell + 1]!;
+      let most = 0;
+      for (let i = starts[cell]!; i < last && most < 1; i++) {
+        const at = items[i]! * F.size;
+        const dx0 = xM - s[at + F.x0]!;
+        const dy0 = yM - s[at + F.y0]!;
+        const radius = s[at + F.radius]!;
+        let sideM: number;
+        if (radius === 0) {
+          sideM = Math.abs(dy0 * s[at + F.tx0]! - dx0 * s[at + F.ty0]!);
+        } else {
+          const cx = xM - s[at + F.centreX]!;
+          const cy = yM - s[at + F.centreY]!;
+          sideM = Math.abs(Math.sqrt(cx * cx + cy * cy) - radius);
+        }
+        if (sideM >= halfM + r) continue;
+        const afterStart = dx0 * s[at + F.tx0]! + dy0 * s[at + F.ty0]!;
+        const joined0 = s[at + F.joined0] === 1;
+        if (afterStart < (joined0 ? -1e-9 : -r)) continue;
+        const dx1 = s[at + F.x1]! - xM;
+        const dy1 = s[at + F.y1]! - yM;
+        const beforeEnd = dx1 * s[at + F.tx1]! + dy1 * s[at + F.ty1]!;
+        const joined1 = s[at + F.joined1] === 1;
+        if (beforeEnd < (joined1 ? -1e-9 : -r)) continue;
+        let share = sideM <= halfM - r ? 1 : discShare((halfM - sideM) / r) - discShare((-halfM - sideM) / r);
+        let along = 1;
+        if (!joined0) along += discShare(afterStart / r) - 1;
+        if (!joined1) along += discShare(beforeEnd / r) - 1;
+        share *= along;
+        if (share > most) most = share;
+      }
+      shares[spot] = most;
     }
-    return most;
   }
-}
-
-function stripShare(s: Float64Array, at: number, xM: number, yM: number, r: number, halfM: number): number {
-  const dx0 = xM - s[at + F.x0]!;
-  const dy0 = yM - s[at + F.y0]!;
-  const afterStart = dx0 * s[at + F.tx0]! + dy0 * s[at + F.ty0]!;
-  const joined0 = s[at + F.joined0] === 1;
-  if (afterStart < (joined0 ? -1e-9 : -r)) return 0;
-  const dx1 = s[at + F.x1]! - xM;
-  const dy1 = s[at + F.y1]! - yM;
-  const beforeEnd = dx1 * s[at + F.tx1]! + dy1 * s[at + F.ty1]!;
-  const joined1 = s[at + F.joined1] === 1;
-  if (beforeEnd < (joined1 ? -1e-9 : -r)) return 0;
-
-  const radius = s[at + F.radius]!;
-  let sideM: number;
-  if (radius === 0) {
-    sideM = Math.abs(dy0 * s[at + F.tx0]! - dx0 * s[at + F.ty0]!);
-  } else {
-    const cx = xM - s[at + F.centreX]!;
-    const cy = yM - s[at + F.centreY]!;
-    sideM = Math.abs(Math.sqrt(cx * cx + cy * cy) - radius);
-  }
-  if (sideM >= halfM + r) return 0;
-  let share = sideM <= halfM - r ? 1 : discShare((halfM - sideM) / r) - discShare((-halfM - sideM) / r);
-  let along = 1;
-  if (!joined0) along += discShare(afterStart / r) - 1;
-  if (!joined1) along += discShare(beforeEnd / r) - 1;
-  share *= along;
-  return share > 0 ? share : 0;
 }
