@@ -7,10 +7,11 @@ import { controllerConstants } from './controller-constants.js';
 import { delayBudget } from './delay.js';
 import { calmLaws, swingRemarks } from './calm-laws.js';
 import { type ClassBase, classBases } from './class-base.js';
-import type { ClassSettings, Design, DesignedClass } from './design.js';
+import type { ClassSettings, Design, DesignedClass, Proof } from './design.js';
 import { lawBinding } from './law-binding.js';
 import { overrideRemarks } from './override-remarks.js';
-import { Proving, type SpeedScale, slowestScale } from './proving.js';
+import { Proving, slowestScale } from './proving.js';
+import type { SpeedScale } from './speed-search.js';
 import { bindingLimit } from './speed-classes.js';
 import { keeps, lanePlantOf, marginsAt, worstMargins } from './tolerance-box.js';
 import { overflows } from './intervals.js';
@@ -77,12 +78,19 @@ function refuseOverflow(vehicle: Vehicle, controller: ControllerConstants): void
     throw new FairleadError('No design meets the sheet.', { exitCode: EXIT.noDesign, problems });
 }
 
-/** Speeds of the sheet are rehearsed as they stand: the scale leaves them alone; undefined when the target is missed. */
-function givenScale(
+/** Speeds and what proves them. Speeds of the sheet are rehearsed as they stand: their scale leaves them alone. */
+function provenScale(
+  vehicle: Vehicle,
   proving: Proving,
   controllerAt: (scale: SpeedScale) => ControllerConstants,
-): SpeedScale | undefined {
-  return proving.meanTimeS(controllerAt(AS_ALLOWED)) === undefined ? undefined : AS_ALLOWED;
+): { scale: SpeedScale; proof: Proof; kept: boolean } {
+  if (vehicle.speeds.classes === 'auto') {
+    const best = proving.best(controllerAt);
+    if (best) return { ...best, kept: true };
+  }
+  const scale = vehicle.speeds.classes === 'auto' ? slowestScale(vehicle) : AS_ALLOWED;
+  const proof = proving.proof(controllerAt(scale));
+  return { scale, proof, kept: proof.finished >= proof.targetShare * proof.runs };
 }
 
 function remarksOn(vehicle: Vehicle, classes: readonly DesignedClass[], proven: boolean): string[] {
@@ -117,9 +125,7 @@ export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Des
     }),
   });
   const proving = new Proving(vehicle, provenOn);
-  const given = vehicle.speeds.classes !== 'auto';
-  const proven = given ? givenScale(proving, controllerAt) : proving.best(controllerAt);
-  const scale = proven ?? slowestScale(vehicle);
+  const { scale, proof, kept } = provenScale(vehicle, proving, controllerAt);
   const chosen = settings(scale);
   const controller = controllerAt(scale);
   refuseOverflow(vehicle, controller);
@@ -128,11 +134,12 @@ export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Des
   );
   return {
     vehicle,
+    proof,
     delay: delayBudget(vehicle),
     classes,
     controller,
     remarks: [
-      ...remarksOn(vehicle, classes, proven !== undefined),
+      ...remarksOn(vehicle, classes, kept),
       ...biasRemarks({ vehicle, classes }),
       ...swingRemarks(vehicle, classes),
       ...overrideRemarks(vehicle, classes, tableGain),

@@ -68,8 +68,20 @@ export interface RuleRow {
   right: number;
 }
 
+/** What the rehearsals on the proving lane show about the finish target. */
+export interface Proof {
+  /** Drawn vehicles that drove at the speeds of the design, and how many of them finished. */
+  runs: number;
+  finished: number;
+  /** The sheet's target. */
+  targetShare: number;
+  /** Confidence with which that shows the target, by Clopper and Pearson. */
+  confidenceShare: number;
+}
+
 export interface Design {
   vehicle: Vehicle;
+  proof: Proof;
   delay: { shares: DelayShare[]; totalS: number };
   classes: DesignedClass[];
   controller: ControllerConstants;

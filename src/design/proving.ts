@@ -1,88 +1,63 @@
 /**
- * Speeds by proof: class speeds are lowered until perturbed rehearsals of the twin keep the finish target.
+ * Speeds by proof: class speeds are as fast as perturbed rehearsals of the twin keep the finish target.
  *
  * Two numbers scale what the limits allow: `top`, a cap on every class (how fast a straight may be when an
  * unseen bend follows), and `share`, a factor on the classes below it (how near the grip limit bends are
- * taken). For each share the largest cap that passes is found by bisection; the pair with the shortest mean
- * time on the proving lane is taken. Runs are repeatable: their seeds are fixed.
+ * taken). Both are found in two stages:
+ *
+ * Screening: for each share the largest cap at which the most demanding of SCREENED drawn vehicles all finish, by bisection; the pair
+ * with the shortest mean time of typical vehicles is taken.
+ * Confirmation: other vehicles, as many as it takes to show the target with 95 % confidence when none of them is lost (Clopper and
+ * Pearson 1934; 598 for 99.5 %), drive at those speeds, the most demanding first. When one is lost, speeds are lowered a step
+ * and all drive again, the lost one first. Where a vehicle that is lost at one speed is lost at every higher one, the speeds that are found are too
+ * high for the target no more often than the confidence says, however many steps it took: too high are those beyond the largest
+ * speed that keeps the target, and none of them passes unless that very speed, or one as near to it as one likes, does.
+ *
+ * A slow vehicle on a long lane costs more samples a run; where the budget does not reach for all runs, fewer drive, and the proof
+ * says which confidence they give. The budget is one of samples, not of time: the design is the same on every machine.
  */
 import type { ControllerConstants } from '../controller/constants.js';
-import { type PlantParameters, perturbedPlant } from '../rehearsal/plant-parameters.js';
 import { twinEngine } from '../rehearsal/twin-maker.js';
+import { runsToShow, shownConfidenceShare } from '../statistics/rates.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
-import { provingLane } from './proving-lane.js';
+import type { Proof } from './design.js';
+import { type DrawnVehicle, VehicleDraws, demandRatio } from './drawn-vehicles.js';
+import { LOWEST_TOP_SHARE, SHARES, type SpeedScale, type Timed, quickestScale } from './speed-search.js';
 
-/** Scales on class speeds. */
-export interface SpeedScale {
-  /** No class is faster, m/s. */
-  top: number;
-  /** Factor on every class speed, at most 1. */
-  share: number;
-}
-
-/**
- * Samples that a proof may take. A slow vehicle on a long lane takes more a run, so it gets fewer runs a trial: only its most
- * demanding vehicles, and fewer shares.
- */
-const SAMPLE_BUDGET = 2.5e6;
-/** Trials that a full search takes, about. */
+/** Samples that screening and confirmation may take, about: two times a second on a machine of today's. */
+const SCREENING_SAMPLES = 1.8e6;
+const CONFIRMATION_SAMPLES = 9e5;
+/** Trials that a full screening takes, about. */
 const TRIALS = 30;
-
-/** A scale and the mean time that it gives. */
-interface Timed {
-  scale: SpeedScale;
-  timeS: number;
-}
-
-/** Perturbed vehicles drawn; how many of the most demanding every trial must finish, and how many typical ones are timed. */
-const DRAWN = 200;
+/** Vehicles drawn for screening; how many of the most demanding every trial must finish, and how many typical ones are timed. */
+const SCREENED = 200;
 const DEMANDING = 12;
 const TYPICAL = 8;
-const SHARES = [1, 0.95, 0.9, 0.84, 0.77, 0.7];
 const FEW_SHARES = [1, 0.84, 0.7];
-const BISECTIONS = 5;
-/** Caps below the largest passing one that are tried too. */
-const SLOWER_TOPS = [0.95, 0.9, 0.85];
-/** Slowest cap tried, as a share of full wheel speed. */
-const LOWEST_TOP_SHARE = 0.25;
-/** Mean speed over a proving lane as a share of full wheel speed, about; and the fewest runs of a trial. */
-const USUAL_TOP_SHARE = 0.4;
+/** Mean speed over a proving lane as a share of full wheel speed, about; and the fewest runs of a trial, and of a proof. */
+const USUAL_TOP_SHARE = 0.5;
 const FEWEST_RUNS = 4;
+const FEWEST_CONFIRMING = 40;
+/** Speeds are lowered by this factor at a time until the confirmation passes, so often at most. */
+const STEP_DOWN = 0.975;
+const MOST_STEPS = 30;
 /** Simulated time allowed for the proving lane, in times of driving it at the lowest cap. */
 const PATIENCE = 4;
-
-/** How demanding a drawn vehicle is: fast for its command, slow to follow, little grip. */
-function demand(plant: PlantParameters): number {
-  const speed = ((plant.topLeftMps + plant.topRightMps) / 2) * plant.batteryFactor;
-  return (speed * speed * Math.sqrt(plant.lagS)) / plant.grip;
-}
-
-/** Vehicles on which the target is proven, and those whose time counts. */
-function triedPlants(vehicle: Vehicle): { demanding: PlantParameters[]; typical: PlantParameters[] } {
-  const drawn = Array.from({ length: DRAWN }, (_, i) => perturbedPlant(vehicle, i + 1));
-  drawn.sort((a, b) => demand(b) - demand(a));
-  const excused = Math.floor(DRAWN * (1 - vehicle.speeds.finishTarget));
-  const typical = Array.from(
-    { length: TYPICAL },
-    (_, i) => drawn[Math.floor(((i + 0.5) * DRAWN) / TYPICAL)]!,
-  );
-  return {
-    demanding: drawn.slice(excused, excused + DEMANDING),
-    typical: [perturbedPlant(vehicle, 0), ...typical],
-  };
-}
+/** Seed of the first vehicle of the confirmation: other vehicles than those of the screening. */
+const CONFIRMING_SEED = 1001;
 
 /** The scale that is left when nothing passes. */
 export function slowestScale(vehicle: Vehicle): SpeedScale {
   return { top: LOWEST_TOP_SHARE * vehicle.drive.topSpeedMps, share: SHARES[SHARES.length - 1] as number };
 }
 
-export class Proving {
-  private readonly lane;
-  private readonly demanding: PlantParameters[];
-  private readonly typical: PlantParameters[];
-  private readonly timeLimitS: number;
+const byDemand = (vehicles: DrawnVehicle[]) => vehicles.sort((a, b) => demandRatio(b) - demandRatio(a));
 
+export class Proving {
+  private readonly demanding: DrawnVehicle[];
+  private readonly typical: DrawnVehicle[];
+  private readonly confirming: DrawnVehicle[];
+  private readonly timeLimitS: number;
   /** Shares that are tried. */
   private readonly shares: readonly number[];
 
@@ -91,73 +66,114 @@ export class Proving {
     private readonly vehicle: Vehicle,
     laneOf: Vehicle = vehicle,
   ) {
-    this.lane = provingLane(laneOf);
-    const { demanding, typical } = triedPlants(vehicle);
+    const draws = new VehicleDraws(vehicle, laneOf);
+    const many = (first: number, runs: number) =>
+      byDemand(Array.from({ length: runs }, (_, i) => draws.drawn(first + i)));
     const { topSpeedMps } = vehicle.drive;
-    const samples = this.lane.lengthM / (USUAL_TOP_SHARE * topSpeedMps) / vehicle.board.samplePeriodS;
-    const runs = Math.max(FEWEST_RUNS, Math.floor(SAMPLE_BUDGET / TRIALS / samples));
-    const demandingRuns = Math.min(demanding.length, Math.ceil(runs / 2));
-    this.demanding = demanding.slice(0, demandingRuns);
-    this.typical = typical.slice(0, Math.max(1, runs - demandingRuns));
-    this.shares = runs < demanding.length ? FEW_SHARES : SHARES;
-    this.timeLimitS = (PATIENCE * this.lane.lengthM) / (LOWEST_TOP_SHARE * topSpeedMps);
+    const samples = draws.lengthM / (USUAL_TOP_SHARE * topSpeedMps) / vehicle.board.samplePeriodS;
+    const runs = Math.max(FEWEST_RUNS, Math.floor(SCREENING_SAMPLES / TRIALS / samples));
+    const demandingRuns = Math.min(DEMANDING, Math.ceil(runs / 2));
+    const screened = many(1, SCREENED);
+    this.demanding = screened.slice(0, demandingRuns);
+    const typical = Array.from(
+      { length: TYPICAL },
+      (_, i) => screened[Math.floor(((i + 0.5) * SCREENED) / TYPICAL)]!,
+    );
+    this.typical = [draws.drawn(0), ...typical].slice(0, Math.max(1, runs - demandingRuns));
+    this.shares = runs < DEMANDING ? FEW_SHARES : SHARES;
+    const affordable = Math.max(FEWEST_CONFIRMING, Math.floor(CONFIRMATION_SAMPLES / samples));
+    this.confirming = many(CONFIRMING_SEED, Math.min(affordable, runsToShow(vehicle.speeds.finishTarget, 0)));
+    this.timeLimitS = (PATIENCE * draws.lengthM) / (LOWEST_TOP_SHARE * topSpeedMps);
   }
 
   /** Mean time of the typical vehicles, s; undefined as soon as one of all does not finish. */
   meanTimeS(controller: ControllerConstants): number | undefined {
-    const engine = twinEngine(this.vehicle, controller);
-    const timeOf = (plant: PlantParameters): number | undefined => {
-      const setup = { plant, lane: this.lane, laps: 1, timeLimitS: this.timeLimitS, sampleTrace: false };
-      const result = engine.runNow(setup);
-      return result.loss ? undefined : result.timeS;
-    };
-    const failing = this.demanding.findIndex((plant) => timeOf(plant) === undefined);
-    if (failing >= 0) {
-      // the vehicle that fails now most likely fails the next trial too: try it first
-      this.demanding.unshift(...this.demanding.splice(failing, 1));
-      return undefined;
-    }
+    const timeOf = this.timing(controller);
+    if (!finishAll(this.demanding, timeOf)) return undefined;
+    return this.typicalTimeS(controller);
+  }
+
+  /** Mean time of those typical vehicles that finish, s; undefined when one does not. */
+  private typicalTimeS(controller: ControllerConstants): number | undefined {
+    const timeOf = this.timing(controller);
     let sum = 0;
-    for (const plant of this.typical) {
-      const timeS = timeOf(plant);
+    for (const each of this.typical) {
+      const timeS = timeOf(each);
       if (timeS === undefined) return undefined;
       sum += timeS;
     }
     return sum / this.typical.length;
   }
 
-  /** The scale with the shortest time that keeps the target; undefined when even the slowest does not. */
-  best(controllerAt: (scale: SpeedScale) => ControllerConstants): SpeedScale | undefined {
-    let best: Timed | undefined;
-    for (const share of this.shares) {
-      const timeAt = (top: number) => this.meanTimeS(controllerAt({ top, share }));
-      const found = this.quickestTop(share, timeAt);
-      if (found && (best === undefined || found.timeS < best.timeS)) best = found;
-      else if (best) break;
-    }
-    return best?.scale;
+  /** How many of the confirming vehicles finish, all of them driven. */
+  proof(controller: ControllerConstants): Proof {
+    const timeOf = this.timing(controller);
+    const runs = this.confirming.length;
+    const finished = this.confirming.filter((each) => timeOf(each) !== undefined).length;
+    return this.proofOf(runs, finished);
   }
 
-  /** For one share, the cap with the shortest time: the largest that passes, or one a little below it. */
-  private quickestTop(share: number, timeAt: (top: number) => number | undefined): Timed | undefined {
-    let low = LOWEST_TOP_SHARE * this.vehicle.drive.topSpeedMps;
-    const full = this.vehicle.drive.topSpeedMps;
-    let high = full;
-    let best: Timed | undefined;
-    const tryTop = (top: number): boolean => {
-      const timeS = timeAt(top);
-      if (timeS !== undefined && (best === undefined || timeS < best.timeS))
-        best = { scale: { top, share }, timeS };
-      return timeS !== undefined;
+  private proofOf(runs: number, finished: number): Proof {
+    const targetShare = this.vehicle.speeds.finishTarget;
+    return {
+      runs,
+      finished,
+      targetShare,
+      confidenceShare: shownConfidenceShare(finished, runs, targetShare),
     };
-    let largest = tryTop(full) ? full : undefined;
-    for (let i = 0; largest !== full && i < BISECTIONS; i++) {
-      const top = (low + high) / 2;
-      if (tryTop(top)) largest = low = top;
-      else high = top;
-    }
-    // entering bends too fast costs more than the straights gain: the fastest cap need not be the quickest
-    if (largest !== undefined) for (const factor of SLOWER_TOPS) tryTop(factor * largest);
-    return best;
   }
+
+  /** The scale with the shortest time that keeps the target; undefined when even the slowest does not. */
+  best(
+    controllerAt: (scale: SpeedScale) => ControllerConstants,
+  ): { scale: SpeedScale; proof: Proof } | undefined {
+    const { topSpeedMps } = this.vehicle.drive;
+    const timeAt = (scale: SpeedScale) => this.meanTimeS(controllerAt(scale));
+    const screened: Timed | undefined = quickestScale(this.shares, topSpeedMps, timeAt);
+    if (screened === undefined) return undefined;
+    const slowest = slowestScale(this.vehicle);
+    let { scale } = screened;
+    for (let step = 0; step < MOST_STEPS; step++) {
+      if (finishAll(this.confirming, this.timing(controllerAt(scale))))
+        return { scale, proof: this.proofOf(this.confirming.length, this.confirming.length) };
+      if (scale.top <= slowest.top) return undefined;
+      scale = this.lowered(scale, slowest.top, controllerAt);
+    }
+    return undefined;
+  }
+
+  /** A step down: of the cap or of the share alone where that saves the vehicle that was lost, else of both. */
+  private lowered(
+    { top, share }: SpeedScale,
+    slowestTop: number,
+    controllerAt: (scale: SpeedScale) => ControllerConstants,
+  ): SpeedScale {
+    const lower = { top: Math.max(slowestTop, top * STEP_DOWN), share: share * STEP_DOWN };
+    const lost = this.confirming[0]!;
+    const saves = (scale: SpeedScale) => this.timing(controllerAt(scale))(lost) !== undefined;
+    return (
+      [
+        { top: lower.top, share },
+        { top, share: lower.share },
+      ].find(saves) ?? lower
+    );
+  }
+
+  /** Drives a vehicle: its time, s, undefined when it is lost. */
+  private timing(controller: ControllerConstants): (drawn: DrawnVehicle) => number | undefined {
+    const engine = twinEngine(this.vehicle, controller);
+    return ({ plant, lane }) => {
+      const setup = { plant, lane, laps: 1, timeLimitS: this.timeLimitS, sampleTrace: false };
+      const result = engine.runNow(setup);
+      return result.loss ? undefined : result.timeS;
+    };
+  }
+}
+
+/** Whether all finish. One that does not most likely fails the next trial too: it comes first then. */
+function finishAll(vehicles: DrawnVehicle[], timeOf: (drawn: DrawnVehicle) => number | undefined): boolean {
+  const failing = vehicles.findIndex((each) => timeOf(each) === undefined);
+  if (failing < 0) return true;
+  vehicles.unshift(...vehicles.splice(failing, 1));
+  return false;
 }

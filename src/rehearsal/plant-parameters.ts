@@ -8,8 +8,8 @@ import type { Vehicle } from '../vehicle/vehicle.js';
 import { READING_NOISE, spreads } from './plant-table.js';
 import { Random } from './random.js';
 
-/** Streams of random numbers that belong to one seed. */
-export const STREAM = { vehicle: 1, noise: 2, jitter: 3 } as const;
+/** Streams of random numbers that belong to one seed; those of the vehicle, one for each row of its table, come last. */
+export const STREAM = { noise: 2, jitter: 3, vehicle: 16 } as const;
 
 export interface PlantParameters {
   /** Repeats the noise; 0 for the nominal vehicle. */
@@ -141,12 +141,17 @@ export function batteryOhm(vehicle: Vehicle): number {
  * @param seed integer from 0 to 2^32 - 1; 0 gives the nominal vehicle
  */
 export function perturbedPlant(vehicle: Vehicle, seed: number): PlantParameters {
-  const plant = nominalPlant(vehicle);
-  if (seed === 0) return plant;
-  const random = new Random(seed, STREAM.vehicle);
+  return drawnPlant(nominalPlant(vehicle), vehicle, seed);
+}
+
+/** The same from a given nominal vehicle. */
+export function drawnPlant(nominal: PlantParameters, vehicle: Vehicle, seed: number): PlantParameters {
+  if (seed === 0) return nominal;
+  const plant = { ...nominal };
   const spans = plant.ground.map((ground, i) => (plant.line[i] ?? ground) - ground);
-  // the order of the table is part of what a seed means
-  for (const spread of spreads(vehicle)) {
+  // each row has a stream of its own: a seed means the same vehicle also with more sensors, or after a row was added
+  for (const [row, spread] of spreads(vehicle).entries()) {
+    const random = new Random(seed, STREAM.vehicle + row);
     if (spread.by === 'sensor') {
       plant[spread.key] = plant[spread.key].map(
         (count, i) => count + spans[i]! * random.uniform(spread.low, spread.high),
@@ -172,9 +177,9 @@ export function mirroredPlant(plant: PlantParameters): PlantParameters {
     positionsM: plant.positionsM.map((sideM) => -sideM).reverse(),
     ground: plant.ground.toReversed(),
     line: plant.line.toReversed(),
-    startLateralM: -plant.startLateralM,
-    startHeadingRad: -plant.startHeadingRad,
-    bumpLateralM: -plant.bumpLateralM,
-    bumpHeadingRad: -plant.bumpHeadingRad,
+    startLateralM: 0 - plant.startLateralM,
+    startHeadingRad: 0 - plant.startHeadingRad,
+    bumpLateralM: 0 - plant.bumpLateralM,
+    bumpHeadingRad: 0 - plant.bumpHeadingRad,
   };
 }

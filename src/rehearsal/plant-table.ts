@@ -1,7 +1,7 @@
 /**
  * What differs from vehicle to vehicle and from run to run: one row a figure, with its range and where that comes from.
  *
- * The rows are drawn from top to bottom; a new one goes to the end, so that a seed keeps what it meant before. The ranges of the
+ * Each row has its own stream of random numbers, by its place; a new one goes to the end, so that a seed keeps what it meant before. The ranges of the
  * sheet are its tolerances and its battery; all others are common practice: what hobby-class motors, bars and floors do.
  */
 import { degToRad, mmToM } from '../sheet/units.js';

@@ -5,7 +5,7 @@ import { cornerText } from '../design/law-binding.js';
 import { quantisedConstants } from '../design/quantisation.js';
 import { predictCycles } from '../design/rule-cycle.js';
 import { stateTable } from '../design/state-table.js';
-import { mToMm } from '../sheet/units.js';
+import { fractionToPercent, mToMm } from '../sheet/units.js';
 
 /** JSON has no infinity: a margin that nothing bounds is null. */
 function marginsJson({ gainMargin, phaseMarginDeg, ms }: Margins) {
@@ -43,6 +43,12 @@ export function designJson(design: Design) {
         }))
       : [],
     ...(controller.rules && { cycles: predictCycles(vehicle, classes) }),
+    proof: {
+      runs: design.proof.runs,
+      finished: design.proof.finished,
+      targetPercent: fractionToPercent(design.proof.targetShare),
+      confidencePercent: fractionToPercent(design.proof.confidenceShare),
+    },
     biasOffsetMm: mToMm(biasOffsetM(design)),
     quantisation: quantisedConstants(design),
     firmware: controller,

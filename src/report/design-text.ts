@@ -8,6 +8,7 @@ import { cornerText } from '../design/law-binding.js';
 import { quantisedConstants, worstQuantised } from '../design/quantisation.js';
 import { viewM } from '../design/bar-view.js';
 import { fractionToPercent, mToMm, sToMs } from '../sheet/units.js';
+import { CONFIDENCE_SHARE, runsToShow } from '../statistics/rates.js';
 import { ruleLines } from './rule-text.js';
 import { table } from './text-table.js';
 
@@ -118,6 +119,17 @@ function vehicleLines(design: Design): string {
   return table(rows);
 }
 
+/** What the rehearsals of the design show, and what would show more. */
+function proofLines({ proof }: Design): string {
+  const { runs, finished, targetShare, confidenceShare } = proof;
+  const target = fractionToPercent(targetShare);
+  const confidence = Math.floor(fractionToPercent(confidenceShare));
+  const shown = `Finish target ${target} %: ${finished} of ${runs} drawn vehicles finish the proving lane at these speeds, which shows it with ${confidence} % confidence.`;
+  if (confidenceShare >= CONFIDENCE_SHARE) return shown;
+  const needed = runsToShow(targetShare, 0);
+  return `${shown}\n${needed} without a loss would show it with 95 %: rehearse with --runs ${needed} on your course.`;
+}
+
 /** The whole text of `fairlead derive`. */
 export function designText(design: Design): string {
   const { vehicle, classes, controller } = design;
@@ -127,6 +139,7 @@ export function designText(design: Design): string {
     vehicleLines(design),
     'Speed classes (speeds and limits in m/s at nominal voltage)',
     speedTable(classes),
+    proofLines(design),
     'Steering: curvature = kp (offset + Td d offset/dt), derivative filtered with Tf',
     lawTable(classes),
     required,

@@ -45,6 +45,11 @@ export function runsToShow(targetShare: number, misses: number, confidenceShare 
   return high;
 }
 
+/** With which confidence so many hits show that the rate is at least `targetShare`: the other side of `leastRateShare`. */
+export function shownConfidenceShare(hits: number, runs: number, targetShare: number): number {
+  return hits === 0 ? 0 : 1 - betaShare(targetShare, hits, runs - hits + 1);
+}
+
 /**
  * Whether two ways differ in a rate, from runs where only one of them succeeded: probability of so uneven a split, or one more so, if
  * they were alike. Exact binomial form of the test of McNemar (Psychometrika 12:153, 1947), both sides.

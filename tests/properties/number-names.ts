@@ -92,7 +92,7 @@ export const LISTED: readonly Listed[] = [
       words(`grip dutyLeft dutyRight startDuty trimLeft trimRight left right finishTarget motorGain gain lag coverage
       weakestPeak gainMargin ms loopPeak quickPeak closedLoopRadius relativeError timeChange READING_ERROR READING_NOISE
       driftLeft driftRight frictionLeft frictionRight stiction castorDrag contrast ambient
-      sinc x u`),
+      sinc x u noise SHARES`),
   },
   {
     why: 'readings of a sensor as its board gives them, counts or levels',

@@ -17,7 +17,7 @@ describe('numbers that modules exchange', () => {
       'design/bar-view.ts: result of viewM: viewM',
       'vehicle/gravity.ts: constant: STANDARD_GRAVITY_MPS2',
       'vehicle/vehicle.ts: field of Vehicle.line: widthM',
-      'rehearsal/plant.ts: field of Plant: speedMps',
+      'rehearsal/vehicle-motion.ts: field of VehicleMotion: speedMps',
     ])
       expect(names).toContain(known);
     expect(numbers.length).toBeGreaterThan(800);
