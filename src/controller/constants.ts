@@ -49,6 +49,18 @@ export interface ClassConstants {
   derivativeFilter: number;
   /** Derivative gain on the high-passed input, in 1/2^gainBits per 1/2^FILTER_BITS input unit. */
   derivative: number;
+  /** Integral gain: what a sample at full speed adds for each input unit, in 1/2^(gainBits of the integral part); absent without one. */
+  integral?: number;
+}
+
+/** The integral part of the steering law, against unequal motors. */
+export interface IntegralConstants {
+  /** Bits of the classes' integral gains. */
+  gainBits: number;
+  /** Largest integral part, and largest demand up to which it works: more than that is a bend; curvature units. */
+  limit: number;
+  /** Share of what saturation takes from the curvature that comes off the integral part in each sample, 1/2^INTEGRAL_BITS. */
+  tracking: number;
 }
 
 export interface SteeringConstants {
@@ -144,6 +156,8 @@ export interface ControllerConstants {
   drive: DriveConstants;
   memory: MemoryConstants;
   classes: readonly ClassConstants[];
+  /** Present where the law has an integral part. */
+  integral?: IntegralConstants;
   /** Present with kind `rules` only. */
   rules?: RuleConstants;
 }

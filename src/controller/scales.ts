@@ -37,6 +37,10 @@ export const FULL_DUTY = 4096;
 export const FILTER_BITS = 4;
 /** Bits of the filter and model coefficients. */
 export const COEFFICIENT_BITS = 15;
+/** Bits of the integral part beyond curvature units: what one sample adds is far below one of them. */
+export const INTEGRAL_BITS = 16;
+/** Bits dropped from the product of speed and integral gain. */
+export const INTEGRAL_SPEED_BITS = 14;
 /** Bits of the calibration gain. */
 export const CALIBRATION_BITS = 12;
 /** Bits of the half track width, and of the wheel-speed difference for each speed. */

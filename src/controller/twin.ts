@@ -14,7 +14,6 @@ import {
   COEFFICIENT_BITS,
   CURVATURE_BITS,
   type ControllerConstants,
-  FILTER_BITS,
   FRACTION_BITS,
   FULL_SPEED,
   PHASE,
@@ -29,8 +28,7 @@ import { runIndex } from './run-index.js';
 import { wheelDuty } from './wheel-duty.js';
 import { LineMemory } from './line-memory.js';
 import { Sensing } from './sensing.js';
-
-const INT16_MAX = 32767;
+import { SteeringLaw } from './steering-law.js';
 
 export class Twin {
   readonly sensing: Sensing;
@@ -45,8 +43,7 @@ export class Twin {
   dutyLeft = 0;
   dutyRight = 0;
 
-  /** Low-passed input, FILTER_BITS more bits. */
-  private filtered = 0;
+  private readonly law: SteeringLaw;
   /** Low-passed curvature demand and held curvature, COEFFICIENT_BITS more bits. */
   private demand = 0;
   private held = 0;
@@ -55,6 +52,7 @@ export class Twin {
   private release = 0;
 
   constructor(readonly constants: ControllerConstants) {
+    this.law = new SteeringLaw(constants);
     this.sensing = new Sensing(constants.sensing, constants.kind === 'rules');
     this.memory = new LineMemory(constants.memory, this.sensing);
   }
@@ -79,7 +77,8 @@ export class Twin {
     this.memory.start();
     this.classIndex = 0;
     this.curvature = this.speed = this.dutyLeft = this.dutyRight = 0;
-    this.filtered = this.demand = this.held = 0;
+    this.law.start();
+    this.demand = this.held = 0;
     this.bend = this.release = 0;
   }
 
@@ -105,16 +104,10 @@ export class Twin {
     this.drive();
   }
 
-  /** Curvature from the measured offset: proportional plus filtered derivative. */
+  /** Curvature from the measured offset, and its mean to hold where there is none. */
   private steer(regained: boolean): void {
-    const { steering, classes } = this.constants;
-    const gains = classes[this.classIndex]!;
-    const input = this.input();
-    if (regained) this.filtered = input << FILTER_BITS;
-    const change = clamp((input << FILTER_BITS) - this.filtered, INT16_MAX);
-    this.filtered += (change * gains.derivativeFilter) >> COEFFICIENT_BITS;
-    const sum = (input * gains.proportional + change * gains.derivative) >> steering.gainBits;
-    this.curvature = clamp(sum, steering.curvatureLimit);
+    const { steering } = this.constants;
+    this.curvature = this.law.curvature(this.input(), this.classIndex, this.wholeSpeed, regained);
     this.held += (this.curvature - (this.held >> COEFFICIENT_BITS)) * steering.holdFilter;
   }
 

@@ -2,6 +2,7 @@
 import { EXIT, FairleadError, type Problem } from '../sheet/problem.js';
 import { mToMm } from '../sheet/units.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
+import { needsIntegral } from './bias.js';
 import type { SpeedLimits } from './design.js';
 import { type ClassRange, bindingLimit, classRanges, speedLimits } from './speed-classes.js';
 import { designLaw, givenGains, lawExists } from './steering-gains.js';
@@ -58,13 +59,29 @@ function isBase(found: ClassBase | Problem): found is ClassBase {
   return 'gains' in found;
 }
 
+/** The vehicle with an integral part in its laws. */
+function withIntegral(vehicle: Vehicle): Vehicle {
+  return { ...vehicle, control: { ...vehicle.control, integral: 'always' } };
+}
+
 /**
- * The limits and the laws of all classes, largest radius first.
+ * The limits and the laws of all classes, largest radius first; with an integral part where the sheet asks for it, or leaves it to
+ * the design and unequal motors would hold the line too far beside the middle without one.
  *
  * @throws FairleadError with exit code 3 that names each class without a law and the limit that leaves none
  */
 export function classBases(vehicle: Vehicle): ClassBase[] {
   const found = classRanges(vehicle).map((range) => classBase(vehicle, range));
+  const { integral, kind, gains } = vehicle.control;
+  if (integral === undefined && kind === 'pid' && gains === undefined) {
+    const plain = found.filter(isBase);
+    if (plain.length === found.length && needsIntegral({ vehicle, classes: plain })) {
+      const integrating = withIntegral(vehicle);
+      const better = classRanges(vehicle).map((range) => classBase(integrating, range));
+      // what no integral part fits is driven without one, and told as a remark
+      return better.every(isBase) ? better : plain;
+    }
+  }
   const problems = found.flatMap((each) => (isBase(each) ? [] : [each]));
   if (problems.length > 0)
     throw new FairleadError('No design meets the sheet.', { exitCode: EXIT.noDesign, problems });

@@ -5,11 +5,13 @@ import {
   type ClassConstants,
   type ControllerConstants,
   FILTER_BITS,
+  type IntegralConstants,
   OFFSET_PER_M,
 } from '../controller/constants.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { classForBend } from './class-for-bend.js';
 import type { ClassSettings } from './design.js';
+import { heldDistanceM, integralGain } from './integral-constants.js';
 import { INT16_MAX, classSpeedUnits, coefficientOf, curvatureUnits } from './scales.js';
 import type { SteeringGains } from './steering-loop.js';
 
@@ -48,10 +50,20 @@ export function firmwareGains(
   const perUnit = vehicle.control.kind === 'rules' ? tableGain : OFFSET_PER_M / CURVATURE_PER_INV_M;
   const filterCoefficient = derivativeFilter / (1 << COEFFICIENT_BITS);
   const ratio = (derivative * (1 << FILTER_BITS)) / proportional;
+  const proportionalPerM2 = (proportional / one) * perUnit;
+  const { integral } = constants;
   return {
-    proportionalPerM2: (proportional / one) * perUnit,
+    proportionalPerM2,
     derivativeTimeS: (ratio * vehicle.board.samplePeriodS) / filterCoefficient,
     filterCoefficient,
+    ...(integral && {
+      integralDistanceM: heldDistanceM(
+        vehicle,
+        proportionalPerM2,
+        constants.classes[index]!.integral!,
+        integral.gainBits,
+      ),
+    }),
   };
 }
 
@@ -89,7 +101,7 @@ export function classConstants(
   vehicle: Vehicle,
   classes: readonly ClassSettings[],
   tableGain: number,
-  bits: { gainBits: number; slopeBits: number },
+  bits: { gainBits: number; slopeBits: number; integral?: IntegralConstants | undefined },
 ): ClassConstants[] {
   return classes.map((designed, i) => {
     const gains = realGains(vehicle, designed, tableGain);
@@ -102,6 +114,7 @@ export function classConstants(
       derivativeFilter: coefficientOf(designed.gains.filterCoefficient),
       proportional: Math.round(gains.proportional * (1 << bits.gainBits)),
       derivative: Math.min(INT16_MAX, Math.round(gains.derivative * (1 << bits.gainBits))),
+      ...(bits.integral && { integral: integralGain(vehicle, designed.gains, bits.integral.gainBits) }),
     };
   });
 }

@@ -2,8 +2,8 @@
 import type { SampledLanePlant } from './lane-plant.js';
 import type { SampledController } from './sampled-controller.js';
 
-/** Squarings of the matrix: a power of 2^18, at which the norm tells the radius to about 1e-4 of its logarithm. */
-const SQUARINGS = 18;
+/** Squarings of the matrix: at a power of 2^24 the norm tells the logarithm of the radius to 1e-6, less than a slow integral part needs. */
+const SQUARINGS = 24;
 
 /**
  * Matrix of the closed loop. States: e, psi, omega, the controller's own in observer form, then the commands

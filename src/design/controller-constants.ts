@@ -20,6 +20,7 @@ import { meanPitchM } from './bar-view.js';
 import { classConstants, gainBits, realGains, speedSlopeBits, tableGainPerM2 } from './class-constants.js';
 import type { ClassSettings } from './design.js';
 import * as choice from './drive-choices.js';
+import { integralConstants } from './integral-constants.js';
 import { runActions } from './rule-runs.js';
 import {
   INT16_MAX,
@@ -110,9 +111,11 @@ export function controllerConstants(
   classes: readonly ClassSettings[],
 ): ControllerConstants {
   const tableGain = tableGainPerM2(vehicle, classes);
+  const integral = integralConstants(vehicle, classes);
   const bits = {
     gainBits: gainBits(classes.map((designed) => realGains(vehicle, designed, tableGain))),
     slopeBits: speedSlopeBits(vehicle, classes),
+    integral,
   };
   const sensing = sensingConstants(vehicle);
   const drive = driveConstants(vehicle, bits.slopeBits);
@@ -127,6 +130,7 @@ export function controllerConstants(
     drive,
     memory: memoryConstants(vehicle),
     classes: classConstants(vehicle, classes, tableGain, bits),
+    ...(integral && { integral }),
   };
   if (vehicle.bar.calibration.mode === 'sweep' && vehicle.bar.kind === 'analog') {
     constants.sweep = sweepConstants(vehicle, drive);

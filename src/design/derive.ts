@@ -122,6 +122,7 @@ export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Des
     classes: classConstants(vehicle, settings(scale), tableGain, {
       gainBits: unscaled.steering.gainBits,
       slopeBits: unscaled.drive.slopeBits,
+      integral: unscaled.integral,
     }),
   });
   const proving = new Proving(vehicle, provenOn);

@@ -17,6 +17,9 @@ import {
   FULL_COVERAGE,
   FULL_SPEED,
   GAP_HALF_BITS,
+  INTEGRAL_BITS,
+  INTEGRAL_SPEED_BITS,
+  LARGEST_CURVATURE,
   RULE_CURVATURE_BITS,
   SLOPE_BITS,
   SPEED_BITS,
@@ -90,6 +93,25 @@ function steeringBounds({ steering, classes, rules }: ControllerConstants): Boun
   ];
 }
 
+function integralBounds({ integral, classes }: ControllerConstants): Bound[] {
+  if (integral === undefined) return [];
+  const gain = largest(classes.map((each) => each.integral ?? 0));
+  const perSample = (FULL_SPEED * gain) / 2 ** INTEGRAL_SPEED_BITS;
+  const product = INT16_MAX * perSample;
+  const part = integral.limit * 2 ** INTEGRAL_BITS;
+  const added = product / 2 ** integral.gainBits;
+  return [
+    { name: 'integral gain', magnitude: gain, limit: INT16_MAX },
+    { name: 'speed times integral gain', magnitude: FULL_SPEED * gain },
+    { name: 'offset times integral gain', magnitude: product },
+    { name: 'integral part with an offset', magnitude: part + added },
+    {
+      name: 'integral part before its limit',
+      magnitude: part + added + LARGEST_CURVATURE * integral.tracking,
+    },
+  ];
+}
+
 function driveBounds({ steering, drive, classes, rules }: ControllerConstants): Bound[] {
   const curvature = Math.max(steering.curvatureLimit, steering.searchCurvature);
   const target = Math.max(drive.searchSpeed, largest(classes.map((each) => each.speed)));
@@ -143,6 +165,7 @@ export function intermediateBounds(constants: ControllerConstants, adcMaxCount: 
   return [
     ...sensingBounds(constants, adcMaxCount),
     ...steeringBounds(constants),
+    ...integralBounds(constants),
     ...driveBounds(constants),
     { name: 'distance', magnitude: largest(distances) + speed },
     { name: 'search distance', magnitude: memory.searchSamples * speed },

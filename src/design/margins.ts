@@ -113,19 +113,30 @@ export function scanLoop(loop: Response, lowestRadS: number, highestRadS: number
 const COARSE_POINTS = 56;
 const COARSE_REFINEMENTS = 14;
 
-/** Ms of a lane loop on a coarse grid, for searches; Infinity where the loop is unstable. */
-export function quickPeak(loop: Response, lowestRadS: number, highestRadS: number): number {
+/**
+ * Ms of a lane loop on a coarse grid, for searches; Infinity where the loop is unstable.
+ *
+ * @param integrating whether the controller integrates: then the loop comes from above the negative real axis and has to cross
+ * it once beyond -1, downwards; only a crossing back is bad
+ */
+export function quickPeak(
+  loop: Response,
+  lowestRadS: number,
+  highestRadS: number,
+  integrating = false,
+): number {
   const step = Math.pow(highestRadS / lowestRadS, 1 / (COARSE_POINTS - 1));
   let highest = 0;
   let peakAt = lowestRadS;
   let reBefore = -1;
-  let imBefore = -1;
+  let imBefore = integrating ? 1 : -1;
   let sizeBefore = Infinity;
   for (let i = 0, w = lowestRadS; i < COARSE_POINTS; i++, w *= step) {
     const [re, im] = loop(Math.min(w, highestRadS));
     const size = re * re + im * im;
     // a crossing of the negative real axis with |L| > 1 on both sides of it, or from the start on
-    const crosses = imBefore < 0 !== im < 0 && reBefore < 0 && re < 0;
+    const turns = integrating ? imBefore < 0 && im >= 0 : imBefore < 0 !== im < 0;
+    const crosses = turns && reBefore < 0 && re < 0;
     if (crosses && size > 1 && sizeBefore > 1) return Infinity;
     const s = 1 / ((1 + re) * (1 + re) + im * im);
     if (s > highest) [highest, peakAt] = [s, w];

@@ -89,6 +89,11 @@ export function quantisedConstants({ vehicle, classes, controller }: Design): Qu
       ),
     );
   });
+  classes.forEach(({ name, wantedGains, gains }) => {
+    const [wanted, held] = [wantedGains.integralDistanceM, gains.integralDistanceM];
+    if (wanted !== undefined && held !== undefined)
+      rows.push(quantised(`${name}: integral distance`, 'm', wanted, held));
+  });
   return rows;
 }
 

@@ -5,6 +5,9 @@
  * kp = 1 / (R y) with y the line's offset at the bar there; for wide bends this tends to 2 / L^2. Where that
  * offset would be too near the end of the bar, kp is larger and the axle cuts the bend. The derivative time
  * is the one with the least worst Ms; the derivative filter is as fast as the noise at the motors allows.
+ *
+ * An integral part, where the vehicle needs one (bias.ts), works over the way driven: in that domain the loop's natural frequency
+ * is sqrt(kp), whatever the speed. Its distance is the least multiple of 1 / sqrt(kp) with which the margins hold.
  */
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { HELD_VIEW_SHARE, LEAST_RADIUS_AHEAD_RATIO } from '../vehicle/sensor-bar.js';
@@ -38,9 +41,9 @@ export function proportionalRange(vehicle: Vehicle, radiusM: number): [number, n
 export function givenGains(vehicle: Vehicle): SteeringGains | undefined {
   const { gains } = vehicle.control;
   if (gains === undefined) return undefined;
-  const { proportionalPerM2, derivativeTimeS, filterTimeS } = gains;
+  const { filterTimeS, ...rest } = gains;
   const filterCoefficient = -Math.expm1(-vehicle.board.samplePeriodS / filterTimeS);
-  return { proportionalPerM2, derivativeTimeS, filterCoefficient };
+  return { ...rest, filterCoefficient };
 }
 
 /** Law with a given derivative time; its filter is as fast as noise allows. */
@@ -49,6 +52,7 @@ function lawWith(
   speedMps: number,
   proportional: number,
   derivativeTimeS: number,
+  integralRad: number | undefined,
 ): SteeringGains {
   const { bar, drive, board } = vehicle;
   const reading = vehicle.control.kind === 'rules' ? 'digital' : bar.kind;
@@ -64,16 +68,22 @@ function lawWith(
     proportionalPerM2: proportional,
     derivativeTimeS: coefficient > 0 ? derivativeTimeS : 0,
     filterCoefficient: coefficient > 0 ? coefficient : fastest,
+    ...(integralRad !== undefined && { integralDistanceM: integralRad / Math.sqrt(proportional) }),
   };
 }
 
-/** The law with the least worst Ms for a given proportional gain and speed. */
+/**
+ * The law with the least worst Ms for a given proportional gain and speed.
+ *
+ * @param integralRad distance of the integral part times sqrt(kp); without one by default
+ */
 export function bestLaw(
   vehicle: Vehicle,
   speedMps: number,
   proportional: number,
+  integralRad?: number,
 ): { gains: SteeringGains; worst: Margins } {
-  const law = (time: number) => lawWith(vehicle, speedMps, proportional, time);
+  const law = (time: number) => lawWith(vehicle, speedMps, proportional, time, integralRad);
   if (vehicle.control.kind === 'rules' && !vehicle.control.stateMemory) {
     const gains = law(0);
     return { gains, worst: worstMargins(vehicle, speedMps, gains) };
@@ -82,7 +92,9 @@ export function bestLaw(
   const plants = outer.map((corner) => lanePlantOf(vehicle, speedMps, corner));
   const cost = (time: number) => {
     const gains = law(time);
-    return Math.max(...plants.map((p) => loopPeak(p, controllerOf(gains, p.speedMps, p.samplePeriodS))));
+    return Math.max(
+      ...plants.map((p) => loopPeak(p, controllerOf(gains, p.speedMps, p.samplePeriodS, speedMps))),
+    );
   };
   const gains = law(leastBetween(cost, 0, 2.5 * vehicle.drive.lagS, SEARCH_STEPS).at);
   return { gains, worst: worstMargins(vehicle, speedMps, gains) };
@@ -99,9 +111,26 @@ function triedGains(vehicle: Vehicle, radiusM: number): number[] {
   return least < (TRIED_SHARES.at(-1) as number) * wanted ? tried : [...tried, least];
 }
 
+/** Distances of the integral part that are tried, times sqrt(kp), shortest first; undefined is no integral part. */
+const TRIED_INTEGRALS = [6, 9, 14, 20, 30, 45];
+
+function triedIntegrals({ control }: Vehicle): readonly (number | undefined)[] {
+  return control.integral === 'always' ? TRIED_INTEGRALS : [undefined];
+}
+
 /** Whether a law for the class keeps the margins at a speed. */
 export function lawExists(vehicle: Vehicle, speedMps: number, radiusM: number): boolean {
-  return triedGains(vehicle, radiusM).some((gain) => keeps(bestLaw(vehicle, speedMps, gain).worst));
+  const longest = triedIntegrals(vehicle).at(-1);
+  return triedGains(vehicle, radiusM).some((gain) => keeps(bestLaw(vehicle, speedMps, gain, longest).worst));
+}
+
+/** The law with a proportional gain and the shortest integral distance that keep the margins; undefined if none does. */
+function lawKeeping(vehicle: Vehicle, speedMps: number, proportional: number) {
+  for (const integralRad of triedIntegrals(vehicle)) {
+    const found = bestLaw(vehicle, speedMps, proportional, integralRad);
+    if (keeps(found.worst)) return found;
+  }
+  return undefined;
 }
 
 /** The law of a class at a speed: the largest wanted proportional gain that keeps the margins, if any does. */
@@ -112,16 +141,16 @@ export function designLaw(
 ): { gains: SteeringGains; worst: Margins } | undefined {
   let above: number | undefined;
   for (const gain of triedGains(vehicle, radiusM)) {
-    let found = bestLaw(vehicle, speedMps, gain);
-    if (!keeps(found.worst)) {
+    let found = lawKeeping(vehicle, speedMps, gain);
+    if (found === undefined) {
       above = gain;
       continue;
     }
     let low = gain;
     for (let i = 0; above !== undefined && i < REFINING_STEPS; i++) {
       const middle = Math.sqrt(low * above);
-      const tried = bestLaw(vehicle, speedMps, middle);
-      if (keeps(tried.worst)) [found, low] = [tried, middle];
+      const tried = lawKeeping(vehicle, speedMps, middle);
+      if (tried) [found, low] = [tried, middle];
       else above = middle;
     }
     return found;

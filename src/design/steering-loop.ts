@@ -11,11 +11,14 @@
  *   C(z) = v kp (1 + g (1 - z^-1) / (1 - (1 - a) z^-1)),   g = kd / kp = Td a / h
  *
  * a derivative of time Td with a first-order filter of time Tf, a = 1 - e^(-h/Tf).
+ *
+ * With an integral part, kappa has kp / D times the sum of y over the way driven besides, so that C(z) / (v kp) gains
+ * r z^-1 / (1 - z^-1), r = h w / D. The way is that of the modelled speed w, which a corner of the tolerances does not change.
  */
 import { closedLoopRadius } from './closed-loop.js';
 import type { Margins } from './design.js';
 import { type LanePlant, type SampledLanePlant, plantResponse, samplePlant } from './lane-plant.js';
-import { type SampledController, controllerResponse } from './sampled-controller.js';
+import { type SampledController, controllerResponse, productOf, sumOf } from './sampled-controller.js';
 import { type Response, quickPeak, scanLoop } from './margins.js';
 
 /** Gains of the law in physical units. */
@@ -26,22 +29,38 @@ export interface SteeringGains {
   derivativeTimeS: number;
   /** Coefficient of the derivative filter per sample, 0..1. */
   filterCoefficient: number;
+  /** Way over which the integral part makes as much curvature as the proportional one, m; absent without an integral part. */
+  integralDistanceM?: number;
 }
 
-/** The law as a transfer function from lateral error (m) to commanded turn rate (rad/s). */
+/**
+ * The law as a transfer function from lateral error (m) to commanded turn rate (rad/s).
+ *
+ * @param modelledMps speed that the firmware takes the vehicle to have
+ */
 export function controllerOf(
   gains: SteeringGains,
   speedMps: number,
   samplePeriodS: number,
+  modelledMps: number = speedMps,
 ): SampledController {
   const scale = speedMps * gains.proportionalPerM2;
   const ratio = (gains.derivativeTimeS * gains.filterCoefficient) / samplePeriodS;
   const pole = 1 - gains.filterCoefficient;
+  const numerator = [scale * (1 + ratio), -scale * (pole + ratio)];
+  const denominator = [1, -pole];
+  if (gains.integralDistanceM === undefined) return { numerator, denominator, samplePeriodS };
+  const perSample = (scale * samplePeriodS * modelledMps) / gains.integralDistanceM;
   return {
-    numerator: [scale * (1 + ratio), -scale * (pole + ratio)],
-    denominator: [1, -pole],
+    numerator: sumOf(productOf(numerator, [1, -1]), productOf([0, perSample], denominator)),
+    denominator: productOf(denominator, [1, -1]),
     samplePeriodS,
   };
+}
+
+/** Whether a controller integrates: its denominator vanishes at z = 1. */
+function integrates({ denominator }: SampledController): boolean {
+  return Math.abs(denominator.reduce((sum, each) => sum + each, 0)) < 1e-12;
 }
 
 /** Lowest frequency at which a lane loop is looked at, as a share of 1 / lag: far below any crossover. */
@@ -59,7 +78,8 @@ export function openLoop(sampled: SampledLanePlant, controller: SampledControlle
 /** Ms of the loop, for searches: coarse grid, refined peak; Infinity where it is unstable or only conditionally stable. */
 export function loopPeak(plant: LanePlant, controller: SampledController): number {
   const loop = openLoop(samplePlant(plant), controller);
-  return quickPeak(loop, LOWEST_SHARE / plant.lagS, Math.PI / plant.samplePeriodS);
+  const highestRadS = Math.PI / plant.samplePeriodS;
+  return quickPeak(loop, LOWEST_SHARE / plant.lagS, highestRadS, integrates(controller));
 }
 
 /** Margins of the loop of plant and controller; an unstable loop has none of them. */

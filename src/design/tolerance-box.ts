@@ -36,20 +36,33 @@ export function lanePlantOf(vehicle: Vehicle, speedMps: number, corner: Corner):
   };
 }
 
-/** Margins of a law at one corner of the box; speed factors act on loop gain through the speed itself. */
+/**
+ * Margins of a law at one corner of the box; speed factors act on loop gain through the speed itself.
+ *
+ * @param speedMps speed of the class, which the firmware takes the vehicle to have in every corner
+ */
 export function marginsAt(vehicle: Vehicle, speedMps: number, gains: SteeringGains, corner: Corner): Margins {
   const plant = lanePlantOf(vehicle, speedMps, corner);
-  return loopMargins(plant, controllerOf(gains, plant.speedMps, plant.samplePeriodS));
+  return loopMargins(plant, controllerOf(gains, plant.speedMps, plant.samplePeriodS, speedMps));
 }
 
-/** Worst of each margin over the corners of the box. */
+/** The law while its integral part stands still: in bends, gaps and crossings. */
+export function withoutIntegral(gains: SteeringGains): SteeringGains {
+  const { proportionalPerM2, derivativeTimeS, filterCoefficient } = gains;
+  return { proportionalPerM2, derivativeTimeS, filterCoefficient };
+}
+
+/** Worst of each margin over the corners of the box, with the integral part at work and standing still. */
 export function worstMargins(vehicle: Vehicle, speedMps: number, gains: SteeringGains): Margins {
   const worst: Margins = { gainMargin: Infinity, phaseMarginDeg: Infinity, ms: 0 };
+  const modes = gains.integralDistanceM === undefined ? [gains] : [gains, withoutIntegral(gains)];
   for (const corner of toleranceCorners(vehicle)) {
-    const found = marginsAt(vehicle, speedMps, gains, corner);
-    worst.gainMargin = Math.min(worst.gainMargin, found.gainMargin);
-    worst.phaseMarginDeg = Math.min(worst.phaseMarginDeg, found.phaseMarginDeg);
-    worst.ms = Math.max(worst.ms, found.ms);
+    for (const mode of modes) {
+      const found = marginsAt(vehicle, speedMps, mode, corner);
+      worst.gainMargin = Math.min(worst.gainMargin, found.gainMargin);
+      worst.phaseMarginDeg = Math.min(worst.phaseMarginDeg, found.phaseMarginDeg);
+      worst.ms = Math.max(worst.ms, found.ms);
+    }
   }
   return worst;
 }

@@ -8,6 +8,8 @@ export interface Features {
   digital: boolean;
   pid: boolean;
   rules: boolean;
+  /** The steering law has an integral part. */
+  integral: boolean;
   /** Calibration by sweep; else the readings are stored. */
   sweep: boolean;
   stored: boolean;
@@ -45,6 +47,7 @@ export function featuresOf(
     digital: sensing.digital,
     pid: kind === 'pid',
     rules: kind === 'rules',
+    integral: controller.integral !== undefined,
     sweep: sweep !== undefined,
     stored: !sensing.digital && sweep === undefined,
     binary,

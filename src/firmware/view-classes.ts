@@ -11,6 +11,8 @@ export interface ClassRow {
   derivativeFilter: number;
   proportional: number;
   derivative: number;
+  /** 0 without an integral part. */
+  integral: number;
   about: string;
 }
 
@@ -36,6 +38,7 @@ export function classRows(design: FirmwareDesign): ClassRow[] {
       derivativeFilter: row.derivativeFilter,
       proportional: row.proportional,
       derivative: row.derivative,
+      integral: row.integral ?? 0,
       about: `${row.name}: bends from ${radius} mm radius at ${speed} m/s, ${LIMIT_WORDS[designed.limitedBy]}`,
     };
   });

@@ -15,6 +15,7 @@ import type { Vehicle } from '../vehicle/vehicle.js';
 import { numberText } from './literals.js';
 import { type Constant, constant } from './constant.js';
 import type { Features } from './features.js';
+import { integralConstants } from './view-integral.js';
 
 const perM = (units: number) => numberText(units / CURVATURE_PER_INV_M, 3);
 const percent = (duty: number) => numberText((100 * duty) / FULL_DUTY, 3);
@@ -26,7 +27,7 @@ function filterMs(coefficient: number, periodUs: number): string {
 }
 
 export function steeringConstants(controller: ControllerConstants, features: Features): Constant[] {
-  const { steering, rules, samplePeriodUs } = controller;
+  const { steering, integral, rules, samplePeriodUs } = controller;
   const constants = [
     constant('GAIN_BITS', 'uint8_t', steering.gainBits, 'Bits of the gains of the speed classes.'),
     constant(
@@ -54,6 +55,7 @@ export function steeringConstants(controller: ControllerConstants, features: Fea
       `Curvature of the search for a lost line: ${perM(steering.searchCurvature)} per m. From drive.trackWidthMm and line.tightestRadiusMm.`,
     ),
   ];
+  if (integral !== undefined) constants.push(...integralConstants(integral));
   if (rules !== undefined)
     constants.push(
       constant(

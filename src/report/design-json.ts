@@ -1,6 +1,6 @@
 /** The design as `derive --json` gives it. */
 import type { Design, Margins } from '../design/design.js';
-import { biasOffsetM } from '../design/bias.js';
+import { biasOffsetM, hasIntegral } from '../design/bias.js';
 import { cornerText } from '../design/law-binding.js';
 import { quantisedConstants } from '../design/quantisation.js';
 import { predictCycles } from '../design/rule-cycle.js';
@@ -50,6 +50,7 @@ export function designJson(design: Design) {
       confidencePercent: fractionToPercent(design.proof.confidenceShare),
     },
     biasOffsetMm: mToMm(biasOffsetM(design)),
+    integral: hasIntegral(design),
     quantisation: quantisedConstants(design),
     firmware: controller,
     remarks: design.remarks,

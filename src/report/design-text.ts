@@ -3,7 +3,7 @@ import { CLASS_SPEED_BITS, OFFSET_PER_M, fullSpeedMps } from '../controller/cons
 import type { Design, DesignedClass } from '../design/design.js';
 import { LEAST_MARGINS } from '../design/tolerance-box.js';
 import { filterTimeS } from '../design/steering-loop.js';
-import { biasOffsetM } from '../design/bias.js';
+import { biasOffsetM, hasIntegral } from '../design/bias.js';
 import { cornerText } from '../design/law-binding.js';
 import { quantisedConstants, worstQuantised } from '../design/quantisation.js';
 import { viewM } from '../design/bar-view.js';
@@ -53,13 +53,16 @@ function lawTable(classes: readonly DesignedClass[]): string {
     gains.proportionalPerM2.toFixed(0),
     sToMs(gains.derivativeTimeS).toFixed(0),
     sToMs(filterTimeS(gains, plant.samplePeriodS)).toFixed(1),
+    ...(gains.integralDistanceM === undefined ? [] : [mToMm(gains.integralDistanceM).toFixed(0)]),
     ...[margins, worstMargins].flatMap((each) => [
       each.gainMargin.toFixed(1),
       each.phaseMarginDeg.toFixed(0),
       each.ms.toFixed(2),
     ]),
   ]);
-  const head = ['class', 'kp, 1/m^2', 'Td, ms', 'Tf, ms', 'GM', 'PM, deg', 'Ms', 'worst GM', 'PM, deg', 'Ms'];
+  const integral = hasIntegral({ classes }) ? ['Di, mm'] : [];
+  const head = ['class', 'kp, 1/m^2', 'Td, ms', 'Tf, ms', ...integral];
+  head.push('GM', 'PM, deg', 'Ms', 'worst GM', 'PM, deg', 'Ms');
   return table([head, ...rows]);
 }
 
@@ -98,7 +101,9 @@ function vehicleLines(design: Design): string {
     [
       'unequal motors',
       `${mToMm(biasOffsetM(design)).toFixed(1)} mm to the side at most`,
-      'steady offset at the bar without an integral part',
+      hasIntegral(design)
+        ? 'offset at the bar until the integral part has taken it up'
+        : 'steady offset at the bar; the law has no integral part',
     ],
     [
       'search speed',
@@ -135,12 +140,12 @@ export function designText(design: Design): string {
   const { vehicle, classes, controller } = design;
   const required = `Required in every corner of the tolerance box: gain margin ${LEAST_MARGINS.gainMargin}, phase margin ${LEAST_MARGINS.phaseMarginDeg} deg, Ms ${LEAST_MARGINS.ms} at most.`;
   const parts = [
-    `${vehicle.name}: ${controller.kind === 'rules' ? 'rule table' : 'feedback (PD)'} on ${vehicle.board.title}`,
+    `${vehicle.name}: ${controller.kind === 'rules' ? 'rule table' : `feedback (${hasIntegral(design) ? 'PID' : 'PD'})`} on ${vehicle.board.title}`,
     vehicleLines(design),
     'Speed classes (speeds and limits in m/s at nominal voltage)',
     speedTable(classes),
     proofLines(design),
-    'Steering: curvature = kp (offset + Td d offset/dt), derivative filtered with Tf',
+    `Steering: curvature = kp (offset + Td d offset/dt${hasIntegral(design) ? ' + integral of the offset over the way / Di' : ''}), derivative filtered with Tf`,
     lawTable(classes),
     required,
     bindingTable(classes),

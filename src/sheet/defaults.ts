@@ -10,6 +10,7 @@ import { degToRad } from './units.js';
 
 type Filled<T, Given extends keyof T = never> = Required<Omit<T, Given>> & Pick<T, Given>;
 type Motor = Filled<MotorPins, 'pwm' | 'dir' | 'in1' | 'in2'>;
+type Gains = NonNullable<Sheet['control']['gains']>;
 type Drive = Sheet['drive'];
 type GivenClass = Exclude<Sheet['speeds']['classes'], 'auto'>[number];
 /** A speed class with its radius, whichever way its bends are given. */
@@ -25,7 +26,7 @@ export interface ResolvedSheet extends Required<Sheet> {
     trim: Required<NonNullable<Drive['trim']>>;
   };
   control: Sheet['control'] & { stateMemory: boolean; swingMm: number } & {
-    gains?: Required<NonNullable<Sheet['control']['gains']>>;
+    gains?: Filled<Gains, 'integralDistanceMm'>;
   };
   speeds: Omit<Required<Sheet['speeds']>, 'classes'> & { classes: 'auto' | SpeedClass[] };
   start: Required<Sheet['start']>;
@@ -33,10 +34,10 @@ export interface ResolvedSheet extends Required<Sheet> {
 }
 
 /**
- * One of two ways to say where the sensors are. The other may be given, and a spacing is to be measured, not assumed: so
- * its default is a proposal only.
+ * Fields whose default is a proposal only. The pitch is one of two ways to say where the sensors are: the other may be given, and a
+ * spacing is to be measured, not assumed. Gains by hand integrate only where they say so.
  */
-const NEVER_FILLED = ['pitchMm'];
+const NEVER_FILLED = ['pitchMm', 'integralDistanceMm'];
 
 /** A copy of the sheet with every default filled in. `sheet` has to fit the schema. */
 export function withDefaults(sheet: Sheet): ResolvedSheet {

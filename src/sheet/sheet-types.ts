@@ -232,6 +232,10 @@ export interface Sheet {
      */
     swingMm?: number;
     /**
+     * Takes up what unequal motors do, so that the line stays in the middle of the bar; with the controller kind pid. auto: only where the tolerance of the motors would hold the line too far beside it.
+     */
+    integral?: 'auto' | 'always' | 'never';
+    /**
      * Actions of your own for single states of the rule table, in place of the computed ones; with the controller kind rules only.
      *
      * @minItems 1
@@ -265,6 +269,10 @@ export interface Sheet {
        * Time by which the offset is looked ahead along its rate. [ms]
        */
       derivativeTimeMs: number;
+      /**
+       * Way over which the integral part makes as much curvature as the proportional one; without it there is no integral part. [mm]
+       */
+      integralDistanceMm?: number;
       /**
        * Time constant of the filter on the derivative. [ms]
        */

@@ -125,7 +125,14 @@ function classesOf(classes: ResolvedSheet['speeds']['classes']): Vehicle['speeds
     .sort((a, b) => a.minRadiusM - b.minRadiusM);
 }
 
-function controlOf({ kind, stateMemory, swingMm, gains, overrides }: ResolvedSheet['control']): Vehicle['control'] {
+function controlOf({
+  kind,
+  stateMemory,
+  swingMm,
+  gains,
+  integral,
+  overrides,
+}: ResolvedSheet['control']): Vehicle['control'] {
   return {
     kind,
     stateMemory,
@@ -135,8 +142,10 @@ function controlOf({ kind, stateMemory, swingMm, gains, overrides }: ResolvedShe
         proportionalPerM2: gains.proportionalPerM2,
         derivativeTimeS: msToS(gains.derivativeTimeMs),
         filterTimeS: msToS(gains.filterTimeMs),
+        ...(gains.integralDistanceMm !== undefined && { integralDistanceM: mmToM(gains.integralDistanceMm) }),
       },
     }),
+    ...(integral !== undefined && integral !== 'auto' && { integral }),
     ...(overrides && {
       overrides: overrides.map(({ state, left, right }) => ({
         first: state.indexOf('1'),

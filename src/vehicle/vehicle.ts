@@ -69,7 +69,14 @@ export interface Vehicle {
     /** Rules: largest swing about the line that the table's steps may keep going, at the bar, m. */
     swingM: number;
     /** Steering gains given in the sheet, for every class. */
-    gains?: { proportionalPerM2: number; derivativeTimeS: number; filterTimeS: number };
+    gains?: {
+      proportionalPerM2: number;
+      derivativeTimeS: number;
+      filterTimeS: number;
+      integralDistanceM?: number;
+    };
+    /** Whether the laws have an integral part; left to the design where absent. */
+    integral?: 'always' | 'never';
     /** Actions given in the sheet for runs of sensors on the line: wheel speeds as fractions of base speed. */
     overrides?: readonly { first: number; last: number; left: number; right: number }[];
   };

@@ -31,7 +31,12 @@ export function quickDesign(vehicle: Vehicle): FirmwareDesign {
       minRadiusM: range.minRadiusM,
       speedMps: range.speedMps ?? Math.min(0.7 * drive.topSpeedMps, gripMps),
       limitedBy: 'grip' as const,
-      gains: { proportionalPerM2: 2 / bar.aheadM ** 2, derivativeTimeS: drive.lagS, filterCoefficient: 0.4 },
+      gains: {
+        proportionalPerM2: 2 / bar.aheadM ** 2,
+        derivativeTimeS: drive.lagS,
+        filterCoefficient: 0.4,
+        ...(vehicle.control.integral === 'always' && { integralDistanceM: 5 * bar.aheadM }),
+      },
     };
   });
   return { vehicle, classes, controller: controllerConstants(vehicle, classes) };
@@ -68,6 +73,7 @@ const EIGHT = {
   '/line/polarity': 'dark-on-light',
 };
 const ONE_SPEED = { '/speeds/classes': [{ name: 'Crawl', minRadiusMm: 120, speedMps: 0.3 }] };
+const UNEQUAL = { '/control/integral': 'always', '/tolerances/motorGainPercent': 20 };
 const UNEVEN = { '/sensors/pitchMm': undefined, '/sensors/positionsMm': [27, 15, 5, -5, -15, -27] };
 
 /** Vehicles that between them use every branch of the templates, by what is special about them. */
@@ -81,6 +87,7 @@ export const CARTS: Readonly<Record<string, Changes>> = {
   'eight sensors, dark line': EIGHT,
   'eight sensors, dark line and rules': { ...EIGHT, ...RULES },
   'one speed for all': ONE_SPEED,
+  'an integral part': UNEQUAL,
   'uneven bar without crossings': { ...UNEVEN, ...NO_CROSSINGS },
   'uneven bar without crossings and rules': { ...UNEVEN, ...NO_CROSSINGS, ...RULES },
 };

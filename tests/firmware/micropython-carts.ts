@@ -45,6 +45,7 @@ const DARK_6 = {
 const SWEEP = { '/sensors/calibration': { mode: 'sweep' } };
 const RULES = { '/control/kind': 'rules' };
 const ONE_CLASS = { '/speeds/classes': [{ name: 'all', minRadiusMm: 120, speedMps: 0.4 }] };
+const UNEQUAL = { '/control/integral': 'always', '/tolerances/motorGainPercent': 20 };
 const NO_CROSSINGS = { '/line/crossings': false, '/line/longestGapMm': 0 };
 
 const IN_IN = (left: object, right: object, more: object = {}) => ({
@@ -78,6 +79,7 @@ export const MICROPYTHON_CARTS: Readonly<Record<string, Changes>> = {
   'esp32, analog': { ...ESP32, ...SIX_ANALOG, ...STORED_6, ...ESP32_IN_IN },
   'esp32, analog, rules': { ...ESP32, ...SIX_ANALOG, ...STORED_6, ...ESP32_DUAL, ...RULES },
   'esp32, dark line, no crossings': { ...ESP32, ...SIX_ANALOG, ...DARK_6, ...ESP32_DUAL, ...NO_CROSSINGS },
+  'esp32, analog, integral part': { ...ESP32, ...SIX_ANALOG, ...STORED_6, ...ESP32_IN_IN, ...UNEQUAL },
   'esp32, sweep': { ...ESP32, ...SIX_ANALOG, ...SWEEP, ...ESP32_DUAL },
   'esp32, sweep, rules': { ...ESP32, ...SIX_ANALOG, ...SWEEP, ...ESP32_IN_IN, ...RULES },
   'esp32, digital on the LED pin': { ...ESP32, ...ESP32_DIGITAL, ...ESP32_IN_IN },

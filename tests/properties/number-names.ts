@@ -38,10 +38,11 @@ export const LISTED: readonly Listed[] = [
   {
     why: 'the same integers on their way into text and tables, and the limits of their types',
     where:
-      /^(firmware\/(constant|literals|view|view-classes)|design\/(scales|intervals|edge-table|class-constants|bar-view))\.ts$/,
+      /^(firmware\/(constant|literals|view|view-classes)|design\/(scales|intervals|edge-table|class-constants|integral-constants|bar-view))\.ts$/,
     names:
       words(`value values left right curvature speed speedSlope derivativeFilter proportional derivative magnitude limit
-      INT16_MAX INT32_MAX edgeTable highCoverage coefficientOf`),
+      INT16_MAX INT32_MAX edgeTable highCoverage coefficientOf
+      integral integralGain`),
   },
   {
     why: 'places and sizes on a picture or in a terminal: picture units, characters, dots; axes have the unit of what is drawn',

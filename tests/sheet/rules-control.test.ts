@@ -4,6 +4,8 @@ const rulesBy = (...states: string[]) => ({
   '/control': { kind: 'rules', overrides: states.map((state) => ({ state, left: 0.5, right: 1.5 })) },
 });
 
+const GAINS = { proportionalPerM2: 300, derivativeTimeMs: 80 };
+
 testRules({
   'rule-overrides': [
     {
@@ -21,5 +23,24 @@ testRules({
       ],
     },
     { when: 'sound rules by hand', changes: rulesBy('100000', '011000'), want: [] },
+  ],
+  'integral-part': [
+    {
+      when: 'a rule table that is to integrate',
+      changes: { '/control': { kind: 'rules', integral: 'always' } },
+      want: ['/control/integral: An integral part needs the controller kind "pid", not "rules".'],
+    },
+    {
+      when: 'gains by hand without an integral part',
+      changes: { '/control': { kind: 'pid', integral: 'always', gains: GAINS } },
+      want: ['/control/integral: The gains by hand have no integral part.'],
+    },
+    {
+      when: 'gains by hand with one',
+      changes: {
+        '/control': { kind: 'pid', integral: 'always', gains: { ...GAINS, integralDistanceMm: 800 } },
+      },
+      want: [],
+    },
   ],
 });

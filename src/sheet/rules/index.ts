@@ -5,6 +5,7 @@ import { rule as calibrationContrast } from './calibration-contrast.js';
 import { rule as calibrationPolarity } from './calibration-polarity.js';
 import { rule as driverPins } from './driver-pins.js';
 import { rule as gapIsBridged } from './gap-is-bridged.js';
+import { rule as integralPart } from './integral-part.js';
 import { rule as languageFitsBoard } from './language-fits-board.js';
 import { rule as lineCannotHide } from './line-cannot-hide.js';
 import { rule as lineFitsBend } from './line-fits-bend.js';
@@ -51,6 +52,7 @@ export const RULES: readonly SheetRule[] = [
   classBends,
   speedClasses,
   ruleOverrides,
+  integralPart,
   bendIsCut,
   pwmTimers,
   pinCautions,
