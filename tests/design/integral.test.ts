@@ -33,7 +33,7 @@ let without: Design;
 beforeAll(() => {
   withIntegral = deriveDesign(LOOSE);
   without = deriveDesign(unequal(0.15, 'never'));
-});
+}, 120_000);
 
 test('the design integrates where unequal motors would hold the line too far beside the middle, and only there', () => {
   expect(hasIntegral(withIntegral)).toBe(true);
@@ -43,7 +43,7 @@ test('the design integrates where unequal motors would hold the line too far bes
   expect(hasIntegral(demo)).toBe(false);
   expect(demo.controller.integral).toBeUndefined();
   expect(biasOffsetM(demo)).toBeLessThan(0.2 * 0.0345);
-});
+}, 60_000);
 
 test('margins hold at 200 points of the tolerance box, with the integral part at work and standing still', () => {
   const random = new Random(5, 1);
