@@ -1,11 +1,8 @@
 /** The view model of the Arduino sketch: pins, what the driver's scheme needs, and the files to write. */
 import { fileName } from './identifiers.js';
 import type { FirmwareDesign, Rendering, SheetIdentity, TemplateFile } from './render.js';
-import { type PinLine, directionLines, pinLines, usedPins } from './view-pins.js';
+import { type PinLine, directionLines, hasFreeLed, pinLines, sensorPinCodes } from './view-pins.js';
 import { type CommonView, commonView } from './view.js';
-
-/** LED_BUILTIN of Uno and Nano: variants/standard/pins_arduino.h. */
-const LED_LABEL = '13';
 
 interface ArduinoView extends CommonView {
   pwmDir: boolean;
@@ -24,14 +21,13 @@ interface ArduinoView extends CommonView {
 function arduinoView(sheet: SheetIdentity, design: FirmwareDesign): ArduinoView {
   const { vehicle } = design;
   const { scheme, standby } = vehicle.drive;
-  const led = usedPins(vehicle).every((pin) => pin.label !== LED_LABEL);
   return {
-    ...commonView(sheet, design, led),
+    ...commonView(sheet, design, hasFreeLed(vehicle)),
     pwmDir: scheme === 'pwm-dir',
     pwmInIn: scheme === 'pwm-in-in',
     dualPwm: scheme === 'dual-pwm',
     standby: standby !== undefined,
-    sensorPins: vehicle.bar.pins.map((pin) => pin.code),
+    sensorPins: sensorPinCodes(vehicle),
     pins: pinLines(vehicle),
     directions: directionLines(vehicle).map(({ name, high, about }) => ({
       name,

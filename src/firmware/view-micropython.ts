@@ -1,24 +1,10 @@
 /** The view model of the MicroPython program: pins, what board and driver need, and the files to write. */
-import type { BoardId } from '../vehicle/board-facts.js';
 import type { Constant, ConstantGroup } from './constant.js';
 import { fileName } from './identifiers.js';
 import type { IntegerType } from './literals.js';
 import type { FirmwareDesign, Rendering, SheetIdentity, TemplateFile } from './render.js';
-import { type PinLine, directionLines, pinLines, usedPins } from './view-pins.js';
+import { type PinLine, directionLines, hasFreeLed, pinLines, sensorPinCodes } from './view-pins.js';
 import { type CommonView, commonView } from './view.js';
-
-/** The LED on the board: the pin that it takes, and its name in MicroPython. */
-interface BoardLed {
-  label: string;
-  code: string;
-  about: string;
-}
-
-const LEDS: Readonly<Partial<Record<BoardId, BoardLed>>> = {
-  // "LED" is the name on boards with and without radio, which have it on different pins.
-  pico: { label: 'GP25', code: '"LED"', about: "The board's own LED." },
-  esp32: { label: 'GPIO2', code: 'const(2)', about: 'The LED of most boards of this kind.' },
-};
 
 /** Type codes of MicroPython's arrays. */
 const TYPECODES: Readonly<Record<IntegerType, string>> = {
@@ -89,9 +75,7 @@ function micropythonView(
 ): MicroPythonView {
   const { vehicle } = design;
   const { scheme, standby } = vehicle.drive;
-  const boardLed = LEDS[vehicle.board.id];
-  const led = usedPins(vehicle).some((pin) => pin.label === boardLed?.label) ? undefined : boardLed;
-  const common = commonView(sheet, design, led !== undefined);
+  const common = commonView(sheet, design, hasFreeLed(vehicle));
   return {
     ...common,
     header: [...common.header, ...handlingParagraphs(files)],
@@ -108,16 +92,16 @@ function micropythonView(
     pwmInIn: scheme === 'pwm-in-in',
     dualPwm: scheme === 'dual-pwm',
     standby: standby !== undefined,
-    attenuated: vehicle.board.id === 'esp32',
-    sensorPins: vehicle.bar.pins.map((pin) => pin.code),
+    attenuated: vehicle.board.adcAttenuated === true,
+    sensorPins: sensorPinCodes(vehicle),
     pins: pinLines(vehicle),
     directions: directionLines(vehicle).map(({ name, high, about }) => ({
       name,
       level: high ? 1 : 0,
       about,
     })),
-    ledCode: led?.code ?? '',
-    ledAbout: led?.about ?? '',
+    ledCode: vehicle.board.led.code,
+    ledAbout: vehicle.board.led.about,
     pwmHz: vehicle.board.pwmHz,
   };
 }
@@ -157,9 +141,11 @@ function filesOf(name: string, { rules, sweep, led }: Wanted): TemplateFile[] {
 /** Templates, paths and view model of one vehicle's program. */
 export function micropythonRendering(sheet: SheetIdentity, design: FirmwareDesign): Rendering {
   const { vehicle, controller } = design;
-  const boardLed = LEDS[vehicle.board.id];
-  const led = boardLed !== undefined && usedPins(vehicle).every((pin) => pin.label !== boardLed.label);
-  const wanted = { rules: controller.kind === 'rules', sweep: controller.sweep !== undefined, led };
+  const wanted = {
+    rules: controller.kind === 'rules',
+    sweep: controller.sweep !== undefined,
+    led: hasFreeLed(vehicle),
+  };
   const files = filesOf(vehicle.name, wanted);
   // main.py comes last: if the copying is interrupted, the board has no program that lacks half its modules.
   const [main, ...modules] = files.filter((file) => file.wanted).map(({ template }) => template);

@@ -54,9 +54,19 @@ export function directionLines({ drive }: Vehicle): DirectionLine[] {
 }
 
 /** All pins that the vehicle uses. */
-export function usedPins({ drive, bar, start }: Vehicle): PinFacts[] {
+function usedPins({ drive, bar, start }: Vehicle): PinFacts[] {
   const motors = [drive.left, drive.right].flatMap(({ pwm, dir, in1, in2 }) => [pwm, dir, in1, in2]);
   return [...motors, ...bar.pins, start.button, drive.standby].filter((pin) => pin !== undefined);
+}
+
+/** Whether the board has its LED on a pin that the vehicle leaves free. */
+export function hasFreeLed(vehicle: Vehicle): boolean {
+  return usedPins(vehicle).every((pin) => pin.label !== vehicle.board.led.label);
+}
+
+/** The sensors' pins as the firmware's language names them, leftmost first. */
+export function sensorPinCodes({ bar }: Vehicle): string[] {
+  return bar.pins.map((pin) => (bar.kind === 'analog' ? pin.adc?.code : undefined) ?? pin.code);
 }
 
 /** All pins but the sensors'. */

@@ -1,5 +1,5 @@
 /**
- * Compiles a rendered sketch for the ATmega328P as the usual IDE does: same compiler, core and flags (platform.txt of the
+ * Compiles a rendered sketch for a board with an AVR chip as the usual IDE does: same compiler, core and flags (platform.txt of the
  * Arduino AVR core 1.8: -Os, link-time optimisation, gnu++11, no exceptions).
  *
  * The core is compiled once for each version and set of flags, and kept; the sketch's own files are compiled with -Wall -Wextra,
@@ -25,18 +25,20 @@ export interface ChipImage {
   warnings: string[];
 }
 
-const CHIP_FLAGS = ['-mmcu=atmega328p', '-DF_CPU=16000000L', '-DARDUINO=10819', '-DARDUINO_ARCH_AVR'];
+const CHIP_FLAGS = ['-DF_CPU=16000000L', '-DARDUINO=10819', '-DARDUINO_ARCH_AVR'];
 const COMMON_FLAGS = ['-c', '-Os', '-ffunction-sections', '-fdata-sections', '-flto', '-fno-fat-lto-objects'];
 const CPP_FLAGS = ['-std=gnu++11', '-fno-exceptions', '-fno-threadsafe-statics'];
 /** What the core's sources need beyond; its own warnings are nobody's concern here. WString.cpp misses DECIMAL_DIG. */
 const CORE_CPP_FLAGS = ['-w', '-fpermissive', '-DDECIMAL_DIG=17'];
-const LINK_FLAGS = ['-Os', '-flto', '-fuse-linker-plugin', '-Wl,--gc-sections', '-mmcu=atmega328p'];
+const LINK_FLAGS = ['-Os', '-flto', '-fuse-linker-plugin', '-Wl,--gc-sections'];
 const OWN_WARNINGS = ['-Wall', '-Wextra', '-fdiagnostics-color=never'];
 
 function flagsFor(core: ArduinoCore): string[] {
   return [
     ...COMMON_FLAGS,
     ...CHIP_FLAGS,
+    `-mmcu=${core.mcu}`,
+    ...core.defines.map((define) => `-D${define}`),
     `-DARDUINO_${core.boardMacro}`,
     `-I${core.sources}`,
     `-I${core.variant}`,
@@ -142,7 +144,11 @@ export async function buildSketch(files: readonly RenderedFile[], board: BoardId
       }),
     );
     const objects = sources.map((name) => `${name}.o`);
-    await runTool('avr-gcc', [...LINK_FLAGS, '-o', 'sketch.elf', ...objects, archive, '-lm'], folder);
+    await runTool(
+      'avr-gcc',
+      [...LINK_FLAGS, `-mmcu=${core.mcu}`, '-o', 'sketch.elf', ...objects, archive, '-lm'],
+      folder,
+    );
     await runTool('avr-objcopy', ['-O', 'binary', '-R', '.eeprom', 'sketch.elf', 'sketch.bin'], folder);
     const sizes = (await runTool('avr-size', ['-A', 'sketch.elf'], folder)).stdout;
     return {

@@ -1,5 +1,5 @@
 /**
- * Rehearses the compiled firmware itself on an emulated ATmega328P, wired to the plant.
+ * Rehearses the compiled firmware itself on the emulated chip of the board, wired to the plant.
  *
  * In steps of 128 us the chip runs, then the plant with the duties that the pins gave. Analog sensors are sampled when the
  * converter starts; digital ones put their levels on their pins after each step. The start button is pressed once, after the
@@ -8,9 +8,9 @@
  */
 import { type FirmwareDesign, type SheetIdentity, renderFirmware } from '../firmware/render.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
-import { Atmega328p, CLOCK_HZ } from './chip-atmega328p.js';
+import { AvrChip, CLOCK_HZ, pinNumber } from './chip-avr.js';
 import { type ChipImage, buildSketch } from './chip-build.js';
-import { ChipMotors, pinNumber } from './chip-motors.js';
+import { ChipMotors } from './chip-motors.js';
 import type { Engine, RunResult, RunSetup } from './engine.js';
 import { Plant } from './plant.js';
 import { RunMonitor } from './run-monitor.js';
@@ -31,7 +31,7 @@ class ChipRun {
   private readonly plant: Plant;
   private readonly monitor: RunMonitor;
   private readonly motors: ChipMotors;
-  private readonly chip: Atmega328p;
+  private readonly chip: AvrChip;
   private readonly sensorPins: readonly number[];
   private readonly buttonPin: number;
 
@@ -46,7 +46,7 @@ class ChipRun {
     const sensorOfChannel = new Map(vehicle.bar.pins.map((pin, i) => [pin.adc?.channel, i]));
     this.sensorPins = vehicle.bar.kind === 'digital' ? vehicle.bar.pins.map(pinNumber) : [];
     this.buttonPin = pinNumber(vehicle.start.button);
-    this.chip = new Atmega328p(image.program, {
+    this.chip = new AvrChip(image.program, vehicle.board, {
       sample: (channel) => {
         const sensor = sensorOfChannel.get(channel);
         return sensor === undefined ? 0 : this.plant.count(sensor);

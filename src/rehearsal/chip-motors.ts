@@ -8,16 +8,9 @@
 import type { BoardFacts, PinFacts } from '../vehicle/board-facts.js';
 import { findPin } from '../vehicle/boards.js';
 import type { MotorWiring, Vehicle } from '../vehicle/vehicle.js';
-import { type Atmega328p, CLOCK_HZ } from './chip-atmega328p.js';
+import { type AvrChip, CLOCK_HZ, pinNumber } from './chip-avr.js';
 
-/** Arduino's number of a pin: its label, or for A0 to A5 the alias that is a number. */
-export function pinNumber(pin: PinFacts): number {
-  const text = [pin.label, ...pin.aliases].find((name) => /^\d+$/.test(name));
-  if (text === undefined) throw new Error(`Pin ${pin.label} has no number.`);
-  return Number(text);
-}
-
-type Side = (chip: Atmega328p) => number;
+type Side = (chip: AvrChip) => number;
 
 /** Direction in which one motor is driven at this moment. */
 function sideOf(vehicle: Vehicle, wiring: MotorWiring): Side {
@@ -26,7 +19,7 @@ function sideOf(vehicle: Vehicle, wiring: MotorWiring): Side {
   const level = (pin: PinFacts | undefined) => {
     if (pin === undefined) return () => false;
     const number = pinNumber(pin);
-    return (chip: Atmega328p) => chip.isHigh(number);
+    return (chip: AvrChip) => chip.isHigh(number);
   };
   const [pwm, dir, in1, in2] = [wiring.pwm, wiring.dir, wiring.in1, wiring.in2].map(level) as [
     ReturnType<typeof level>,
@@ -69,7 +62,7 @@ class MotorSignal {
     this.drivenCycles = new Float64Array(steps);
   }
 
-  look(chip: Atmega328p): void {
+  look(chip: AvrChip): void {
     const direction = this.side(chip);
     if (direction === this.direction) return;
     this.settle(chip.cycles);
@@ -113,14 +106,14 @@ export class ChipMotors {
   }
 
   /** To be called whenever a pin may have changed. */
-  look(chip: Atmega328p): void {
+  look(chip: AvrChip): void {
     this.left.look(chip);
     this.right.look(chip);
     if (this.left.isDriven || this.right.isDriven) this.lastDriven = chip.cycles;
   }
 
   /** To be called at the end of each step. */
-  endStep(chip: Atmega328p): void {
+  endStep(chip: AvrChip): void {
     if (this.left.isDriven || this.right.isDriven) this.lastDriven = chip.cycles;
     this.dutyLeft = this.left.endStep(chip.cycles);
     this.dutyRight = this.right.endStep(chip.cycles);

@@ -1,7 +1,7 @@
 /**
- * The tools that compile a sketch for the ATmega328P: the AVR compiler and the Arduino core, and where what they make is kept.
+ * The tools that compile a sketch: the AVR compiler and the Arduino core, and where what they make is kept.
  *
- * Boards and their flags: boards.txt of the core (build.board, build.variant). FAIRLEAD_ARDUINO_CORE names another core folder.
+ * What the core calls a board is in the board's facts. FAIRLEAD_ARDUINO_CORE names another core folder.
  */
 import { execFile } from 'node:child_process';
 import { existsSync } from 'node:fs';
@@ -10,7 +10,9 @@ import { homedir, tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { ARDUINO_CORE, howToInstall, missingTools } from '../../bin/toolchain.js';
 import { EXIT, FairleadError } from '../sheet/problem.js';
+import { joinAnd } from '../sheet/words.js';
 import type { BoardId } from '../vehicle/board-facts.js';
+import { BOARDS } from '../vehicle/boards.js';
 
 export interface ArduinoCore {
   /** Folder of the core's sources. */
@@ -19,12 +21,11 @@ export interface ArduinoCore {
   variant: string;
   /** The board's macro, without its prefix. */
   boardMacro: string;
+  /** The compiler's name of the chip. */
+  mcu: string;
+  /** Further macros, as NAME=value. */
+  defines: readonly string[];
 }
-
-const BOARDS: Readonly<Partial<Record<BoardId, { variant: string; boardMacro: string }>>> = {
-  uno: { variant: 'standard', boardMacro: 'AVR_UNO' },
-  nano: { variant: 'eightanaloginputs', boardMacro: 'AVR_NANO' },
-};
 
 /** What the compiler of a host is for; the chip does without it. */
 const HOST_TOOLS = ['g++'];
@@ -35,22 +36,20 @@ const HOST_TOOLS = ['g++'];
  * @throws FairleadError with exit code 5 when a tool is missing, saying what to install; with 2 for a board without this chip
  */
 export function findCore(board: BoardId): ArduinoCore {
-  const facts = BOARDS[board];
+  const { core: facts } = BOARDS[board];
+  const emulated = Object.values(BOARDS).flatMap(({ id, core }) => (core === undefined ? [] : [id]));
   if (facts === undefined)
-    throw new FairleadError(
-      `The emulated chip is that of ${Object.keys(BOARDS).join(' and ')}, not of ${board}.`,
-      {
-        problems: [
-          {
-            pointer: '/target/board',
-            message: 'There is no emulated chip for this board.',
-            got: board,
-            allowed: Object.keys(BOARDS).join(', '),
-            fix: 'Rehearse on micropython or on the twin.',
-          },
-        ],
-      },
-    );
+    throw new FairleadError(`There is no emulated chip for ${board}, only for ${joinAnd(emulated)}.`, {
+      problems: [
+        {
+          pointer: '/target/board',
+          message: 'There is no emulated chip for this board.',
+          got: board,
+          allowed: emulated.join(', '),
+          fix: 'Rehearse on micropython or on the twin.',
+        },
+      ],
+    });
   const elsewhere = process.env['FAIRLEAD_ARDUINO_CORE'];
   const missing = missingTools().filter(
     (name) => !HOST_TOOLS.includes(name) && !(elsewhere && name === 'arduino-core-avr'),
@@ -60,7 +59,9 @@ export function findCore(board: BoardId): ArduinoCore {
   const core: ArduinoCore = {
     sources: join(root, 'cores', 'arduino'),
     variant: join(root, 'variants', facts.variant),
-    boardMacro: facts.boardMacro,
+    boardMacro: facts.macro,
+    mcu: facts.mcu,
+    defines: facts.defines ?? [],
   };
   if (!existsSync(join(core.sources, 'Arduino.h')))
     throw new FairleadError(

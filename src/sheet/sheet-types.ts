@@ -5,7 +5,7 @@
  */
 export type Pin = number | string;
 /**
- * One reading a sensor, leftmost first, in counts of the board's converter as the firmware reads it: 0 to 1023 on uno and nano, 0 to 4095 on pico and esp32. [counts]
+ * One reading a sensor, leftmost first, in counts of the board's converter as the firmware reads it: 0 to 1023 with Arduino C++, 0 to 4095 on pico and esp32. [counts]
  *
  * @minItems 2
  * @maxItems 16
@@ -35,9 +35,9 @@ export interface Sheet {
    */
   target: {
     /**
-     * The controller board: uno and nano take Arduino C++, pico and esp32 take MicroPython.
+     * The controller board: uno, nano, mega2560 and leonardo take Arduino C++, pico and esp32 take MicroPython.
      */
-    board: 'uno' | 'nano' | 'pico' | 'esp32';
+    board: 'uno' | 'nano' | 'mega2560' | 'leonardo' | 'pico' | 'esp32';
     /**
      * The language of the firmware. It follows from the board.
      */

@@ -1,6 +1,7 @@
 /** The shape of board facts: what a board's pins can do. The facts themselves are data, one file a board. */
+import type { Sheet } from '../sheet/sheet-types.js';
 
-export type BoardId = 'uno' | 'nano' | 'pico' | 'esp32';
+export type BoardId = Sheet['target']['board'];
 
 /** What one pin of a board can do. */
 export interface PinFacts {
@@ -22,7 +23,15 @@ export interface PinFacts {
    */
   pwm?: { timer: number; channel: string };
   /** Converter (where the chip has several), its channel and what to watch, where the pin can read a voltage. */
-  adc?: { unit?: number; channel: number; caution?: string };
+  adc?: {
+    unit?: number;
+    channel: number;
+    /** How the firmware's language names the analog input, where that differs from the pin's own code. */
+    code?: string;
+    caution?: string;
+  };
+  /** Port and bit by which the chip's registers name it, where the chip has such ports. */
+  port?: { name: string; bit: number };
   /** Can raise an external interrupt. */
   interrupt: boolean;
   /** Why the pin must not be used at all (serial console, flash memory), else absent. */
@@ -65,4 +74,26 @@ export interface BoardFacts {
   /** The timer that the millisecond clock uses; PWM on it is allowed but it must not be retimed. */
   clockTimer?: number;
   pins: readonly PinFacts[];
+  /** The converter has an attenuator that has to be set for the whole range. */
+  adcAttenuated?: boolean;
+  /** The LED on the board: the pin that it takes, how the firmware's language names it, a word about it. */
+  led: { label: string; code: string; about: string };
+  /** What the Arduino core calls the board; Arduino only. */
+  core?: ArduinoCoreFacts;
+  /** What to know when the firmware is loaded: how the board enters its boot loader, what a reset does. */
+  flashing: readonly string[];
+}
+
+/** How the Arduino core and its tools name a board: boards.txt of the core. */
+export interface ArduinoCoreFacts {
+  /** Fully qualified board name. */
+  fqbn: string;
+  /** build.mcu */
+  mcu: string;
+  /** build.variant */
+  variant: string;
+  /** build.board */
+  macro: string;
+  /** Macros of build.extra_flags, as NAME=value. */
+  defines?: readonly string[];
 }

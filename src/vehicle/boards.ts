@@ -1,11 +1,16 @@
 /** All boards, and looking up a pin by whatever a person calls it. */
 import type { BoardFacts, BoardId, PinFacts } from './board-facts.js';
 import { esp32 } from './boards/esp32.js';
+import { leonardo } from './boards/leonardo.js';
+import { mega2560 } from './boards/mega2560.js';
 import { nano } from './boards/nano.js';
 import { pico } from './boards/pico.js';
 import { uno } from './boards/uno.js';
 
-export const BOARDS: Readonly<Record<BoardId, BoardFacts>> = { uno, nano, pico, esp32 };
+export const BOARDS: Readonly<Record<BoardId, BoardFacts>> = { uno, nano, mega2560, leonardo, pico, esp32 };
+
+/** All ids, in the order in which the questionnaire offers them. */
+export const BOARD_IDS = Object.keys(BOARDS) as readonly BoardId[];
 
 /**
  * The pin with this label or alias, in any case: 5, "5", "D5", "a0", "GP26", "IO32"; undefined if the board has none.

@@ -8,7 +8,7 @@ import fc from 'fast-check';
 import { checkSheet } from '../../src/sheet/check.js';
 import type { Sheet } from '../../src/sheet/sheet-types.js';
 import type { BoardId } from '../../src/vehicle/board-facts.js';
-import { BOARDS } from '../../src/vehicle/boards.js';
+import { BOARDS, BOARD_IDS } from '../../src/vehicle/boards.js';
 import type { DriverSchemeId } from '../../src/vehicle/drivers.js';
 import { proposePins, type PinPlan, type PinRequest } from '../../src/vehicle/pin-plan.js';
 import { decimal } from './decimal.js';
@@ -21,7 +21,6 @@ interface Wiring {
   plan: PinPlan;
 }
 
-const BOARD_IDS: readonly BoardId[] = ['uno', 'nano', 'pico', 'esp32'];
 const SCHEMES: readonly DriverSchemeId[] = ['pwm-dir', 'pwm-in-in', 'dual-pwm'];
 
 /** Every wiring that the boards allow. */

@@ -1,9 +1,9 @@
 /** A chip on the bench: sensors and button under the test's control, motors and LED watched. */
 import type { FirmwareDesign, RenderedFile } from '../../src/firmware/render.js';
 import { renderFirmware } from '../../src/firmware/render.js';
-import { Atmega328p, CLOCK_HZ } from '../../src/rehearsal/chip-atmega328p.js';
+import { AvrChip, CLOCK_HZ, pinNumber } from '../../src/rehearsal/chip-avr.js';
 import { type ChipImage, buildSketch } from '../../src/rehearsal/chip-build.js';
-import { ChipMotors, pinNumber } from '../../src/rehearsal/chip-motors.js';
+import { ChipMotors } from '../../src/rehearsal/chip-motors.js';
 import type { Vehicle } from '../../src/vehicle/vehicle.js';
 import { SHEET } from '../firmware/cart.js';
 
@@ -27,7 +27,7 @@ export async function imageOf(design: FirmwareDesign, userSample?: string): Prom
 }
 
 export class ChipBench {
-  readonly chip: Atmega328p;
+  readonly chip: AvrChip;
   readonly motors: ChipMotors;
   /** Times at which the first sensor was sampled, s. */
   readonly sampledS: number[] = [];
@@ -43,7 +43,7 @@ export class ChipBench {
     this.motors = new ChipMotors(vehicle, STEP_CYCLES);
     this.buttonPin = pinNumber(vehicle.start.button);
     const channels = vehicle.bar.pins.map((pin) => pin.adc?.channel);
-    this.chip = new Atmega328p(image.program, {
+    this.chip = new AvrChip(image.program, vehicle.board, {
       sample: (channel) => {
         const sensor = channels.indexOf(channel);
         if (sensor === 0) this.sampledS.push(this.timeS);

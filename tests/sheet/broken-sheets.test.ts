@@ -1,5 +1,6 @@
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
+import { BOARD_IDS } from '../../src/vehicle/boards.js';
 import { checkSheet } from '../../src/sheet/check.js';
 import type { Problem } from '../../src/sheet/problem.js';
 import { changedSheet, type Changes } from './example-sheet.js';
@@ -28,19 +29,7 @@ const anything = fc.oneof(
 const plausible = fc.oneof(
   fc.integer({ min: 0, max: 40 }),
   fc.double({ min: -50, max: 200, noNaN: true }),
-  fc.constantFrom<unknown>(
-    'A0',
-    'A6',
-    'GP26',
-    'IO33',
-    13,
-    'uno',
-    'nano',
-    'pico',
-    'esp32',
-    'micropython',
-    'digital',
-  ),
+  fc.constantFrom<unknown>('A0', 'A6', 'GP26', 'IO33', 13, ...BOARD_IDS, 'micropython', 'digital'),
   fc.constantFrom<unknown>('rules', 'sweep', 'dual-pwm', 'pwm-dir', 'dark-on-light', 'low', 'auto', false),
   fc.array(fc.integer({ min: 0, max: 1023 }), { minLength: 2, maxLength: 16 }),
 );

@@ -54,9 +54,9 @@ export const SCHEMA_PROBLEM_CASES: SchemaProblemCase[] = [
     want: [
       {
         pointer: '/target/board',
-        message: '"unno" is not allowed here: it takes uno, nano, pico or esp32.',
+        message: '"unno" is not allowed here: it takes uno, nano, mega2560, leonardo, pico or esp32.',
         got: '"unno"',
-        allowed: 'uno, nano, pico or esp32',
+        allowed: 'uno, nano, mega2560, leonardo, pico or esp32',
         fix: 'Did you mean "uno"?',
       },
     ],

@@ -26,10 +26,10 @@ describe('the prompt for a choice', () => {
   it.each([
     ['arrows', [KEY.down, KEY.down, KEY.up], 'nano'],
     ['round the end', [KEY.up, KEY.up], 'esp32'],
-    ['a number', ['3'], 'pico'],
+    ['a number', ['5'], 'pico'],
     ['the first letter', ['p'], 'pico'],
     ['a word', ['nano'], 'nano'],
-    ['a number after another', ['3', '4'], 'esp32'],
+    ['a number after another', ['5', '6'], 'esp32'],
     ['a key that means nothing', ['x'], 'uno'],
   ])('is moved by %s', async (_how, keys, value) => {
     const { answer, press } = await show(board);
@@ -60,7 +60,7 @@ describe('the prompt for a choice', () => {
     expect(getScreen()).not.toContain('MicroPython');
     press('?');
     expect(getScreen()).toContain(
-      '  The controller board: uno and nano take Arduino C++, pico and esp32 take\n  MicroPython.\n',
+      '  The controller board: uno, nano, mega2560 and leonardo take Arduino C++, pico\n  and esp32 take MicroPython.\n',
     );
     press('p', KEY.enter);
     await expect(answer).resolves.toEqual({ kind: 'answer', value: 'pico' });

@@ -79,6 +79,8 @@ describe('a board with too few pins', () => {
       'take digital sensors',
       'take board uno',
       'take board nano',
+      'take board mega2560',
+      'take board leonardo',
       'take board esp32',
       'take 3 sensors',
     ]);

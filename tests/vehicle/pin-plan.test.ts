@@ -1,12 +1,11 @@
 import { describe, expect, test } from 'vitest';
 import { checkSheet } from '../../src/sheet/check.js';
 import type { BoardId, PinFacts } from '../../src/vehicle/board-facts.js';
-import { BOARDS, findPin } from '../../src/vehicle/boards.js';
+import { BOARDS, BOARD_IDS, findPin } from '../../src/vehicle/boards.js';
 import { DRIVERS, type DriverSchemeId } from '../../src/vehicle/drivers.js';
 import { proposePins, type PinPlan, type PinRequest } from '../../src/vehicle/pin-plan.js';
 import { changedSheet } from '../sheet/example-sheet.js';
 
-const BOARD_IDS: readonly BoardId[] = ['uno', 'nano', 'pico', 'esp32'];
 const SCHEMES: readonly DriverSchemeId[] = ['pwm-dir', 'pwm-in-in', 'dual-pwm'];
 
 interface Combination {
@@ -132,21 +131,21 @@ test.each<[board: BoardId, request: PinRequest, message: string, allowed: string
     { sensorKind: 'analog', sensorCount: 6, scheme: 'pwm-dir' },
     'Pico has 3 analog pins (GP26 to GP28), too few for 6 analog sensors.',
     'at most 3 sensors',
-    'Take digital sensors, take 3 sensors at most or take another board: uno, nano or esp32.',
+    'Take digital sensors, take 3 sensors at most or take another board: uno, nano, mega2560, leonardo or esp32.',
   ],
   [
     'uno',
     { sensorKind: 'analog', sensorCount: 8, scheme: 'pwm-in-in' },
     'Uno has 6 analog pins (A0 to A5), too few for 8 analog sensors.',
     'at most 6 sensors',
-    'Take digital sensors, take 6 sensors at most or take another board: nano or esp32.',
+    'Take digital sensors, take 6 sensors at most or take another board: nano, mega2560, leonardo or esp32.',
   ],
   [
     'uno',
     { sensorKind: 'digital', sensorCount: 12, scheme: 'pwm-in-in' },
     'Uno has 18 usable pins; 12 digital sensors, the pwm-in-in driver and the button need 19 pins of the right kinds.',
     'at most 11 sensors',
-    'Take 11 sensors at most or take another board: pico or esp32.',
+    'Take 11 sensors at most or take another board: mega2560, leonardo, pico or esp32.',
   ],
 ])('%s: why not', (board, request, message, allowed, fix) => {
   expect(proposePins(board, request)).toEqual({

@@ -11,9 +11,7 @@
  * 16 MHz / (64 * 510) = 490.2 Hz.
  */
 import type { BoardFacts, PinFacts } from '../board-facts.js';
-
-const CLOCK_HZ = 16e6;
-const TIMER_PRESCALER = 64;
+import { AVR_16_MHZ, FAST_PWM_HZ, PHASE_CORRECT_PWM_HZ } from './avr.js';
 
 const PWM_OUTPUTS: Readonly<Record<number, { timer: number; channel: string }>> = {
   3: { timer: 2, channel: 'B' },
@@ -37,6 +35,7 @@ function digitalPin(number: number): PinFacts {
     input: true,
     output: true,
     pullUp: true,
+    port: number < 8 ? { name: 'D', bit: number } : { name: 'B', bit: number - 8 },
     interrupt: number === 2 || number === 3,
     ...(pwm ? { pwm } : {}),
     ...(number <= 1 ? { reserved: SERIAL } : {}),
@@ -54,6 +53,7 @@ function analogPin(channel: number): PinFacts {
     input: portPin,
     output: portPin,
     pullUp: portPin,
+    ...(portPin ? { port: { name: 'C', bit: channel } } : {}),
     interrupt: false,
     adc: { channel },
     ...(channel === 4 || channel === 5 ? { caution: I2C } : {}),
@@ -67,26 +67,16 @@ export function atmega328pPins(analogCount: number): readonly PinFacts[] {
   return [...DIGITAL_PINS, ...Array.from({ length: analogCount }, (_, channel) => analogPin(channel))];
 }
 
-const FAST_PWM_HZ = CLOCK_HZ / (TIMER_PRESCALER * 256);
-const PHASE_CORRECT_PWM_HZ = CLOCK_HZ / (TIMER_PRESCALER * 510);
-
 /** What Uno and Nano have in common. */
 export const atmega328p = {
-  language: 'arduino',
+  ...AVR_16_MHZ,
   chip: 'ATmega328P',
-  clockHz: CLOCK_HZ,
-  logicV: 5,
-  adcMaxCount: 1023,
-  // 26 us of conversion and the call around it.
-  adcReadS: 30e-6,
-  digitalReadS: 5e-6,
-  computeS: 400e-6,
-  samplePeriodS: 2e-3,
   timerPwmHz: { 0: FAST_PWM_HZ, 1: PHASE_CORRECT_PWM_HZ, 2: PHASE_CORRECT_PWM_HZ },
-  pwmHz: PHASE_CORRECT_PWM_HZ,
-  pwmSteps: 255,
   ramBytes: 2048,
-  clockTimer: 0,
+  led: { label: '13', code: 'LED_BUILTIN', about: "The board's own LED." },
+  flashing: [
+    'The computer resets the board over the serial link and its boot loader takes the sketch; there is no button to press. Opening a serial monitor resets the board as well: the vehicle then stands and waits for its button.',
+  ],
 } as const satisfies Partial<BoardFacts>;
 
 export const ATMEGA328P_SOURCES = [

@@ -111,5 +111,10 @@ export const esp32: BoardFacts = {
   pwmSteps: 2047,
   flashBytes: 4 * 1024 * 1024,
   ramBytes: 520 * 1024,
+  adcAttenuated: true,
   pins: GPIOS.map(pin),
+  led: { label: 'GPIO2', code: 'const(2)', about: 'The LED of most boards of this kind.' },
+  flashing: [
+    'A board without MicroPython: erase its flash and write the image of MicroPython for this chip with esptool, as the download page of MicroPython says for the board. Some boards need their BOOT button held while that begins.',
+  ],
 };

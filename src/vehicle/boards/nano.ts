@@ -12,4 +12,14 @@ export const nano: BoardFacts = {
   sources: [...ATMEGA328P_SOURCES, 'Arduino AVR core: variants/eightanaloginputs/pins_arduino.h'],
   flashBytes: 30720,
   pins: atmega328pPins(8),
+  core: {
+    fqbn: 'arduino:avr:nano:cpu=atmega328',
+    mcu: 'atmega328p',
+    variant: 'eightanaloginputs',
+    macro: 'AVR_NANO',
+  },
+  flashing: [
+    ...atmega328p.flashing,
+    'If loading fails although the port is right, the board may carry the older boot loader: take arduino:avr:nano:cpu=atmega328old instead.',
+  ],
 };

@@ -58,4 +58,9 @@ export const pico: BoardFacts = {
   flashBytes: 2 * 1024 * 1024,
   ramBytes: 264 * 1024,
   pins: Array.from({ length: 30 }, (_, gpio) => pin(gpio)),
+  // "LED" is the name on boards with and without radio, which have it on different pins.
+  led: { label: 'GP25', code: '"LED"', about: "The board's own LED." },
+  flashing: [
+    'A board without MicroPython: hold BOOTSEL while plugging it in, and copy the UF2 file of MicroPython for this board to the drive that appears.',
+  ],
 };

@@ -9,4 +9,5 @@ export const uno: BoardFacts = {
   sources: ATMEGA328P_SOURCES,
   flashBytes: 32256,
   pins: atmega328pPins(6),
+  core: { fqbn: 'arduino:avr:uno', mcu: 'atmega328p', variant: 'standard', macro: 'AVR_UNO' },
 };
