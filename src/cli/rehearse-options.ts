@@ -12,6 +12,8 @@ const MOST_PARTS = 10_000;
 export interface RehearseOptions {
   course?: string;
   on: EngineName;
+  /** What drives the second of two sheets, where not the same. */
+  onSecond?: EngineName;
   runs?: number;
   seed?: number;
   laps: number;
@@ -20,6 +22,7 @@ export interface RehearseOptions {
   shard?: Shard;
   out?: string;
   merge?: string[];
+  curve?: boolean;
   json?: boolean;
 }
 

@@ -1,6 +1,7 @@
 /** `fairlead rehearse` proper: drives the runs, whole or one part of them, and says how that went. */
 import { basename } from 'node:path';
 import { loadCourse } from '../course/load-course.js';
+import type { Design } from '../design/design.js';
 import { enginePartsOf } from '../rehearsal/engines.js';
 import { PART_VERSION, shardRange, type StudyIdentity, type StudyPart } from '../rehearsal/shards.js';
 import { type Study, studyFacts, studyReport } from '../rehearsal/study.js';
@@ -17,7 +18,7 @@ import { drawnRun, plotOf, writePicture } from './rehearse-picture.js';
 /** What is rehearsed, and where it came from. */
 export interface LoadedStudy {
   study: Study;
-  loaded: LoadedSheet;
+  loaded: LoadedSheet & { design: Design };
   course: Awaited<ReturnType<typeof loadCourse>>;
   names: RehearsalNames;
 }

@@ -20,6 +20,12 @@ Examples:
   fairlead rehearse cart.json --course lane.json --seed 17 --svg run.svg    one of them alone, as a picture
   fairlead rehearse cart.json --course lane.json --on chip              the compiled firmware on the emulated chip
 
+Two sheets on the same course and seeds, in pairs, with the interval of the difference:
+  fairlead rehearse cart.json other.json --course lane.json --runs 200
+
+How much speed costs in finish rate, in figures and as a picture:
+  fairlead rehearse cart.json --course lane.json --curve --runs 300 --svg curve.svg
+
 A study in parts, on several machines or as an array of jobs; the parts give exactly what one command would:
   fairlead rehearse cart.json --course lane.json --runs 10000 --shard 3/8 --out part-3.json
   fairlead rehearse --merge part-*.json
@@ -35,10 +41,19 @@ export function register(program: Command, io: Io): void {
   const command = program
     .command('rehearse')
     .description('drive the design on a course: laps, errors, verdict')
-    .argument('[sheet]', 'build sheet')
+    .argument('[sheets...]', 'build sheet; two of them are compared')
     .option('--course <file>', 'the course to drive on')
     .addOption(new Option('--on <engine>', 'what drives').choices(ENGINE_NAMES).default('twin'))
-    .option('--runs <n>', 'how many vehicles to drive (default: 1)', wholeNumber(1, MOST_RUNS))
+    .addOption(
+      new Option('--on-second <engine>', 'what drives the second sheet (default: as the first)').choices(
+        ENGINE_NAMES,
+      ),
+    )
+    .option(
+      '--runs <n>',
+      'how many vehicles to drive (default: 1; of two sheets 100)',
+      wholeNumber(1, MOST_RUNS),
+    )
     .option(
       '--seed <n>',
       'seed of the first vehicle, the next ones count up; 0 is the vehicle just as in the sheet (default: 0 for one run, else 1)',
@@ -49,21 +64,21 @@ export function register(program: Command, io: Io): void {
     .option('--shard <k/n>', 'drive only part K of N, and write it for --merge', shardOf)
     .option('--out <file>', 'with --shard: the file for the part (default: stdout)')
     .option('--merge <files...>', 'join the parts of a study')
+    .option('--curve', 'drive at speeds from below to above those of the design: speed against finish rate')
     .option('--svg <file>', 'draw the driven path, or where it was lost, as an SVG picture', svgName)
     .option('--json', 'print one JSON document: runs, finished, lost, lapS, boundLapS, ratio, ..., list')
     .addHelpText('after', EXAMPLES)
-    .action((path: string | undefined, options: RehearseOptions) =>
-      rehearseCommand(command, path, options, io),
-    );
+    .action((paths: string[], options: RehearseOptions) => rehearseCommand(command, paths, options, io));
 }
 
 async function rehearseCommand(
   command: Command,
-  path: string | undefined,
+  paths: readonly string[],
   options: RehearseOptions,
   io: Io,
 ): Promise<void> {
   const { merge, shard, course } = options;
+  const [path, second, ...more] = paths;
   if (merge !== undefined) {
     if (path !== undefined || course !== undefined)
       command.error('error: --merge takes the parts alone, no sheet and no course');
@@ -72,6 +87,21 @@ async function rehearseCommand(
   }
   if (path === undefined) command.error("error: missing required argument 'sheet'");
   if (course === undefined) command.error("error: required option '--course <file>' not specified");
+  if (more.length > 0) command.error('error: at most two sheets can be compared');
+  if (second !== undefined) {
+    if (shard !== undefined || options.svg !== undefined || options.curve === true)
+      command.error('error: --shard, --svg and --curve take one sheet');
+    const { compareCommand } = await import('./rehearse-compare.js');
+    await compareCommand([path, second], course, options, io);
+    return;
+  }
+  if (options.onSecond !== undefined) command.error('error: --on-second goes with two sheets');
+  if (options.curve === true) {
+    if (shard !== undefined || options.on !== 'twin')
+      command.error('error: --curve drives the twin, and not in parts');
+    await (await import('./rehearse-curve.js')).curveCommand(path, course, options, io);
+    return;
+  }
   const { rehearsePart, rehearseRuns } = await import('./rehearse-runs.js');
   if (shard === undefined) {
     if (options.out !== undefined) command.error('error: --out goes with --shard');

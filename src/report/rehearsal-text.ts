@@ -8,7 +8,8 @@ import { table } from './text-table.js';
 /** Lost runs that are told one by one. */
 const MOST_LOST = 10;
 
-const ENGINES: Readonly<Record<EngineName, string>> = {
+/** What drives, in words. */
+export const ENGINE_WORDS: Readonly<Record<EngineName, string>> = {
   twin: 'the twin of the controller',
   chip: 'the compiled firmware on the emulated chip',
   micropython: 'the firmware in the MicroPython interpreter',
@@ -32,7 +33,7 @@ function headline(report: RehearsalReport, lane: Lane, names: RehearsalNames): s
   const laps = `${names.laps} ${names.laps === 1 ? 'lap' : 'laps'} of ${lane.lengthM.toFixed(2)} m`;
   const way = lane.closed ? laps : `an open lane of ${lane.lengthM.toFixed(2)} m`;
   const runs = report.runs === 1 ? seedWords(report.seed) : `${report.runs} ${seedRange(report)}`;
-  return `${names.vehicle} on ${names.course}, with ${ENGINES[report.engine]}\n${way}; ${runs}`;
+  return `${names.vehicle} on ${names.course}, with ${ENGINE_WORDS[report.engine]}\n${way}; ${runs}`;
 }
 
 /** The whole outcome, each line ended. */

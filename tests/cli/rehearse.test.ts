@@ -99,10 +99,41 @@ describe('fairlead rehearse', () => {
     [['--course', COURSE, '--on', 'paper'], 'Allowed choices are twin, chip, micropython.'],
     [[], "required option '--course <file>' not specified"],
     [['--course', COURSE, '--shard', '5/4'], 'It takes K/N, part K of N'],
+    [[SHEET, SHEET, '--course', COURSE], 'at most two sheets can be compared'],
+    [[SHEET, '--course', COURSE, '--shard', '1/2'], '--shard, --svg and --curve take one sheet'],
+    [['--course', COURSE, '--on-second', 'twin'], '--on-second goes with two sheets'],
+    [['--course', COURSE, '--curve', '--on', 'chip'], '--curve drives the twin'],
     [['--course', COURSE, '--out', 'part.json'], '--out goes with --shard'],
     [['--course', COURSE, '--merge', 'part.json'], '--merge takes the parts alone'],
   ])('refuses %j', async (words, message) => {
     await expect(rehearse([SHEET, ...words])).rejects.toThrow(message);
+  });
+
+  it('compares two sheets on the same seeds, in pairs', async () => {
+    const { json } = await rehearse([
+      SHEET,
+      SHEET,
+      '--course',
+      COURSE,
+      '--runs',
+      '2',
+      '--laps',
+      '1',
+      '--json',
+    ]);
+    expect(json).toHaveLength(1);
+    const { first, second, pairs } = json[0] as Record<string, unknown>;
+    expect(second).toEqual(first);
+    expect(pairs).toMatchObject({ runs: 2, finish: { both: 2, chance: 1 }, lapS: { pairs: 2, mean: 0 } });
+  });
+
+  it('drives a curve of finish rate against speed', async () => {
+    const file = join(folder, 'curve.svg');
+    const words = [SHEET, '--course', COURSE, '--curve', '--runs', '2', '--laps', '1', '--svg', file];
+    const { out } = await rehearse(words);
+    expect(out).toMatch(/ 0\.70 +2 of 2 +15\.8 to 100\.0 % /);
+    expect(out).toContain("times the design's speeds 99.5 % or more finish here.");
+    expect((await readFile(file, 'utf8')).match(/class="rate"/g)).toHaveLength(12);
   });
 
   it('says which engines fit the board', async () => {
