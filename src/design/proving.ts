@@ -32,7 +32,7 @@ const TRIALS = 30;
 /** Vehicles drawn for screening; how many of the most demanding every trial must finish, and how many typical ones are timed. */
 const SCREENED = 200;
 const DEMANDING = 12;
-const TYPICAL = 8;
+const TYPICAL = 6;
 const FEW_SHARES = [1, 0.84, 0.7];
 /** Mean speed over a proving lane as a share of full wheel speed, about; and the fewest runs of a trial, and of a proof. */
 const USUAL_TOP_SHARE = 0.5;

@@ -17,7 +17,7 @@ export interface Timed {
 export const SHARES: readonly number[] = [1, 0.95, 0.9, 0.84, 0.77, 0.7];
 const BISECTIONS = 5;
 /** Caps below the largest passing one that are tried too. */
-const SLOWER_TOPS = [0.95, 0.9, 0.85];
+const SLOWER_TOPS = [0.95, 0.89];
 /** Slowest cap tried, as a share of full wheel speed. */
 export const LOWEST_TOP_SHARE = 0.25;
 
