@@ -1,8 +1,8 @@
 /**
  * The drawn vehicles on which speeds are proven, each on the proving lane or, every other one, on its mirror image.
  *
- * A vehicle that is not symmetrical and its image in a mirror get the same proof: of the two, one is drawn, and for the other all
- * is mirrored, the draws and the lane.
+ * A vehicle that is not symmetrical and its image in a mirror get the same proof but for noise and for the rounding of the
+ * integers: of the two, one is drawn, and for the other all is mirrored, the draws and the lane.
  */
 import { type Lane, compileCourse } from '../course/lane.js';
 import {
