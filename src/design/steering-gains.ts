@@ -11,7 +11,7 @@
  */
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { HELD_VIEW_SHARE, LEAST_RADIUS_AHEAD_RATIO } from '../vehicle/sensor-bar.js';
-import { axleCurvature, bendOffsetM, meanPitchM, viewM } from './bar-view.js';
+import { axleCurvaturePerM, bendOffsetM, meanPitchM, viewM } from './bar-view.js';
 import type { Margins } from './design.js';
 import { leastBetween } from './golden-section.js';
 import { type SteeringGains, controllerOf, loopPeak } from './steering-loop.js';
@@ -31,7 +31,7 @@ export function proportionalRange(vehicle: Vehicle, radiusM: number): [number, n
   const { aheadM } = vehicle.bar;
   const radius = Math.max(radiusM, aheadM * LEAST_RADIUS_AHEAD_RATIO);
   const kept = HELD_VIEW_SHARE * viewM(vehicle);
-  const least = axleCurvature(radius, aheadM, kept) / kept;
+  const least = axleCurvaturePerM(radius, aheadM, kept) / kept;
   const offset = bendOffsetM(radius, aheadM);
   const onLine = offset < kept ? 1 / (radius * offset) : least;
   return [least, Math.max(least, onLine)];

@@ -96,8 +96,9 @@ describe('Skogestad, SIMC 2003', () => {
   });
 });
 
-// formulas from memory, values computed from them: this pins our reading, it does not confirm the paper
-describe('Astrom and Hagglund, AMIGO 2004 (unconfirmed)', () => {
+// Formulas as coded in AlCap23/Thesis, Matlab/AMIGO_Tune.m (after Advanced PID Control, eq. 7.7 and 7.33), and alike in several other
+// public repositories; the values are computed from them.
+describe('Astrom and Hagglund, AMIGO 2004', () => {
   test('K = T = L = 1', () => {
     const { pi, pid } = amigoLag(unit);
     expect(pi.gain).toBeCloseTo(0.25, 12);
@@ -116,7 +117,11 @@ describe('Astrom and Hagglund, AMIGO 2004 (unconfirmed)', () => {
     expect(pid.derivativeTimeS).toBeCloseTo(0.421545667, 9);
   });
 
-  test('integrating', () => {
+  test('integrating: the limit of a long lag', () => {
+    const { pid } = amigoLag({ gain: 1e9, lagS: 1e9, delayS: 1 });
+    expect(pid.gain).toBeCloseTo(0.45, 6);
+    expect(pid.integralTimeS).toBeCloseTo(8, 6);
+    expect(pid.derivativeTimeS).toBeCloseTo(0.5, 6);
     expect(amigoIntegrating({ slope: 1, delayS: 1 })).toEqual({
       gain: 0.45,
       integralTimeS: 8,

@@ -75,7 +75,7 @@ test(`margins and stability hold at ${POINTS} random points of the tolerance box
         lag: random.uniform(1 - lag, 1 + lag),
       };
       const plant = lanePlantOf(vehicle, each.speedMps, corner);
-      const law = controllerOf(each.gains, plant.speedMps, plant.samplePeriodS);
+      const law = controllerOf(each.gains, plant.speedMps, plant.samplePeriodS, each.speedMps);
       const place = `${vehicle.name} ${controller.kind} ${each.name} ${JSON.stringify(corner)}`;
       expect(keeps(loopMargins(plant, law)), place).toBe(true);
       expect(closedLoopRadius(samplePlant(plant), law), place).toBeLessThan(1);
@@ -138,11 +138,19 @@ describe('a mirrored vehicle', () => {
 
 describe('numbers', () => {
   test('class speeds are positive and never above full wheel speed', () => {
-    for (const { vehicle, classes } of designs)
+    for (const { vehicle, classes } of designs) {
       for (const { speedMps } of classes) {
         expect(speedMps).toBeGreaterThan(0);
         expect(speedMps).toBeLessThanOrEqual(vehicle.drive.topSpeedMps);
       }
+    }
+  });
+
+  test('a computed class is never slower than a tighter one', () => {
+    for (const { vehicle, classes } of designs) {
+      const speeds = classes.map((each) => each.speedMps);
+      if (vehicle.speeds.classes === 'auto') expect(speeds).toEqual(speeds.toSorted((a, b) => b - a));
+    }
   });
 
   test('no intermediate of the control law leaves 32 bits', () => {

@@ -117,8 +117,7 @@ export const LISTED: readonly Listed[] = [
   {
     why: 'results and fields named by what they are, with the unit in their comment',
     where: /^(design|course|sheet|report)\//,
-    names:
-      words(`motor view control axleCurvature tableGain proportional proportionalRange frequencyGrid runInterval
+    names: words(`motor view control tableGain proportional proportionalRange frequencyGrid runInterval
       interval runsOf top wholeDelay wrapAngle toTable strips positionsOf left right bottom columns rows`),
   },
 ];

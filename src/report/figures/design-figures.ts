@@ -8,10 +8,19 @@ import { speedRadiusFigure } from './speed-radius-figure.js';
 
 export interface Figure {
   /** Name of the file. */
-  name: string;
+  name: (typeof FIGURE_NAMES)[number];
   /** An SVG document that needs nothing beside it. */
   svg: string;
 }
+
+/** Names of all figures that a design may have. */
+export const FIGURE_NAMES = [
+  'bode.svg',
+  'nyquist.svg',
+  'bend-entry.svg',
+  'speed-radius.svg',
+  'rule-table.svg',
+] as const;
 
 /** The same design gives the same bytes. The rule table is drawn for a controller with rules only. */
 export function designFigures(design: Design): Figure[] {
@@ -21,6 +30,6 @@ export function designFigures(design: Design): Figure[] {
     { name: 'nyquist.svg', svg: nyquistFigure(design) },
     { name: 'bend-entry.svg', svg: bendEntryFigure(design) },
     { name: 'speed-radius.svg', svg: speedRadiusFigure(design) },
-    ...(rules === undefined ? [] : [{ name: 'rule-table.svg', svg: rules }]),
+    ...(rules === undefined ? [] : [{ name: 'rule-table.svg' as const, svg: rules }]),
   ];
 }

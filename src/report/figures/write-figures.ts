@@ -1,9 +1,9 @@
 /** Writes pictures into a folder, each file whole or not at all. */
-import { mkdir, stat } from 'node:fs/promises';
+import { mkdir, rm, stat } from 'node:fs/promises';
 import { dirname, join, resolve } from 'node:path';
 import writeFileAtomic from 'write-file-atomic';
 import { FairleadError } from '../../sheet/problem.js';
-import type { Figure } from './design-figures.js';
+import { FIGURE_NAMES, type Figure } from './design-figures.js';
 
 /** Why a folder takes no files, by the system's code. */
 const REASONS: Readonly<Record<string, string>> = {
@@ -34,7 +34,8 @@ async function makeFolder(folder: string): Promise<void> {
 }
 
 /**
- * Makes the folder if it is missing and writes the pictures into it, over older ones.
+ * Makes the folder if it is missing and writes the pictures into it, over older ones; a figure of an older design that this one
+ * does not have is taken away.
  *
  * @returns paths of the files, in the order given
  * @throws FairleadError (bad input) when the folder takes no files
@@ -44,6 +45,8 @@ export async function writeFigures(folder: string, figures: readonly Figure[]): 
   try {
     await makeFolder(resolve(folder));
     for (const [i, { svg }] of figures.entries()) await writeFileAtomic(paths[i]!, svg);
+    const gone = FIGURE_NAMES.filter((name) => figures.every((each) => each.name !== name));
+    for (const name of gone) await rm(join(folder, name), { force: true });
   } catch (error) {
     const reason = REASONS[(error as NodeJS.ErrnoException).code ?? ''];
     if (reason === undefined) throw error;

@@ -3,11 +3,12 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterEach, beforeEach, expect, it } from 'vitest';
 import { writeFigures } from '../../../src/report/figures/write-figures.js';
+import type { Figure } from '../../../src/report/figures/design-figures.js';
 import { FairleadError } from '../../../src/sheet/problem.js';
 
-const FIGURES = [
-  { name: 'a.svg', svg: '<svg>a</svg>' },
-  { name: 'b.svg', svg: '<svg>b</svg>' },
+const FIGURES: Figure[] = [
+  { name: 'bode.svg', svg: '<svg>a</svg>' },
+  { name: 'nyquist.svg', svg: '<svg>b</svg>' },
 ];
 let folder = '';
 beforeEach(async () => {
@@ -24,16 +25,25 @@ async function failureOf(target: string): Promise<FairleadError> {
 
 it('makes the folder, writes each file, and nothing else', async () => {
   const target = join(folder, 'deep', 'er');
-  expect(await writeFigures(target, FIGURES)).toEqual([join(target, 'a.svg'), join(target, 'b.svg')]);
-  expect((await readdir(target)).sort()).toEqual(['a.svg', 'b.svg']);
-  expect(await readFile(join(target, 'b.svg'), 'utf8')).toBe('<svg>b</svg>');
+  expect(await writeFigures(target, FIGURES)).toEqual([
+    join(target, 'bode.svg'),
+    join(target, 'nyquist.svg'),
+  ]);
+  expect((await readdir(target)).sort()).toEqual(['bode.svg', 'nyquist.svg']);
+  expect(await readFile(join(target, 'nyquist.svg'), 'utf8')).toBe('<svg>b</svg>');
+});
+
+it('takes a figure away that this design does not have', async () => {
+  await writeFile(join(folder, 'rule-table.svg'), 'of the rules before');
+  await writeFigures(folder, FIGURES);
+  expect((await readdir(folder)).sort()).toEqual(['bode.svg', 'nyquist.svg']);
 });
 
 it('writes over older pictures and leaves other files alone', async () => {
-  await writeFile(join(folder, 'a.svg'), 'old');
+  await writeFile(join(folder, 'bode.svg'), 'old');
   await writeFile(join(folder, 'notes.txt'), 'mine');
   await writeFigures(folder, FIGURES);
-  expect(await readFile(join(folder, 'a.svg'), 'utf8')).toBe('<svg>a</svg>');
+  expect(await readFile(join(folder, 'bode.svg'), 'utf8')).toBe('<svg>a</svg>');
   expect(await readFile(join(folder, 'notes.txt'), 'utf8')).toBe('mine');
 });
 
@@ -59,7 +69,7 @@ it('refuses a file system that takes no folders', async () => {
 });
 
 it('leaves no half-written file where a folder has the name of a picture', async () => {
-  await mkdir(join(folder, 'b.svg'));
+  await mkdir(join(folder, 'nyquist.svg'));
   expect((await failureOf(folder)).message).toMatch(/one of the names is taken by a folder/);
-  expect((await readdir(folder)).sort()).toEqual(['a.svg', 'b.svg']);
+  expect((await readdir(folder)).sort()).toEqual(['bode.svg', 'nyquist.svg']);
 });
