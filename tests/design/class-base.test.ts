@@ -19,9 +19,9 @@ function base(name: string, radiusM: number, controlMps: number, givenMps?: numb
 
 test('a wider class takes the law and the speed of a tighter one that may go faster', () => {
   const [wide, medium, tight] = [base('wide', 1, 0.3), base('medium', 0.4, 0.5), base('tight', 0.16, 0.6)];
-  const found = neverSlowerWhenWider([wide!, medium!, tight!]);
+  const found = neverSlowerWhenWider([wide, medium, tight]);
   expect(found.map((each) => each.allowedMps)).toEqual([0.6, 0.6, 0.6]);
-  expect(found.map((each) => each.gains)).toEqual([tight!.gains, tight!.gains, tight!.gains]);
+  expect(found.map((each) => each.gains)).toEqual([tight.gains, tight.gains, tight.gains]);
   expect(found.map((each) => each.range.name)).toEqual(['wide', 'medium', 'tight']);
   for (const { limits } of found) expect(limits[bindingLimit(limits)]).toBeGreaterThanOrEqual(0.6);
 });
