@@ -87,6 +87,11 @@ export const LISTED: readonly Listed[] = [
       level cause resetCause lastDriven cycles sample ticks ticksAdd ticksDiff change start end`),
   },
   {
+    why: 'registers, bits, vectors and sizes of a chip, as its data sheet numbers them',
+    where: /^(rehearsal\/chip-model(s|-parts)|vehicle\/board-facts)\.ts$/,
+    names: words('bit pinAddress group a b c base capture vector flashWords ramStart mux5'),
+  },
+  {
     why: 'shares and factors with a name of their own in the trade: grip and duty -1..1, trims, relative errors, Ms, margins',
     where: /^(design|vehicle|course|rehearsal|sheet)\//,
     names:
