@@ -9,7 +9,7 @@ import writeFileAtomic from 'write-file-atomic';
 import type { Lane } from '../course/lane.js';
 import type { Design } from '../design/design.js';
 import { planRender } from '../firmware/plan.js';
-import { renderFirmware } from '../firmware/render.js';
+import { renderProject } from '../firmware/papers.js';
 import { writePlan } from '../firmware/write.js';
 import { designFor } from '../pipeline.js';
 import type { EngineName } from '../rehearsal/engine.js';
@@ -59,7 +59,7 @@ export interface RenderedDemo {
 /** Writes the firmware below `out`. */
 export async function render(vehicle: DemoVehicle, out: string): Promise<RenderedDemo> {
   const { digest, design } = vehicle;
-  const plan = await planRender(await renderFirmware({ digest }, design), { digest }, out);
+  const plan = await planRender(await renderProject({ digest }, design), { digest }, out);
   await writePlan(plan);
   const written = plan.files.filter(({ status }) => status === 'new' || status === 'changed').length;
   return { vehicle, folder: join(out, plan.folder), files: plan.files.length, written };

@@ -40,13 +40,13 @@ export function register(program: Command, io: Io): void {
 
 async function render(path: string, options: RenderOptions, io: Io): Promise<void> {
   const { loadDesign } = await import('./load-design.js');
-  const { renderFirmware } = await import('../firmware/render.js');
+  const { renderProject } = await import('../firmware/papers.js');
   const { planRender, isUpToDate } = await import('../firmware/plan.js');
   const { refuseEdits, writePlan } = await import('../firmware/write.js');
 
   io.progress('designing ...');
   const { digest, design } = await loadDesign(path);
-  const files = await renderFirmware({ digest }, design);
+  const files = await renderProject({ digest }, design);
   io.progress('');
   const plan = await planRender(files, { digest }, options.out);
 

@@ -30,8 +30,9 @@ async function formatPython(text: string, path: string): Promise<string> {
   return format(text, path, { line_width: LINE_WIDTH, indent_width: 4, line_ending: 'lf' });
 }
 
-/** The text as the language's formatter lays it out; one line end at the end. */
+/** The text as the language's formatter lays it out, if it is code; one line end at the end. */
 export async function formatCode(text: string, path: string, language: Language): Promise<string> {
+  if (/\.(md|yaml)$/.test(path)) return `${text.trimEnd()}\n`;
   const formatted = language === 'cpp' ? await formatCpp(text, path) : await formatPython(text, path);
   return `${formatted.trimEnd()}\n`;
 }

@@ -10,6 +10,7 @@ import Handlebars from 'handlebars';
 import type { Design, DesignedClass } from '../design/design.js';
 import { comment } from './comments.js';
 import { formatCode } from './format.js';
+import { markdown } from './markdown.js';
 import { type IntegerType, type Language, literal } from './literals.js';
 
 /** Whose file it is once it is written: the tool's, or the user's own, which is never overwritten. */
@@ -34,7 +35,7 @@ export interface TemplateFile {
 /** What one language makes of a design. */
 export interface Rendering {
   /** Folder below templates/. */
-  folder: 'arduino' | 'micropython';
+  folder: 'arduino' | 'micropython' | 'papers';
   language: Language;
   files: readonly TemplateFile[];
   view: object;
@@ -78,6 +79,11 @@ function engineFor(language: Language): typeof Handlebars {
       throw new TypeError(`{{comment}} takes a text of the view model, not ${typeof text}.`);
     return comment(text, language);
   });
+  engine.registerHelper('markdown', (text: unknown) => {
+    if (typeof text !== 'string')
+      throw new TypeError(`{{markdown}} takes a text of the view model, not ${typeof text}.`);
+    return markdown(text);
+  });
   return engine;
 }
 
@@ -85,7 +91,7 @@ const COMPILE_OPTIONS: CompileOptions = {
   noEscape: true,
   strict: true,
   knownHelpersOnly: true,
-  knownHelpers: { literal: true, comment: true },
+  knownHelpers: { literal: true, comment: true, markdown: true },
 };
 
 type Template = (view: object) => string;

@@ -1,5 +1,6 @@
 /** The view model of the MicroPython program: pins, what board and driver need, and the files to write. */
 import type { Constant, ConstantGroup } from './constant.js';
+import { copyCommands } from './papers-loading.js';
 import { fileName } from './identifiers.js';
 import type { IntegerType } from './literals.js';
 import type { FirmwareDesign, Rendering, SheetIdentity, TemplateFile } from './render.js';
@@ -35,26 +36,9 @@ interface MicroPythonView extends Omit<CommonView, 'groups' | 'reasons'> {
   pwmHz: number;
 }
 
-/** Longest list of file names in one command. */
-const COPY_WIDTH = 70;
-
 /** LineLost -> REASON_LINE_LOST */
 function reasonName(name: string): string {
   return `REASON${name.replace(/[A-Z]/g, (letter) => `_${letter}`).toUpperCase()}`;
-}
-
-/** Command lines that copy the files, each short enough for a line of comment: wrapped, it could not be pasted. */
-function copyCommands(files: readonly string[]): string[] {
-  const commands: string[] = [];
-  let names = '';
-  for (const file of files) {
-    if (names.length + file.length > COPY_WIDTH) {
-      commands.push(`mpremote cp${names} :`);
-      names = '';
-    }
-    names += ` ${file}`;
-  }
-  return [...commands, `mpremote cp${names} :`];
 }
 
 /** How the program gets onto the board, and what else a person has to know who has it in hand. */

@@ -9,7 +9,7 @@ import type { AVRIOPort, CPU } from 'avr8js';
 
 /** How a timer takes hold of a pin, in avr8js's numbers: it does not export their names. */
 type Override = Parameters<AVRIOPort['timerOverridePin']>[1];
-const [RELEASE, TAKE, SET, CLEAR] = [0, 1, 2, 3].map((number) => number as Override) as [
+const [RELEASE, TAKE, SET, CLEAR] = [0, 1, 2, 3].map((number: unknown) => number as Override) as [
   Override,
   Override,
   Override,

@@ -82,6 +82,8 @@ export interface BoardFacts {
   core?: ArduinoCoreFacts;
   /** What to know when the firmware is loaded: how the board enters its boot loader, what a reset does. */
   flashing: readonly string[];
+  /** What to know when the board is wired, beyond the cautions of its pins. */
+  wiring?: readonly string[];
 }
 
 /** How the Arduino core and its tools name a board: boards.txt of the core. */

@@ -114,6 +114,11 @@ export const esp32: BoardFacts = {
   adcAttenuated: true,
   pins: GPIOS.map(pin),
   led: { label: 'GPIO2', code: 'const(2)', about: 'The LED of most boards of this kind.' },
+  wiring: [
+    // ESP32 data sheet, converter with 11 dB attenuation: effective range 150 to 2450 mV.
+    'The converter is accurate from about 0.15 V to 2.45 V only and saturates near 3.1 V: keep the sensors within it.',
+    'GPIO34 to GPIO39 have no pull-up: a digital sensor with an open output needs a resistor to 3.3 V there.',
+  ],
   flashing: [
     'A board without MicroPython: erase its flash and write the image of MicroPython for this chip with esptool, as the download page of MicroPython says for the board. Some boards need their BOOT button held while that begins.',
   ],

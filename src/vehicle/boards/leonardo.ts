@@ -97,6 +97,9 @@ export const leonardo: BoardFacts = {
     macro: 'AVR_LEONARDO',
     defines: ['USB_VID=0x2341', 'USB_PID=0x8036'],
   },
+  wiring: [
+    'A6 to A11 are the pins 4, 6, 8, 9, 10 and 12; the names in brackets stand on the back of the board.',
+  ],
   flashing: [
     'The chip itself is the USB device: the port goes and comes back while the boot loader runs, at times under another name. If the computer finds no port, press reset twice, and load within eight seconds.',
     'After a press of reset the boot loader waits some seconds before the firmware starts; the motors stay off until then only if the driver reads an open input as off.',

@@ -60,6 +60,9 @@ export const pico: BoardFacts = {
   pins: Array.from({ length: 30 }, (_, gpio) => pin(gpio)),
   // "LED" is the name on boards with and without radio, which have it on different pins.
   led: { label: 'GP25', code: '"LED"', about: "The board's own LED." },
+  wiring: [
+    "Pins are named by their GP numbers, which are printed on the board's back; the position along the edge is another number.",
+  ],
   flashing: [
     'A board without MicroPython: hold BOOTSEL while plugging it in, and copy the UF2 file of MicroPython for this board to the drive that appears.',
   ],
