@@ -23,6 +23,7 @@ export interface RehearseOptions {
   out?: string;
   merge?: string[];
   curve?: boolean;
+  spreads?: boolean;
   json?: boolean;
 }
 

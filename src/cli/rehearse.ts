@@ -65,6 +65,10 @@ export function register(program: Command, io: Io): void {
     .option('--out <file>', 'with --shard: the file for the part (default: stdout)')
     .option('--merge <files...>', 'join the parts of a study')
     .option('--curve', 'drive at speeds from below to above those of the design: speed against finish rate')
+    .option(
+      '--spreads',
+      'drive nothing; show what differs between drawn vehicles, and where each range comes from',
+    )
     .option('--svg <file>', 'draw the driven path, or where it was lost, as an SVG picture', svgName)
     .option('--json', 'print one JSON document: runs, finished, lost, lapS, boundLapS, ratio, ..., list')
     .addHelpText('after', EXAMPLES)
@@ -86,6 +90,10 @@ async function rehearseCommand(
     return;
   }
   if (path === undefined) command.error("error: missing required argument 'sheet'");
+  if (options.spreads === true) {
+    await (await import('./rehearse-spreads.js')).spreadsCommand(path, options.json === true, io);
+    return;
+  }
   if (course === undefined) command.error("error: required option '--course <file>' not specified");
   if (more.length > 0) command.error('error: at most two sheets can be compared');
   if (second !== undefined) {

@@ -136,6 +136,18 @@ describe('fairlead rehearse', () => {
     expect((await readFile(file, 'utf8')).match(/class="rate"/g)).toHaveLength(12);
   });
 
+  it('shows what differs between drawn vehicles, with the source of each range', async () => {
+    const { out } = await rehearse([SHEET, '--spreads']);
+    expect(out).toMatch(
+      /speed of the left motor +0\.93 +1\.07 +times the sheet +\/tolerances\/motorGainPercent\n/,
+    );
+    expect(out).toMatch(/jitter of the loop +0 +0\.00005 +s +common practice\n/);
+    const { json } = await rehearse([SHEET, '--spreads', '--json']);
+    const { spreads } = json[0] as { spreads: { low: number; high: number; source: string }[] };
+    expect(spreads.length).toBeGreaterThan(20);
+    for (const { low, high, source } of spreads) expect(low <= high && source !== '').toBe(true);
+  });
+
   it('says which engines fit the board', async () => {
     await expect(rehearse([SHEET, '--course', COURSE, '--on', 'micropython'])).rejects.toThrow(
       `The engine "micropython" runs micropython firmware; the sheet's board uno takes arduino. Use --on twin or --on chip.`,
