@@ -1,10 +1,11 @@
 /**
  * The delay from the floor to the motors, itemised from what the generated firmware does in a sample.
  *
- * The sensors are read one after the other at the start of the sample, so that a reading is on average half
- * a scan older than the end of the scan; then the arithmetic runs; a new duty takes effect on average half a
- * PWM period after it is written. The hold over one sample is part of the sampled plant, not of this delay.
+ * The sensors are read one after the other at the start of the sample, on AVR chips in the background by interrupts, so
+ * that a reading is on average half a scan older than the end of the scan; the end of the scan starts the arithmetic;
+ * a new duty takes effect on average half a PWM period after it is written, that of the slowest timer that serves a motor. The hold over one sample is part of the sampled plant, not of this delay.
  */
+import { motorPwmHz } from '../vehicle/pwm-modes.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import type { DelayShare } from './design.js';
 
@@ -19,7 +20,7 @@ export function delayBudget(vehicle: Vehicle): { shares: DelayShare[]; totalS: n
       source: `half of ${count} ${bar.kind} readings one after the other`,
     },
     { name: 'compute', delayS: board.computeS, source: 'control arithmetic, worst case of the board' },
-    { name: 'pwm', delayS: 0.5 / board.pwmHz, source: 'half a PWM period until the new duty acts' },
+    { name: 'pwm', delayS: 0.5 / motorPwmHz(vehicle), source: 'half a PWM period until the new duty acts' },
   ];
   return { shares, totalS: shares.reduce((sum, share) => sum + share.delayS, 0) };
 }

@@ -2,9 +2,10 @@
 import { fileName } from './identifiers.js';
 import type { FirmwareDesign, Rendering, SheetIdentity, TemplateFile } from './render.js';
 import { type PinLine, directionLines, hasFreeLed, pinLines, sensorPinCodes } from './view-pins.js';
+import { type RegisterView, registerView } from './view-registers.js';
 import { type CommonView, commonView } from './view.js';
 
-interface ArduinoView extends CommonView {
+interface ArduinoView extends CommonView, RegisterView {
   pwmDir: boolean;
   pwmInIn: boolean;
   dualPwm: boolean;
@@ -23,6 +24,7 @@ function arduinoView(sheet: SheetIdentity, design: FirmwareDesign): ArduinoView 
   const { scheme, standby } = vehicle.drive;
   return {
     ...commonView(sheet, design, hasFreeLed(vehicle)),
+    ...registerView(vehicle),
     pwmDir: scheme === 'pwm-dir',
     pwmInIn: scheme === 'pwm-in-in',
     dualPwm: scheme === 'dual-pwm',

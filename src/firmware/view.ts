@@ -3,6 +3,7 @@
  * of the header, and what this vehicle has. A language's own view model adds its pins and its files.
  */
 import type { ControllerConstants } from '../controller/constants.js';
+import { runIndex } from '../controller/run-index.js';
 import { VERSION } from '../version.js';
 import type { ConstantGroup } from './constant.js';
 import { type Features, featuresOf } from './features.js';
@@ -34,6 +35,8 @@ export interface CommonView extends Features {
   classes: readonly ClassRow[];
   /** Rule table in the order of runIndex; empty with pid. */
   ruleLines: readonly RuleLine[];
+  /** Where each first sensor's runs begin in it, less the sensor's number. */
+  ruleRows: readonly number[];
 }
 
 function ruleLines(controller: ControllerConstants): RuleLine[] {
@@ -78,5 +81,9 @@ export function commonView(sheet: SheetIdentity, design: FirmwareDesign, led: bo
     groups,
     classes: classRows(design),
     ruleLines: ruleLines(controller),
+    ruleRows: Array.from(
+      { length: controller.sensing.sensorCount },
+      (_, first) => runIndex(first, first, controller.sensing.sensorCount) - first,
+    ),
   };
 }

@@ -5,8 +5,8 @@
  * table (src/vehicle/drivers.ts). Its duty is the mean of that over the last PWM period, which is what the plant's dead zone and
  * speed line are stated for. So it is the pins' signal itself that drives the plant, not a register.
  */
-import type { BoardFacts, PinFacts } from '../vehicle/board-facts.js';
-import { findPin } from '../vehicle/boards.js';
+import type { PinFacts } from '../vehicle/board-facts.js';
+import { motorTimers, timerHz } from '../vehicle/pwm-modes.js';
 import type { MotorWiring, Vehicle } from '../vehicle/vehicle.js';
 import { type AvrChip, CLOCK_HZ, pinNumber } from './chip-avr.js';
 
@@ -35,10 +35,11 @@ function sideOf(vehicle: Vehicle, wiring: MotorWiring): Side {
 }
 
 /** Cycles of one PWM period of a motor, from the timer of its PWM pin. */
-function pwmPeriodCycles(board: BoardFacts, wiring: MotorWiring): number {
+function pwmPeriodCycles(vehicle: Vehicle, wiring: MotorWiring): number {
   const pin = wiring.pwm ?? wiring.in1;
-  const timer = pin && findPin(board, pin.label)?.pwm?.timer;
-  const hz = timer === undefined ? board.pwmHz : (board.timerPwmHz?.[timer] ?? board.pwmHz);
+  const timer = pin?.pwm?.timer;
+  const { board } = vehicle;
+  const hz = timer === undefined ? board.pwmHz : timerHz(board, timer, motorTimers(vehicle));
   return CLOCK_HZ / hz;
 }
 
@@ -58,7 +59,7 @@ class MotorSignal {
     private readonly stepCycles: number,
   ) {
     this.side = sideOf(vehicle, wiring);
-    const steps = Math.max(1, Math.round(pwmPeriodCycles(vehicle.board, wiring) / stepCycles));
+    const steps = Math.max(1, Math.round(pwmPeriodCycles(vehicle, wiring) / stepCycles));
     this.drivenCycles = new Float64Array(steps);
   }
 

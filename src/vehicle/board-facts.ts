@@ -40,6 +40,38 @@ export interface PinFacts {
   caution?: string;
 }
 
+/** How an AVR timer makes PWM. */
+export interface PwmMode {
+  pwmHz: number;
+  /** Steps of duty from off to full: the timer's top. */
+  dutySteps: number;
+  /** Fast PWM puts out one step more than its compare value says; phase-correct PWM just that. */
+  fastPwm: boolean;
+  /** Set-up before the first duty, as statements of C++; none where the core's set-up stands. */
+  setUp: readonly string[];
+}
+
+/** A timer of an AVR chip, as the firmware uses it. */
+export interface TimerFacts {
+  timer: number;
+  /** Mode beside other timers that serve motors: their frequencies agree. */
+  pwm: PwmMode;
+  /** Mode where this timer alone serves the motors, where that can be a better one. */
+  pwmAlone?: PwmMode;
+  /** Control registers of channels whose output is not connected in TCCRnA. */
+  controls?: Readonly<Record<string, string>>;
+  /** How it ticks once a sample while none of its outputs is PWM; absent where it must not be retimed. */
+  tick?: TickFacts;
+  /** How it ticks beside PWM of the mode `pwm`, whose period is then just one sample. */
+  pwmTick?: TickFacts;
+}
+
+/** A source of sample ticks: the interrupt's vector, and its set-up as statements of C++. */
+export interface TickFacts {
+  vector: string;
+  setUp: readonly string[];
+}
+
 /** One board, from its data sheet. */
 export interface BoardFacts {
   id: BoardId;
@@ -65,6 +97,8 @@ export interface BoardFacts {
   pwmHz: number;
   /** PWM frequency of each timer as the firmware leaves it, Hz, where the board's timers are fixed to pins. */
   timerPwmHz?: Readonly<Record<number, number>>;
+  /** Timers of which the firmware writes the registers, those best for the sample tick first; none in other languages. */
+  timers?: readonly TimerFacts[];
   /** Steps of PWM duty from off to full, as the firmware's language counts them. */
   pwmSteps: number;
   /** Program memory that the firmware may fill, bytes. */

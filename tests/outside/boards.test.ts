@@ -41,7 +41,11 @@ describe.each([uno, nano])('ATmega328P on $title', (board) => {
     // Arduino AVR core, wiring.c: timer 0 fast PWM, timers 1 and 2 phase-correct, prescaler 64. Frequencies by the formulas of
     // the ATmega328P data sheet: f / (N * 256) and f / (N * 510).
     expect(board.timerPwmHz?.[0]).toBeCloseTo(976.5625, 9);
-    expect(board.timerPwmHz?.[1]).toBeCloseTo(490.196078, 6);
+    // Data sheet, phase-correct PWM: clock / (2 * prescaler * top); the firmware sets timer 1 up with ICR1.
+    const first = board.timers?.find(({ timer }) => timer === 1);
+    expect(board.timerPwmHz?.[1]).toBe(16e6 / (2 * 64 * 250));
+    expect(first?.pwm).toMatchObject({ pwmHz: 500, dutySteps: 250 });
+    expect(first?.pwmAlone).toMatchObject({ pwmHz: 16e6 / (2 * 1 * 400), dutySteps: 400 });
     expect(board.timerPwmHz?.[2]).toBeCloseTo(490.196078, 6);
     // Arduino reference, analogWrite(): 490 Hz, pins 5 and 6 980 Hz; values 0 to 255.
     expect(Math.abs(board.pwmHz - 490)).toBeLessThan(1);

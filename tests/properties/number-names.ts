@@ -57,7 +57,7 @@ export const LISTED: readonly Listed[] = [
     where: /./,
     names:
       words(`first last state laps seed stream runs finished lost lostInLap resets piece before phase files written drawn
-      flashes added removed least most fewest significantDigits DEFAULT_LAPS FULL_PRINT_SENSORS sheetVersion courseVersion
+      bit channels ruleRows dutySteps flashes added removed least most fewest significantDigits DEFAULT_LAPS FULL_PRINT_SENSORS sheetVersion courseVersion
       manifestVersion exitCode items starts i jobs part of partVersion defaultRuns both onlyFirst onlySecond neither chance pairs mean low high CURVE_RUNS CURVE_FACTORS PART_VERSION MOST_RUNS MOST_LAPS MOST_SEED MOST_JOBS`),
   },
   {

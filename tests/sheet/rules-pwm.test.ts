@@ -48,7 +48,7 @@ testRules({
       when: 'motors on two timers of one frequency',
       changes: { '/drive/driver/left/pwm': 3, '/drive/driver/right': { pwm: 9, in1: 4, in2: 12 } },
       want: [
-        "/drive/driver: The motors' PWM comes from timer 1 (490.2 Hz) and timer 2 (490.2 Hz), so the two wheels may answer a little differently.",
+        "/drive/driver: The motors' PWM comes from timer 1 (500 Hz) and timer 2 (490.2 Hz), so the two wheels may answer a little differently.",
       ],
     },
     {

@@ -4,6 +4,9 @@ import type { Problem } from '../problem.js';
 import { joinAnd, withUnit } from '../words.js';
 import type { SheetRule } from './rule.js';
 
+/** Ratio of PWM frequencies under which motors answer alike. Common practice. */
+const ALIKE = 1.05;
+
 export const rule: SheetRule = {
   name: 'pwm-timers',
   level: 'note',
@@ -28,10 +31,11 @@ export const rule: SheetRule = {
       });
     }
     const timers = [...new Set(outputs.map(({ timer }) => timer))].sort();
-    const frequencies = new Set(timers.map((timer) => timerPwmHz[timer]));
+    const frequencies = timers.map((timer) => timerPwmHz[timer] ?? board.pwmHz);
+    const differ = Math.max(...frequencies) > ALIKE * Math.min(...frequencies);
     // Four PWM pins need two timers; they then only have to agree in frequency.
     const needsTwo = sheet.drive.driver.scheme === 'dual-pwm';
-    if (timers.length > 1 && (frequencies.size > 1 || !needsTwo)) {
+    if (timers.length > 1 && (differ || !needsTwo)) {
       const each = timers.map(
         (timer) => `timer ${timer} (${withUnit(timerPwmHz[timer] ?? board.pwmHz, 'Hz')})`,
       );

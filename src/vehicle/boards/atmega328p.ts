@@ -7,11 +7,10 @@
  *
  * Converter as the firmware sets it up: prescaler 32 gives 16 MHz / 32 = 500 kHz, a conversion takes 13 clocks = 26 us.
  * That is faster than the 200 kHz for full resolution; what is lost in the lowest bits is far below sensor noise.
- * PWM: timer 0 runs fast PWM, 16 MHz / (64 * 256) = 976.6 Hz; timers 1 and 2 run phase-correct,
- * 16 MHz / (64 * 510) = 490.2 Hz.
+ * Timers: avr.ts.
  */
 import type { BoardFacts, PinFacts } from '../board-facts.js';
-import { AVR_16_MHZ, FAST_PWM_HZ, PHASE_CORRECT_PWM_HZ } from './avr.js';
+import { AVR_16_MHZ, TIMER_0, TIMER_2, TIMER_1, timerPwmHz } from './avr.js';
 
 const PWM_OUTPUTS: Readonly<Record<number, { timer: number; channel: string }>> = {
   3: { timer: 2, channel: 'B' },
@@ -67,11 +66,14 @@ export function atmega328pPins(analogCount: number): readonly PinFacts[] {
   return [...DIGITAL_PINS, ...Array.from({ length: analogCount }, (_, channel) => analogPin(channel))];
 }
 
+const TIMERS = [TIMER_1, TIMER_2, TIMER_0];
+
 /** What Uno and Nano have in common. */
 export const atmega328p = {
   ...AVR_16_MHZ,
   chip: 'ATmega328P',
-  timerPwmHz: { 0: FAST_PWM_HZ, 1: PHASE_CORRECT_PWM_HZ, 2: PHASE_CORRECT_PWM_HZ },
+  timers: TIMERS,
+  timerPwmHz: timerPwmHz(TIMERS),
   ramBytes: 2048,
   led: { label: '13', code: 'LED_BUILTIN', about: "The board's own LED." },
   flashing: [

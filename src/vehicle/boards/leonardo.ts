@@ -8,7 +8,7 @@
  * waits about eight seconds after a press of reset, and comes by itself when the computer opens the port at 1200 bit/s.
  */
 import type { BoardFacts, PinFacts } from '../board-facts.js';
-import { AVR_16_MHZ, FAST_PWM_HZ, PHASE_CORRECT_PWM_HZ } from './avr.js';
+import { AVR_16_MHZ, TIMER_0, TIMER_1, TIMER_4_OF_32U4, timerPwmHz, wideTimer } from './avr.js';
 
 interface Row {
   label: string;
@@ -71,6 +71,8 @@ function pin({ label, port, names = [], pwm, adc, interrupt = false, caution }: 
   };
 }
 
+const TIMERS = [TIMER_1, wideTimer(3), TIMER_4_OF_32U4, TIMER_0];
+
 export const leonardo: BoardFacts = {
   ...AVR_16_MHZ,
   id: 'leonardo',
@@ -80,12 +82,8 @@ export const leonardo: BoardFacts = {
     'Atmel 7766J, ATmega16U4/ATmega32U4 data sheet',
     'Arduino AVR core: variants/leonardo/pins_arduino.h, cores/arduino/wiring.c, boards.txt',
   ],
-  timerPwmHz: {
-    0: FAST_PWM_HZ,
-    1: PHASE_CORRECT_PWM_HZ,
-    3: PHASE_CORRECT_PWM_HZ,
-    4: PHASE_CORRECT_PWM_HZ,
-  },
+  timers: TIMERS,
+  timerPwmHz: timerPwmHz(TIMERS),
   flashBytes: 28672,
   ramBytes: 2560,
   pins: ROWS.map(pin),

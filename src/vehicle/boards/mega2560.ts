@@ -6,7 +6,7 @@
  * and boards.txt (memory left by the boot loader). Converter and PWM as atmega328p.ts has them: the same peripherals.
  */
 import type { BoardFacts, PinFacts } from '../board-facts.js';
-import { AVR_16_MHZ, FAST_PWM_HZ, PHASE_CORRECT_PWM_HZ } from './avr.js';
+import { AVR_16_MHZ, TIMER_0, TIMER_1, TIMER_2, timerPwmHz, wideTimer } from './avr.js';
 
 /** Port letter and bit of each pin, 0 to 53. */
 const PORT_BITS = [
@@ -79,6 +79,8 @@ function analogPin(channel: number): PinFacts {
   };
 }
 
+const TIMERS = [TIMER_1, wideTimer(3), wideTimer(4), wideTimer(5), TIMER_2, TIMER_0];
+
 export const mega2560: BoardFacts = {
   ...AVR_16_MHZ,
   id: 'mega2560',
@@ -88,14 +90,8 @@ export const mega2560: BoardFacts = {
     'Atmel 2549Q, ATmega640/1280/1281/2560/2561 data sheet',
     'Arduino AVR core: variants/mega/pins_arduino.h, cores/arduino/wiring.c, boards.txt',
   ],
-  timerPwmHz: {
-    0: FAST_PWM_HZ,
-    1: PHASE_CORRECT_PWM_HZ,
-    2: PHASE_CORRECT_PWM_HZ,
-    3: PHASE_CORRECT_PWM_HZ,
-    4: PHASE_CORRECT_PWM_HZ,
-    5: PHASE_CORRECT_PWM_HZ,
-  },
+  timers: TIMERS,
+  timerPwmHz: timerPwmHz(TIMERS),
   flashBytes: 253952,
   ramBytes: 8192,
   pins: [...PORT_BITS.map(digitalPin), ...Array.from({ length: 16 }, (_, channel) => analogPin(channel))],

@@ -51,9 +51,13 @@ int main() {
       untilRestart = restartEvery - 1;
     }
     getCounts(counts);
+    // The others are taken while the converter is busy.
+    for (uint8_t k = 0; k + 1 < SENSOR_COUNT; k++) takeReading(k, counts[k]);
     markStep(true);
-    const Steering& now = steer(counts);
+    takeReading(SENSOR_COUNT - 1, counts[SENSOR_COUNT - 1]);
+    const Steering& now = steer();
     markStep(false);
+    advance();
     putNumber(static_cast<int32_t>(now.phase));
     putNumber(classInForce());
     putNumber(sight.offsetMmQ6);

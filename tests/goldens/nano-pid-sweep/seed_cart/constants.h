@@ -177,9 +177,9 @@ struct SpeedClass {
 // From speeds.classes, the fastest first.
 constexpr SpeedClass SPEED_CLASSES[] = {
     // Avenue: bends from 600 mm radius at 0.8 m/s, as speeds.classes says
-    {427, 17479, 0, 11605, 12027, 12893},
+    {427, 17479, 0, 11605, 12403, 12893},
     // Bay turn: bends from 120 mm radius at 0.4 m/s, as speeds.classes says
-    {2133, 8739, 0, 10373, 12379, 12893},
+    {2133, 8739, 0, 10373, 12587, 12893},
 };
 constexpr uint8_t CLASS_COUNT = sizeof SPEED_CLASSES / sizeof SPEED_CLASSES[0];
 

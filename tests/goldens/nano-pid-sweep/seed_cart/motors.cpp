@@ -3,13 +3,19 @@
 //
 // The direction pin gives the side, PWM the speed. Most drivers of this kind brake while PWM is
 // low.
+// What runs in each sample is compiled for speed, not for size.
+#pragma GCC optimize("O2")
+
 #include "motors.h"
 
+#include <avr/io.h>
+#include <util/atomic.h>
+
+#include "arithmetic.h"
 #include "pins.h"
 
 namespace {
 
-constexpr uint8_t FULL_PWM = 255;  // of analogWrite()
 constexpr uint8_t DUTY_BITS = 12;
 static_assert(FULL_DUTY_Q12 == 1 << DUTY_BITS, "duty to PWM by a shift");
 
@@ -20,11 +26,55 @@ constexpr uint8_t MOTOR_PINS[] = {
     RIGHT_DIR_PIN,
 };
 
-void setMotor(uint8_t pwmPin, uint8_t dirPin, uint8_t forwardLevel, int16_t dutyQ12) {
-  const bool forward = dutyQ12 >= 0;
-  const int32_t size = forward ? dutyQ12 : -int32_t{dutyQ12};
-  digitalWrite(dirPin, forward ? forwardLevel : !forwardLevel);
-  analogWrite(pwmPin, static_cast<int>((size * FULL_PWM) >> DUTY_BITS));
+// PWM value at full duty.
+constexpr int16_t LeftPwmTop = 400;
+
+// Off is the pin's own low level: then not even a short pulse is left.
+inline void setLeftPwm(int16_t value) {
+  if (value == 0) {
+    TCCR1A = static_cast<uint8_t>(TCCR1A & ~_BV(COM1A1));
+    return;
+  }
+  OCR1A = static_cast<uint16_t>(value);
+  TCCR1A = static_cast<uint8_t>(TCCR1A | _BV(COM1A1));
+}
+
+// PWM value at full duty.
+constexpr int16_t RightPwmTop = 400;
+
+// Off is the pin's own low level: then not even a short pulse is left.
+inline void setRightPwm(int16_t value) {
+  if (value == 0) {
+    TCCR1A = static_cast<uint8_t>(TCCR1A & ~_BV(COM1B1));
+    return;
+  }
+  OCR1B = static_cast<uint16_t>(value);
+  TCCR1A = static_cast<uint8_t>(TCCR1A | _BV(COM1B1));
+}
+
+inline void setLeftDir(bool high) {
+  if (high) {
+    PORTB = static_cast<uint8_t>(PORTB | _BV(4));
+  } else {
+    PORTB = static_cast<uint8_t>(PORTB & ~_BV(4));
+  }
+}
+
+inline void setRightDir(bool high) {
+  if (high) {
+    PORTB = static_cast<uint8_t>(PORTB | _BV(5));
+  } else {
+    PORTB = static_cast<uint8_t>(PORTB & ~_BV(5));
+  }
+}
+
+int16_t sizeOf(int16_t dutyQ12) {
+  return dutyQ12 < 0 ? static_cast<int16_t>(-dutyQ12) : dutyQ12;
+}
+
+// PWM value of a duty without its sign.
+inline int16_t pwmOf(int16_t sizeQ12, int16_t top) {
+  return highProduct(sizeQ12, static_cast<int16_t>(top * (1 << (16 - DUTY_BITS))));
 }
 
 }  // namespace
@@ -34,13 +84,30 @@ void setupMotors() {
     digitalWrite(pin, LOW);
     pinMode(pin, OUTPUT);
   }
+  TCCR1A = _BV(WGM11);
+  TCCR1B = _BV(WGM13) | _BV(CS10);
+  ICR1 = 400;
 }
 
+// All outputs are written at once: no interrupt comes between the wheels.
 void setMotors(int16_t leftQ12, int16_t rightQ12) {
-  setMotor(LEFT_PWM_PIN, LEFT_DIR_PIN, LEFT_FORWARD_LEVEL, leftQ12);
-  setMotor(RIGHT_PWM_PIN, RIGHT_DIR_PIN, RIGHT_FORWARD_LEVEL, rightQ12);
+  const int16_t left = sizeOf(leftQ12);
+  const int16_t right = sizeOf(rightQ12);
+  const int16_t leftPwm = pwmOf(left, LeftPwmTop);
+  const int16_t rightPwm = pwmOf(right, RightPwmTop);
+  ATOMIC_BLOCK(ATOMIC_RESTORESTATE) {
+    setLeftDir((leftQ12 >= 0) == (LEFT_FORWARD_LEVEL == HIGH));
+    setRightDir((rightQ12 >= 0) == (RIGHT_FORWARD_LEVEL == HIGH));
+    setLeftPwm(leftPwm);
+    setRightPwm(rightPwm);
+  }
 }
 
 void motorsOff() {
-  for (const uint8_t pin : MOTOR_PINS) digitalWrite(pin, LOW);
+  ATOMIC_BLOCK(ATOMIC_RESTORESTATE) {
+    setLeftPwm(0);
+    setRightPwm(0);
+    setLeftDir(false);
+    setRightDir(false);
+  }
 }

@@ -23,5 +23,9 @@ void resetSensing();
 void setCalibration(const int16_t (&groundCounts)[SENSOR_COUNT],
                     const int16_t (&coverage255thsPerCountQ12)[SENSOR_COUNT]);
 
-// Finds the line in one set of readings, leftmost sensor first.
-const Sight& findLine(const int16_t (&counts)[SENSOR_COUNT]);
+// Takes the reading of one sensor; the leftmost, number 0, begins a set. Each can be taken
+// while the converter is still busy with the next.
+void takeReading(uint8_t i, int16_t count);
+
+// Finds the line in the last set of readings.
+const Sight& findLine();

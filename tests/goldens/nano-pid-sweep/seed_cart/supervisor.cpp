@@ -3,6 +3,9 @@
 //
 // The watchdog runs while the vehicle moves: if the program hangs, it resets the board, which
 // switches the motors off. After any reset the button has to be pressed again.
+// What runs in each sample is compiled for speed, not for size.
+#pragma GCC optimize("O2")
+
 #include "supervisor.h"
 
 #include <avr/wdt.h>
@@ -46,9 +49,7 @@ void startMoving() {
 }
 
 void calibrate() {
-  int16_t counts[SENSOR_COUNT];
-  readSensors(counts);
-  const Sweep& sweep = stepSweep(counts);
+  const Sweep& sweep = stepSweep(sensorReadings());
   switch (sweep.result) {
     case SweepResult::Turning:
       setMotors(sweep.dutyLeftQ12, sweep.dutyRightQ12);
@@ -67,18 +68,20 @@ void calibrate() {
 }
 
 void run() {
-  int16_t counts[SENSOR_COUNT];
-  readSensors(counts);
-  const Steering& steering = steer(counts);
-  samples++;
+  const Steering& steering = steer();
   if (steering.phase == Phase::Stopped) {
     stop(State::LineLost, Reason::LineLost);
-  } else if (samples >= RUN_LIMIT_SAMPLES) {
+    return;
+  }
+  // What can wait comes after the motors.
+  setMotors(steering.dutyLeftQ12, steering.dutyRightQ12);
+  advance();
+  samples++;
+  if (samples >= RUN_LIMIT_SAMPLES) {
     stop(State::Stopped, Reason::RunLimit);
   } else if (overruns() > OVERRUN_LIMIT) {
     stop(State::Fault, Reason::Overrun);
   } else {
-    setMotors(steering.dutyLeftQ12, steering.dutyRightQ12);
     userSample(steering);
   }
 }
@@ -118,7 +121,6 @@ void setupSupervisor() {
 
 void superviseSample() {
   wdt_reset();
-  if (buttonPressed()) takePress();
   switch (state) {
     case State::Countdown:
       countDown();
@@ -135,4 +137,5 @@ void superviseSample() {
     case State::Fault:
       break;
   }
+  if (buttonPressed()) takePress();
 }

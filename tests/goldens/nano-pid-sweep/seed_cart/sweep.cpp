@@ -35,8 +35,8 @@ void takeOverCalibration() {
   resetSensing();
 }
 
-void lookForLine(const int16_t (&counts)[SENSOR_COUNT]) {
-  const Sight& sight = findLine(counts);
+void lookForLine() {
+  const Sight& sight = findLine();
   const bool centred =
       sight.offsetMmQ6 <= SWEEP_CENTRE_MM_Q6 && sight.offsetMmQ6 >= -SWEEP_CENTRE_MM_Q6;
   if (sight.found && centred) end(SweepResult::Done);
@@ -58,7 +58,7 @@ const Sweep& stepSweep(const int16_t (&counts)[SENSOR_COUNT]) {
     turn(true);
     takeOverCalibration();
   } else if (samples < ALL_SAMPLES) {
-    lookForLine(counts);
+    lookForLine();
   } else {
     end(SweepResult::LineNotFound);
   }

@@ -43,9 +43,12 @@ constexpr RuleAction RULE_TABLE[] PROGMEM = {
 static_assert(entriesOf(RULE_TABLE) == SENSOR_COUNT * (SENSOR_COUNT + 1) / 2,
               "one action for each run");
 
+// Place of a first sensor's runs, less its own number: the last sensor's number leads on from there.
+constexpr uint8_t RULE_ROWS[] = {0, 5, 9, 12, 14, 15};
+static_assert(entriesOf(RULE_ROWS) == SENSOR_COUNT, "one place for each sensor");
+
 inline RuleAction actionFor(uint8_t first, uint8_t last) {
-  const int16_t before = static_cast<int16_t>(first * SENSOR_COUNT - ((first * (first - 1)) >> 1));
-  const RuleAction& action = RULE_TABLE[before + last - first];
+  const RuleAction& action = RULE_TABLE[static_cast<uint8_t>(RULE_ROWS[first] + last)];
   return {static_cast<int8_t>(pgm_read_byte(&action.left)),
           static_cast<int8_t>(pgm_read_byte(&action.right))};
 }

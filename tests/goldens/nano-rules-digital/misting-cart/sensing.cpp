@@ -21,12 +21,26 @@ constexpr uint8_t LAST = SENSOR_COUNT - 1;
 using SensorBits = uint8_t;
 static_assert(SENSOR_COUNT <= 8 * sizeof(SensorBits), "a bit for each sensor");
 SensorBits onLine;  // sensors on the line; bit 0 is the leftmost
+SensorBits bit;     // of the next sensor
 Sight sight;
 
-// Takes one sensor's reading. Written out for each sensor, its numbers become part of the code.
-inline void cover(uint8_t i, int16_t count) {
+}  // namespace
+
+void takeReading(uint8_t i, int16_t count) {
+  if (i == 0) {
+    bit = 1;
+    onLine = 0;
+  }
   const bool on = count == LINE_LEVEL;
-  if (on) onLine = static_cast<SensorBits>(onLine | static_cast<SensorBits>(1) << i);
+  if (on) onLine = static_cast<SensorBits>(onLine | bit);
+  bit = static_cast<SensorBits>(bit + bit);
+}
+
+namespace {
+
+// (a + b) >> 1, which itself may need a bit more than there are.
+inline int16_t meanOf(int16_t a, int16_t b) {
+  return static_cast<int16_t>((a >> 1) + (b >> 1) + (a & b & 1));
 }
 
 // Takes the run of sensors first to last for the line.
@@ -40,7 +54,7 @@ void measure(uint8_t first, uint8_t last) {
     rightEdge = GAP_MIDDLE_MM_Q6[last + 1];
   }
   if (first > 0 && last < LAST) {
-    sight.offsetMmQ6 = static_cast<int16_t>((int32_t{leftEdge} + rightEdge) >> 1);
+    sight.offsetMmQ6 = meanOf(leftEdge, rightEdge);
   } else if (first > 0) {
     if (int32_t{leftEdge} - GAP_MIDDLE_MM_Q6[SENSOR_COUNT] > CORNER_WIDTH_MM_Q6) sight.reach = -1;
     sight.offsetMmQ6 = static_cast<int16_t>(leftEdge - HALF_LINE_MM_Q6);
@@ -79,14 +93,7 @@ void resetSensing() {
   sight = Sight();
 }
 
-const Sight& findLine(const int16_t (&counts)[SENSOR_COUNT]) {
-  onLine = 0;
-  cover(0, counts[0]);
-  cover(1, counts[1]);
-  cover(2, counts[2]);
-  cover(3, counts[3]);
-  cover(4, counts[4]);
-  cover(5, counts[5]);
+const Sight& findLine() {
   sight.found = false;
   sight.reach = 0;
   takeWidestRun();

@@ -30,6 +30,7 @@ int16_t bend;       // curvature of the bend that the vehicle is in
 int32_t release;    // way to go until the bend is over
 int32_t corner;     // way to go in which a vanished line is taken for a corner
 int8_t cornerSide;
+int16_t lag;  // of the modelled speed behind the wheels' command, doubled
 
 int16_t clamped16(int32_t value, int16_t limit) {
   if (value > limit) return limit;
@@ -125,19 +126,12 @@ int16_t inputOf(const RuleAction& action) {
                               RULE_CURVATURE_BITS);
 }
 
-// The input with FILTER_BITS more bits, word by word: cheaper than a shift of the whole.
-int32_t fine(int16_t input) {
-  const uint16_t low = static_cast<uint16_t>(static_cast<uint16_t>(input) << FILTER_BITS);
-  const int16_t high = static_cast<int16_t>(input >> (16 - FILTER_BITS));
-  return static_cast<int32_t>((static_cast<uint32_t>(static_cast<uint16_t>(high)) << 16) | low);
-}
-
 constexpr int32_t SUM_LIMIT = int32_t{CURVATURE_LIMIT_PER_M_Q8} << GAIN_BITS;
 
 // Curvature from the rule table: proportional plus filtered derivative.
 void follow(int16_t input, bool regained) {
   const SpeedClass& gains = *speedClass;
-  const int32_t fineInput = fine(input);
+  const int32_t fineInput = product(input, 1 << FILTER_BITS);
   if (regained) filtered = fineInput;
   const int16_t change = clamped16(fineInput - filtered, INT16_MAX);
   filtered += highWord(product(change, gains.derivativeFilterQ15) * 2);
@@ -147,7 +141,6 @@ void follow(int16_t input, bool regained) {
   if (sum > SUM_LIMIT) sum = SUM_LIMIT;
   if (sum < -SUM_LIMIT) sum = -SUM_LIMIT;
   steering.curvaturePerMQ8 = highWord(sum * (int32_t{1} << (16 - GAIN_BITS)));
-  filter(held, steering.curvaturePerMQ8, HOLD_FILTER_Q15);
 }
 
 // Slower at once when the demand for curvature rises, faster again by way driven out of the bend.
@@ -182,7 +175,8 @@ int16_t targetSpeedQ15() {
 }
 
 // Inverts the motor's dead zone and speed line.
-int16_t dutyFor(int16_t wheelQ13, int16_t startDutyQ12, int16_t dutyPerSpeedQ14) {
+__attribute__((always_inline)) inline int16_t dutyFor(int16_t wheelQ13, int16_t startDutyQ12,
+                                                      int16_t dutyPerSpeedQ14) {
   const int16_t size = static_cast<int16_t>(wheelQ13 < 0 ? -wheelQ13 : wheelQ13);
   if (size <= WHEEL_DEAD_SPEED_Q13) return 0;
   static_assert(SLOPE_BITS == 15, "doubled, a high word");
@@ -220,10 +214,8 @@ void drive(const RuleAction& action) {
   left = clamped(left, FULL_SPEED_Q13);
   right = clamped(right, FULL_SPEED_Q13);
 
-  // Twice the difference with 13 bits, times a coefficient with 15: 29 bits.
-  const int16_t lag = static_cast<int16_t>(left + right - 2 * speed);
-  addProduct(steering.speedQ29, lag, MOTOR_STEP_Q15);
-  if (steering.speedQ29 < 0) steering.speedQ29 = 0;
+  // Twice the difference with 13 bits.
+  lag = static_cast<int16_t>(left + right - 2 * speed);
   steering.dutyLeftQ12 = dutyFor(left, START_DUTY_LEFT_Q12, DUTY_LEFT_PER_SPEED_Q14);
   steering.dutyRightQ12 = dutyFor(right, START_DUTY_RIGHT_Q12, DUTY_RIGHT_PER_SPEED_Q14);
 }
@@ -234,19 +226,27 @@ void startSteering() {
   resetSensing();
   steering = Steering();
   filtered = demand = held = travelled = release = corner = 0;
-  bend = 0;
+  bend = lag = 0;
   searched = 0;
   side = cornerSide = 1;
   speedClass = SPEED_CLASSES;
+}
+
+void advance() {
+  if (steering.phase == Phase::Stopped) return;
+  if (steering.phase == Phase::Follow) filter(held, steering.curvaturePerMQ8, HOLD_FILTER_Q15);
+  // 14 bits times a coefficient with 15: 29 bits.
+  addProduct(steering.speedQ29, lag, MOTOR_STEP_Q15);
+  if (steering.speedQ29 < 0) steering.speedQ29 = 0;
 }
 
 uint8_t classInForce() {
   return static_cast<uint8_t>(speedClass - SPEED_CLASSES);
 }
 
-const Steering& steer(const int16_t (&counts)[SENSOR_COUNT]) {
+const Steering& steer() {
   if (steering.phase == Phase::Stopped) return steering;
-  const Sight& sight = findLine(counts);
+  const Sight& sight = findLine();
   const Phase before = steering.phase;
   updatePhase(sight);
   if (steering.phase == Phase::Stopped) {

@@ -31,6 +31,8 @@ void startSteering();
 // Number of the speed class in force, from 0, the fastest.
 uint8_t classInForce();
 
-// One sample period: readings, leftmost sensor first, to duties. Phase::Stopped lasts until the
-// next start.
-const Steering& steer(const int16_t (&counts)[SENSOR_COUNT]);
+// One sample period: from the readings taken to duties. Phase::Stopped lasts until the next start.
+const Steering& steer();
+
+// The rest of the step, which can wait until the motors have their duties: modelled speed, memory.
+void advance();

@@ -10,16 +10,13 @@
 
 void setupBoard();
 
-// Whether a sample is to begin now. A sample that is a whole period late counts as an overrun, and
-// the clock starts afresh from it.
+// Whether a sample is to begin now. A timer of the chip ticks once a period; a tick that finds the
+// sample before not yet dealt with counts as an overrun, and no sample begins with it.
 bool sampleDue();
 
 // Overruns since the last startOverruns().
 uint16_t overruns();
 void startOverruns();
-
-// One reading a sensor, leftmost first, counts.
-void readSensors(int16_t (&counts)[SENSOR_COUNT]);
 
 // Whether the button has just been pressed; to be asked once a sample. A button that is held down
 // since the reset does not count until it has been released.

@@ -167,20 +167,20 @@ struct SpeedClass {
 
 // From speeds.classes, the fastest first.
 constexpr SpeedClass SPEED_CLASSES[] = {
-    // straight: bends from 3600 mm radius at 1.29 m/s, limited by the finish target
-    {71, 28160, 0, 11650, 10710, 12893},
-    // sweeping: bends from 960 mm radius at 1.29 m/s, limited by the finish target
-    {267, 28160, 0, 11633, 10838, 12893},
-    // wide: bends from 480 mm radius at 1.29 m/s, limited by the finish target
-    {533, 28160, 0, 11579, 11020, 12893},
+    // straight: bends from 3600 mm radius at 1.23 m/s, limited by the finish target
+    {71, 26795, 0, 11650, 11087, 12893},
+    // sweeping: bends from 960 mm radius at 1.23 m/s, limited by the finish target
+    {267, 26795, 0, 11633, 11160, 12893},
+    // wide: bends from 480 mm radius at 1.23 m/s, limited by the finish target
+    {533, 26795, 0, 11579, 11251, 12893},
     // open: bends from 288 mm radius at 1.22 m/s, limited by the motors
-    {889, 26576, 1139, 11450, 11126, 12893},
+    {889, 26576, 157, 11450, 11354, 12893},
     // medium: bends from 180 mm radius at 1.1 m/s, limited by the motors
-    {1422, 24084, 1196, 11121, 11166, 12893},
+    {1422, 24084, 1196, 11121, 11526, 12893},
     // tight: bends from 120 mm radius at 0.908 m/s, limited by grip
-    {2133, 19830, 1531, 11516, 11792, 12893},
+    {2133, 19830, 1531, 11516, 12023, 12893},
     // reserve: bends from 90 mm radius at 0.786 m/s, limited by grip
-    {2844, 17173, 956, 11516, 12023, 12893},
+    {2844, 17173, 956, 11516, 12253, 12893},
 };
 constexpr uint8_t CLASS_COUNT = sizeof SPEED_CLASSES / sizeof SPEED_CLASSES[0];
 

@@ -27,12 +27,19 @@ int16_t coverageSum;
 using SensorBits = uint8_t;
 static_assert(SENSOR_COUNT <= 8 * sizeof(SensorBits), "a bit for each sensor");
 SensorBits onLine;  // sensors on the line; bit 0 is the leftmost
+SensorBits bit;     // of the next sensor
 Sight sight;
 uint8_t lineFirst;  // the run of sensors taken for the line
 uint8_t lineLast;
 
-// Takes one sensor's reading. Written out for each sensor, its numbers become part of the code.
-inline void cover(uint8_t i, int16_t count) {
+}  // namespace
+
+void takeReading(uint8_t i, int16_t count) {
+  if (i == 0) {
+    bit = 1;
+    onLine = 0;
+    coverageSum = 0;
+  }
   const int16_t above = static_cast<int16_t>((count - GROUND_COUNTS[i]) * COUNT_FACTOR);
   const int16_t graded = highProduct(above, COVERAGE_255THS_PER_COUNT_Q12[i]);
   uint8_t value = static_cast<uint8_t>(graded);
@@ -41,8 +48,11 @@ inline void cover(uint8_t i, int16_t count) {
   const bool on = value >= HIGH_COVERAGE_255THS;
   coverage[i] = value;
   coverageSum = static_cast<int16_t>(coverageSum + value);
-  if (on) onLine = static_cast<SensorBits>(onLine | static_cast<SensorBits>(1) << i);
+  if (on) onLine = static_cast<SensorBits>(onLine | bit);
+  bit = static_cast<SensorBits>(bit + bit);
 }
+
+namespace {
 
 // Place of an edge beside the middle of its gap, by the sum of the coverages on both sides.
 int16_t edgeShiftMmQ6(int16_t halfGapMmQ9, uint16_t sum255ths) {
@@ -63,6 +73,11 @@ uint16_t sumOf(uint8_t left) {
   return static_cast<uint16_t>(coverage[left] + coverage[left + 1]);
 }
 
+// (a + b) >> 1, which itself may need a bit more than there are.
+inline int16_t meanOf(int16_t a, int16_t b) {
+  return static_cast<int16_t>((a >> 1) + (b >> 1) + (a & b & 1));
+}
+
 // Takes the run of sensors first to last for the line.
 void measure(uint8_t first, uint8_t last) {
   int16_t leftEdge = 0;
@@ -78,7 +93,7 @@ void measure(uint8_t first, uint8_t last) {
         static_cast<int16_t>(rightEdge - edgeShiftMmQ6(GAP_HALF_MM_Q9[last + 1], sumOf(last)));
   }
   if (first > 0 && last < LAST) {
-    sight.offsetMmQ6 = static_cast<int16_t>((int32_t{leftEdge} + rightEdge) >> 1);
+    sight.offsetMmQ6 = meanOf(leftEdge, rightEdge);
   } else if (first > 0) {
     if (int32_t{leftEdge} - GAP_MIDDLE_MM_Q6[SENSOR_COUNT] > CORNER_WIDTH_MM_Q6) sight.reach = -1;
     sight.offsetMmQ6 = static_cast<int16_t>(leftEdge - HALF_LINE_MM_Q6);
@@ -112,7 +127,7 @@ void findBeyondEnds() {
 uint16_t distanceOf(uint8_t first, uint8_t last) {
   const int16_t leftEdge = GAP_MIDDLE_MM_Q6[first];
   const int16_t rightEdge = GAP_MIDDLE_MM_Q6[last + 1];
-  int16_t middle = static_cast<int16_t>((int32_t{leftEdge} + rightEdge) >> 1);
+  int16_t middle = meanOf(leftEdge, rightEdge);
   if (first == 0) {
     middle = static_cast<int16_t>(rightEdge + HALF_LINE_MM_Q6);
   } else if (last == LAST) {
@@ -158,15 +173,7 @@ void resetSensing() {
   sight = Sight();
 }
 
-const Sight& findLine(const int16_t (&counts)[SENSOR_COUNT]) {
-  onLine = 0;
-  coverageSum = 0;
-  cover(0, counts[0]);
-  cover(1, counts[1]);
-  cover(2, counts[2]);
-  cover(3, counts[3]);
-  cover(4, counts[4]);
-  cover(5, counts[5]);
+const Sight& findLine() {
   sight.found = false;
   sight.reach = 0;
   sight.wide = coverageSum >= WIDE_COVERAGE_255THS;

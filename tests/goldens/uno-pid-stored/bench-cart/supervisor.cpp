@@ -3,6 +3,9 @@
 //
 // The watchdog runs while the vehicle moves: if the program hangs, it resets the board, which
 // switches the motors off. After any reset the button has to be pressed again.
+// What runs in each sample is compiled for speed, not for size.
+#pragma GCC optimize("O2")
+
 #include "supervisor.h"
 
 #include <avr/wdt.h>
@@ -44,18 +47,20 @@ void startMoving() {
 }
 
 void run() {
-  int16_t counts[SENSOR_COUNT];
-  readSensors(counts);
-  const Steering& steering = steer(counts);
-  samples++;
+  const Steering& steering = steer();
   if (steering.phase == Phase::Stopped) {
     stop(State::LineLost, Reason::LineLost);
-  } else if (samples >= RUN_LIMIT_SAMPLES) {
+    return;
+  }
+  // What can wait comes after the motors.
+  setMotors(steering.dutyLeftQ12, steering.dutyRightQ12);
+  advance();
+  samples++;
+  if (samples >= RUN_LIMIT_SAMPLES) {
     stop(State::Stopped, Reason::RunLimit);
   } else if (overruns() > OVERRUN_LIMIT) {
     stop(State::Fault, Reason::Overrun);
   } else {
-    setMotors(steering.dutyLeftQ12, steering.dutyRightQ12);
     userSample(steering);
   }
 }
@@ -91,7 +96,6 @@ void setupSupervisor() {
 
 void superviseSample() {
   wdt_reset();
-  if (buttonPressed()) takePress();
   switch (state) {
     case State::Countdown:
       countDown();
@@ -105,5 +109,6 @@ void superviseSample() {
     case State::Fault:
       break;
   }
+  if (buttonPressed()) takePress();
   blink();
 }

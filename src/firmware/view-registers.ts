@@ -1,0 +1,113 @@
+/** The AVR registers behind a vehicle's pins: sample tick, converter channels, motor outputs, digital inputs. */
+import type { PinFacts, TickFacts } from '../vehicle/board-facts.js';
+import { modeOf, motorTimers } from '../vehicle/pwm-modes.js';
+import type { MotorWiring, Vehicle } from '../vehicle/vehicle.js';
+
+/** A PWM output of a motor. */
+interface PwmOutput {
+  /** As in setLeftPwm(). */
+  name: string;
+  compare: string;
+  compareType: 'uint8_t' | 'uint16_t';
+  control: string;
+  connect: string;
+  port: string;
+  bit: number;
+  /** Value at full duty. */
+  top: number;
+  fast: boolean;
+}
+
+/** A plain output of a motor. */
+interface LevelOutput {
+  name: string;
+  port: string;
+  bit: number;
+}
+
+export interface RegisterView {
+  /** What ticks once a sample. */
+  tick: TickFacts;
+  /** Set-up of the timers whose PWM serves a motor. */
+  pwmSetUp: readonly string[];
+  pwmOutputs: readonly PwmOutput[];
+  levelOutputs: readonly LevelOutput[];
+  /** Converter channels of the sensors, leftmost first, and whether each is one of the upper eight. */
+  channels: readonly number[];
+  upperChannels: readonly boolean[];
+  someUpperChannels: boolean;
+  /** Register and bit of each digital sensor, leftmost first. */
+  inputs: readonly { register: string; bit: number }[];
+  button: { register: string; bit: number };
+}
+
+/** Channels that ADMUX tells apart; bit MUX5 of ADCSRB has the rest (data sheets of the larger chips). */
+const CHANNELS_SELECTED = 8;
+
+function portOf(pin: PinFacts): { name: string; bit: number } {
+  if (pin.port === undefined) throw new Error(`Pin ${pin.label} has no port.`);
+  return pin.port;
+}
+
+const inputOf = (pin: PinFacts) => ({ register: `PIN${portOf(pin).name}`, bit: portOf(pin).bit });
+
+const levelOf = (name: string, pin: PinFacts): LevelOutput => ({
+  name,
+  port: `PORT${portOf(pin).name}`,
+  bit: portOf(pin).bit,
+});
+
+/** Outputs of one motor, by what they do; in1 and in2 are swapped as inverted says. */
+function outputsOf(side: 'Left' | 'Right', wiring: MotorWiring): [name: string, pin: PinFacts][] {
+  const [forward, backward] = wiring.inverted ? [wiring.in2, wiring.in1] : [wiring.in1, wiring.in2];
+  const all: [string, PinFacts | undefined][] = [
+    [`${side}Pwm`, wiring.pwm],
+    [`${side}Dir`, wiring.dir],
+    [`${side}Forward`, forward],
+    [`${side}Backward`, backward],
+  ];
+  return all.filter((each): each is [string, PinFacts] => each[1] !== undefined);
+}
+
+/** Registers of a vehicle on an AVR board. */
+export function registerView(vehicle: Vehicle): RegisterView {
+  const { board, drive, bar, start } = vehicle;
+  const timers = board.timers ?? [];
+  const outputs = [...outputsOf('Left', drive.left), ...outputsOf('Right', drive.right)];
+  const isPwm = (name: string) => name.endsWith('Pwm') || drive.scheme === 'dual-pwm';
+  const pwm = outputs.filter(([name]) => isPwm(name));
+  const used = motorTimers(vehicle);
+  const pwmOutputs = pwm.map(([name, pin]): PwmOutput => {
+    const facts = timers.find(({ timer }) => timer === pin.pwm?.timer);
+    if (facts === undefined || pin.pwm === undefined) throw new Error(`Pin ${pin.label} has no timer.`);
+    const { timer, channel } = pin.pwm;
+    const mode = modeOf(facts, used);
+    return {
+      ...levelOf(name, pin),
+      compare: `OCR${timer}${channel}`,
+      compareType: mode.dutySteps > 256 ? 'uint16_t' : 'uint8_t',
+      control: facts.controls?.[channel] ?? `TCCR${timer}A`,
+      connect: `COM${timer}${channel}1`,
+      top: mode.dutySteps,
+      fast: mode.fastPwm,
+    };
+  });
+  const free = timers.find(({ timer, tick }) => tick && !used.has(timer));
+  const shared = timers.find(({ timer, pwmTick }) => pwmTick && used.has(timer));
+  const tick = free?.tick ?? shared?.pwmTick;
+  if (tick === undefined) throw new Error(`${board.title} has no timer for the sample tick.`);
+  const levels = outputs.filter(([name]) => !isPwm(name)).map(([name, pin]) => levelOf(name, pin));
+  if (drive.standby !== undefined) levels.push(levelOf('Standby', drive.standby));
+  const channels = bar.kind === 'analog' ? bar.pins.map(({ adc }) => adc?.channel ?? 0) : [];
+  return {
+    tick,
+    pwmSetUp: timers.filter(({ timer }) => used.has(timer)).flatMap((facts) => modeOf(facts, used).setUp),
+    pwmOutputs,
+    levelOutputs: levels,
+    channels: channels.map((channel) => channel % CHANNELS_SELECTED),
+    upperChannels: channels.map((channel) => channel >= CHANNELS_SELECTED),
+    someUpperChannels: channels.some((channel) => channel >= CHANNELS_SELECTED),
+    inputs: bar.kind === 'digital' ? bar.pins.map(inputOf) : [],
+    button: inputOf(start.button),
+  };
+}
