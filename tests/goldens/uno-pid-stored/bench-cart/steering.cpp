@@ -222,11 +222,7 @@ void startSteering() {
   resetSensing();
   steering = Steering();
   filtered = demand = held = travelled = release = corner = 0;
-<<<<<<< HEAD
-  bend = 0;
-=======
   bend = lag = 0;
->>>>>>> 1508260 (AVR: readings worked on during the scan, motors before what can wait; cost bench against a tutorial's sketch with its limits as a test; the demo on simavr as on avr8js)
   searched = 0;
   side = cornerSide = 1;
   speedClass = SPEED_CLASSES;
