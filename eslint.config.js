@@ -23,6 +23,7 @@ export default tseslint.config(
       globals: { process: 'readonly', console: 'readonly', URL: 'readonly', performance: 'readonly' },
     },
   },
+  { files: ['templates/report/*.js'], languageOptions: { globals: { document: 'readonly' } } },
   {
     files: ['**/*.ts'],
     extends: [tseslint.configs.strictTypeChecked],

@@ -19,6 +19,7 @@ export interface RehearseOptions {
   laps: number;
   jobs?: number;
   svg?: string;
+  report?: string;
   shard?: Shard;
   out?: string;
   merge?: string[];
@@ -36,6 +37,12 @@ export function seedsOf(options: RehearseOptions, defaultRuns = 1): { first: num
 /** The name of a picture: not by mistake that of the sheet. */
 export function svgName(text: string): string {
   if (!text.toLowerCase().endsWith('.svg')) throw new InvalidArgumentError('Its name must end in .svg.');
+  return text;
+}
+
+/** The name of a report, likewise. */
+export function reportName(text: string): string {
+  if (!text.toLowerCase().endsWith('.html')) throw new InvalidArgumentError('Its name must end in .html.');
   return text;
 }
 

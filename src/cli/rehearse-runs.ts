@@ -6,7 +6,6 @@ import { enginePartsOf } from '../rehearsal/engines.js';
 import { PART_VERSION, shardRange, type StudyIdentity, type StudyPart } from '../rehearsal/shards.js';
 import { type Study, studyFacts, studyReport } from '../rehearsal/study.js';
 import { rehearsalText, type RehearsalNames } from '../report/rehearsal-text.js';
-import type { LoadedSheet } from '../sheet/load.js';
 import { visible } from '../sheet/words.js';
 import { VERSION } from '../version.js';
 import { driveAll } from './driving.js';
@@ -46,7 +45,7 @@ export async function rehearseRuns(
   options: RehearseOptions,
   io: Io,
 ): Promise<void> {
-  const { study, course, names } = await loadStudy(path, coursePath, options, io);
+  const { study, loaded, course, names } = await loadStudy(path, coursePath, options, io);
   const results = await driveAll(study, seedsOf(options), options.jobs, io);
   const facts = studyFacts(study);
   const report = studyReport(facts, results);
@@ -56,6 +55,11 @@ export async function rehearseRuns(
     isPlotted || options.svg !== undefined ? await drawnRun(results, study, course.lane) : undefined;
   if (run !== undefined && options.svg !== undefined)
     await writePicture(options.svg, run, facts, `${names.vehicle} on ${names.course}`);
+  if (options.report !== undefined) {
+    const { writeReport } = await import('./rehearse-report.js');
+    const source = { study, loaded, lane: course.lane, names, sheetPath: path, results, report };
+    await writeReport(options.report, source, io);
+  }
   if (options.json === true) {
     io.json(report);
     return;
@@ -64,6 +68,7 @@ export async function rehearseRuns(
   for (const note of report.notes) io.stdout(`Note: ${note}\n`);
   if (run !== undefined && isPlotted) io.stdout(`\n${plotOf(run, io)}`);
   if (options.svg !== undefined) io.stdout(`\nPicture: ${visible(options.svg)}\n`);
+  if (options.report !== undefined) io.stdout(`\nReport: ${visible(options.report)}\n`);
 }
 
 /** Drives one part of the runs and writes it, to a file or on stdout. */

@@ -8,6 +8,7 @@ import {
   MOST_RUNS,
   MOST_SEED,
   type RehearseOptions,
+  reportName,
   shardOf,
   svgName,
 } from './rehearse-options.js';
@@ -18,6 +19,7 @@ Examples:
   fairlead rehearse cart.json --course lane.json                        once, the vehicle just as in the sheet
   fairlead rehearse cart.json --course lane.json --runs 200             200 vehicles drawn from the tolerances
   fairlead rehearse cart.json --course lane.json --seed 17 --svg run.svg    one of them alone, as a picture
+  fairlead rehearse cart.json --course lane.json --runs 100 --report lane.html   all of it as a page to read and print
   fairlead rehearse cart.json --course lane.json --on chip              the compiled firmware on the emulated chip
 
 Two sheets on the same course and seeds, in pairs, with the interval of the difference:
@@ -70,6 +72,11 @@ export function register(program: Command, io: Io): void {
       'drive nothing; show what differs between drawn vehicles, and where each range comes from',
     )
     .option('--svg <file>', 'draw the driven path, or where it was lost, as an SVG picture', svgName)
+    .option(
+      '--report <file>',
+      'write a report of all runs as one HTML page that needs no network',
+      reportName,
+    )
     .option('--json', 'print one JSON document: runs, finished, lost, lapS, boundLapS, ratio, ..., list')
     .addHelpText('after', EXAMPLES)
     .action((paths: string[], options: RehearseOptions) => rehearseCommand(command, paths, options, io));
@@ -84,6 +91,7 @@ async function rehearseCommand(
   const { merge, shard, course } = options;
   const [path, second, ...more] = paths;
   if (merge !== undefined) {
+    if (options.report !== undefined) command.error('error: --report does not go with --merge');
     if (path !== undefined || course !== undefined)
       command.error('error: --merge takes the parts alone, no sheet and no course');
     await (await import('./rehearse-merge.js')).mergeCommand(merge, options.json === true, io);
@@ -117,5 +125,6 @@ async function rehearseCommand(
     return;
   }
   if (options.svg !== undefined) command.error('error: --svg does not go with --shard');
+  if (options.report !== undefined) command.error('error: --report does not go with --shard');
   await rehearsePart(path, course, { ...options, shard }, io);
 }

@@ -12,7 +12,7 @@ import { CONFIDENCE_SHARE, runsToShow } from '../statistics/rates.js';
 import { ruleLines } from './rule-text.js';
 import { table } from './text-table.js';
 
-const LIMIT_REASONS: Readonly<Record<DesignedClass['limitedBy'], string>> = {
+export const LIMIT_REASONS: Readonly<Record<DesignedClass['limitedBy'], string>> = {
   motor: 'outer wheel at full duty',
   grip: 'grip, sqrt(mu g R)',
   view: 'line still under the bar on entry',
@@ -125,7 +125,7 @@ function vehicleLines(design: Design): string {
 }
 
 /** What the rehearsals of the design show, and what would show more. */
-function proofLines({ proof }: Design): string {
+export function proofLines({ proof }: Design): string {
   const { runs, finished, targetShare, confidenceShare } = proof;
   const target = fractionToPercent(targetShare);
   const confidence = Math.floor(fractionToPercent(confidenceShare));

@@ -6,7 +6,7 @@ import { mToMm, radToDeg } from '../sheet/units.js';
 import { niceStep } from './axis-steps.js';
 import { extentOf, type DrivenRun } from './driven-run.js';
 import { stepOf, type SpeedStep } from './speed-scale.js';
-import { HALO, SHADE, WORDS } from './svg-document.js';
+import { HALO, LOST, SHADE, WORDS } from './svg-document.js';
 import { coordinate, element, pathThrough, textAt } from './svg-text.js';
 
 /** Space around the lane for marks and their words, m. */
@@ -18,8 +18,19 @@ export interface SvgPart {
   height: number;
 }
 
+/** Where a point of the floor lies in a map: x px = (xM - leftM) perM, y px = (topM - yM) perM. */
+export interface MapFrame {
+  leftM: number;
+  topM: number;
+  perM: number;
+}
+
 /** @param width px; the height follows from the lane's shape */
-export function driveMap(run: DrivenRun, steps: readonly SpeedStep[], width: number): SvgPart {
+export function driveMap(
+  run: DrivenRun,
+  steps: readonly SpeedStep[],
+  width: number,
+): SvgPart & { frame: MapFrame } {
   const { lane, trace, loss } = run;
   const extent = extentOf(run);
   const halfM = CROSSING_LENGTH_M / 2;
@@ -65,7 +76,7 @@ export function driveMap(run: DrivenRun, steps: readonly SpeedStep[], width: num
   ];
   if (loss !== undefined) parts.push(...lossMark(x(loss.xM), y(loss.yM)));
   if (trace.timeS.length === 0) parts.push(textAt(width / 2, height / 2, 'nothing was driven', HALO));
-  return { svg: parts.join('\n'), height };
+  return { svg: parts.join('\n'), height, frame: { leftM, topM: extent.top + BORDER_M, perM } };
 }
 
 /** The path cut where the speed changes from one step to another; slow parts lie over fast ones. */
@@ -126,8 +137,8 @@ function lossMark(x: number, y: number): string[] {
   const cross = { d, transform, fill: 'none' };
   return [
     element('path', { ...cross, stroke: '#ffffff', 'stroke-width': 7 }),
-    element('path', { ...cross, stroke: '#a3161f', 'stroke-width': 3.5 }),
-    textAt(x + 13, y - 8, 'lost', { ...HALO, fill: '#a3161f', 'font-weight': 'bold' }),
+    element('path', { ...cross, stroke: LOST, 'stroke-width': 3.5 }),
+    textAt(x + 13, y - 8, 'lost', { ...HALO, fill: LOST, 'font-weight': 'bold' }),
   ];
 }
 

@@ -4,7 +4,7 @@ import { mToMm } from '../sheet/units.js';
 import type { SvgPart } from './drive-map.js';
 import { niceStep } from './axis-steps.js';
 import { least, most, type DrivenRun } from './driven-run.js';
-import { GRID, INK, SHADE, WORDS } from './svg-document.js';
+import { GRID, INK, LOST, MARK, SHADE, WORDS } from './svg-document.js';
 import { coordinate, element, pathThrough, textAt } from './svg-text.js';
 
 const LEFT = 62;
@@ -43,9 +43,7 @@ export function errorPlot(run: DrivenRun, width: number): SvgPart {
   parts.push(element('path', { d: pathThrough(points), fill: 'none', stroke: INK, 'stroke-width': 1.4 }));
   if (loss !== undefined) {
     const at = x(Math.min(loss.sM, endM));
-    parts.push(
-      textAt(at - 4, TOP - 5, 'lost', { 'text-anchor': 'end', fill: '#a3161f', 'font-weight': 'bold' }),
-    );
+    parts.push(textAt(at - 4, TOP - 5, 'lost', { 'text-anchor': 'end', fill: LOST, 'font-weight': 'bold' }));
   }
   return { svg: parts.join('\n'), height: TOP + PLOT_HEIGHT + BOTTOM };
 }
@@ -69,10 +67,10 @@ function background(lane: Lane, endM: number, x: (sM: number) => number): string
       const opacity = (0.75 * Math.abs(curvaturePerM)) / tightest;
       if (kind === 'arc')
         parts.push(element('rect', { ...box, fill: SHADE, 'fill-opacity': opacity.toFixed(2) }));
-      else parts.push(element('rect', { ...box, fill: '#9fb4cc', 'fill-opacity': '0.5' }));
+      else parts.push(element('rect', { ...box, fill: MARK, 'fill-opacity': '0.5' }));
     }
     for (const crossing of lane.crossings) {
-      if (lapM + crossing.sM < endM) parts.push(upright(x(lapM + crossing.sM), '#9fb4cc', '3 3'));
+      if (lapM + crossing.sM < endM) parts.push(upright(x(lapM + crossing.sM), MARK, '3 3'));
     }
     if (lap > 0) {
       parts.push(upright(x(lapM), WORDS, '1 4'));

@@ -1,5 +1,6 @@
 /** The outcome of a rehearsal in words and figures, for the terminal. */
 import type { Lane } from '../course/lane.js';
+import type { LanePiece } from '../course/layout.js';
 import type { EngineName, LossReason, RunResult } from '../rehearsal/engine.js';
 import { countedLapsS, median, type RehearsalReport, type RunRecord } from '../rehearsal/metrics.js';
 import { mmToM, mToMm } from '../sheet/units.js';
@@ -15,7 +16,7 @@ export const ENGINE_WORDS: Readonly<Record<EngineName, string>> = {
   micropython: 'the firmware in the MicroPython interpreter',
 };
 
-const REASONS: Readonly<Record<LossReason, string>> = {
+export const REASONS: Readonly<Record<LossReason, string>> = {
   'off-lane': 'off the lane',
   stopped: 'firmware stopped',
   'no-progress': 'no progress',
@@ -29,7 +30,7 @@ export interface RehearsalNames {
 }
 
 /** What was driven, in two lines. */
-function headline(report: RehearsalReport, lane: Lane, names: RehearsalNames): string {
+export function headline(report: RehearsalReport, lane: Lane, names: RehearsalNames): string {
   const laps = `${names.laps} ${names.laps === 1 ? 'lap' : 'laps'} of ${lane.lengthM.toFixed(2)} m`;
   const way = lane.closed ? laps : `an open lane of ${lane.lengthM.toFixed(2)} m`;
   const runs = report.runs === 1 ? seedWords(report.seed) : `${report.runs} ${seedRange(report)}`;
@@ -69,7 +70,7 @@ export function runSummary(result: RunResult, engine: EngineName, boundLapS: num
   return [`${engine}, seed ${result.seed}: ${verdict}`, ...lap, error].join('; ');
 }
 
-function finishedWords({ runs, finished, finishRate }: RehearsalReport): string {
+export function finishedWords({ runs, finished, finishRate }: RehearsalReport): string {
   if (finishRate === null) return finished === 1 ? 'yes' : 'no, lost';
   const { confidencePercent } = finishRate;
   return `${finished} of ${runs}: ${rangeWords(finishRate, runs)} % with ${confidencePercent.toFixed(0)} % confidence`;
@@ -84,7 +85,7 @@ function rangeWords(
   return `${lowPercent.toFixed(digits)} to ${highPercent.toFixed(digits)}`;
 }
 
-function extremes(report: RehearsalReport): string {
+export function extremes(report: RehearsalReport): string {
   const laps = report.list.flatMap((run) => (run.finished && run.lapS !== null ? [run.lapS] : []));
   return `${Math.min(...laps).toFixed(2)} s, ${Math.max(...laps).toFixed(2)} s`;
 }
@@ -118,12 +119,16 @@ function seedRange({ seed, runs }: RehearsalReport): string {
 }
 
 /** Where on the lane a run was lost: "lap 2, 1.84 m, left bend of 120 mm". */
-function placeWords(run: RunRecord, lane: Lane): string {
+export function placeWords(run: RunRecord, lane: Lane): string {
   const atM = mmToM(run.lostAtMm ?? 0);
   const piece = lane.pieces.findLast((candidate) => candidate.startM <= atM) ?? lane.pieces[0];
-  const side = (piece?.curvaturePerM ?? 0) > 0 ? 'left' : 'right';
-  const radius = mToMm(1 / Math.abs(piece?.curvaturePerM ?? 1)).toFixed(0);
-  const kind = piece?.kind === 'arc' ? `${side} bend of ${radius} mm` : (piece?.kind ?? 'straight');
+  const kind = piece === undefined ? 'straight' : pieceWords(piece);
   const lap = lane.closed ? `lap ${run.lostInLap ?? 1}, ` : '';
   return `${lap}${atM.toFixed(2)} m, ${kind}`;
+}
+
+/** "left bend of 120 mm", "straight", "gap". */
+export function pieceWords({ kind, curvaturePerM }: LanePiece): string {
+  if (kind !== 'arc') return kind;
+  return `${curvaturePerM > 0 ? 'left' : 'right'} bend of ${mToMm(1 / Math.abs(curvaturePerM)).toFixed(0)} mm`;
 }

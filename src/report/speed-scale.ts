@@ -22,6 +22,9 @@ const STROKES = [
   { color: '#d69a1e', width: 2.4 },
 ] as const;
 
+/** The colours, from slow to fast. */
+export const SPEED_INKS: readonly string[] = STROKES.map(({ color }) => color);
+
 /** Steps are a multiple of this wide, m/s. */
 const ROUND_MPS = 0.05;
 

@@ -9,6 +9,10 @@ export const WORDS = '#4a463c';
 export const GRID = '#d5d2ca';
 /** Areas behind curves. */
 export const SHADE = '#dfdacb';
+/** Gaps and crossings behind curves. */
+export const MARK = '#9fb4cc';
+/** Where a run was lost. */
+export const LOST = '#a3161f';
 /** Words over curves: a white edge keeps them legible. */
 export const HALO = { stroke: '#ffffff', 'stroke-width': 3, 'paint-order': 'stroke', fill: WORDS };
 
