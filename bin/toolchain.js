@@ -19,7 +19,6 @@ const TEST_TOOLS = [
   { name: 'tmux', command: 'tmux' },
   { name: 'libsimavr-dev', file: '/usr/include/simavr/sim_avr.h' },
   { name: 'parallel', command: 'parallel' },
-  { name: 'chromium', command: 'chromium' },
   { name: 'python3-scipy', file: '/usr/lib/python3/dist-packages/scipy/__init__.py' },
 ];
 

@@ -11,6 +11,8 @@ import { coordinate, element, pathThrough, textAt } from './svg-text.js';
 
 /** Space around the lane for marks and their words, m. */
 const BORDER_M = 0.1;
+/** The same on a small map, about, px. */
+const BORDER = 36;
 const MOST_HEIGHT = 620;
 
 export interface SvgPart {
@@ -34,13 +36,15 @@ export function driveMap(
   const { lane, trace, loss } = run;
   const extent = extentOf(run);
   const halfM = CROSSING_LENGTH_M / 2;
-  const widthM = extent.right - extent.left + 2 * BORDER_M;
-  const heightM = extent.top - extent.bottom + 2 * BORDER_M;
+  const acrossM = extent.right - extent.left;
+  const borderM = Math.max(BORDER_M, (BORDER * acrossM) / width);
+  const widthM = acrossM + 2 * borderM;
+  const heightM = extent.top - extent.bottom + 2 * borderM;
   const perM = Math.min(width / widthM, MOST_HEIGHT / heightM);
   const height = heightM * perM;
-  const leftM = extent.left - BORDER_M - (width / perM - widthM) / 2;
+  const leftM = extent.left - borderM - (width / perM - widthM) / 2;
   const x = (xM: number): number => (xM - leftM) * perM;
-  const y = (yM: number): number => (extent.top + BORDER_M - yM) * perM;
+  const y = (yM: number): number => (extent.top + borderM - yM) * perM;
   const beside = (pose: Pose, leftwardM: number): [number, number] => [
     x(pose.xM - leftwardM * Math.sin(pose.headingRad)),
     y(pose.yM + leftwardM * Math.cos(pose.headingRad)),
@@ -76,7 +80,7 @@ export function driveMap(
   ];
   if (loss !== undefined) parts.push(...lossMark(x(loss.xM), y(loss.yM)));
   if (trace.timeS.length === 0) parts.push(textAt(width / 2, height / 2, 'nothing was driven', HALO));
-  return { svg: parts.join('\n'), height, frame: { leftM, topM: extent.top + BORDER_M, perM } };
+  return { svg: parts.join('\n'), height, frame: { leftM, topM: extent.top + borderM, perM } };
 }
 
 /** The path cut where the speed changes from one step to another; slow parts lie over fast ones. */

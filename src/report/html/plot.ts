@@ -3,7 +3,7 @@ import { niceStep } from '../axis-steps.js';
 import { GRID, INK, SHADE, WORDS } from '../svg-document.js';
 import { coordinate, element, pathThrough, textAt } from '../svg-text.js';
 
-const LEFT = 46;
+const LEFT = 64;
 const RIGHT = 10;
 const TOP = 24;
 const BOTTOM = 24;

@@ -63,7 +63,7 @@ export function runPlots(trace: KeptTrace, lane: Lane, classNames: readonly stri
   if (trace.classIndex.some((index) => index >= 0)) {
     const ticks = classNames.map((name, i) => ({
       at: -i,
-      label: name.length > 7 ? `${name.slice(0, 6)}.` : name,
+      label: name.length > 9 ? `${name.slice(0, 8)}.` : name,
     }));
     const classes = Array.from(trace.classIndex, (index) => (index < 0 ? NaN : -index));
     const range = [-Math.max(classNames.length - 1, 1) - 0.3, 0.3] as const;

@@ -29,7 +29,7 @@ export function runSection({ lane, design, report }: ReportData, { why, result }
   const thinning =
     every === 1
       ? 'Every recorded sample is drawn'
-      : `Of the recorded samples every ${every}th and the last are drawn`;
+      : `Of the recorded samples one in ${every} and the last are drawn`;
   return raw(
     markup`<section class="run" id="run-${at}" aria-labelledby="run-${at}-head">
       <h3 id="run-${at}-head">Seed ${result.seed}: ${why}</h3>
