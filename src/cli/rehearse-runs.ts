@@ -6,6 +6,7 @@ import { enginePartsOf } from '../rehearsal/engines.js';
 import { PART_VERSION, shardRange, type StudyIdentity, type StudyPart } from '../rehearsal/shards.js';
 import { type Study, studyFacts, studyReport } from '../rehearsal/study.js';
 import { rehearsalText, type RehearsalNames } from '../report/rehearsal-text.js';
+import type { LoadedSheet } from '../sheet/load.js';
 import { visible } from '../sheet/words.js';
 import { VERSION } from '../version.js';
 import { driveAll } from './driving.js';
