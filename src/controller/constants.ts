@@ -101,6 +101,30 @@ export interface DriveConstants {
   slopeRight: number;
 }
 
+/** The loop that holds each wheel to its speed; with encoders only. */
+export interface WheelLoopConstants {
+  /** One channel only: the direction is that of the wanted speed. */
+  single: boolean;
+  /** The window is 2^windowBits samples long. */
+  windowBits: number;
+  /** Most edges that one sample can hold. */
+  edgeLimit: number;
+  /** Speed that one edge in the window stands for, speed units in 1/2^edgeBits. */
+  speedPerEdge: number;
+  edgeBits: number;
+  /** Speed for each speed of difference, in 1/2^WHEEL_GAIN_BITS. */
+  proportional: number;
+  /** What the integral gains in a sample for each speed of difference, in 1/2^COEFFICIENT_BITS. */
+  integral: number;
+  /** What it loses in a sample for each speed that the wheel cannot be given, in 1/2^COEFFICIENT_BITS. */
+  tracking: number;
+  /** Largest correction, speed units. */
+  correctionLimit: number;
+  /** Speed above which a wheel must turn, speed units, and samples without an edge after which it counts as blocked. */
+  blockedSpeed: number;
+  blockedSamples: number;
+}
+
 export interface MemoryConstants {
   /** Offset beyond which a vanished line has left by that side rather than ended in a gap. */
   sideOffset: number;
@@ -155,6 +179,8 @@ export interface ControllerConstants {
   steering: SteeringConstants;
   drive: DriveConstants;
   memory: MemoryConstants;
+  /** Present with encoders only. */
+  wheelLoop?: WheelLoopConstants;
   classes: readonly ClassConstants[];
   /** Present where the law has an integral part. */
   integral?: IntegralConstants;

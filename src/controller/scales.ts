@@ -31,6 +31,10 @@ export const CLASS_SPEED_BITS = 15;
 export const SPEED_MODEL_BITS = 29;
 /** Largest curvature: the difference of two still fits 16 bits. */
 export const LARGEST_CURVATURE = 16_383;
+/** Bits of a wheel's modelled speed: SPEED_BITS, and those of the motor step. */
+export const WHEEL_MODEL_BITS = 28;
+/** Bits of the wheel loop's proportional gain. */
+export const WHEEL_GAIN_BITS = 11;
 /** Duty of a motor at full voltage. */
 export const FULL_DUTY = 4096;
 /** Extra bits of the derivative's filtered input over the input. */

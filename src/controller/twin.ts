@@ -14,18 +14,18 @@ import {
   COEFFICIENT_BITS,
   CURVATURE_BITS,
   type ControllerConstants,
-  FRACTION_BITS,
   FULL_SPEED,
   PHASE,
   type Phase,
-  RULE_CURVATURE_BITS,
   SPEED_BITS,
   SPEED_MODEL_BITS,
   TRACK_BITS,
 } from './constants.js';
 import { clamp } from './clamp.js';
+import { ruleCurvature, ruleSpeed } from './rule-action.js';
 import { runIndex } from './run-index.js';
 import { wheelDuty } from './wheel-duty.js';
+import { WheelLoops } from './wheel-loop.js';
 import { LineMemory } from './line-memory.js';
 import { Sensing } from './sensing.js';
 import { SteeringLaw } from './steering-law.js';
@@ -33,6 +33,8 @@ import { SteeringLaw } from './steering-law.js';
 export class Twin {
   readonly sensing: Sensing;
   readonly memory: LineMemory;
+  /** With encoders only. */
+  readonly wheels: WheelLoops | undefined;
   /** Index of the speed class in force; 0 is the fastest. */
   classIndex = 0;
   /** Curvature command, curvature units. */
@@ -53,6 +55,7 @@ export class Twin {
 
   constructor(readonly constants: ControllerConstants) {
     this.law = new SteeringLaw(constants);
+    if (constants.wheelLoop) this.wheels = new WheelLoops(constants.wheelLoop, constants.drive);
     this.sensing = new Sensing(constants.sensing, constants.kind === 'rules');
     this.memory = new LineMemory(constants.memory, this.sensing);
   }
@@ -66,7 +69,6 @@ export class Twin {
     return this.phase === PHASE.stopped;
   }
 
-  /** Modelled vehicle speed, speed units. */
   private get wholeSpeed(): number {
     return this.speed >> (SPEED_MODEL_BITS - SPEED_BITS);
   }
@@ -80,6 +82,7 @@ export class Twin {
     this.law.start();
     this.demand = this.held = 0;
     this.bend = this.release = 0;
+    this.wheels?.start();
   }
 
   /**
@@ -115,9 +118,7 @@ export class Twin {
   private input(): number {
     const { rules, sensing } = this.constants;
     if (rules === undefined) return this.sensing.offset;
-    const index = runIndex(this.sensing.first, this.sensing.last, sensing.sensorCount);
-    const difference = (rules.right[index] as number) - (rules.left[index] as number);
-    return (difference * rules.curvatureFactor) >> RULE_CURVATURE_BITS;
+    return ruleCurvature(rules, runIndex(this.sensing.first, this.sensing.last, sensing.sensorCount));
   }
 
   /** Slower at once when the demand for curvature rises, faster again by distance out of the bend. */
@@ -176,6 +177,7 @@ export class Twin {
     // twice the difference in speed units, times a coefficient: SPEED_BITS + 1 + COEFFICIENT_BITS = SPEED_MODEL_BITS
     this.speed += (left + right - 2 * speed) * drive.motorStep;
     if (this.speed < 0) this.speed = 0;
+    if (this.wheels) [left, right] = [this.wheels.followLeft(left), this.wheels.followRight(right)];
     this.dutyLeft = wheelDuty(left, drive.wheelDead, drive.startDutyLeft, drive.slopeLeft);
     this.dutyRight = wheelDuty(right, drive.wheelDead, drive.startDutyRight, drive.slopeRight);
   }
@@ -184,8 +186,6 @@ export class Twin {
   private base(speed: number): number {
     const { rules, sensing } = this.constants;
     if (rules === undefined || this.phase !== PHASE.follow) return speed;
-    const index = runIndex(this.sensing.first, this.sensing.last, sensing.sensorCount);
-    const sum = (rules.left[index] as number) + (rules.right[index] as number);
-    return clamp((speed * sum) >> (FRACTION_BITS + 1), 2 * FULL_SPEED);
+    return ruleSpeed(rules, runIndex(this.sensing.first, this.sensing.last, sensing.sensorCount), speed);
   }
 }

@@ -30,7 +30,9 @@ interface Steered {
 }
 
 /** Curvature that motors at the ends of their tolerance add to every command, 1/m. */
-export function biasCurvaturePerM({ tolerance, drive }: Vehicle): number {
+export function biasCurvaturePerM({ tolerance, drive, encoders }: Vehicle): number {
+  // held to their speeds, the wheels are equal
+  if (encoders) return 0;
   return (2 * tolerance.motorGain) / drive.trackM;
 }
 

@@ -31,6 +31,7 @@ import {
   speedUnits,
 } from './scales.js';
 import { sensingConstants } from './sensing-constants.js';
+import { wheelLoopDesign } from './wheel-loop-design.js';
 
 /** Half the track width, in m with TRACK_BITS. */
 function halfTrack(vehicle: Vehicle): number {
@@ -132,6 +133,8 @@ export function controllerConstants(
     classes: classConstants(vehicle, classes, tableGain, bits),
     ...(integral && { integral }),
   };
+  const wheelLoop = wheelLoopDesign(vehicle)?.constants;
+  if (wheelLoop) constants.wheelLoop = wheelLoop;
   if (vehicle.bar.calibration.mode === 'sweep' && vehicle.bar.kind === 'analog') {
     constants.sweep = sweepConstants(vehicle, drive);
   }

@@ -8,6 +8,7 @@ import { delayBudget } from './delay.js';
 import { calmLaws, swingRemarks } from './calm-laws.js';
 import { type ClassBase, classBases } from './class-base.js';
 import type { ClassSettings, Design, DesignedClass, Proof } from './design.js';
+import { wheelLoopDesign } from './wheel-loop-design.js';
 import { lawBinding } from './law-binding.js';
 import { overrideRemarks } from './override-remarks.js';
 import { Proving, slowestScale } from './proving.js';
@@ -125,6 +126,7 @@ export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Des
       integral: unscaled.integral,
     }),
   });
+  const wheelLoop = wheelLoopDesign(vehicle);
   const proving = new Proving(vehicle, provenOn);
   const { scale, proof, kept } = provenScale(vehicle, proving, controllerAt);
   const chosen = settings(scale);
@@ -137,6 +139,7 @@ export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Des
     vehicle,
     proof,
     delay: delayBudget(vehicle),
+    ...(wheelLoop && { wheelLoop }),
     classes,
     controller,
     remarks: [

@@ -4,6 +4,7 @@ import type { LawBinding } from './law-binding.js';
 import type { SampledController } from './sampled-controller.js';
 import type { SteeringGains } from './steering-loop.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
+import type { WheelLoopDesign } from './wheel-loop-design.js';
 
 /** One share of the delay between the floor and the motors, s. */
 export interface DelayShare {
@@ -83,6 +84,8 @@ export interface Design {
   vehicle: Vehicle;
   proof: Proof;
   delay: { shares: DelayShare[]; totalS: number };
+  /** The loop that holds each wheel to its speed; with encoders only. */
+  wheelLoop?: WheelLoopDesign;
   classes: DesignedClass[];
   controller: ControllerConstants;
   /** What the person should know: assumptions, bends that are too tight, limits that bind. */

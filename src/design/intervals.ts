@@ -27,6 +27,7 @@ import {
   TRACK_BITS,
 } from '../controller/constants.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
+import { wheelLoopBounds } from './wheel-loop-bounds.js';
 
 export const INT32_MAX = 2 ** 31 - 1;
 const SMALL_INT_MAX = 2 ** 30 - 1;
@@ -167,6 +168,7 @@ export function intermediateBounds(constants: ControllerConstants, adcMaxCount: 
     ...steeringBounds(constants),
     ...integralBounds(constants),
     ...driveBounds(constants),
+    ...wheelLoopBounds(constants),
     { name: 'distance', magnitude: largest(distances) + speed },
     { name: 'search distance', magnitude: memory.searchSamples * speed },
   ];

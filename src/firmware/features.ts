@@ -23,6 +23,10 @@ export interface Features {
   coverages: boolean;
   /** More sensors than a byte has bits. */
   manySensors: boolean;
+  /** Each wheel is held to its speed by an encoder. */
+  encoders: boolean;
+  /** The encoders tell the direction. */
+  quadrature: boolean;
   /** The board has an LED that this vehicle does not use otherwise. */
   led: boolean;
   /** The firmware can tell a start after the supply broke down from switching on; MicroPython does not say. */
@@ -56,6 +60,8 @@ export function featuresOf(
     severalClasses: controller.classes.length > 1,
     coverages: language === 'micropython' || !binary || sweep !== undefined || crossings,
     manySensors: sensing.sensorCount > 8,
+    encoders: controller.wheelLoop !== undefined,
+    quadrature: controller.wheelLoop?.single === false,
     led,
     brownOut: language === 'arduino',
   };

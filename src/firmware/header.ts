@@ -19,6 +19,7 @@ const REASONS = [
     about: 'calibration refused: a sensor saw too little contrast; then its number, from the left',
   },
   { name: 'LineNotFound', flashes: 9, about: 'calibration refused: the line was not found again' },
+  { name: 'WheelBlocked', flashes: 10, about: 'a wheel was driven and did not turn, or its encoder is dead' },
 ] as const;
 
 export const CAUTIONS = [
@@ -56,6 +57,7 @@ export interface Reason {
 /** The reasons that this vehicle can have. */
 export function reasonsOf(features: Features): readonly Reason[] {
   return REASONS.filter(({ name }) => {
+    if (name === 'WheelBlocked') return features.encoders;
     if (name === 'FlatSensor' || name === 'LineNotFound') return features.sweep;
     return name !== 'BrownOut' || features.brownOut;
   });

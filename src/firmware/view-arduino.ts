@@ -1,11 +1,12 @@
 /** The view model of the Arduino sketch: pins, what the driver's scheme needs, and the files to write. */
 import { fileName } from './identifiers.js';
 import type { FirmwareDesign, Rendering, SheetIdentity, TemplateFile } from './render.js';
+import { type EncoderView, encoderView } from './view-encoders.js';
 import { type PinLine, directionLines, hasFreeLed, pinLines, sensorPinCodes } from './view-pins.js';
 import { type RegisterView, registerView } from './view-registers.js';
 import { type CommonView, commonView } from './view.js';
 
-interface ArduinoView extends CommonView, RegisterView {
+interface ArduinoView extends CommonView, RegisterView, EncoderView {
   pwmDir: boolean;
   pwmInIn: boolean;
   dualPwm: boolean;
@@ -25,6 +26,7 @@ function arduinoView(sheet: SheetIdentity, design: FirmwareDesign): ArduinoView 
   return {
     ...commonView(sheet, design, hasFreeLed(vehicle)),
     ...registerView(vehicle),
+    ...encoderView(vehicle),
     pwmDir: scheme === 'pwm-dir',
     pwmInIn: scheme === 'pwm-in-in',
     dualPwm: scheme === 'dual-pwm',
@@ -58,6 +60,8 @@ function filesOf(view: ArduinoView): TemplateFile[] {
     ...pair('sensing'),
     ...pair('steering'),
     file('rule_table.h', view.rules),
+    ...pair('wheel_loop', view.encoders),
+    ...pair('encoders', view.encoders),
     ...pair('calibration', view.sweep),
     ...pair('sweep', view.sweep),
     ...pair('motors'),

@@ -1,4 +1,5 @@
 /** The view model of the MicroPython program: pins, what board and driver need, and the files to write. */
+import type { EncoderWiring } from '../vehicle/encoder.js';
 import type { Constant, ConstantGroup } from './constant.js';
 import { copyCommands } from './papers-loading.js';
 import { fileName } from './identifiers.js';
@@ -34,6 +35,11 @@ interface MicroPythonView extends Omit<CommonView, 'groups' | 'reasons'> {
   ledCode: string;
   ledAbout: string;
   pwmHz: number;
+  /** Encoders: whether their pins have pull-ups, and whether they count backward. */
+  leftPullUp: boolean;
+  rightPullUp: boolean;
+  leftInverted: boolean;
+  rightInverted: boolean;
 }
 
 /** LineLost -> REASON_LINE_LOST */
@@ -50,6 +56,11 @@ function handlingParagraphs(files: readonly string[]): string[] {
     'mpremote reset',
     'boot.py stays as it is. The first run starts the watchdog, which nothing stops: from then on the board restarts by itself when the program is interrupted; switch it off and on before changing files.',
   ];
+}
+
+/** Whether all pins of an encoder have a pull-up; many encoders only pull down. */
+function hasPullUps(encoder: EncoderWiring | undefined): boolean {
+  return [encoder?.a, encoder?.b].every((pin) => pin === undefined || pin.pullUp);
 }
 
 function micropythonView(
@@ -87,16 +98,21 @@ function micropythonView(
     ledCode: vehicle.board.led.code,
     ledAbout: vehicle.board.led.about,
     pwmHz: vehicle.board.pwmHz,
+    leftPullUp: hasPullUps(vehicle.encoders?.left),
+    rightPullUp: hasPullUps(vehicle.encoders?.right),
+    leftInverted: vehicle.encoders?.left.inverted ?? false,
+    rightInverted: vehicle.encoders?.right.inverted ?? false,
   };
 }
 
 interface Wanted {
   rules: boolean;
+  encoders: boolean;
   sweep: boolean;
   led: boolean;
 }
 
-function filesOf(name: string, { rules, sweep, led }: Wanted): TemplateFile[] {
+function filesOf(name: string, { rules, encoders, sweep, led }: Wanted): TemplateFile[] {
   const folder = fileName(name);
   const file = (module: string, wanted = true): TemplateFile => ({
     template: `${module}.py`,
@@ -111,6 +127,8 @@ function filesOf(name: string, { rules, sweep, led }: Wanted): TemplateFile[] {
     file('sensing'),
     file('steering'),
     file('rule_table', rules),
+    file('wheel_loop', encoders),
+    file('encoders', encoders),
     file('calibration', sweep),
     file('sweep', sweep),
     file('motors'),
@@ -127,6 +145,7 @@ export function micropythonRendering(sheet: SheetIdentity, design: FirmwareDesig
   const { vehicle, controller } = design;
   const wanted = {
     rules: controller.kind === 'rules',
+    encoders: controller.wheelLoop !== undefined,
     sweep: controller.sweep !== undefined,
     led: hasFreeLed(vehicle),
   };

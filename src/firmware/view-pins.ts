@@ -53,10 +53,23 @@ export function directionLines({ drive }: Vehicle): DirectionLine[] {
   return [directionLine('left', drive.left), directionLine('right', drive.right)];
 }
 
+function encoderPins(side: Side, { encoders }: Vehicle): PinLine[] {
+  const lines: PinLine[] = [];
+  for (const key of ['a', 'b'] as const) {
+    const pin = encoders?.[side][key];
+    if (pin === undefined) continue;
+    const name = `${side.toUpperCase()}_ENCODER_${key.toUpperCase()}_PIN`;
+    const about = `Channel ${key} of the ${side} encoder. From encoders.${side}.${key}.`;
+    lines.push({ name, code: pin.code, motor: false, about });
+  }
+  return lines;
+}
+
 /** All pins that the vehicle uses. */
-function usedPins({ drive, bar, start }: Vehicle): PinFacts[] {
+function usedPins({ drive, bar, start, encoders }: Vehicle): PinFacts[] {
+  const counted = [encoders?.left, encoders?.right].flatMap((each) => [each?.a, each?.b]);
   const motors = [drive.left, drive.right].flatMap(({ pwm, dir, in1, in2 }) => [pwm, dir, in1, in2]);
-  return [...motors, ...bar.pins, start.button, drive.standby].filter((pin) => pin !== undefined);
+  return [...motors, ...counted, ...bar.pins, start.button, drive.standby].filter((pin) => pin !== undefined);
 }
 
 /** Whether the board has its LED on a pin that the vehicle leaves free. */
@@ -80,6 +93,7 @@ export function pinLines(vehicle: Vehicle): PinLine[] {
       motor: true,
       about: 'High lets the driver work, low cuts both motors off. From drive.driver.standbyPin.',
     });
+  lines.push(...encoderPins('left', vehicle), ...encoderPins('right', vehicle));
   lines.push({
     name: 'BUTTON_PIN',
     code: vehicle.start.button.code,

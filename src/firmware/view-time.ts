@@ -19,6 +19,8 @@ import {
   SPEED_MODEL_BITS,
   type SweepConstants,
   TRACK_BITS,
+  WHEEL_GAIN_BITS,
+  WHEEL_MODEL_BITS,
 } from '../controller/constants.js';
 import { mToMm, sToMs } from '../sheet/units.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
@@ -121,6 +123,8 @@ export function scaleConstants(controller: ControllerConstants, features: Featur
       GAP_HALF_BITS,
       "Bits of a gap's half width beyond those of an offset.",
     ],
+    [features.encoders, 'WHEEL_MODEL_BITS', WHEEL_MODEL_BITS, "Bits of a wheel's modelled speed."],
+    [features.encoders, 'WHEEL_GAIN_BITS', WHEEL_GAIN_BITS, "Bits of the wheel loops' proportional gain."],
     [true, 'FILTER_BITS', FILTER_BITS, 'Bits that a filtered value has beyond its input.'],
     [true, 'COEFFICIENT_BITS', COEFFICIENT_BITS, 'Bits of the filter and motor model coefficients.'],
     [

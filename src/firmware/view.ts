@@ -12,6 +12,7 @@ import type { FirmwareDesign, SheetIdentity } from './render.js';
 import { type ClassRow, classRows } from './view-classes.js';
 import { driveConstants, memoryConstants, steeringConstants } from './view-drive.js';
 import { sensingConstants } from './view-sensing.js';
+import { wheelLoopConstants } from './view-wheel-loop.js';
 import { scaleConstants, sweepConstants, timeConstants } from './view-time.js';
 
 /** One action of the rule table: a run of sensors and the wheels' fractions of base speed. */
@@ -69,6 +70,7 @@ export function commonView(sheet: SheetIdentity, design: FirmwareDesign, led: bo
     { title: 'Drive', constants: driveConstants(vehicle, controller) },
     { title: 'Memory of the line', constants: memoryConstants(controller, features) },
   ];
+  if (features.encoders) groups.push({ title: 'Wheel loops', constants: wheelLoopConstants(controller) });
   if (controller.sweep !== undefined)
     groups.push({ title: 'Calibration by sweep', constants: sweepConstants(controller, controller.sweep) });
   return {

@@ -10,6 +10,7 @@ import { type FirmwareDesign, type SheetIdentity, renderFirmware } from '../firm
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { AvrChip, CLOCK_HZ, pinNumber } from './chip-avr.js';
 import { type ChipImage, buildSketch } from './chip-build.js';
+import { type ChipEncoders, chipEncoders } from './chip-encoders.js';
 import { ChipMotors } from './chip-motors.js';
 import type { Engine, RunResult, RunSetup } from './engine.js';
 import { Plant } from './plant.js';
@@ -34,6 +35,7 @@ class ChipRun {
   private readonly chip: AvrChip;
   private readonly sensorPins: readonly number[];
   private readonly buttonPin: number;
+  private readonly encoders: ChipEncoders | undefined;
 
   constructor(
     image: ChipImage,
@@ -46,6 +48,7 @@ class ChipRun {
     const sensorOfChannel = new Map(vehicle.bar.pins.map((pin, i) => [pin.adc?.channel, i]));
     this.sensorPins = vehicle.bar.kind === 'digital' ? vehicle.bar.pins.map(pinNumber) : [];
     this.buttonPin = pinNumber(vehicle.start.button);
+    this.encoders = chipEncoders(vehicle);
     this.chip = new AvrChip(image.program, vehicle.board, {
       sample: (channel) => {
         const sensor = sensorOfChannel.get(channel);
@@ -59,7 +62,9 @@ class ChipRun {
     const timeS = index * STEP_S;
     this.chip.setPin(this.buttonPin, !(timeS >= PRESS_S && timeS < RELEASE_S));
     this.sensorPins.forEach((pin, i) => this.chip.setPin(pin, this.plant.count(i) === 1));
-    this.chip.runTo((index + 1) * STEP_CYCLES);
+    const from = index * STEP_CYCLES;
+    if (this.encoders) this.encoders.runThrough(this.chip, this.plant, from, STEP_CYCLES);
+    else this.chip.runTo(from + STEP_CYCLES);
     this.motors.endStep(this.chip);
   }
 

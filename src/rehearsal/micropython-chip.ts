@@ -23,6 +23,8 @@ export interface Surroundings {
   level(gpio: number, timeS: number): boolean | undefined;
   /** A pin's output has changed. */
   drive(gpio: number, level: number): void;
+  /** Makes the next edge that waits on a pin; returns whether there was one. */
+  edge?(gpio: number): boolean;
   isSensor(gpio: number): boolean;
   isMotor(gpio: number): boolean;
 }
@@ -108,6 +110,7 @@ export class MicroPythonChip {
       reset: () => {
         throw new ChipReset('The program has called machine.reset().');
       },
+      edge: (gpio: number) => this.edge(gpio),
       sleep_ms: (timeMs: number) => this.clock.sleep(timeMs / 1e3),
       sleep_us: (timeUs: number) => this.clock.sleep(timeUs / 1e6),
       ticks_us: () => this.look(1),
@@ -178,6 +181,13 @@ export class MicroPythonChip {
     if (this.board.id === 'pico' && timeoutMs > RP2040_WATCHDOG_LIMIT_MS) return 'timeout exceeds 8388';
     this.clock.startWatchdog(timeoutMs);
     return '';
+  }
+
+  /** Lets one edge interrupt the program. */
+  private edge(gpio: number): boolean {
+    if (!(this.surroundings.edge?.(gpio) ?? false)) return false;
+    this.clock.spend(this.board.edgeS);
+    return true;
   }
 
   private feed(): void {

@@ -15,17 +15,21 @@ interface PortConstants {
   pinOut: number;
   pullUp: number;
   pullDown: number;
+  rising: number;
+  falling: number;
   /** Further lines of class ADC. */
   adc: string;
 }
 
 const PORTS: Readonly<Record<string, PortConstants>> = {
-  pico: { pinIn: 0, pinOut: 1, pullUp: 1, pullDown: 2, adc: '' },
+  pico: { pinIn: 0, pinOut: 1, pullUp: 1, pullDown: 2, rising: 8, falling: 4, adc: '' },
   esp32: {
     pinIn: 1,
     pinOut: 3,
     pullUp: 2,
     pullDown: 1,
+    rising: 1,
+    falling: 2,
     adc: `
     ATTN_0DB = 0
     ATTN_2_5DB = 1
@@ -38,7 +42,7 @@ const PORTS: Readonly<Record<string, PortConstants>> = {
 function machineSource(port: PortConstants): string {
   return `
 from _chip import configure, configure_adc, configure_pwm, duty, feed, find, frequency, number
-from _chip import read, read_u16, reset, reset_cause, start_watchdog, write
+from _chip import edge, read, read_u16, reset, reset_cause, start_watchdog, write
 
 PWRON_RESET = 1
 WDT_RESET = 3
@@ -49,11 +53,23 @@ def _refuse(reason):
         raise ValueError(reason)
 
 
+# Interrupts are let in whenever the program waits: pins with their handlers.
+_handlers = []
+
+
+def _interrupt():
+    for pin, handler in _handlers:
+        while edge(pin._gpio):
+            handler(pin)
+
+
 class Pin:
     IN = ${port.pinIn}
     OUT = ${port.pinOut}
     PULL_UP = ${port.pullUp}
     PULL_DOWN = ${port.pullDown}
+    IRQ_RISING = ${port.rising}
+    IRQ_FALLING = ${port.falling}
 
     def __init__(self, id, mode=-1, pull=-1, *, value=None):
         _refuse(find(id))
@@ -72,6 +88,9 @@ class Pin:
         write(self._gpio, bool(x))
 
     __call__ = value
+
+    def irq(self, handler=None, trigger=3):
+        _handlers.append((self, handler))
 
     def on(self):
         write(self._gpio, True)
@@ -119,7 +138,24 @@ class WDT:
 }
 
 const TIME = `
-from _chip import sleep_ms, sleep_us, ticks_add, ticks_diff, ticks_ms, ticks_us
+from machine import _interrupt
+from _chip import sleep_ms as _sleep_ms, sleep_us as _sleep_us, ticks_us as _ticks_us
+from _chip import ticks_add, ticks_diff, ticks_ms
+
+
+def sleep_us(us):
+    _sleep_us(us)
+    _interrupt()
+
+
+def sleep_ms(ms):
+    _sleep_ms(ms)
+    _interrupt()
+
+
+def ticks_us():
+    _interrupt()
+    return _ticks_us()
 
 
 def sleep(seconds):

@@ -9,6 +9,7 @@
 import type { Vehicle } from '../vehicle/vehicle.js';
 import type { RunResult, RunSetup } from './engine.js';
 import type { Surroundings } from './micropython-chip.js';
+import { MicroPythonEncoders } from './micropython-encoders.js';
 import { MicroPythonMotors } from './micropython-motors.js';
 import { PowerCut, type ProgramEnd } from './micropython-program.js';
 import { Plant } from './plant.js';
@@ -32,6 +33,7 @@ export class MicroPythonRun implements Surroundings {
   private readonly state: ControlState = { dutyLeft: 0, dutyRight: 0, classIndex: -1, phase: -1 };
   private readonly sensorOfPin: ReadonlyMap<number, number>;
   private readonly buttonPin: number;
+  private readonly encoders: MicroPythonEncoders;
   private readonly setOffByS: number;
   /** Time before the first drive, s. */
   private standingS = 0;
@@ -44,6 +46,7 @@ export class MicroPythonRun implements Surroundings {
     this.motors = new MicroPythonMotors(vehicle);
     this.sensorOfPin = new Map(vehicle.bar.pins.map((pin, i) => [Number(pin.code), i]));
     this.buttonPin = Number(vehicle.start.button.code);
+    this.encoders = new MicroPythonEncoders(vehicle);
     this.setOffByS = RELEASE_S + vehicle.start.countdownS + SET_OFF_S;
   }
 
@@ -63,7 +66,11 @@ export class MicroPythonRun implements Surroundings {
   level(gpio: number, timeS: number): boolean | undefined {
     if (gpio === this.buttonPin) return timeS >= PRESS_S && timeS < RELEASE_S ? false : undefined;
     const sensor = this.sensorOfPin.get(gpio);
-    return sensor === undefined ? undefined : this.plant.count(sensor) === 1;
+    return sensor === undefined ? this.encoders.level(gpio) : this.plant.count(sensor) === 1;
+  }
+
+  edge(gpio: number): boolean {
+    return this.encoders.edge(gpio);
   }
 
   drive(gpio: number, level: number): void {
@@ -86,6 +93,7 @@ export class MicroPythonRun implements Surroundings {
     const steps = Math.ceil(durationS / LOOK_S - 1e-9);
     for (let i = 0; i < steps && !monitor.ended; i++) {
       plant.step(state.dutyLeft, state.dutyRight, durationS / steps);
+      this.encoders.look(plant);
       this.undrivenS = driven ? 0 : this.undrivenS + durationS / steps;
       monitor.observe(state, this.undrivenS > STOPPED_S || (programEnded && !driven));
     }

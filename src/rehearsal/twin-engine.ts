@@ -12,6 +12,7 @@ import { STREAM } from './plant-parameters.js';
 import { Random } from './random.js';
 import { RunMonitor } from './run-monitor.js';
 import type { ControlState } from './trace-recorder.js';
+import type { WheelEdges } from './wheel-edges.js';
 
 /** Longest step of the plant, s. */
 const STEP_S = 5e-3;
@@ -20,6 +21,8 @@ const STEP_S = 5e-3;
 export interface ControlStep {
   /** @param counts one reading a sensor, leftmost first: counts, or pin levels 0 and 1 of digital sensors */
   step(counts: Int32Array): void;
+  /** The wheel loops, with encoders. */
+  readonly wheels?: { count(left: number, right: number): void; readonly blocked: boolean } | undefined;
   /** -4096 (full reverse) to 4096. */
   readonly dutyLeft: number;
   readonly dutyRight: number;
@@ -35,6 +38,8 @@ export interface TwinTiming {
   delayS: number;
   /** PWM steps from off to full. */
   pwmSteps: number;
+  /** Makes the encoders of a run, for a vehicle that has them. */
+  makeEdges?: () => WheelEdges;
 }
 
 export class TwinEngine implements Engine {
@@ -62,6 +67,7 @@ export class TwinEngine implements Engine {
     const { loopJitterS } = setup.plant;
     const jitter = new Random(setup.plant.seed, STREAM.jitter);
     const control = this.makeControl();
+    const edges = this.timing.makeEdges?.();
     const plant = new Plant(setup.plant, setup.lane);
     const monitor = new RunMonitor(plant, setup);
     const counts = new Int32Array(plant.sensorCount);
@@ -69,6 +75,10 @@ export class TwinEngine implements Engine {
 
     while (!monitor.ended) {
       plant.readCounts(counts);
+      if (edges && control.wheels) {
+        edges.look(plant);
+        control.wheels.count(edges.left, edges.right);
+      }
       control.step(counts);
       const lateS = loopJitterS === 0 ? 0 : jitter.uniform(-loopJitterS, loopJitterS);
       const actS = Math.min(Math.max(delayS + lateS, 0.01 * samplePeriodS), 0.995 * samplePeriodS);
@@ -78,7 +88,7 @@ export class TwinEngine implements Engine {
       state.classIndex = control.classIndex;
       state.phase = control.phase;
       drive(plant, state, samplePeriodS - actS);
-      monitor.observe(state, control.stopped);
+      monitor.observe(state, control.stopped || (control.wheels?.blocked ?? false));
     }
     return monitor.result();
   }

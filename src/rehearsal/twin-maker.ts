@@ -4,6 +4,7 @@ import { Twin } from '../controller/twin.js';
 import { twinDelayS } from '../design/delay.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { TwinEngine } from './twin-engine.js';
+import { WheelEdges } from './wheel-edges.js';
 
 /** An engine whose runs start with the controller about to drive off: button and countdown are over. */
 export function twinEngine(vehicle: Vehicle, controller: ControllerConstants): TwinEngine {
@@ -13,5 +14,11 @@ export function twinEngine(vehicle: Vehicle, controller: ControllerConstants): T
     twin.start();
     return twin;
   };
-  return new TwinEngine(makeControl, { samplePeriodS, pwmSteps, delayS: twinDelayS(vehicle) });
+  const { encoders, drive } = vehicle;
+  return new TwinEngine(makeControl, {
+    samplePeriodS,
+    pwmSteps,
+    delayS: twinDelayS(vehicle),
+    ...(encoders && { makeEdges: () => new WheelEdges(encoders, drive.wheelDiameterM) }),
+  });
 }

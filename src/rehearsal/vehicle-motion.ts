@@ -31,6 +31,9 @@ export class VehicleMotion {
   /** Wheel surface speeds, m/s. */
   leftMps = 0;
   rightMps = 0;
+  /** How far each wheel has rolled, m, slip or not; backward takes off. */
+  leftRolledM = 0;
+  rightRolledM = 0;
   /** Turn rate that reached the floor in the last substep, rad/s. */
   turnRadPerS = 0;
   /** Whether the vehicle has moved since place and spots were last worked out. */
@@ -86,6 +89,8 @@ export class VehicleMotion {
     let turn = 0;
     let xM = this.xM;
     let yM = this.yM;
+    let rolledM = 0;
+    let apartM = 0;
     for (let i = 0; i < substeps; i++) {
       const awayLeft = left - steadyLeft;
       const awayRight = right - steadyRight;
@@ -111,6 +116,8 @@ export class VehicleMotion {
         const allowed = Math.sqrt(Math.max(0, across)) / Math.abs(speed);
         turn = turn > 0 ? allowed : -allowed;
       }
+      rolledM += speed * h;
+      apartM += ((meanRight - meanLeft) / 2) * h;
       const half = (turn * h) / 2;
       const chord = speed * h * sinc(half);
       xM += chord * Math.cos(heading + half);
@@ -118,6 +125,8 @@ export class VehicleMotion {
       heading += turn * h;
     }
     this.leftMps = left;
+    this.leftRolledM += rolledM - apartM;
+    this.rightRolledM += rolledM + apartM;
     this.rightMps = right;
     this.xM = xM;
     this.yM = yM;

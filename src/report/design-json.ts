@@ -20,6 +20,7 @@ export function designJson(design: Design) {
     name: vehicle.name,
     control: controller.kind,
     delay: design.delay,
+    ...(design.wheelLoop && { wheelLoop: design.wheelLoop }),
     classes: classes.map((each) => ({
       name: each.name,
       minRadiusMm: mToMm(each.minRadiusM),

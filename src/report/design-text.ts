@@ -10,6 +10,7 @@ import { viewM } from '../design/bar-view.js';
 import { fractionToPercent, mToMm, sToMs } from '../sheet/units.js';
 import { CONFIDENCE_SHARE, runsToShow } from '../statistics/rates.js';
 import { ruleLines } from './rule-text.js';
+import { wheelLoopLines } from './wheel-loop-text.js';
 import { table } from './text-table.js';
 
 export const LIMIT_REASONS: Readonly<Record<DesignedClass['limitedBy'], string>> = {
@@ -101,9 +102,11 @@ function vehicleLines(design: Design): string {
     [
       'unequal motors',
       `${mToMm(biasOffsetM(design)).toFixed(1)} mm to the side at most`,
-      hasIntegral(design)
-        ? 'offset at the bar until the integral part has taken it up'
-        : 'steady offset at the bar; the law has no integral part',
+      vehicle.encoders
+        ? 'the encoders hold both to their speeds'
+        : hasIntegral(design)
+          ? 'offset at the bar until the integral part has taken it up'
+          : 'steady offset at the bar; the law has no integral part',
     ],
     [
       'search speed',
@@ -150,6 +153,7 @@ export function designText(design: Design): string {
     required,
     bindingTable(classes),
     'Wheels used: largest turn rate asked for on entry into the bend, of what the wheels can do; above 100 % they saturate and keep their difference.',
+    ...wheelLoopLines(design.wheelLoop),
     ...ruleLines(design),
     ...design.remarks.map((remark) => `Note: ${remark}`),
   ];

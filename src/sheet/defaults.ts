@@ -17,7 +17,8 @@ type GivenClass = Exclude<Sheet['speeds']['classes'], 'auto'>[number];
 export type SpeedClass = GivenClass & { minRadiusMm: number };
 
 /** A sheet with every default filled in. What has none stays optional. */
-export interface ResolvedSheet extends Required<Sheet> {
+export interface ResolvedSheet extends Required<Omit<Sheet, 'encoders'>> {
+  encoders?: Sheet['encoders'] & {};
   line: Required<Sheet['line']>;
   sensors: Filled<Sheet['sensors'], 'pitchMm' | 'positionsMm'>;
   drive: Omit<Required<Drive>, 'motor' | 'driver' | 'trim'> & {

@@ -199,6 +199,21 @@ export interface Sheet {
     };
   };
   /**
+   * Edges counted on both wheels. With them each wheel is held to its wanted speed, whatever battery and motor do.
+   */
+  encoders?: {
+    /**
+     * single: one signal a wheel; the direction is taken from the command. quadrature: two signals a quarter line apart, which tell the direction too.
+     */
+    channels: 'single' | 'quadrature';
+    /**
+     * Pulses of one channel while the wheel turns once: lines of the disc times the gear ratio, if the disc sits on the motor. Both edges of each are counted. [1]
+     */
+    linesPerTurn: number;
+    left: EncoderPins;
+    right: EncoderPins;
+  };
+  /**
    * The battery, as it arrives at the motor driver.
    */
   power: {
@@ -386,6 +401,23 @@ export interface MotorPins {
   in2?: number | string;
   /**
    * Set if this wheel turns backward when told to go forward.
+   */
+  inverted?: boolean;
+}
+/**
+ * Pins of one encoder: a, and b with quadrature.
+ */
+export interface EncoderPins {
+  /**
+   * A pin's label as printed on the board: a number, or text such as A0 or GP26.
+   */
+  a: number | string;
+  /**
+   * A pin's label as printed on the board: a number, or text such as A0 or GP26.
+   */
+  b?: number | string;
+  /**
+   * True if the count falls while the wheel turns forward; quadrature only.
    */
   inverted?: boolean;
 }

@@ -1,6 +1,7 @@
 /** From a checked sheet to the vehicle in SI units. The last place where millimetres, percent and rpm occur. */
 import type { BoardFacts, PinFacts } from '../vehicle/board-facts.js';
 import { BOARDS, findPin } from '../vehicle/boards.js';
+import type { EncoderWiring, Encoders } from '../vehicle/encoder.js';
 import { DRIVERS } from '../vehicle/drivers.js';
 import type { MotorWiring, Vehicle } from '../vehicle/vehicle.js';
 import type { ResolvedSheet } from './defaults.js';
@@ -44,6 +45,7 @@ export function toVehicle(sheet: ResolvedSheet): Vehicle {
       trimLeft: percentToFraction(drive.trim.leftPercent),
       trimRight: percentToFraction(drive.trim.rightPercent),
     },
+    ...(sheet.encoders && { encoders: encodersOf(sheet.encoders, board) }),
     power: { ...sheet.power },
     control: controlOf(sheet.control),
     speeds: {
@@ -115,6 +117,21 @@ function wiringOf(
     left: side(driver.left),
     right: side(driver.right),
     ...(driver.standbyPin === undefined ? {} : { standby: pinOf(board, driver.standbyPin) }),
+  };
+}
+
+function encodersOf(encoders: NonNullable<ResolvedSheet['encoders']>, board: BoardFacts): Encoders {
+  const single = encoders.channels === 'single';
+  const side = ({ a, b, inverted }: (typeof encoders)['left']): EncoderWiring => ({
+    a: pinOf(board, a),
+    ...(b !== undefined && !single && { b: pinOf(board, b) }),
+    inverted: inverted ?? false,
+  });
+  return {
+    linesPerTurn: encoders.linesPerTurn,
+    left: side(encoders.left),
+    right: side(encoders.right),
+    single,
   };
 }
 

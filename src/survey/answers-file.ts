@@ -84,6 +84,7 @@ function factsFrom(given: readonly Given[], base: JsonObject): Facts {
     ...Object.fromEntries(single),
     ...(has('/sensors/pitchMm') && { '#row': 'even' }),
     ...(has('/sensors/positionsMm') && { '#row': 'uneven' }),
+    ...(given.some(([pointer]) => pointer.startsWith('/encoders/')) && { '#encoders': true }),
     ...(has('/drive/driver/standbyPin') && { '#standby': true }),
     ...(single.some(([pointer]) => IS_PIN.test(pointer)) && { '#pins': 'by-hand' }),
   });

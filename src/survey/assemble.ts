@@ -1,4 +1,5 @@
 /** From answers to a sheet: answers where there are any, else the sheet at hand, else the schema's defaults. */
+import { hasEncoders } from './encoders.js';
 import { type Facts, IS_READING } from './facts.js';
 import { isObject, type Json, type JsonObject, withoutValue, withValue } from './json-tree.js';
 import { spread } from './lists.js';
@@ -30,6 +31,8 @@ function outOfPlace(facts: Facts): string[] {
     ...(facts.analog ? ['/sensors/lineLevel'] : ['/sensors/calibration']),
     // A sweep measures anew; readings at hand stay as long as they fit.
     ...readings.filter((pointer) => facts.given(pointer) === undefined),
+    ...(hasEncoders(facts) ? [] : ['/encoders']),
+    ...['left', 'right'].flatMap((side) => ['a', 'b'].map((key) => `/encoders/${side}/${key}`)),
     '/sensors/pins',
     '/drive/driver/standbyPin',
     ...['left', 'right'].flatMap((side) =>

@@ -92,6 +92,8 @@ const DECIDES_PINS = new Set([
   '/sensors/count',
   '/drive/driver/scheme',
   '#standby',
+  '#encoders',
+  '/encoders/channels',
 ]);
 
 /** The answers with one more, without those that it overtakes. */

@@ -29,6 +29,10 @@ function planLines(pins: ReadonlyMap<string, Json>): string[] {
     const inputs = under(`${start}/`).map((pointer) => `${nodeAt(pointer).title} ${label(pointer)}`);
     return `${nodeAt(start).title}: ${inputs.join(', ')}`;
   };
+  const encoder = (side: string): string[] => {
+    const channels = under(`/encoders/${side}/`).map(label);
+    return channels.length === 0 ? [] : [`${nodeAt(`/encoders/${side}`).title}: ${channels.join(', ')}`];
+  };
   const single = (pointer: string): string[] =>
     pins.has(pointer) ? [`${nodeAt(pointer).title}: ${label(pointer)}`] : [];
   return [
@@ -36,6 +40,7 @@ function planLines(pins: ReadonlyMap<string, Json>): string[] {
     motor('left'),
     motor('right'),
     ...single('/drive/driver/standbyPin'),
+    ...['left', 'right'].flatMap((side) => encoder(side)),
     ...single('/start/buttonPin'),
   ];
 }

@@ -4,6 +4,7 @@ import { proposePins, type PinPlan, type PinRequest } from '../vehicle/pin-plan.
 import type { PinRole } from '../vehicle/pin-roles.js';
 import { DRIVERS, type DriverSchemeId } from '../vehicle/drivers.js';
 import type { Problem } from '../sheet/problem.js';
+import { encoderChannels, hasEncoders } from './encoders.js';
 import type { Facts } from './facts.js';
 import { type Json, valueAt } from './json-tree.js';
 import { nodeAt } from './schema-node.js';
@@ -18,10 +19,11 @@ export interface PinNeed {
 
 /** Pointers of the pins. */
 export const IS_PIN =
-  /^\/(sensors\/pins|drive\/driver\/(left|right)\/(pwm|dir|in1|in2)|drive\/driver\/standbyPin|start\/buttonPin)(\/|$)/;
+  /^\/(sensors\/pins|drive\/driver\/(left|right)\/(pwm|dir|in1|in2)|drive\/driver\/standbyPin|encoders\/(left|right)\/(a|b)|start\/buttonPin)(\/|$)/;
 
 /** Pointers of the pins and of what holds nothing else to ask for. */
-export const ABOUT_PINS = /^\/(sensors\/pins|drive\/driver\/(left|right|standbyPin)|start\/buttonPin)(\/|$)/;
+export const ABOUT_PINS =
+  /^\/(sensors\/pins|drive\/driver\/(left|right|standbyPin)|encoders\/(left|right)|start\/buttonPin)(\/|$)/;
 
 /** How the pins come about: as proposed, as the sheet at hand has them, or one by one. */
 export type PinMode = 'proposed' | 'kept' | 'by-hand';
@@ -56,6 +58,13 @@ export function pinNeeds(facts: Facts): PinNeed[] {
       return { pointer, title, role: pwm ? 'PWM output' : 'output' };
     }),
   );
+  const encoders = ['left', 'right'].flatMap((side) =>
+    encoderChannels(facts).map((key): PinNeed => {
+      const pointer = `/encoders/${side}/${key}`;
+      const title = `${nodeAt(`/encoders/${side}`).title}, ${nodeAt(pointer).title}`;
+      return { pointer, title, role: 'encoder' };
+    }),
+  );
   const single = (pointer: string, role: PinRole): PinNeed => ({
     pointer,
     title: nodeAt(pointer).title,
@@ -65,6 +74,7 @@ export function pinNeeds(facts: Facts): PinNeed[] {
     ...sensors,
     ...motors,
     ...(hasStandby(facts) ? [single('/drive/driver/standbyPin', 'output')] : []),
+    ...encoders,
     single('/start/buttonPin', 'button'),
   ];
 }
@@ -83,6 +93,7 @@ export function planWith(
     sensorCount: facts.count,
     scheme: schemeOf(facts),
     standby: hasStandby(facts),
+    encoderChannels: encoderChannels(facts).length,
     ...changes,
   };
   const key = JSON.stringify([board, request]);
@@ -101,6 +112,7 @@ export function planProblem(facts: Facts): Problem | undefined {
 export function keptPinsFit(facts: Facts): boolean {
   const { base } = facts;
   const deciding = ['/target/board', '/sensors/kind', '/sensors/count', '/drive/driver/scheme'];
+  if (hasEncoders(facts)) deciding.push('/encoders/channels');
   return (
     deciding.every((pointer) => valueAt(base, pointer) === facts.get(pointer)) &&
     pinNeeds(facts).every(({ pointer }) => valueAt(base, pointer) !== undefined)
@@ -121,6 +133,7 @@ export function proposedPins(facts: Facts): Map<string, Json> {
   const tree = {
     sensors: { pins: plan.sensorPins },
     drive: { driver: { ...plan.driver } },
+    ...(plan.encoders && { encoders: { ...plan.encoders } }),
     start: { buttonPin: plan.buttonPin },
   };
   for (const { pointer } of pinNeeds(facts)) {

@@ -2,6 +2,7 @@
 import type { BoardId } from '../vehicle/board-facts.js';
 import { BOARDS } from '../vehicle/boards.js';
 import { DRIVERS } from '../vehicle/drivers.js';
+import { hasEncoders } from './encoders.js';
 import type { Facts } from './facts.js';
 import { choiceQuestion, common, fieldQuestion, yesNoQuestion } from './fields.js';
 import { valueAt } from './json-tree.js';
@@ -110,8 +111,17 @@ function driveEntries(facts: Facts): Entry[] {
     make: (now) => yesNoQuestion(common(nodeAt('/drive/driver/standbyPin')), hasStandby(now)),
     settled: (now) => Object.hasOwn(now.answers, '#standby') || nodesGiven(now, '/drive/driver/scheme'),
   };
+  const encoders: Entry = {
+    id: '#encoders',
+    group,
+    make: (now) => yesNoQuestion(common(nodeAt('/encoders')), hasEncoders(now)),
+    settled: (now) => Object.hasOwn(now.answers, '#encoders') || nodesGiven(now, '/drive/driver/scheme'),
+  };
+  const about = ['/encoders/channels', '/encoders/linesPerTurn'].map((id) => field(group, id));
   return [
     ...DRIVE.map((key) => field(group, `/drive/${key}`)),
+    encoders,
+    ...(hasEncoders(facts) ? about : []),
     ...(DRIVERS[schemeOf(facts)].standby ? [standby] : []),
     ...pinEntries(facts, group),
   ];

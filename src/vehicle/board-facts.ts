@@ -32,6 +32,8 @@ export interface PinFacts {
   };
   /** Port and bit by which the chip's registers name it, where the chip has such ports. */
   port?: { name: string; bit: number };
+  /** Each change of its level can interrupt the program, as counting edges takes. */
+  changeInterrupt?: boolean;
   /** Can raise an external interrupt. */
   interrupt: boolean;
   /** Why the pin must not be used at all (serial console, flash memory), else absent. */
@@ -89,6 +91,8 @@ export interface BoardFacts {
   adcReadS: number;
   /** Time of one digital reading, s. */
   digitalReadS: number;
+  /** Time of counting one encoder edge, interrupt and all, s. */
+  edgeS: number;
   /** Time for the control arithmetic, worst case, s. */
   computeS: number;
   /** Sample period of the control loop, s. */
@@ -107,6 +111,8 @@ export interface BoardFacts {
   ramBytes?: number;
   /** The timer that the millisecond clock uses; PWM on it is allowed but it must not be retimed. */
   clockTimer?: number;
+  /** Pin change interrupts of an AVR chip, by port. */
+  pinChange?: Readonly<Record<string, PinChangeFacts>>;
   pins: readonly PinFacts[];
   /** The converter has an attenuator that has to be set for the whole range. */
   adcAttenuated?: boolean;
@@ -132,4 +138,11 @@ export interface ArduinoCoreFacts {
   macro: string;
   /** Macros of build.extra_flags, as NAME=value. */
   defines?: readonly string[];
+}
+
+/** The pin change interrupt of one port: its vector, mask register and enabling bit. */
+export interface PinChangeFacts {
+  vector: string;
+  mask: string;
+  enable: string;
 }

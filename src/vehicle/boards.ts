@@ -7,7 +7,21 @@ import { nano } from './boards/nano.js';
 import { pico } from './boards/pico.js';
 import { uno } from './boards/uno.js';
 
-export const BOARDS: Readonly<Record<BoardId, BoardFacts>> = { uno, nano, mega2560, leonardo, pico, esp32 };
+/** Which pins can count edges: those of the ports with a pin change interrupt; in MicroPython every input. */
+function withEdges(board: BoardFacts): BoardFacts {
+  const counts = ({ input, port }: PinFacts): boolean =>
+    input && (board.language === 'micropython' || board.pinChange?.[port?.name ?? ''] !== undefined);
+  return { ...board, pins: board.pins.map((pin) => ({ ...pin, changeInterrupt: counts(pin) })) };
+}
+
+export const BOARDS: Readonly<Record<BoardId, BoardFacts>> = {
+  uno: withEdges(uno),
+  nano: withEdges(nano),
+  mega2560: withEdges(mega2560),
+  leonardo: withEdges(leonardo),
+  pico: withEdges(pico),
+  esp32: withEdges(esp32),
+};
 
 /** All ids, in the order in which the questionnaire offers them. */
 export const BOARD_IDS = Object.keys(BOARDS) as readonly BoardId[];

@@ -14,6 +14,8 @@ export interface PinRequest {
   scheme: DriverSchemeId;
   /** Whether to plan a standby pin; only for schemes that have one. */
   standby?: boolean;
+  /** Channels of each wheel's encoder: 0 (none), 1 or 2. */
+  encoderChannels?: number;
 }
 
 type Label = number | string;
@@ -27,8 +29,11 @@ export interface PinPlan {
     right: Partial<Record<MotorPinKey, Label>>;
     standbyPin?: Label;
   };
+  encoders?: { left: EncoderLabels; right: EncoderLabels };
   buttonPin: Label;
 }
+
+type EncoderLabels = { a: Label; b?: Label };
 
 /** A plan of pins, or the problem why the board has none. */
 export function proposePins(boardId: BoardId, request: PinRequest): PinPlan | Problem {
@@ -37,7 +42,7 @@ export function proposePins(boardId: BoardId, request: PinRequest): PinPlan | Pr
   return assignment ? planOf(board, request, assignment) : impossible(board, request);
 }
 
-function needsOf({ sensorKind, sensorCount, scheme, standby }: PinRequest): Need[] {
+function needsOf({ sensorKind, sensorCount, scheme, standby, encoderChannels = 0 }: PinRequest): Need[] {
   const { motorPins, standby: hasStandby } = DRIVERS[scheme];
   const sensors = Array.from({ length: sensorCount }, (_, index): Need => {
     return { key: `sensor${index}`, role: sensorKind === 'analog' ? 'analog sensor' : 'digital sensor' };
@@ -47,8 +52,15 @@ function needsOf({ sensorKind, sensorCount, scheme, standby }: PinRequest): Need
   );
   const others: Need[] = [{ key: 'button', role: 'button' }];
   if (standby && hasStandby) others.unshift({ key: 'standby', role: 'output' });
-  // Digital sensors can go nearly anywhere, so they choose last.
-  return sensorKind === 'analog' ? [...sensors, ...motors, ...others] : [...motors, ...others, ...sensors];
+  const encoders = ['left', 'right'].flatMap((side) =>
+    ['a', 'b']
+      .slice(0, encoderChannels)
+      .map((key): Need => ({ key: `encoder.${side}.${key}`, role: 'encoder' })),
+  );
+  // Digital inputs can go nearly anywhere, so they choose last.
+  return sensorKind === 'analog'
+    ? [...sensors, ...motors, ...others, ...encoders]
+    : [...motors, ...others, ...sensors, ...encoders];
 }
 
 function planOf(board: BoardFacts, request: PinRequest, assignment: Assignment): PinPlan {
@@ -59,6 +71,10 @@ function planOf(board: BoardFacts, request: PinRequest, assignment: Assignment):
   };
   const side = (name: 'left' | 'right'): Partial<Record<MotorPinKey, Label>> =>
     Object.fromEntries(DRIVERS[request.scheme].motorPins.map(({ key }) => [key, labelOf(`${name}.${key}`)]));
+  const encoder = (name: 'left' | 'right'): EncoderLabels => ({
+    a: labelOf(`encoder.${name}.a`),
+    ...(assignment.has(`encoder.${name}.b`) ? { b: labelOf(`encoder.${name}.b`) } : {}),
+  });
   // Neighbouring sensors get neighbouring pins.
   const sensorPins = board.pins.filter((pin) =>
     [...assignment].some(([key, own]) => own === pin && /^sensor/.test(key)),
@@ -70,6 +86,9 @@ function planOf(board: BoardFacts, request: PinRequest, assignment: Assignment):
       right: side('right'),
       ...(assignment.has('standby') ? { standbyPin: labelOf('standby') } : {}),
     },
+    ...(assignment.has('encoder.left.a')
+      ? { encoders: { left: encoder('left'), right: encoder('right') } }
+      : {}),
     buttonPin: labelOf('button'),
   };
 }

@@ -2,7 +2,7 @@
 import type { PinFacts } from './board-facts.js';
 
 /** What a pin has to do. */
-export type PinRole = 'analog sensor' | 'digital sensor' | 'PWM output' | 'output' | 'button';
+export type PinRole = 'analog sensor' | 'digital sensor' | 'PWM output' | 'output' | 'button' | 'encoder';
 
 /** Whether a pin can do what a role asks. */
 export function isAble(pin: PinFacts, role: PinRole): boolean {
@@ -11,6 +11,8 @@ export function isAble(pin: PinFacts, role: PinRole): boolean {
       return pin.adc !== undefined;
     case 'digital sensor':
       return pin.input;
+    case 'encoder':
+      return pin.input && pin.changeInterrupt === true;
     case 'PWM output':
       return pin.pwm !== undefined;
     case 'output':

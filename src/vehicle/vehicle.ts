@@ -1,5 +1,6 @@
 /** The vehicle in SI units: what the design, the controller and the rehearsal work with. */
 import type { BoardFacts, PinFacts } from './board-facts.js';
+import type { Encoders } from './encoder.js';
 
 /** Pins of one motor, resolved on the board. */
 export interface MotorWiring {
@@ -61,6 +62,8 @@ export interface Vehicle {
     trimLeft: number;
     trimRight: number;
   };
+  /** Wheel encoders, where the vehicle has them. */
+  encoders?: Encoders;
   power: { nominalV: number; fullV: number; emptyV: number };
   control: {
     kind: 'pid' | 'rules';

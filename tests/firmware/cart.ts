@@ -89,5 +89,17 @@ export const CARTS: Readonly<Record<string, Changes>> = {
   'one speed for all': ONE_SPEED,
   'an integral part': UNEQUAL,
   'uneven bar without crossings': { ...UNEVEN, ...NO_CROSSINGS },
+  encoders: { '/encoders': { channels: 'single', linesPerTurn: 120, left: { a: 3 }, right: { a: 4 } } },
+  'quadrature encoders, rules and a sweep': {
+    ...SWEEP,
+    ...PWM_DIR,
+    ...RULES,
+    '/encoders': {
+      channels: 'quadrature',
+      linesPerTurn: 700,
+      left: { a: 3, b: 12 },
+      right: { a: 11, b: 4, inverted: true },
+    },
+  },
   'uneven bar without crossings and rules': { ...UNEVEN, ...NO_CROSSINGS, ...RULES },
 };

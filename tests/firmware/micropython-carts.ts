@@ -87,5 +87,24 @@ export const MICROPYTHON_CARTS: Readonly<Record<string, Changes>> = {
   'pico, three analog, sweep': { ...PICO, ...THREE_ANALOG, ...SWEEP, ...PICO_IN_IN },
   'pico, digital, one class': { ...PICO, ...EIGHT_DIGITAL, ...PICO_DIR, ...ONE_CLASS },
   'pico, digital, rules': { ...PICO, ...EIGHT_DIGITAL, ...PICO_IN_IN, ...RULES },
+  'esp32, encoders': {
+    ...ESP32,
+    ...SIX_ANALOG,
+    ...STORED_6,
+    ...ESP32_DUAL,
+    '/encoders': { channels: 'single', linesPerTurn: 120, left: { a: 18 }, right: { a: 19 } },
+  },
+  'pico, quadrature encoders, rules': {
+    ...PICO,
+    ...EIGHT_DIGITAL,
+    ...PICO_DIR,
+    ...RULES,
+    '/encoders': {
+      channels: 'quadrature',
+      linesPerTurn: 140,
+      left: { a: 'GP10', b: 'GP11' },
+      right: { a: 'GP12', b: 'GP13', inverted: true },
+    },
+  },
   'pico, digital, rules, no crossings': { ...PICO, ...EIGHT_DIGITAL, ...PICO_DIR, ...RULES, ...NO_CROSSINGS },
 };

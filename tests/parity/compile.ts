@@ -8,7 +8,7 @@ import type { RenderedFile } from '../../src/firmware/render.js';
 const cpp = (name: string) => fileURLToPath(new URL(`cpp/${name}`, import.meta.url));
 
 /** The parts of the firmware that are pure arithmetic. */
-const PURE = /^(arithmetic|constants|rule_table|sensing|steering|calibration|sweep)\.(h|cpp)$/;
+const PURE = /^(arithmetic|constants|rule_table|sensing|steering|wheel_loop|calibration|sweep)\.(h|cpp)$/;
 
 const WARNINGS = ['-Wall', '-Wextra', '-Wconversion', '-Wshadow', '-Werror'];
 

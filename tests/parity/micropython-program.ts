@@ -4,10 +4,10 @@ import { type Interpreter, withInterpreter } from '../../src/rehearsal/micropyth
 import { FIELDS } from './reference.js';
 
 /** The modules that are pure arithmetic. */
-const PURE = /^(constants|rule_table|sensing|steering|calibration|sweep)\.py$/;
+const PURE = /^(constants|rule_table|sensing|steering|wheel_loop|calibration|sweep)\.py$/;
 
 /** Takes the same input as the C++ harness, and gives the same output. The heap is locked in each step. */
-const HARNESS = (sweep: boolean) => `
+const HARNESS = (sweep: boolean, encoders: boolean) => `
 import sys
 sys.path.insert(0, "/program")
 from array import array
@@ -39,6 +39,7 @@ def step():
     put(steering.speed_q29)
     put(steering.duty_left_q12)
     put(steering.duty_right_q12)
+    put(${encoders ? 'int(steering.wheel_blocked())' : '0'})
 
 
 steps = next()
@@ -47,7 +48,7 @@ for i in range(steps):
     if i % restart_every == 0:
         steering.start()
     read_counts()
-    step()
+${encoders ? '    steering.count_edges(next(), next())\n' : ''}    step()
 `;
 
 const SWEEP = `
@@ -87,7 +88,8 @@ export function runInMicroPython(
       },
     });
     interpreter.writeFiles('/program', pure);
-    interpreter.run(HARNESS(pure.some(({ path }) => path === 'calibration.py')));
+    const has = (module: string) => pure.some(({ path }) => path === module);
+    interpreter.run(HARNESS(has('calibration.py'), has('wheel_loop.py')));
     return output.subarray(0, given);
   });
 }

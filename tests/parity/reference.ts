@@ -2,10 +2,20 @@
 import { SweepCalibration } from '../../src/controller/calibration.js';
 import { Twin } from '../../src/controller/twin.js';
 import type { FirmwareDesign } from '../../src/firmware/render.js';
+import { EdgeTrace } from './edge-trace.js';
 import { BarTrace } from './traces.js';
 
 /** What is compared in each step. */
-export const FIELDS = ['phase', 'class', 'offset', 'curvature', 'speed', 'dutyLeft', 'dutyRight'] as const;
+export const FIELDS = [
+  'phase',
+  'class',
+  'offset',
+  'curvature',
+  'speed',
+  'dutyLeft',
+  'dutyRight',
+  'blocked',
+] as const;
 
 const RESTART_EVERY = 1500;
 const SWEEP_SAMPLES = 400;
@@ -41,14 +51,20 @@ export function reference(design: FirmwareDesign, steps: number, seed: number): 
   const preamble = expected.length;
   input.push(steps, RESTART_EVERY);
   const twin = new Twin(constants);
+  const edges = new EdgeTrace(controller, seed);
   const counts = new Int32Array(controller.sensing.sensorCount);
   for (let i = 0; i < steps; i++) {
     if (i % RESTART_EVERY === 0) twin.start();
     trace.next(counts);
     input.push(...counts);
+    if (twin.wheels) {
+      const [left, right] = edges.next(twin);
+      input.push(left, right);
+      twin.wheels.count(left, right);
+    }
     twin.step(counts);
     expected.push(twin.phase, twin.classIndex, twin.sensing.offset, twin.curvature, twin.speed);
-    expected.push(twin.dutyLeft, twin.dutyRight);
+    expected.push(twin.dutyLeft, twin.dutyRight, Number(twin.wheels?.blocked ?? false));
   }
   return { input: Int32Array.from(input), expected: Int32Array.from(expected), preamble };
 }

@@ -125,4 +125,10 @@ export const LISTED: readonly Listed[] = [
     names: words(`motor view control tableGain proportional proportionalRange frequencyGrid runInterval
       interval runsOf top wholeDelay wrapAngle toTable strips positionsOf left right bottom columns rows`),
   },
+  {
+    why: 'encoders: lines of a disc and edges are counted; their pins by the letters of their channels; the shares of a sampled lag',
+    where:
+      /^(sheet\/sheet-types|vehicle\/(encoder|pin-plan)|design\/wheel-loop-.*|rehearsal\/chip-encoders)\.ts$/,
+    names: words('linesPerTurn a b edgesInSample kept late early edgesAtTop fromCycle encoderChannels'),
+  },
 ];

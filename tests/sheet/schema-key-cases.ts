@@ -49,7 +49,7 @@ export const SCHEMA_KEY_CASES: SchemaProblemCase[] = [
         pointer: '/wheelDiameterMm',
         message: 'The key "wheelDiameterMm" is unknown in the file.',
         got: '"wheelDiameterMm"',
-        allowed: 'no further key',
+        allowed: 'encoders',
         fix: 'Move it into /drive.',
       },
     ],

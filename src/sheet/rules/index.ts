@@ -4,6 +4,8 @@ import { rule as bendIsCut } from './bend-is-cut.js';
 import { rule as calibrationContrast } from './calibration-contrast.js';
 import { rule as calibrationPolarity } from './calibration-polarity.js';
 import { rule as driverPins } from './driver-pins.js';
+import { rule as encoderChannels } from './encoder-channels.js';
+import { rule as encoderRate } from './encoder-rate.js';
 import { rule as gapIsBridged } from './gap-is-bridged.js';
 import { rule as integralPart } from './integral-part.js';
 import { rule as languageFitsBoard } from './language-fits-board.js';
@@ -38,6 +40,8 @@ export const RULES: readonly SheetRule[] = [
   pinsUsedOnce,
   pinsAble,
   driverPins,
+  encoderChannels,
+  encoderRate,
   pwmOutputsDistinct,
   spotFitsLine,
   lineCannotHide,

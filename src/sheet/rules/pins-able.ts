@@ -8,6 +8,7 @@ const LACK: Readonly<Record<PinRole, string>> = {
   'digital sensor': 'cannot be a digital input',
   'PWM output': 'cannot do PWM',
   output: 'cannot be an output',
+  encoder: 'raises no interrupt when it changes',
   button: 'has no internal pull-up for the button',
 };
 

@@ -75,6 +75,14 @@ function pinUses(sheet: ResolvedSheet, board: BoardFacts): PinUse[] {
   if (scheme.standby && driver.standbyPin !== undefined) {
     add(pointerTo('drive', 'driver', 'standbyPin'), driver.standbyPin, 'output', 'standby');
   }
+  for (const side of ['left', 'right'] as const) {
+    for (const key of ['a', 'b'] as const) {
+      const label = sheet.encoders?.[side][key];
+      const wanted = key === 'a' || sheet.encoders?.channels === 'quadrature';
+      if (label === undefined || !wanted) continue;
+      add(pointerTo('encoders', side, key), label, 'encoder', `${side} encoder ${key}`);
+    }
+  }
   add(pointerTo('start', 'buttonPin'), sheet.start.buttonPin, 'button', 'start button');
   return uses;
 }

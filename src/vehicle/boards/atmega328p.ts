@@ -79,6 +79,12 @@ export const atmega328p = {
   flashing: [
     'The computer resets the board over the serial link and its boot loader takes the sketch; there is no button to press. Opening a serial monitor resets the board as well: the vehicle then stands and waits for its button.',
   ],
+  // data sheet, External Interrupts: PCINT0 to 7 are port B, 8 to 14 port C, 16 to 23 port D
+  pinChange: {
+    B: { vector: 'PCINT0_vect', mask: 'PCMSK0', enable: 'PCIE0' },
+    C: { vector: 'PCINT1_vect', mask: 'PCMSK1', enable: 'PCIE1' },
+    D: { vector: 'PCINT2_vect', mask: 'PCMSK2', enable: 'PCIE2' },
+  },
 } as const satisfies Partial<BoardFacts>;
 
 export const ATMEGA328P_SOURCES = [

@@ -102,6 +102,8 @@ export const AVR_16_MHZ = {
   adcMaxCount: 1023,
   // 26 us of conversion and the call around it.
   adcReadS: 30e-6,
+  // some 60 cycles of interrupt, with the call around it
+  edgeS: 5e-6,
   digitalReadS: 5e-6,
   // from the last reading to the motors' registers; tests/parity and tests/firmware/cost.test.ts measure it
   computeS: 150e-6,

@@ -102,6 +102,8 @@ export const esp32: BoardFacts = {
   // The firmware reads read_u16() >> 4: the converter's own 12 bits.
   adcMaxCount: 4095,
   adcReadS: 60e-6,
+  // A handler in Python: 20 to 30 us on such chips, from memory; to be measured on the board.
+  edgeS: 30e-6,
   digitalReadS: 5e-6,
   computeS: 2e-3,
   samplePeriodS: 5e-3,

@@ -87,6 +87,8 @@ export const leonardo: BoardFacts = {
   flashBytes: 28672,
   ramBytes: 2560,
   pins: ROWS.map(pin),
+  // data sheet, External Interrupts: PCINT0 to 7 are port B
+  pinChange: { B: { vector: 'PCINT0_vect', mask: 'PCMSK0', enable: 'PCIE0' } },
   led: { label: '13', code: 'LED_BUILTIN', about: "The board's own LED." },
   core: {
     fqbn: 'arduino:avr:leonardo',

@@ -95,6 +95,11 @@ export const mega2560: BoardFacts = {
   flashBytes: 253952,
   ramBytes: 8192,
   pins: [...PORT_BITS.map(digitalPin), ...Array.from({ length: 16 }, (_, channel) => analogPin(channel))],
+  // data sheet, External Interrupts: PCINT0 to 7 are port B, 16 to 23 port K; ports E and J share the one between, a bit apart
+  pinChange: {
+    B: { vector: 'PCINT0_vect', mask: 'PCMSK0', enable: 'PCIE0' },
+    K: { vector: 'PCINT2_vect', mask: 'PCMSK2', enable: 'PCIE2' },
+  },
   led: { label: '13', code: 'LED_BUILTIN', about: "The board's own LED." },
   core: {
     fqbn: 'arduino:avr:mega:cpu=atmega2560',

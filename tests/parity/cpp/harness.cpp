@@ -4,6 +4,12 @@
 #include "io.h"
 #include "sensing.cpp"
 #include "steering.h"
+#if __has_include("wheel_loop.h")
+#include "wheel_loop.h"
+#define ENCODERS 1
+#else
+#define ENCODERS 0
+#endif
 #if __has_include("calibration.h")
 #include "calibration.h"
 #define SWEEP 1
@@ -53,6 +59,10 @@ int main() {
     getCounts(counts);
     // The others are taken while the converter is busy.
     for (uint8_t k = 0; k + 1 < SENSOR_COUNT; k++) takeReading(k, counts[k]);
+#if ENCODERS
+    const int16_t left = static_cast<int16_t>(getNumber());
+    countEdges(left, static_cast<int16_t>(getNumber()));
+#endif
     markStep(true);
     takeReading(SENSOR_COUNT - 1, counts[SENSOR_COUNT - 1]);
     const Steering& now = steer();
@@ -65,6 +75,11 @@ int main() {
     putNumber(now.speedQ29);
     putNumber(now.dutyLeftQ12);
     putNumber(now.dutyRightQ12);
+#if ENCODERS
+    putNumber(wheelBlocked());
+#else
+    putNumber(0);
+#endif
   }
   closeStreams();
   return 0;
