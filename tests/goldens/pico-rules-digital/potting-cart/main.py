@@ -26,8 +26,8 @@
 # 6 flashes: restarted by the watchdog after the program hung
 #
 # To the board, in this folder (pip install mpremote):
-# mpremote cp constants.py pins.py sensing.py steering.py rule_table.py motors.py :
-# mpremote cp board.py states.py blink.py supervisor.py user_hooks.py main.py :
+# mpremote cp constants.py pins.py sensing.py steering.py rule_table.py motors.py board.py :
+# mpremote cp states.py blink.py supervisor.py user_hooks.py main.py :
 # mpremote reset
 # boot.py stays as it is. The first run starts the watchdog, which nothing stops: from then on
 # the board restarts by itself when the program is interrupted; switch it off and on before
