@@ -43,7 +43,7 @@ constexpr RuleAction RULE_TABLE[] PROGMEM = {
 static_assert(entriesOf(RULE_TABLE) == SENSOR_COUNT * (SENSOR_COUNT + 1) / 2,
               "one action for each run");
 
-// Place of a first sensor's runs, less its own number: the last sensor's number leads on from there.
+// Place of a first sensor's runs, less its own number: the last sensor's leads on from there.
 constexpr uint8_t RULE_ROWS[] = {0, 5, 9, 12, 14, 15};
 static_assert(entriesOf(RULE_ROWS) == SENSOR_COUNT, "one place for each sensor");
 
