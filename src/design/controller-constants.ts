@@ -78,7 +78,9 @@ function driveConstants(vehicle: Vehicle, slopeBits: number): DriveConstants {
 function memoryConstants(vehicle: Vehicle): MemoryConstants {
   const period = vehicle.board.samplePeriodS;
   const units = (m: number) => distanceUnits(m, vehicle.drive.topSpeedMps, period);
-  const outermost = vehicle.bar.positionsM[0] as number;
+  const { positionsM } = vehicle.bar;
+  // the nearer end of a lopsided bar
+  const outermost = Math.min(positionsM[0] as number, -(positionsM.at(-1) as number));
   const pitch = meanPitchM(vehicle.bar.positionsM);
   const side = Math.max(outermost - pitch / 2 + vehicle.line.widthM / 4, outermost / 2);
   return {

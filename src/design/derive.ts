@@ -106,6 +106,9 @@ function remarksOn(vehicle: Vehicle, classes: readonly DesignedClass[], proven: 
   return remarks;
 }
 
+/** What sets the speeds in the end, given the controller at each scale. */
+type Prover = (controllerAt: (scale: SpeedScale) => ControllerConstants) => ReturnType<typeof provenScale>;
+
 /**
  * Designs the controller of a vehicle.
  *
@@ -113,6 +116,19 @@ function remarksOn(vehicle: Vehicle, classes: readonly DesignedClass[], proven: 
  * @throws FairleadError with exit code 3 when nothing meets the sheet
  */
 export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Design {
+  return designBy(vehicle, (controllerAt) =>
+    provenScale(vehicle, new Proving(vehicle, provenOn), controllerAt),
+  );
+}
+
+/** The design at the speeds that limits or sheet allow, without the rehearsals that prove them: `proof` tells of no runs. */
+export function unprovenDesign(vehicle: Vehicle): Design {
+  const targetShare = vehicle.speeds.finishTarget;
+  const proof = { runs: 0, finished: 0, targetShare, confidenceShare: 0 };
+  return designBy(vehicle, () => ({ scale: AS_ALLOWED, proof, kept: true }));
+}
+
+function designBy(vehicle: Vehicle, prove: Prover): Design {
   const bases = calmLaws(vehicle, classBases(vehicle));
   const settings = (scale: SpeedScale) => bases.map((base) => settingsAt(base, scale));
   const unscaled = controllerConstants(vehicle, settings(AS_ALLOWED));
@@ -127,8 +143,7 @@ export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Des
     }),
   });
   const wheelLoop = wheelLoopDesign(vehicle);
-  const proving = new Proving(vehicle, provenOn);
-  const { scale, proof, kept } = provenScale(vehicle, proving, controllerAt);
+  const { scale, proof, kept } = prove(controllerAt);
   const chosen = settings(scale);
   const controller = controllerAt(scale);
   refuseOverflow(vehicle, controller);

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { classForBend } from '../../src/design/class-for-bend.js';
-import { deriveDesign } from '../../src/design/derive.js';
+import { unprovenDesign } from '../../src/design/derive.js';
 import { drivenSpeedMps } from '../../src/design/driven-speed.js';
 import { entryPeakM, entryTraces } from '../../src/design/entry.js';
 import { samplePlant } from '../../src/design/lane-plant.js';
@@ -11,7 +11,7 @@ import { lanePlantOf, marginsAt, toleranceCorners } from '../../src/design/toler
 import { demoVehicle } from './demo-vehicle.js';
 
 const vehicle = demoVehicle();
-const design = deriveDesign(vehicle);
+const design = unprovenDesign(vehicle);
 
 describe('marks of a loop', () => {
   const cases = design.classes.flatMap((each) =>

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { deriveDesign } from '../../src/design/derive.js';
+import { unprovenDesign } from '../../src/design/derive.js';
 import { stateTable } from '../../src/design/state-table.js';
 import type { Vehicle } from '../../src/vehicle/vehicle.js';
 import { demoVehicle } from './demo-vehicle.js';
@@ -8,7 +8,7 @@ type Overrides = NonNullable<Vehicle['control']['overrides']>;
 
 function designWith(overrides: Overrides) {
   const vehicle = demoVehicle('rules');
-  return deriveDesign({ ...vehicle, control: { ...vehicle.control, overrides } });
+  return unprovenDesign({ ...vehicle, control: { ...vehicle.control, overrides } });
 }
 
 describe('rules by hand', () => {

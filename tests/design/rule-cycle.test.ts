@@ -3,7 +3,7 @@ import { FULL_DUTY } from '../../src/controller/constants.js';
 import { Twin } from '../../src/controller/twin.js';
 import { compileCourse } from '../../src/course/lane.js';
 import { twinDelayS } from '../../src/design/delay.js';
-import { deriveDesign } from '../../src/design/derive.js';
+import { unprovenDesign } from '../../src/design/derive.js';
 import type { Design } from '../../src/design/design.js';
 import { largestSwingM, predictCycles, staircase } from '../../src/design/rule-cycle.js';
 import { LEAST_MARGINS } from '../../src/design/tolerance-box.js';
@@ -12,7 +12,7 @@ import { Plant } from '../../src/rehearsal/plant.js';
 import { demoVehicle } from '../design/demo-vehicle.js';
 
 const vehicle = demoVehicle('rules');
-const { classes } = deriveDesign(vehicle);
+const { classes } = unprovenDesign(vehicle);
 
 test('the staircase of the demo rises by the proportional gain over the view', () => {
   const steps = staircase(vehicle, 351);
@@ -62,33 +62,45 @@ describe('cycles of laws without damping, against the twin on a straight', () =>
     return { offsetM: offsetM.slice(samples / 2), periodS };
   }
 
-  // proportional gain (1/m^2), speed (m/s): a gain margin below that of the staircase, or below 1
-  test.each([
-    [356, 0.85],
-    [250, 0.87],
-    [600, 0.83],
-    [1000, 0.8],
-  ])('kp %d at %d m/s: amplitude within 20 %%, frequency within 12 %%', (proportionalPerM2, speedMps) => {
-    const none = { motorGain: 0, lag: 0, grip: 0 };
-    const design = deriveDesign({
+  const none = { motorGain: 0, lag: 0, grip: 0 };
+  const designAt = (proportionalPerM2: number, speedMps: number) =>
+    unprovenDesign({
       ...vehicle,
       tolerance: none,
       speeds: { ...vehicle.speeds, classes: [{ name: 'all', minRadiusM: 0.12, speedMps }] },
       control: { ...vehicle.control, gains: { proportionalPerM2, derivativeTimeS: 0, filterTimeS: 0.004 } },
     });
-    const { cycles } = predictCycles(design.vehicle, design.classes)[0]!;
-    const { offsetM, periodS } = swing(design);
+  const predictionAt = (gain: number, speedMps: number) => {
+    const design = designAt(gain, speedMps);
+    return predictCycles(design.vehicle, design.classes)[0]!;
+  };
+
+  /** Speed at which the loop bears 1.1 times the gain, m/s: less than the staircase's steepest. */
+  function brinkMps(gain: number): number {
+    let [low, high] = [0.5, 1];
+    for (let i = 0; i < 20; i++) {
+      const middle = (low + high) / 2;
+      if (predictionAt(gain, middle).criticalRatio > 1.1) low = middle;
+      else high = middle;
+    }
+    return low;
+  }
+
+  test.each([250, 356, 500, 700])('kp %d: amplitude within 30 %%, frequency within 12 %%', (gain) => {
+    const speedMps = brinkMps(gain);
+    const { cycles } = predictionAt(gain, speedMps);
+    const { offsetM, periodS } = swing(designAt(gain, speedMps));
     const amplitude = (Math.max(...offsetM) - Math.min(...offsetM)) / 2;
     const rises = offsetM.filter((y, i) => y >= 0 && (offsetM[i - 1] ?? 0) < 0).length;
     const frequencyRadS = (2 * Math.PI * rises) / (offsetM.length * periodS);
     // a swing that grows from the start of a run settles at the first stable cycle
-    expect(Math.abs(cycles[0]!.amplitude / amplitude - 1)).toBeLessThan(0.2);
+    expect(Math.abs(cycles[0]!.amplitude / amplitude - 1)).toBeLessThan(0.3);
     expect(Math.abs(cycles[0]!.frequencyRadS / frequencyRadS - 1)).toBeLessThan(0.12);
   });
 });
 
 test('a lag beyond look-ahead over speed is told to swing until the line is lost', () => {
-  const design = deriveDesign({
+  const design = unprovenDesign({
     ...vehicle,
     speeds: { ...vehicle.speeds, classes: [{ name: 'all', minRadiusM: 0.12, speedMps: 1.2 }] },
     control: {

@@ -1,6 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { runIndex } from '../../src/controller/run-index.js';
-import { deriveDesign } from '../../src/design/derive.js';
+import { unprovenDesign } from '../../src/design/derive.js';
 import { switchingDistanceM } from '../../src/design/bar-view.js';
 import { coveredShare } from '../../src/vehicle/sensor-bar.js';
 import { runInterval } from '../../src/design/rule-runs.js';
@@ -8,7 +8,7 @@ import { runsOf, stateTable } from '../../src/design/state-table.js';
 import { demoVehicle } from './demo-vehicle.js';
 
 const vehicle = demoVehicle('rules');
-const { controller } = deriveDesign(vehicle);
+const { controller } = unprovenDesign(vehicle);
 const table = stateTable(vehicle, controller);
 const count = vehicle.bar.positionsM.length;
 

@@ -4,7 +4,7 @@ import { describe, expect, test } from 'vitest';
 import type { ClassConstants } from '../../src/controller/constants.js';
 import { INT32_MAX, intermediateBounds } from '../../src/design/intervals.js';
 import { closedLoopRadius } from '../../src/design/closed-loop.js';
-import { deriveDesign } from '../../src/design/derive.js';
+import { unprovenDesign } from '../../src/design/derive.js';
 import type { Design } from '../../src/design/design.js';
 import { samplePlant } from '../../src/design/lane-plant.js';
 import { controllerOf, loopMargins } from '../../src/design/steering-loop.js';
@@ -33,7 +33,7 @@ const vehicles = fc.sample(validSheets, { numRuns: SHEETS, seed: 7 }).map((sheet
 /** Designs, or the refusal where nothing meets the sheet. */
 function attempt(vehicle: Vehicle): Design | FairleadError {
   try {
-    return deriveDesign(vehicle);
+    return unprovenDesign(vehicle);
   } catch (error) {
     if (error instanceof FairleadError) return error;
     throw error;
@@ -89,7 +89,7 @@ const withoutSpeed = (classes: readonly ClassConstants[]) =>
 
 describe('a mirrored vehicle', () => {
   const pairs = designs.slice(0, MIRRORED).map((design) => {
-    return { design, image: deriveDesign(mirroredVehicle(design.vehicle)) };
+    return { design, image: unprovenDesign(mirroredVehicle(design.vehicle)) };
   });
 
   test('has the same limits, laws and margins', () => {
