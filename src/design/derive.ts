@@ -5,6 +5,7 @@ import { classConstants, firmwareGains, tableGainPerM2 } from './class-constants
 import { biasRemarks } from './bias.js';
 import { controllerConstants } from './controller-constants.js';
 import { delayBudget } from './delay.js';
+import { isImage, mirroredVehicle } from '../vehicle/mirror.js';
 import { calmLaws, swingRemarks } from './calm-laws.js';
 import { type ClassBase, classBases } from './class-base.js';
 import type { ClassSettings, Design, DesignedClass, Proof } from './design.js';
@@ -79,12 +80,20 @@ function refuseOverflow(vehicle: Vehicle, controller: ControllerConstants): void
     throw new FairleadError('No design meets the sheet.', { exitCode: EXIT.noDesign, problems });
 }
 
+/** Speeds and what proves them. */
+interface Proven {
+  scale: SpeedScale;
+  proof: Proof;
+  /** Whether the target is kept. */
+  kept: boolean;
+}
+
 /** Speeds and what proves them. Speeds of the sheet are rehearsed as they stand: their scale leaves them alone. */
 function provenScale(
   vehicle: Vehicle,
   proving: Proving,
   controllerAt: (scale: SpeedScale) => ControllerConstants,
-): { scale: SpeedScale; proof: Proof; kept: boolean } {
+): Proven {
   if (vehicle.speeds.classes === 'auto') {
     const best = proving.best(controllerAt);
     if (best) return { ...best, kept: true };
@@ -107,7 +116,7 @@ function remarksOn(vehicle: Vehicle, classes: readonly DesignedClass[], proven: 
 }
 
 /** What sets the speeds in the end, given the controller at each scale. */
-type Prover = (controllerAt: (scale: SpeedScale) => ControllerConstants) => ReturnType<typeof provenScale>;
+type Prover = (controllerAt: (scale: SpeedScale) => ControllerConstants) => Proven;
 
 /**
  * Designs the controller of a vehicle.
@@ -117,8 +126,17 @@ type Prover = (controllerAt: (scale: SpeedScale) => ControllerConstants) => Retu
  */
 export function deriveDesign(vehicle: Vehicle, provenOn: Vehicle = vehicle): Design {
   return designBy(vehicle, (controllerAt) =>
-    provenScale(vehicle, new Proving(vehicle, provenOn), controllerAt),
+    isImage(vehicle)
+      ? provenOnImage(mirroredVehicle(vehicle), mirroredVehicle(provenOn))
+      : provenScale(vehicle, new Proving(vehicle, provenOn), controllerAt),
   );
+}
+
+/** What rehearsals of the mirror image prove: noise and rounding are not mirrored, so one of the two stands for both. */
+function provenOnImage(image: Vehicle, provenOn: Vehicle): Proven {
+  let found: Proven | undefined;
+  designBy(image, (controllerAt) => (found = provenScale(image, new Proving(image, provenOn), controllerAt)));
+  return found!;
 }
 
 /** The design at the speeds that limits or sheet allow, without the rehearsals that prove them: `proof` tells of no runs. */

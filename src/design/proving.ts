@@ -26,7 +26,7 @@ import { LOWEST_TOP_SHARE, SHARES, type SpeedScale, type Timed, quickestScale } 
 
 /** Samples that screening and confirmation may take, about: two times a second on a machine of today's. */
 const SCREENING_SAMPLES = 1.8e6;
-const CONFIRMATION_SAMPLES = 9e5;
+const CONFIRMATION_SAMPLES = 7.5e5;
 /** Trials that a full screening takes, about. */
 const TRIALS = 30;
 /** Vehicles drawn for screening; how many of the most demanding every trial must finish, and how many typical ones are timed. */

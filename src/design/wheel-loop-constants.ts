@@ -32,6 +32,8 @@ export function wheelLoopConstants(vehicle: Vehicle, numbers: LoopNumbers): Whee
   const perSample = periodS / integralTimeS;
   const one = 1 << COEFFICIENT_BITS;
   // at twice full speed something is wrong with the signal; the sums then still fit 16 bits
+  // a wheel at the least speed that counts gives two edges in this time
+  const slowestEdgesS = (2 * periodS) / (BLOCKED_SPEED_SHARE * edgesInSample);
   const edgeLimit = Math.max(2, Math.ceil(2 * edgesInSample));
   return {
     single: vehicle.encoders?.single ?? false,
@@ -44,6 +46,6 @@ export function wheelLoopConstants(vehicle: Vehicle, numbers: LoopNumbers): Whee
     tracking: Math.min(one / 4, Math.round(perSample * one)),
     correctionLimit: Math.round(CORRECTION_SHARE * FULL_SPEED),
     blockedSpeed: Math.round(BLOCKED_SPEED_SHARE * FULL_SPEED),
-    blockedSamples: Math.round(BLOCKED_S / periodS),
+    blockedSamples: Math.round(Math.max(BLOCKED_S, slowestEdgesS) / periodS),
   };
 }

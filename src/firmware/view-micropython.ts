@@ -36,6 +36,8 @@ interface MicroPythonView extends Omit<CommonView, 'groups' | 'reasons'> {
   ledAbout: string;
   pwmHz: number;
   /** Encoders: whether their pins have pull-ups, and whether they count backward. */
+  /** The port lets a handler run at once, not when the interpreter comes to it. */
+  hardInterrupts: boolean;
   leftPullUp: boolean;
   rightPullUp: boolean;
   leftInverted: boolean;
@@ -98,6 +100,8 @@ function micropythonView(
     ledCode: vehicle.board.led.code,
     ledAbout: vehicle.board.led.about,
     pwmHz: vehicle.board.pwmHz,
+    // MicroPython documentation, Pin.irq: hard is for ports that have it, rp2 among them; esp32 has not
+    hardInterrupts: vehicle.board.id === 'pico',
     leftPullUp: hasPullUps(vehicle.encoders?.left),
     rightPullUp: hasPullUps(vehicle.encoders?.right),
     leftInverted: vehicle.encoders?.left.inverted ?? false,

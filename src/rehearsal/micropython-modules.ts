@@ -89,7 +89,7 @@ class Pin:
 
     __call__ = value
 
-    def irq(self, handler=None, trigger=3):
+    def irq(self, handler=None, trigger=3, hard=False):
         _handlers.append((self, handler))
 
     def on(self):

@@ -109,7 +109,7 @@ describe('fairlead rehearse', () => {
     await expect(rehearse([SHEET, ...words])).rejects.toThrow(message);
   });
 
-  it('compares two sheets on the same seeds, in pairs', async () => {
+  it('compares two sheets on the same seeds, in pairs', { timeout: 120_000 }, async () => {
     const { json } = await rehearse([
       SHEET,
       SHEET,
@@ -127,7 +127,7 @@ describe('fairlead rehearse', () => {
     expect(pairs).toMatchObject({ runs: 2, finish: { both: 2, chance: 1 }, lapS: { pairs: 2, mean: 0 } });
   });
 
-  it('drives a curve of finish rate against speed', async () => {
+  it('drives a curve of finish rate against speed', { timeout: 120_000 }, async () => {
     const file = join(folder, 'curve.svg');
     const words = [SHEET, '--course', COURSE, '--curve', '--runs', '2', '--laps', '1', '--svg', file];
     const { out } = await rehearse(words);

@@ -16,7 +16,7 @@ it('is there with encoders only', () => {
   expect(quickDesign(cart()).controller.wheelLoop).toBeUndefined();
 });
 
-describe.each([4, 12, 48, 120, 700])('%d lines in a turn', (lines) => {
+describe.each([8, 12, 48, 120, 700])('%d lines in a turn', (lines) => {
   const vehicle = encoders(lines);
   const design = wheelLoopDesign(vehicle)!;
 
@@ -41,10 +41,18 @@ describe.each([4, 12, 48, 120, 700])('%d lines in a turn', (lines) => {
   });
 });
 
+it('gives a slow wheel time for two edges before it counts as blocked', () => {
+  const coarse = encoders(8, { '/drive/motor/noLoadRpm': 240 });
+  const { blockedSamples, blockedSpeed } = wheelLoopDesign(coarse)!.constants;
+  const turnsPerS = (240 / 60) * (blockedSpeed / 8192);
+  expect(blockedSamples * 0.002).toBeGreaterThanOrEqual(0.999 * (2 / (16 * turnsPerS)));
+  expect(wheelLoopDesign(encoders(700))!.constants.blockedSamples).toBe(150);
+});
+
 it('counts over a longer window where lines are few, but not longer than the motor bears', () => {
-  const samples = [4, 48, 120, 700].map((lines) => wheelLoopDesign(encoders(lines))!.windowSamples);
+  const samples = [8, 48, 120, 700].map((lines) => wheelLoopDesign(encoders(lines))!.windowSamples);
   expect(samples).toEqual(samples.toSorted((a, b) => b - a));
   expect(samples.at(-1)).toBe(1);
-  const quick = wheelLoopDesign(encoders(4, { '/drive/motor/timeConstantMs': 20 }))!;
+  const quick = wheelLoopDesign(encoders(8, { '/drive/motor/timeConstantMs': 20 }))!;
   expect(quick.windowSamples * 0.002).toBeLessThanOrEqual(0.01);
 });

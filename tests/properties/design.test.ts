@@ -14,7 +14,8 @@ import { checkSheet } from '../../src/sheet/check.js';
 import { FairleadError } from '../../src/sheet/problem.js';
 import { toVehicle } from '../../src/sheet/to-vehicle.js';
 import type { Vehicle } from '../../src/vehicle/vehicle.js';
-import { mirroredRules, mirroredVehicle } from './mirror.js';
+import { mirroredVehicle } from '../../src/vehicle/mirror.js';
+import { mirroredRules } from './mirror.js';
 import { validSheets } from './valid-sheets.js';
 
 /** Sheets drawn, and how many of them must have a design; speeds written into a sheet are often too fast for its vehicle. */

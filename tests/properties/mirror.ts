@@ -1,29 +1,6 @@
-/** A vehicle and its rule table as seen in a mirror. */
+/** A rule table as seen in a mirror. */
 import type { ControllerConstants, RuleConstants } from '../../src/controller/constants.js';
 import { runIndex } from '../../src/controller/run-index.js';
-import type { Vehicle } from '../../src/vehicle/vehicle.js';
-
-/** The vehicle as seen in a mirror. */
-export function mirroredVehicle(vehicle: Vehicle): Vehicle {
-  const { bar, drive } = vehicle;
-  const { ground, line } = bar.calibration;
-  return {
-    ...vehicle,
-    bar: {
-      ...bar,
-      positionsM: bar.positionsM.map((p) => -p).toReversed(),
-      pins: bar.pins.toReversed(),
-      calibration: { ...bar.calibration, ground: ground.toReversed(), line: line.toReversed() },
-    },
-    drive: {
-      ...drive,
-      left: drive.right,
-      right: drive.left,
-      trimLeft: drive.trimRight,
-      trimRight: drive.trimLeft,
-    },
-  };
-}
 
 /** Rule actions of the mirrored vehicle that belong to the runs of this one: wheels and ends of the run swapped. */
 export function mirroredRules({ rules, sensing }: ControllerConstants): RuleConstants | undefined {

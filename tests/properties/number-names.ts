@@ -57,7 +57,7 @@ export const LISTED: readonly Listed[] = [
     where: /./,
     names:
       words(`first last state laps seed stream runs finished lost lostInLap resets piece before phase files written drawn
-      bit channels ruleRows dutySteps flashes added removed least most fewest significantDigits DEFAULT_LAPS FULL_PRINT_SENSORS sheetVersion courseVersion
+      bit channels ruleRows flashes added removed least most fewest significantDigits DEFAULT_LAPS FULL_PRINT_SENSORS sheetVersion courseVersion
       manifestVersion exitCode items starts i jobs part of partVersion defaultRuns both onlyFirst onlySecond neither chance pairs mean low high CURVE_RUNS CURVE_FACTORS PART_VERSION MOST_RUNS MOST_LAPS MOST_SEED MOST_JOBS`),
   },
   {
@@ -130,5 +130,10 @@ export const LISTED: readonly Listed[] = [
     where:
       /^(sheet\/sheet-types|vehicle\/(encoder|pin-plan)|design\/wheel-loop-.*|rehearsal\/chip-encoders)\.ts$/,
     names: words('linesPerTurn a b edgesInSample kept late early edgesAtTop fromCycle encoderChannels'),
+  },
+  {
+    why: 'the page of a rehearsal: places on an axis in the unit of its quantity, shades, widths in its own drawing units, parts of a text',
+    where: /^report\/html\/.*\.ts$/,
+    names: words('STRETCHES words values every opacity end at roundUp BROAD SLIM'),
   },
 ];
