@@ -10,7 +10,7 @@
  * back-calculation: Ti (Astrom and Hagglund, PID Controllers).
  */
 import type { WheelLoopConstants } from '../controller/constants.js';
-import { edgesPerM } from '../vehicle/encoder.js';
+import { edgesPerM, windowBitsOf } from '../vehicle/encoder.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { delayBudget } from './delay.js';
 import type { Margins } from './design.js';
@@ -20,11 +20,6 @@ import { wheelLoopConstants } from './wheel-loop-constants.js';
 
 /** What every corner keeps: more than the lane loop's, so that the wheel is quicker and calmer than what it serves. */
 export const WHEEL_MARGINS: Margins = { gainMargin: 2.5, phaseMarginDeg: 45, ms: 1.6 };
-/** Edges in a window at full speed that make a speed fine enough, 1. */
-const FINE_EDGES = 24;
-/** Longest window, as a share of the motor's time constant. */
-const LONGEST_WINDOW_SHARE = 0.5;
-const LONGEST_WINDOW_BITS = 5;
 /** Growth of tc from try to try, and the most tries. */
 const SLOWER = 1.15;
 const TRIES = 40;
@@ -115,18 +110,6 @@ function worst(all: readonly Margins[]): Margins {
     phaseMarginDeg: Math.min(...all.map((each) => each.phaseMarginDeg)),
     ms: Math.max(...all.map((each) => each.ms)),
   };
-}
-
-/** Bits of the window: enough edges at full speed, but no longer than the motor bears. */
-function windowBitsOf(edgesInSample: number, lagS: number, periodS: number): number {
-  let bits = 0;
-  while (
-    bits < LONGEST_WINDOW_BITS &&
-    edgesInSample * 2 ** bits < FINE_EDGES &&
-    2 ** (bits + 1) * periodS <= LONGEST_WINDOW_SHARE * lagS
-  )
-    bits++;
-  return bits;
 }
 
 /** The wheel loop of a vehicle; undefined without encoders. */

@@ -36,4 +36,20 @@ testRules({
     },
     { when: 'just few enough', changes: single(879), want: [] },
   ],
+  'encoder-resolution': [
+    {
+      when: 'less than two edges in 16 samples, half the time constant of the motor',
+      changes: { ...single(4), '/drive/motor/noLoadRpm': 200 },
+      want: [
+        '/encoders/linesPerTurn: At full speed a wheel gives 0.8533 edges in 32 ms, the longest that the loop can wait beside this motor; that is too coarse for a speed.',
+      ],
+    },
+    { when: 'four lines on a quick wheel', changes: single(4), want: [] },
+    {
+      when: 'as many lines as asked for',
+      changes: { ...single(10), '/drive/motor/noLoadRpm': 200 },
+      want: [],
+    },
+    { when: 'no encoders', changes: {}, want: [] },
+  ],
 });

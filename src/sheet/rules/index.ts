@@ -6,6 +6,7 @@ import { rule as calibrationPolarity } from './calibration-polarity.js';
 import { rule as driverPins } from './driver-pins.js';
 import { rule as encoderChannels } from './encoder-channels.js';
 import { rule as encoderRate } from './encoder-rate.js';
+import { rule as encoderResolution } from './encoder-resolution.js';
 import { rule as gapIsBridged } from './gap-is-bridged.js';
 import { rule as integralPart } from './integral-part.js';
 import { rule as languageFitsBoard } from './language-fits-board.js';
@@ -42,6 +43,7 @@ export const RULES: readonly SheetRule[] = [
   driverPins,
   encoderChannels,
   encoderRate,
+  encoderResolution,
   pwmOutputsDistinct,
   spotFitsLine,
   lineCannotHide,
