@@ -10,7 +10,7 @@
  * back-calculation: Ti (Astrom and Hagglund, PID Controllers).
  */
 import type { WheelLoopConstants } from '../controller/constants.js';
-import { edgesPerM, windowBitsOf } from '../vehicle/encoder.js';
+import { edgesPerM, windowBits } from '../vehicle/encoder.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { delayBudget } from './delay.js';
 import type { Margins } from './design.js';
@@ -118,8 +118,8 @@ export function wheelLoopDesign(vehicle: Vehicle): WheelLoopDesign | undefined {
   if (encoders === undefined) return undefined;
   const periodS = board.samplePeriodS;
   const edgesInSample = edgesPerM(encoders.linesPerTurn, drive.wheelDiameterM) * drive.topSpeedMps * periodS;
-  const windowBits = windowBitsOf(edgesInSample, drive.lagS, periodS);
-  const windowSamples = 2 ** windowBits;
+  const bits = windowBits(edgesInSample, drive.lagS, periodS);
+  const windowSamples = 2 ** bits;
   const commandDelayS = delayBudget(vehicle).totalS;
   const delayS = commandDelayS + (periodS * (windowSamples + 1)) / 2;
   const motors = toleranceCorners(vehicle).map(({ gain, lag }) => ({ gain, lagS: drive.lagS * lag }));
@@ -148,6 +148,6 @@ export function wheelLoopDesign(vehicle: Vehicle): WheelLoopDesign | undefined {
     integralTimeS,
     margins: found[0]!,
     worstMargins: worst(found),
-    constants: wheelLoopConstants(vehicle, { windowBits, edgesInSample, gain, integralTimeS }),
+    constants: wheelLoopConstants(vehicle, { windowBits: bits, edgesInSample, gain, integralTimeS }),
   };
 }

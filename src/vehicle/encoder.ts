@@ -35,7 +35,7 @@ const LONGEST_WINDOW_BITS = 5;
  * @param edgesInSample at full speed
  * @param lagS time constant of the motor, s
  */
-export function windowBitsOf(edgesInSample: number, lagS: number, periodS: number): number {
+export function windowBits(edgesInSample: number, lagS: number, periodS: number): number {
   let bits = 0;
   while (
     bits < LONGEST_WINDOW_BITS &&

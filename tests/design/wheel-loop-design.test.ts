@@ -53,6 +53,6 @@ it('counts over a longer window where lines are few, but not longer than the mot
   const samples = [8, 48, 120, 700].map((lines) => wheelLoopDesign(encoders(lines))!.windowSamples);
   expect(samples).toEqual(samples.toSorted((a, b) => b - a));
   expect(samples.at(-1)).toBe(1);
-  const quick = wheelLoopDesign(encoders(8, { '/drive/motor/timeConstantMs': 20 }))!;
+  const quick = wheelLoopDesign(encoders(12, { '/drive/motor/timeConstantMs': 20 }))!;
   expect(quick.windowSamples * 0.002).toBeLessThanOrEqual(0.01);
 });

@@ -7,10 +7,6 @@ const classes = (
   '/speeds/classes': list.map(([name, minRadiusMm, speedMps]) => ({ name, minRadiusMm, speedMps })),
 });
 
-const encoders = (changes: object): Record<string, unknown> => ({
-  '/encoders': { channels: 'single', linesPerTurn: 120, ...changes },
-});
-
 testRules({
   'voltage-order': [
     {
@@ -51,39 +47,6 @@ testRules({
       want: ['/drive/motor/noLoadRpm: 100 rpm on wheels of 42 mm at 6 V would be 0.02749 m/s.'],
     },
     { when: 'four times the demo speed', changes: { '/drive/motor/noLoadRpm': 2728 }, want: [] },
-  ],
-  'encoder-rate': [
-    {
-      // 700 rpm / 60 * 2 * 20000 lines * 2 wheels; 20 % of the time at 5 us an edge are 40000 edges a second
-      when: 'more edges than the chip can count',
-      changes: encoders({ linesPerTurn: 20000, left: { a: 3 }, right: { a: 4 } }),
-      want: [
-        '/encoders/linesPerTurn: At full speed both wheels give 909333 edges a second; Uno can count 40000 beside its other work.',
-      ],
-    },
-    {
-      when: 'too few edges to tell a speed',
-      changes: {
-        ...encoders({ linesPerTurn: 4, left: { a: 3 }, right: { a: 4 } }),
-        '/drive/motor/noLoadRpm': 60,
-      },
-      want: [
-        '/encoders/linesPerTurn: At full speed each wheel gives 8.0 edges a second; below 60 a speed cannot be told in time.',
-      ],
-    },
-    { when: 'a usual disc', changes: encoders({ left: { a: 3 }, right: { a: 4 } }), want: [] },
-  ],
-  'encoder-channels': [
-    {
-      when: 'quadrature with one channel missing',
-      changes: encoders({ channels: 'quadrature', left: { a: 3, b: 12 }, right: { a: 4 } }),
-      want: ['/encoders/right/b: Quadrature takes two channels; b of the right encoder is missing.'],
-    },
-    {
-      when: 'a second channel that nothing reads',
-      changes: encoders({ left: { a: 3, b: 12 }, right: { a: 4 } }),
-      want: ['/encoders/left/b: A single channel takes one pin; b of the left encoder is too many.'],
-    },
   ],
   'class-bends': [
     {

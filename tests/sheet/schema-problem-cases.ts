@@ -114,9 +114,9 @@ export const SCHEMA_PROBLEM_CASES: SchemaProblemCase[] = [
     want: [
       {
         pointer: '/speeds/classes',
-        message: '"fast" is not allowed here: it takes auto or a list of 1 to 8 entries.',
+        message: '"fast" is not allowed here: it takes auto or a list of 1 to 64 entries.',
         got: '"fast"',
-        allowed: 'auto or a list of 1 to 8 entries',
+        allowed: 'auto or a list of 1 to 64 entries',
         fix: 'Write "auto", or a list such as [{ "name": "bend", "minRadiusMm": 120, "speedMps": 0.4 }].',
       },
     ],

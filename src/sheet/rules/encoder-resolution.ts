@@ -1,4 +1,4 @@
-import { edgesPerM, windowBitsOf } from '../../vehicle/encoder.js';
+import { edgesPerM, windowBits } from '../../vehicle/encoder.js';
 import { topSpeedMps } from '../top-speed.js';
 import { mmToM, msToS } from '../units.js';
 import { rounded, withUnit } from '../words.js';
@@ -17,7 +17,7 @@ export const rule: SheetRule = {
     const periodS = board.samplePeriodS;
     const perM = edgesPerM(encoders.linesPerTurn, mmToM(drive.wheelDiameterMm));
     const inSample = perM * topSpeedMps(sheet) * periodS;
-    const windowSamples = 2 ** windowBitsOf(inSample, msToS(drive.motor.timeConstantMs), periodS);
+    const windowSamples = 2 ** windowBits(inSample, msToS(drive.motor.timeConstantMs), periodS);
     const edges = inSample * windowSamples;
     if (edges >= FEWEST_EDGES) return [];
     const fewest = Math.ceil((encoders.linesPerTurn * FEWEST_EDGES) / edges);
