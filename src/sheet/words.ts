@@ -60,7 +60,10 @@ export function counted(count: number, noun: string): string {
  * reorder text (Unicode TR36, bidirectional controls) become escapes such as \u{1b}.
  */
 export function visible(text: string): string {
-  return text.replace(/[\p{Cc}\p{Cs}\p{Zl}\p{Zp}\u061c\u200e\u200f\u202a-\u202e\u2066-\u2069]/gu, (character) => {
-    return `\\u{${(character.codePointAt(0) ?? 0).toString(16)}}`;
-  });
+  return text.replace(
+    /[\p{Cc}\p{Cs}\p{Zl}\p{Zp}\u061c\u200e\u200f\u202a-\u202e\u2066-\u2069]/gu,
+    (character) => {
+      return `\\u{${(character.codePointAt(0) ?? 0).toString(16)}}`;
+    },
+  );
 }
