@@ -9,6 +9,11 @@ import { motorPwmHz } from '../vehicle/pwm-modes.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import type { DelayShare } from './design.js';
 
+/** Time for the control arithmetic, worst case, s; with encoders that of the wheel loops too. */
+export function controlS({ board, encoders }: Vehicle): number {
+  return board.computeS + (encoders ? board.wheelLoopS : 0);
+}
+
 export function delayBudget(vehicle: Vehicle): { shares: DelayShare[]; totalS: number } {
   const { board, bar } = vehicle;
   const count = bar.positionsM.length;
@@ -19,7 +24,7 @@ export function delayBudget(vehicle: Vehicle): { shares: DelayShare[]; totalS: n
       delayS: (count * readS) / 2,
       source: `half of ${count} ${bar.kind} readings one after the other`,
     },
-    { name: 'compute', delayS: board.computeS, source: 'control arithmetic, worst case of the board' },
+    { name: 'compute', delayS: controlS(vehicle), source: 'control arithmetic, worst case of the board' },
     { name: 'pwm', delayS: 0.5 / motorPwmHz(vehicle), source: 'half a PWM period until the new duty acts' },
   ];
   return { shares, totalS: shares.reduce((sum, share) => sum + share.delayS, 0) };

@@ -95,6 +95,8 @@ export interface BoardFacts {
   edgeS: number;
   /** Time for the control arithmetic, worst case, s. */
   computeS: number;
+  /** Time that the loops of both wheels add to it, with encoders, worst case, s. */
+  wheelLoopS: number;
   /** Sample period of the control loop, s. */
   samplePeriodS: number;
   /** PWM frequency as the firmware sets it up, Hz (the lowest over the board's timers). */

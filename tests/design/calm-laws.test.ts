@@ -10,10 +10,19 @@ import type { Vehicle } from '../../src/vehicle/vehicle.js';
 import { demoVehicle } from './demo-vehicle.js';
 
 const demo = demoVehicle('rules');
-const SPEED_MPS = 0.84;
+/** Speed at which a gain of 600 per m^2 without memory swings by more than 12 mm, but does not grow for ever, m/s. */
+const SPEED_MPS = (() => {
+  const { vehicle } = at(0.012, 0.3, 0.7);
+  for (let speedMps = 0.7; speedMps < 1; speedMps += 0.002) {
+    const { gains } = bestLaw(vehicle, speedMps, 600);
+    const swingM = largestSwingM(vehicle, { gains, speedMps }, 600);
+    if (swingM > 0.0125 && Number.isFinite(swingM)) return speedMps;
+  }
+  throw new Error('no such speed');
+})();
 
 /** The tight class of a vehicle whose law is the wanted gain without memory, at a speed where that swings. */
-function swinging(swingM: number, tightestRadiusM: number) {
+function at(swingM: number, tightestRadiusM: number, speedMps: number) {
   const vehicle: Vehicle = {
     ...demo,
     tolerance: { motorGain: 0, lag: 0, grip: 0 },
@@ -22,10 +31,12 @@ function swinging(swingM: number, tightestRadiusM: number) {
     control: { ...demo.control, stateMemory: false, swingM },
   };
   const range = classRanges(vehicle).find(({ name }) => name === 'tight')!;
-  const gains = bestLaw(vehicle, SPEED_MPS, 600).gains;
+  const gains = bestLaw(vehicle, speedMps, 600).gains;
   const limits = speedLimits(vehicle, range);
-  return { vehicle, base: { range, limits, allowedMps: SPEED_MPS, gains } };
+  return { vehicle, base: { range, limits, allowedMps: speedMps, gains } };
 }
+
+const swinging = (swingM: number, tightestRadiusM: number) => at(swingM, tightestRadiusM, SPEED_MPS);
 
 const swingOf = (vehicle: Vehicle, gains: ReturnType<typeof bestLaw>['gains']) =>
   largestSwingM(vehicle, { gains, speedMps: SPEED_MPS }, 600);

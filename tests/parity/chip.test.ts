@@ -6,6 +6,7 @@ import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { controlS } from '../../src/design/delay.js';
 import { renderFirmware } from '../../src/firmware/render.js';
 import { CARTS, SHEET, cart, quickDesign } from '../firmware/cart.js';
 import { runOnChip } from './chip-program.js';
@@ -30,6 +31,6 @@ describe('C++ on the chip equals the twin', () => {
     const { numbers, stepCycles } = runOnChip(program, wanted.input);
     expect(firstDifference(wanted, numbers)).toBeUndefined();
     // What the design counts on as the worst case of the control arithmetic.
-    expect(Math.max(...stepCycles) / CYCLES_PER_S).toBeLessThan(vehicle.board.computeS);
+    expect(Math.max(...stepCycles) / CYCLES_PER_S).toBeLessThan(controlS(vehicle));
   });
 });

@@ -107,6 +107,8 @@ export const AVR_16_MHZ = {
   digitalReadS: 5e-6,
   // from the last reading to the motors' registers; tests/parity and tests/firmware/cost.test.ts measure it
   computeS: 150e-6,
+  // tests/parity/chip.test.ts measures it
+  wheelLoopS: 50e-6,
   samplePeriodS: SAMPLE_PERIOD_S,
   pwmHz: PHASE_CORRECT_PWM_HZ,
   pwmSteps: 255,

@@ -106,6 +106,8 @@ export const esp32: BoardFacts = {
   edgeS: 30e-6,
   digitalReadS: 5e-6,
   computeS: 2e-3,
+  // an estimate, as that is
+  wheelLoopS: 4e-4,
   samplePeriodS: 5e-3,
   pwmHz: 20e3,
   // The range of duty_u16(); at 20 kHz the timer itself resolves 11 bits, as 80 MHz / 2^12 is already less than 20 kHz.

@@ -52,6 +52,8 @@ export const pico: BoardFacts = {
   edgeS: 30e-6,
   digitalReadS: 5e-6,
   computeS: 2e-3,
+  // an estimate, as that is
+  wheelLoopS: 4e-4,
   samplePeriodS: 5e-3,
   pwmHz: 20e3,
   // The range of duty_u16(); at 20 kHz the counter itself resolves 125 MHz / 20 kHz = 6250 steps.
