@@ -1,7 +1,7 @@
 /** The AVR registers behind a vehicle's encoders. */
-import type { PinFacts } from '../vehicle/board-facts.js';
 import type { EncoderWiring } from '../vehicle/encoder.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
+import { portOf } from './view-registers.js';
 
 interface EncoderChannel {
   /** Variable that counts the edges. */
@@ -28,11 +28,6 @@ export interface EncoderView {
   encoderPorts: readonly EncoderPort[];
   /** Names of the encoders' pins. */
   encoderPins: readonly { name: string }[];
-}
-
-function portOf(pin: PinFacts): { name: string; bit: number } {
-  if (pin.port === undefined) throw new Error(`Pin ${pin.label} has no port.`);
-  return pin.port;
 }
 
 function channelOf(edges: EncoderChannel['edges'], { a, b, inverted }: EncoderWiring): EncoderChannel {

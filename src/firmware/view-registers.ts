@@ -44,7 +44,8 @@ export interface RegisterView {
 /** Channels that ADMUX tells apart; bit MUX5 of ADCSRB has the rest (data sheets of the larger chips). */
 const CHANNELS_SELECTED = 8;
 
-function portOf(pin: PinFacts): { name: string; bit: number } {
+/** Port and bit of a pin; on AVR boards every pin that a program drives or reads has them. */
+export function portOf(pin: PinFacts): { name: string; bit: number } {
   if (pin.port === undefined) throw new Error(`Pin ${pin.label} has no port.`);
   return pin.port;
 }
