@@ -16,6 +16,7 @@ const TOOLS = [
 
 /** What only the tests need. */
 const TEST_TOOLS = [
+  { name: 'cppcheck', command: 'cppcheck' },
   { name: 'tmux', command: 'tmux' },
   { name: 'libsimavr-dev', file: '/usr/include/simavr/sim_avr.h' },
   { name: 'parallel', command: 'parallel' },

@@ -50,7 +50,9 @@ void takeReading(uint8_t i, int16_t count) {
   const bool on = value >= HIGH_COVERAGE_255THS;
   coverage[i] = value;
   coverageSum = static_cast<int16_t>(coverageSum + value);
-  if (on) onLine = static_cast<SensorBits>(onLine | bit);
+  if (on) {
+    onLine = static_cast<SensorBits>(onLine | bit);
+  }
   bit = static_cast<SensorBits>(bit + bit);
 }
 
@@ -97,10 +99,11 @@ void measure(uint8_t first, uint8_t last) {
   if (first > 0 && last < LAST) {
     sight.offsetMmQ6 = meanOf(leftEdge, rightEdge);
   } else if (first > 0) {
-    if (int32_t{leftEdge} - GAP_MIDDLE_MM_Q6[SENSOR_COUNT] > CORNER_WIDTH_MM_Q6) sight.reach = -1;
+    if (static_cast<int32_t>(leftEdge) - GAP_MIDDLE_MM_Q6[SENSOR_COUNT] > CORNER_WIDTH_MM_Q6)
+      sight.reach = -1;
     sight.offsetMmQ6 = static_cast<int16_t>(leftEdge - HALF_LINE_MM_Q6);
   } else if (last < LAST) {
-    if (int32_t{GAP_MIDDLE_MM_Q6[0]} - rightEdge > CORNER_WIDTH_MM_Q6) sight.reach = 1;
+    if (static_cast<int32_t>(GAP_MIDDLE_MM_Q6[0]) - rightEdge > CORNER_WIDTH_MM_Q6) sight.reach = 1;
     sight.offsetMmQ6 = static_cast<int16_t>(rightEdge + HALF_LINE_MM_Q6);
   } else {
     sight.offsetMmQ6 = 0;

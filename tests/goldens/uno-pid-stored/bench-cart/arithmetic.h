@@ -36,6 +36,11 @@ inline int32_t product(int16_t a, int16_t b) {
 #endif
 }
 
+// The high word of a number. A shift by 16 moves whole bytes; others go bit by bit.
+inline int16_t highWord(int32_t number) {
+  return static_cast<int16_t>(number >> 16);
+}
+
 // The high word of a product, as cheap as can be.
 inline int16_t highProduct(int16_t a, int16_t b) {
 #ifdef __AVR__
@@ -62,7 +67,7 @@ inline int16_t highProduct(int16_t a, int16_t b) {
       : [a] "a"(a), [b] "a"(b));
   return result;
 #else
-  return static_cast<int16_t>((int32_t{a} * b) >> 16);
+  return highWord(product(a, b));
 #endif
 }
 
@@ -95,9 +100,4 @@ inline void addProduct(int32_t& sum, int16_t a, int16_t b) {
 #else
   sum += int32_t{a} * b;
 #endif
-}
-
-// The high word of a number. A shift by 16 moves whole bytes; others go bit by bit.
-inline int16_t highWord(int32_t number) {
-  return static_cast<int16_t>(number >> 16);
 }
