@@ -22,11 +22,17 @@ function writePure(files: readonly RenderedFile[], folder: string): string[] {
     .filter((name) => name.endsWith('.cpp') && name !== 'sensing.cpp');
 }
 
-/** A program for this machine that fails on undefined behaviour; returns its path. */
+/** A program for this machine that fails on undefined behaviour and on access out of bounds; returns its path. */
 export function compileForHost(files: readonly RenderedFile[], folder: string): string {
   const sources = writePure(files, folder);
   const includes = [`-I${cpp('host')}`, `-I${folder}`];
-  const flags = ['-std=gnu++11', '-O1', '-fsanitize=undefined', '-fno-sanitize-recover=all', ...includes];
+  const flags = [
+    '-std=gnu++11',
+    '-O1',
+    '-fsanitize=undefined,address',
+    '-fno-sanitize-recover=all',
+    ...includes,
+  ];
   execFileSync('g++', [...flags, ...WARNINGS, '-fsyntax-only', join(folder, 'sensing.cpp')]);
   const inputs = [cpp('harness.cpp'), ...sources.map((name) => join(folder, name))];
   execFileSync('g++', [...flags, ...WARNINGS, ...inputs, '-o', join(folder, 'harness')]);

@@ -28,6 +28,9 @@ test('they are of every board, kind, scheme, controller and length', () => {
   expect(seen(({ control, sensors }) => `${control.kind} ${sensors.kind}`)).toBe(4);
   expect(seen(({ sensors }) => sensors.calibration?.mode)).toBe(3);
   expect(seen(({ sensors }) => sensors.positionsMm === undefined)).toBe(2);
+  expect(seen(({ encoders }) => encoders?.channels)).toBe(3);
+  expect(seen(({ control }) => control.integral)).toBe(4);
+  expect(seen(({ control }) => `${control.kind} ${control.overrides === undefined}`)).toBe(3);
   expect(seen(({ speeds }) => (speeds.classes === 'auto' ? 0 : speeds.classes.length))).toBe(6);
 });
 

@@ -7,32 +7,30 @@
 import fc from 'fast-check';
 import { checkSheet } from '../../src/sheet/check.js';
 import type { Sheet } from '../../src/sheet/sheet-types.js';
-import type { BoardId } from '../../src/vehicle/board-facts.js';
 import { BOARDS, BOARD_IDS } from '../../src/vehicle/boards.js';
 import type { DriverSchemeId } from '../../src/vehicle/drivers.js';
-import { proposePins, type PinPlan, type PinRequest } from '../../src/vehicle/pin-plan.js';
+import { proposePins, type PinRequest } from '../../src/vehicle/pin-plan.js';
 import { decimal } from './decimal.js';
+import { control, encoders, type Wiring } from './valid-extras.js';
 import { drive } from './valid-drive.js';
 import { geometry } from './valid-geometry.js';
 
-interface Wiring {
-  board: BoardId;
-  request: PinRequest;
-  plan: PinPlan;
-}
+/** Channels of each wheel's encoder; none as often as some. */
+const ENCODER_CHANNELS = [0, 1, 2];
 
 const SCHEMES: readonly DriverSchemeId[] = ['pwm-dir', 'pwm-in-in', 'dual-pwm'];
 
-/** Every wiring that the boards allow. */
+/** Every wiring that the boards allow; every encoder where there is room for one. */
 const WIRINGS: readonly Wiring[] = BOARD_IDS.flatMap((board) =>
   SCHEMES.flatMap((scheme) =>
     (['analog', 'digital'] as const).flatMap((sensorKind) =>
       [false, ...(scheme === 'pwm-in-in' ? [true] : [])].flatMap((standby) =>
-        Array.from({ length: 15 }, (_, index): PinRequest => ({
+        Array.from({ length: 15 * ENCODER_CHANNELS.length }, (_, index): PinRequest => ({
           sensorKind,
-          sensorCount: index + 2,
+          sensorCount: (index % 15) + 2,
           scheme,
           standby,
+          encoderChannels: ENCODER_CHANNELS[Math.floor(index / 15)]!,
         })).flatMap((request) => {
           const plan = proposePins(board, request);
           return 'sensorPins' in plan ? [{ board, request, plan }] : [];
@@ -94,10 +92,17 @@ function speeds(radiusMm: number, topSpeedMps: number): fc.Arbitrary<Sheet['spee
 export const sheetCandidates: fc.Arbitrary<Sheet> = fc
   .tuple(wiring, fc.constantFrom<Sheet['control']['kind']>('pid', 'rules'))
   .chain(([wired, kind]) =>
-    fc.tuple(fc.constant(wired), fc.constant(kind), geometry(wired.request, kind), calibration(wired), drive),
+    fc.tuple(
+      fc.constant(wired),
+      control(kind, wired.request.sensorCount),
+      geometry(wired.request, kind),
+      calibration(wired),
+      drive,
+    ),
   )
-  .chain(([wired, kind, { line, bar }, calibrated, { drive: vehicle, power, topSpeedMps }]) => {
+  .chain(([wired, controlled, { line, bar }, calibrated, driven]) => {
     const { board, request, plan } = wired;
+    const { drive: vehicle, power, topSpeedMps } = driven;
     const inverted = fc.boolean();
     return fc
       .record({
@@ -105,6 +110,7 @@ export const sheetCandidates: fc.Arbitrary<Sheet> = fc
         speeds: speeds(line.tightestRadiusMm, topSpeedMps),
         lineLevel: fc.constantFrom<'high' | 'low'>('high', 'low'),
         inverted: fc.tuple(inverted, inverted),
+        encoded: encoders(wired, driven),
         countdownS: decimal(0, 5),
         runLimitS: fc.integer({ min: 1, max: 3600 }),
         tolerances: fc.record({
@@ -136,7 +142,8 @@ export const sheetCandidates: fc.Arbitrary<Sheet> = fc
           },
         },
         power,
-        control: { kind },
+        ...rest.encoded,
+        control: controlled,
         speeds: rest.speeds,
         start: { buttonPin: plan.buttonPin, countdownS: rest.countdownS, runLimitS: rest.runLimitS },
         telemetry: { mode: 'off' },
