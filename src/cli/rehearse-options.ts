@@ -1,5 +1,6 @@
 /** The options of `fairlead rehearse`, as its parts read them. */
 import { InvalidArgumentError } from 'commander';
+import type { Fault } from '../rehearsal/fault.js';
 import type { EngineName } from '../rehearsal/engine.js';
 import type { Shard } from '../rehearsal/shards.js';
 
@@ -25,6 +26,7 @@ export interface RehearseOptions {
   merge?: string[];
   curve?: boolean;
   spreads?: boolean;
+  fault?: Fault[];
   json?: boolean;
 }
 

@@ -19,13 +19,13 @@ export interface DrawnRun {
 /** The first run that was lost, or else the first, driven again for its trace. */
 export async function drawnRun(
   results: readonly RunResult[],
-  { parts, laps }: Study,
+  { parts, laps, faults }: Study,
   lane: Lane,
 ): Promise<DrawnRun | undefined> {
   const chosen = results.find((result) => result.loss !== undefined) ?? results[0];
   if (chosen === undefined) return undefined;
   const engine = await engineFrom(parts);
-  const result = await engine.run(runSetup(parts.vehicle, lane, chosen.seed, laps, true));
+  const result = await engine.run(runSetup(parts.vehicle, lane, chosen.seed, laps, true, faults));
   const { trace, loss } = result;
   return trace && { result, driven: { lane, trace, ...(loss === undefined ? {} : { loss }) } };
 }

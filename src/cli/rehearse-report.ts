@@ -94,7 +94,9 @@ async function driveAgain(
   const sum = new ErrorBandSum(lane.lengthM);
   for (const [i, seed] of seeds.entries()) {
     io.progress(`report: driving again ${i + 1} of ${seeds.length} runs`);
-    const result = await engine.run(runSetup(study.parts.vehicle, lane, seed, study.laps, true));
+    const result = await engine.run(
+      runSetup(study.parts.vehicle, lane, seed, study.laps, true, study.faults),
+    );
     if (result.trace !== undefined) sum.add(result.trace);
     if (wanted.has(seed)) traces.set(seed, { ...result, seed });
   }

@@ -3,9 +3,11 @@ import { basename } from 'node:path';
 import { loadCourse } from '../course/load-course.js';
 import type { Design } from '../design/design.js';
 import { enginePartsOf } from '../rehearsal/engines.js';
+import { checkFaults } from '../rehearsal/fault.js';
 import { PART_VERSION, shardRange, type StudyIdentity, type StudyPart } from '../rehearsal/shards.js';
 import { type Study, studyFacts, studyReport } from '../rehearsal/study.js';
 import { rehearsalText, type RehearsalNames } from '../report/rehearsal-text.js';
+import { endingText } from '../report/ending-text.js';
 import type { LoadedSheet } from '../sheet/load.js';
 import { visible } from '../sheet/words.js';
 import { VERSION } from '../version.js';
@@ -27,17 +29,23 @@ export interface LoadedStudy {
 export async function loadStudy(
   path: string,
   coursePath: string,
-  { on, laps }: Pick<RehearseOptions, 'on' | 'laps'>,
+  { on, laps, fault }: Pick<RehearseOptions, 'on' | 'laps' | 'fault'>,
   io: Io,
 ): Promise<LoadedStudy> {
   io.progress('designing ...');
   const loaded = await loadDesign(path);
   const course = await loadCourse(coursePath);
+  if (fault !== undefined) checkFaults(fault, loaded.design.vehicle, on);
   io.progress('making the engine ready ...');
   const parts = await enginePartsOf(on, { digest: loaded.digest }, loaded.design);
   io.progress('');
   const names = { vehicle: loaded.sheet.name, course: basename(coursePath), laps };
-  return { study: { parts, course: course.course, laps }, loaded, course, names };
+  return {
+    study: { parts, course: course.course, laps, ...(fault && { faults: fault }) },
+    loaded,
+    course,
+    names,
+  };
 }
 
 export async function rehearseRuns(
@@ -66,6 +74,7 @@ export async function rehearseRuns(
     return;
   }
   io.stdout(rehearsalText(report, course.lane, names));
+  if (options.fault !== undefined) io.stdout(`\n${endingText(report)}`);
   for (const note of report.notes) io.stdout(`Note: ${note}\n`);
   if (run !== undefined && isPlotted) io.stdout(`\n${plotOf(run, io)}`);
   if (options.svg !== undefined) io.stdout(`\nPicture: ${visible(options.svg)}\n`);

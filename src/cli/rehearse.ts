@@ -12,6 +12,7 @@ import {
   shardOf,
   svgName,
 } from './rehearse-options.js';
+import { faultOption, faultsHelp } from './rehearse-faults.js';
 import { wholeNumber } from './whole-number.js';
 
 const EXAMPLES = `
@@ -71,6 +72,7 @@ export function register(program: Command, io: Io): void {
       '--spreads',
       'drive nothing; show what differs between drawn vehicles, and where each range comes from',
     )
+    .option('--fault <fault>', 'a fault to inject, see below; can be given several times', faultOption)
     .option('--svg <file>', 'draw the driven path, or where it was lost, as an SVG picture', svgName)
     .option(
       '--report <file>',
@@ -78,7 +80,7 @@ export function register(program: Command, io: Io): void {
       reportName,
     )
     .option('--json', 'print one JSON document: runs, finished, lost, lapS, boundLapS, ratio, ..., list')
-    .addHelpText('after', EXAMPLES)
+    .addHelpText('after', () => `${EXAMPLES}\n${faultsHelp()}`)
     .action((paths: string[], options: RehearseOptions) => rehearseCommand(command, paths, options, io));
 }
 
@@ -105,16 +107,21 @@ async function rehearseCommand(
   if (course === undefined) command.error("error: required option '--course <file>' not specified");
   if (more.length > 0) command.error('error: at most two sheets can be compared');
   if (second !== undefined) {
-    if (shard !== undefined || options.svg !== undefined || options.curve === true)
-      command.error('error: --shard, --svg and --curve take one sheet');
+    if (
+      shard !== undefined ||
+      options.svg !== undefined ||
+      options.curve === true ||
+      options.fault !== undefined
+    )
+      command.error('error: --shard, --svg, --curve and --fault take one sheet');
     const { compareCommand } = await import('./rehearse-compare.js');
     await compareCommand([path, second], course, options, io);
     return;
   }
   if (options.onSecond !== undefined) command.error('error: --on-second goes with two sheets');
   if (options.curve === true) {
-    if (shard !== undefined || options.on !== 'twin')
-      command.error('error: --curve drives the twin, and not in parts');
+    if (shard !== undefined || options.on !== 'twin' || options.fault !== undefined)
+      command.error('error: --curve drives the twin, not in parts and without faults');
     await (await import('./rehearse-curve.js')).curveCommand(path, course, options, io);
     return;
   }

@@ -63,6 +63,16 @@ export function reasonsOf(features: Features): readonly Reason[] {
   });
 }
 
+/** The reason that so many flashes stand for. */
+export function reasonOfFlashes(flashes: number): Reason['name'] | undefined {
+  return REASONS.find((reason) => reason.flashes === flashes)?.name;
+}
+
+/** What a reason means; the name itself where it is none. */
+export function reasonWords(name: string): string {
+  return REASONS.find((reason) => reason.name === name)?.about ?? name;
+}
+
 /** Paragraphs on what the LED shows. */
 function ledParagraphs(features: Features): string[] {
   return [

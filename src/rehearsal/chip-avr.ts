@@ -17,7 +17,12 @@ const REGISTER_BYTES = 0x100;
 /** Reset flags and their register: power-on, watchdog. */
 const MCUSR = 0x54;
 const PORF = 0x01;
+const BORF = 0x04;
 const WDRF = 0x08;
+/** The instruction that jumps to itself; status register and its bit that lets interrupts in. */
+const JUMP_TO_SELF = 0xcfff;
+const SREG = 0x5f;
+const INTERRUPTS = 0x80;
 /** Channel selection of the converter. */
 const ADMUX = 0x7c;
 const SELECT_MASK = 0x07;
@@ -123,11 +128,23 @@ export class AvrChip {
     }
   }
 
-  private restart(): void {
+  /** The program hangs where it is, interrupts off: `rjmp .-2`. */
+  hang(): void {
+    const { cpu } = this;
+    cpu.progMem[cpu.pc] = JUMP_TO_SELF;
+    cpu.data[SREG]! &= ~INTERRUPTS;
+  }
+
+  /** The supply breaks down and returns: a brown-out reset. */
+  breakDown(): void {
+    this.restart(BORF);
+  }
+
+  private restart(resetFlags = WDRF): void {
     this.resetPending = false;
-    this.resets++;
+    if (resetFlags === WDRF) this.resets++;
     this.cyclesBefore += this.cpu.cycles;
-    this.start(WDRF, this.cpu.data.slice(this.model.ramStart));
+    this.start(resetFlags, this.cpu.data.slice(this.model.ramStart));
     this.wiring.pinsChanged();
   }
 

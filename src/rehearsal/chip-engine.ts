@@ -12,6 +12,8 @@ import { AvrChip, CLOCK_HZ, pinNumber } from './chip-avr.js';
 import { type ChipImage, buildSketch } from './chip-build.js';
 import { type ChipEncoders, chipEncoders } from './chip-encoders.js';
 import { ChipMotors } from './chip-motors.js';
+import { LedReader, WATCHED_S, ledPin, type Ending } from './ending.js';
+import type { Fault } from './fault.js';
 import type { Engine, RunResult, RunSetup } from './engine.js';
 import { Plant } from './plant.js';
 import { RunMonitor } from './run-monitor.js';
@@ -36,13 +38,14 @@ class ChipRun {
   private readonly sensorPins: readonly number[];
   private readonly buttonPin: number;
   private readonly encoders: ChipEncoders | undefined;
+  private readonly broken = new Set<Fault>();
 
   constructor(
     image: ChipImage,
     private readonly vehicle: Vehicle,
-    setup: RunSetup,
+    private readonly setup: RunSetup,
   ) {
-    this.plant = new Plant(setup.plant, setup.lane);
+    this.plant = new Plant(setup.plant, setup.lane, setup.faults);
     this.monitor = new RunMonitor(this.plant, setup);
     this.motors = new ChipMotors(vehicle, STEP_CYCLES);
     const sensorOfChannel = new Map(vehicle.bar.pins.map((pin, i) => [pin.adc?.channel, i]));
@@ -75,13 +78,41 @@ class ChipRun {
     let index = 0;
     while (motors.lastDriven < 0 && index < setOffBy) this.step(index++);
     while (!monitor.ended) {
+      this.break(plant.timeS);
       this.step(index++);
       state.dutyLeft = motors.dutyLeft;
       state.dutyRight = motors.dutyRight;
       plant.step(state.dutyLeft, state.dutyRight, STEP_S);
       monitor.observe(state, chip.cycles - motors.lastDriven > STOPPED_S * CLOCK_HZ);
     }
-    return monitor.result();
+    const result = monitor.result();
+    return result.ending?.motorsOff === true
+      ? { ...result, ending: this.watch(result.ending, index) }
+      : result;
+  }
+
+  /** Faults of program and supply, when their time has come. */
+  private break(timeS: number): void {
+    for (const fault of this.setup.faults ?? []) {
+      if (timeS < fault.atS || this.broken.has(fault)) continue;
+      this.broken.add(fault);
+      if (fault.kind === 'program') this.chip.hang();
+      if (fault.kind === 'supply') this.chip.breakDown();
+    }
+  }
+
+  /** Reads the LED of a vehicle whose motors are off, and whether they stay so. */
+  private watch(ending: Ending, from: number): Ending {
+    const { chip, motors } = this;
+    const led = ledPin(this.vehicle);
+    const reader = new LedReader();
+    const { lastDriven } = motors;
+    const until = from + WATCHED_S / STEP_S;
+    for (let index = from; index < until && reader.flashes === undefined; index++) {
+      this.step(index);
+      if (led !== undefined) reader.look(chip.isHigh(pinNumber(led)), index * STEP_S);
+    }
+    return { ...ending, reason: reader.reason, restarted: motors.lastDriven > lastDriven };
   }
 }
 

@@ -4,6 +4,8 @@
  * The twin runs the controller itself, chip and micropython the rendered firmware; the plant and the observer are the same.
  */
 import type { Lane } from '../course/lane.js';
+import type { Ending } from './ending.js';
+import type { Fault } from './fault.js';
 import type { PlantParameters } from './plant-parameters.js';
 
 export type EngineName = 'twin' | 'chip' | 'micropython';
@@ -17,6 +19,8 @@ export interface RunSetup {
   timeLimitS: number;
   /** Whether to keep a trace. */
   sampleTrace: boolean;
+  /** Faults to inject; with them a run goes on through a loss until the firmware has stopped the vehicle. */
+  faults?: readonly Fault[];
 }
 
 /** How a run can be lost. */
@@ -72,6 +76,8 @@ export interface RunResult {
   /** Root mean square over time of the axle's distance from the lane, m. */
   rmsLateralM: number;
   maxLateralM: number;
+  /** With faults only. */
+  ending?: Ending;
   trace?: Trace;
 }
 

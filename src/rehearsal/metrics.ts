@@ -6,6 +6,7 @@
  */
 import { fractionToPercent, mToMm } from '../sheet/units.js';
 import { CONFIDENCE_SHARE, clopperPearson } from '../statistics/rates.js';
+import type { Ending } from './ending.js';
 import type { EngineName, LossReason, RunResult } from './engine.js';
 
 /** One run, as `rehearse --json` lists it. */
@@ -26,6 +27,8 @@ export interface RunRecord {
   /** Where on the lane it was lost, mm from the start line, and in which lap, from 1. */
   lostAtMm?: number;
   lostInLap?: number;
+  /** With --fault only. */
+  ending?: Ending;
 }
 
 /** What `rehearse --json` gives. */
@@ -113,6 +116,7 @@ function toRecord(result: RunResult, lapM: number): RunRecord {
     timeS: result.timeS,
     rmsLateralMm: mToMm(result.rmsLateralM),
     maxLateralMm: mToMm(result.maxLateralM),
+    ...(result.ending && { ending: result.ending }),
     ...(loss === undefined
       ? {}
       : {

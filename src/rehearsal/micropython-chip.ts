@@ -25,6 +25,8 @@ export interface Surroundings {
   drive(gpio: number, level: number): void;
   /** Makes the next edge that waits on a pin; returns whether there was one. */
   edge?(gpio: number): boolean;
+  /** Whether the program hangs from now on; without it, never. */
+  hangs?(): boolean;
   isSensor(gpio: number): boolean;
   isMotor(gpio: number): boolean;
 }
@@ -57,7 +59,10 @@ export class MicroPythonChip {
     private readonly surroundings: Surroundings,
     private readonly cause: number = RESET_CAUSE.powerOn,
   ) {
-    this.clock = new MicroPythonClock((durationS) => surroundings.advance(durationS));
+    this.clock = new MicroPythonClock(
+      (durationS) => surroundings.advance(durationS),
+      () => surroundings.hangs?.() ?? false,
+    );
   }
 
   private touch(): void {

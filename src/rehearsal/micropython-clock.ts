@@ -37,8 +37,16 @@ export class MicroPythonClock {
   private watchdogUs = Infinity;
   private watchdogLimitUs = Infinity;
 
-  /** @param advance lets the surroundings run on, s; may throw to end the run */
-  constructor(private readonly advance: (durationS: number) => void) {}
+  private hanging = false;
+
+  /**
+   * @param advance lets the surroundings run on, s; may throw to end the run
+   * @param hangs whether the program hangs from now on
+   */
+  constructor(
+    private readonly advance: (durationS: number) => void,
+    private readonly hangs: () => boolean = () => false,
+  ) {}
 
   /** Time since power-on, s. */
   get nowS(): number {
@@ -67,6 +75,9 @@ export class MicroPythonClock {
     if (behindS <= 0) return;
     this.worldUs = this.nowUs;
     this.advance(behindS);
+    if (this.hanging || !this.hangs()) return;
+    this.hanging = true;
+    for (;;) this.spend(LONGEST_BEHIND_US / 1e6);
   }
 
   sleep(timeS: number): void {

@@ -2,6 +2,7 @@
 import { type FirmwareDesign, type SheetIdentity, renderFirmware } from '../firmware/render.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import type { Engine, RunResult, RunSetup } from './engine.js';
+import { RESET_CAUSE } from './micropython-chip.js';
 import type { PythonFile } from './micropython-interpreter.js';
 import { runProgram } from './micropython-program.js';
 import { MicroPythonRun } from './micropython-run.js';
@@ -17,7 +18,14 @@ export class MicroPythonEngine implements Engine {
 
   async run(setup: RunSetup): Promise<RunResult> {
     const run = new MicroPythonRun(this.vehicle, setup);
-    return run.result(await runProgram(this.files, this.vehicle.board, run));
+    const { board } = this.vehicle;
+    const end = await runProgram(this.files, board, run);
+    if (setup.faults === undefined || end.by !== 'reset') return run.result(end);
+    // the board starts anew and shows why it stands
+    run.afterReset();
+    const supply = setup.faults.some(({ kind }) => kind === 'supply');
+    await runProgram(this.files, board, run, supply ? RESET_CAUSE.powerOn : RESET_CAUSE.watchdog);
+    return run.result(end);
   }
 }
 

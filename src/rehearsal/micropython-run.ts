@@ -7,8 +7,11 @@
  * as it would; after a reset these float and the motors are off.
  */
 import type { Vehicle } from '../vehicle/vehicle.js';
+import { LedReader, WATCHED_S, ledPin } from './ending.js';
 import type { RunResult, RunSetup } from './engine.js';
+import type { Fault } from './fault.js';
 import type { Surroundings } from './micropython-chip.js';
+import { ChipReset } from './micropython-clock.js';
 import { MicroPythonEncoders } from './micropython-encoders.js';
 import { MicroPythonMotors } from './micropython-motors.js';
 import { PowerCut, type ProgramEnd } from './micropython-program.js';
@@ -40,8 +43,20 @@ export class MicroPythonRun implements Surroundings {
   private started = false;
   private undrivenS = 0;
 
+  private readonly faults: readonly Fault[];
+  private readonly led: number | undefined;
+  private readonly reader = new LedReader();
+  private ledLit = false;
+  private supplyBroke = false;
+  /** After the motors went off: watched for so long, s; and whether one was driven again. */
+  private watchedS = 0;
+  private restarted = false;
+
   constructor(vehicle: Vehicle, setup: RunSetup) {
-    this.plant = new Plant(setup.plant, setup.lane);
+    this.faults = setup.faults ?? [];
+    const led = ledPin(vehicle);
+    this.led = led && Number(led.code);
+    this.plant = new Plant(setup.plant, setup.lane, setup.faults);
     this.monitor = new RunMonitor(this.plant, setup);
     this.motors = new MicroPythonMotors(vehicle);
     this.sensorOfPin = new Map(vehicle.bar.pins.map((pin, i) => [Number(pin.code), i]));
@@ -73,15 +88,47 @@ export class MicroPythonRun implements Surroundings {
     return this.encoders.edge(gpio);
   }
 
+  hangs(): boolean {
+    return this.started && this.faults.some(({ kind, atS }) => kind === 'program' && this.plant.timeS >= atS);
+  }
+
   drive(gpio: number, level: number): void {
+    if (gpio === this.led) this.ledLit = level > 0;
     this.motors.drive(gpio, level);
     if (this.motors.dutyLeft !== 0 || this.motors.dutyRight !== 0) this.started = true;
   }
 
   advance(durationS: number): void {
-    if (this.started) this.roll(durationS, false);
+    if (this.monitor.ended) this.watch(durationS);
+    else if (this.started) this.roll(durationS, false);
     else this.standingS += durationS;
-    if (this.monitor.ended || this.standingS > this.setOffByS) throw new PowerCut();
+    if (this.breaksSupply()) {
+      this.supplyBroke = true;
+      throw new ChipReset('The supply broke down.');
+    }
+    if (this.watched || this.standingS > this.setOffByS) throw new PowerCut();
+  }
+
+  /** Nothing more is to be learnt from this run. */
+  private get watched(): boolean {
+    if (!this.monitor.ended || this.faults.length === 0) return this.monitor.ended;
+    return this.reader.flashes !== undefined || this.watchedS > WATCHED_S || !this.motorsOff;
+  }
+
+  private get motorsOff(): boolean {
+    return this.monitor.stoppedByFirmware;
+  }
+
+  private breaksSupply(): boolean {
+    if (this.supplyBroke || !this.started) return false;
+    return this.faults.some(({ kind, atS }) => kind === 'supply' && this.plant.timeS >= atS);
+  }
+
+  /** Reads the LED of a vehicle whose motors are off. */
+  private watch(durationS: number): void {
+    this.watchedS += durationS;
+    this.reader.look(this.ledLit, this.watchedS);
+    if (this.motors.dutyLeft !== 0 || this.motors.dutyRight !== 0) this.restarted = true;
   }
 
   /** Lets the vehicle drive on with the duties in force, until the time is over or the run is. */
@@ -101,6 +148,20 @@ export class MicroPythonRun implements Surroundings {
 
   /** The outcome, after the program has ended. */
   result(end: ProgramEnd): RunResult {
+    const result = this.outcome(end);
+    if (result.ending === undefined) return result;
+    const { reason } = this.reader;
+    return { ...result, ending: { ...result.ending, reason, restarted: this.restarted } };
+  }
+
+  /** Takes the pins back to where they are after a reset; the vehicle rolls on until the observer has seen it. */
+  afterReset(): void {
+    this.motors.release();
+    this.ledLit = false;
+    while (!this.monitor.ended) this.roll(LOOK_S, true);
+  }
+
+  private outcome(end: ProgramEnd): RunResult {
     if (end.by === 'reset') this.motors.release();
     while (!this.monitor.ended) this.roll(LOOK_S, true);
     const result = this.monitor.result();

@@ -9,7 +9,7 @@ import { READING_NOISE, spreads } from './plant-table.js';
 import { Random } from './random.js';
 
 /** Streams of random numbers that belong to one seed; those of the vehicle, one for each row of its table, come last. */
-export const STREAM = { noise: 2, jitter: 3, vehicle: 16 } as const;
+export const STREAM = { noise: 2, jitter: 3, faults: 4, vehicle: 16 } as const;
 
 export interface PlantParameters {
   /** Repeats the noise; 0 for the nominal vehicle. */
@@ -35,6 +35,8 @@ export interface PlantParameters {
   stiction: number;
   /** Drag of the castor over the force of one stalled wheel at nominal voltage. */
   castorDrag: number;
+  /** Nominal battery voltage, V. */
+  nominalV: number;
   /** Battery voltage without load over nominal. */
   batteryFactor: number;
   /** Resistance of battery and wiring over that of one motor's winding. */
@@ -99,6 +101,7 @@ export function nominalPlant(vehicle: Vehicle): PlantParameters {
     frictionRight: 1,
     stiction: 1,
     castorDrag: 0,
+    nominalV: vehicle.power.nominalV,
     batteryFactor: 1,
     batteryResistanceRatio: batteryOhm(vehicle) / drive.windingOhm,
     grip: drive.grip,

@@ -8,6 +8,8 @@
 import type { Lane } from '../course/lane.js';
 import { makeProjection, type Projection } from '../course/projection.js';
 import { FloorLight } from './floor-light.js';
+import type { Fault } from './fault.js';
+import { PlantFaults } from './plant-faults.js';
 import { STREAM, type PlantParameters } from './plant-parameters.js';
 import { Random } from './random.js';
 import { VehicleMotion } from './vehicle-motion.js';
@@ -24,10 +26,13 @@ export class Plant extends VehicleMotion {
   private readonly ground: Float64Array;
   private readonly line: Float64Array;
   private readonly noise: Random;
+  private readonly faults: PlantFaults | undefined;
+  private readonly nominalV: number;
 
   constructor(
     parameters: Readonly<PlantParameters>,
     readonly lane: Lane,
+    faults: readonly Fault[] = [],
   ) {
     super(parameters, lane.poseAt(0));
     this.light = new FloorLight(parameters);
@@ -37,6 +42,9 @@ export class Plant extends VehicleMotion {
     this.ground = Float64Array.from(parameters.ground);
     this.line = Float64Array.from(parameters.line);
     this.noise = new Random(parameters.seed, STREAM.noise);
+    this.nominalV = parameters.nominalV;
+    if (faults.length > 0) this.faults = new PlantFaults(faults, this.positionsM.length, parameters.seed);
+    this.faults?.update(0);
   }
 
   get sensorCount(): number {
@@ -70,9 +78,30 @@ export class Plant extends VehicleMotion {
     for (let i = 0; i < this.shares.length; i++) out[i] = this.reading(i, this.shares[i]!);
   }
 
+  /** Drives on, with the faults of this moment. */
+  override step(dutyLeft: number, dutyRight: number, dtS: number): void {
+    const { faults } = this;
+    if (faults !== undefined) {
+      faults.update(this.timeS);
+      this.wheels.blockedLeft = faults.blockedLeft;
+      this.wheels.blockedRight = faults.blockedRight;
+      this.wheels.openFactor =
+        faults.batteryV === undefined ? this.parameters.batteryFactor : faults.batteryV / this.nominalV;
+      if (faults.shiftM !== 0 || faults.turnRad !== 0) this.push(faults.shiftM, faults.turnRad);
+    }
+    super.step(dutyLeft, dutyRight, dtS);
+  }
+
   private reading(i: number, covered: number): number {
+    const healthy = this.healthyReading(i, this.faults?.lineGone === true ? 0 : covered);
+    if (this.faults === undefined) return healthy;
+    const { kind, adcMaxCount } = this.parameters;
+    return this.faults.reading(i, healthy, kind === 'digital' ? 1 : adcMaxCount);
+  }
+
+  private healthyReading(i: number, covered: number): number {
     const { kind, lineLevel, adcMaxCount, noiseShare } = this.parameters;
-    const share = this.light.contrast * covered + this.light.ambient;
+    const share = this.light.contrast * covered + this.light.ambient + (this.faults?.lightShare ?? 0);
     const noise = noiseShare === 0 ? 0 : noiseShare * this.noise.noise();
     if (kind === 'digital') return share + noise > 0.5 === (lineLevel === 'high') ? 1 : 0;
     const ground = this.ground[i]!;

@@ -7,6 +7,7 @@
  * the first lap is from standing and runs from the last moment before the vehicle set off.
  */
 import type { Lane } from '../course/lane.js';
+import type { Ending } from './ending.js';
 import type { LossReason, RunResult, RunSetup } from './engine.js';
 import type { PlantParameters } from './plant-parameters.js';
 import type { Plant } from './plant.js';
@@ -22,6 +23,8 @@ const PROGRESS_M = 0.01;
 const SET_OFF_M = 0.02;
 /** Time for start-up, countdown and calibration, s. */
 const START_S = 15;
+/** With faults: time after a loss in which the firmware may still stop the vehicle, s. */
+const GIVE_UP_S = 30;
 /** Below this speed the vehicle counts as standing, m/s. */
 const STANDING_MPS = 0.005;
 
@@ -50,18 +53,26 @@ export class RunMonitor {
   private maxLateralM = 0;
   private loss: RunResult['loss'];
   private finished = false;
+  /** With faults: when the first of them comes, and when a motor was last driven, s. */
+  private readonly firstFaultS: number | undefined;
+  private drivenS = 0;
+  /** Whether the firmware has stopped the vehicle. */
+  stoppedByFirmware = false;
 
   constructor(
     private readonly plant: Plant,
-    private readonly setup: Pick<RunSetup, 'laps' | 'timeLimitS' | 'sampleTrace'>,
+    private readonly setup: Pick<RunSetup, 'laps' | 'timeLimitS' | 'sampleTrace' | 'faults'>,
   ) {
+    this.firstFaultS = setup.faults && Math.min(...setup.faults.map(({ atS }) => atS));
     this.lapM = lapEndM(plant.lane, plant.parameters.aheadM);
     this.lostM = lostBeyondM(plant.parameters, plant.lane);
     this.recorder = setup.sampleTrace ? new TraceRecorder() : undefined;
   }
 
   get ended(): boolean {
-    return this.finished || this.loss !== undefined;
+    if (this.finished || this.loss === undefined) return this.finished;
+    if (this.firstFaultS === undefined) return true;
+    return this.stoppedByFirmware || this.plant.timeS > this.loss.timeS + GIVE_UP_S;
   }
 
   /**
@@ -85,8 +96,11 @@ export class RunMonitor {
     }
     if (this.furthestM < SET_OFF_M && Math.abs(plant.speedMps) < STANDING_MPS) this.lapStartS = plant.timeS;
     const lineM = this.lapM * (this.lapsS.length + 1);
-    if (sM >= lineM) this.passLine((lineM - this.previousM) / (sM - this.previousM), dtS);
-    if (!this.finished) this.checkLost(distanceM, stopped);
+    if (sM >= lineM && this.loss === undefined)
+      this.passLine((lineM - this.previousM) / (sM - this.previousM), dtS);
+    if (state.dutyLeft !== 0 || state.dutyRight !== 0) this.drivenS = plant.timeS;
+    if (stopped) this.stoppedByFirmware = true;
+    if (!this.finished && this.loss === undefined) this.checkLost(distanceM, stopped);
 
     this.previousS = plant.timeS;
     this.previousM = sM;
@@ -104,8 +118,16 @@ export class RunMonitor {
       timeS,
       rmsLateralM: timeS > 0 ? Math.sqrt(this.squareSum / timeS) : 0,
       maxLateralM: this.maxLateralM,
+      ...(this.firstFaultS !== undefined && { ending: this.ending(this.firstFaultS) }),
       ...(this.recorder === undefined ? {} : { trace: this.recorder.finish() }),
     };
+  }
+
+  /** What the pins told; the engine adds what the LED tells. */
+  private ending(firstFaultS: number): Ending {
+    const motorsOff = this.stoppedByFirmware;
+    const reactionS = motorsOff ? Math.max(0, this.drivenS - firstFaultS) : null;
+    return { motorsOff, reactionS, reason: null, restarted: false };
   }
 
   /** @param share how much of the last step had passed when the axle crossed the line */

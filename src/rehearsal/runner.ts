@@ -6,6 +6,7 @@ import { lapBound, type Bound } from '../course/bound.js';
 import type { Lane } from '../course/lane.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import type { Engine, RunResult, RunSetup } from './engine.js';
+import type { Fault } from './fault.js';
 import { summarise, type RehearsalReport } from './metrics.js';
 import { perturbedPlant } from './plant-parameters.js';
 import { lapEndM } from './run-monitor.js';
@@ -44,6 +45,7 @@ export function runSetup(
   seed: number,
   laps: number,
   sampleTrace: boolean,
+  faults: readonly Fault[] = [],
 ): RunSetup {
   return {
     plant: perturbedPlant(vehicle, seed),
@@ -51,6 +53,7 @@ export function runSetup(
     laps: lane.closed ? laps : 1,
     timeLimitS: vehicle.start.runLimitS + START_ALLOWANCE_S,
     sampleTrace,
+    ...(faults.length > 0 && { faults }),
   };
 }
 

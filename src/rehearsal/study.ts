@@ -7,6 +7,7 @@ import type { Course } from '../course/course-types.js';
 import { courseNotes } from './course-fit.js';
 import type { EngineName, RunResult } from './engine.js';
 import type { EngineParts } from './engine-parts.js';
+import type { Fault } from './fault.js';
 import { summarise, type RehearsalReport } from './metrics.js';
 import { lapEndM } from './run-monitor.js';
 import { vehicleBound } from './runner.js';
@@ -15,6 +16,8 @@ export interface Study {
   parts: EngineParts;
   course: Course;
   laps: number;
+  /** Injected into every run. */
+  faults?: readonly Fault[];
 }
 
 /** What the outcome needs to know of a study beside the results. */
@@ -26,11 +29,12 @@ export interface StudyFacts {
   /** Length of a lap, m. */
   lapM: number;
   notes: string[];
+  faults?: readonly Fault[];
 }
 
 export type StudyReport = RehearsalReport & { notes: string[] };
 
-export function studyFacts({ parts, course, laps }: Study): StudyFacts {
+export function studyFacts({ parts, course, laps, faults }: Study): StudyFacts {
   const lane = new Lane(course);
   const { vehicle } = parts;
   return {
@@ -40,6 +44,7 @@ export function studyFacts({ parts, course, laps }: Study): StudyFacts {
     boundLapS: vehicleBound(vehicle, lane, laps).lapS,
     lapM: lapEndM(lane, vehicle.bar.aheadM),
     notes: courseNotes(vehicle, lane),
+    ...(faults && { faults }),
   };
 }
 

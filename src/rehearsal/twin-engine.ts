@@ -68,7 +68,7 @@ export class TwinEngine implements Engine {
     const jitter = new Random(setup.plant.seed, STREAM.jitter);
     const control = this.makeControl();
     const edges = this.timing.makeEdges?.();
-    const plant = new Plant(setup.plant, setup.lane);
+    const plant = new Plant(setup.plant, setup.lane, setup.faults);
     const monitor = new RunMonitor(plant, setup);
     const counts = new Int32Array(plant.sensorCount);
     const state: ControlState = { dutyLeft: 0, dutyRight: 0, classIndex: -1, phase: -1 };
@@ -90,8 +90,15 @@ export class TwinEngine implements Engine {
       drive(plant, state, samplePeriodS - actS);
       monitor.observe(state, control.stopped || (control.wheels?.blocked ?? false));
     }
-    return monitor.result();
+    return withReason(monitor.result(), control);
   }
+}
+
+/** The twin itself knows why it stopped. */
+function withReason(result: RunResult, { stopped, wheels }: ControlStep): RunResult {
+  if (result.ending === undefined) return result;
+  const reason = stopped ? 'LineLost' : wheels?.blocked === true ? 'WheelBlocked' : null;
+  return { ...result, ending: { ...result.ending, reason } };
 }
 
 /** A duty, -1 to 1, as the PWM can give it: the same steps forward and in reverse. */

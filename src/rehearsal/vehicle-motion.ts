@@ -40,7 +40,7 @@ export class VehicleMotion {
   protected placeIsOld = true;
   protected spotsAreOld = true;
   private readonly gripMps2: number;
-  private readonly wheels: WheelDrive;
+  protected readonly wheels: WheelDrive;
   /** Distance to the next joint of the floor, m. */
   private toBumpM: number;
 
@@ -83,8 +83,8 @@ export class VehicleMotion {
     const keptMean = ((1 - kept) * lagS) / h;
     const grip = this.gripMps2;
     // All in this one loop: numbers handed from function to function would each be put on the heap.
-    let left = this.leftMps;
-    let right = this.rightMps;
+    let left = wheels.blockedLeft ? 0 : this.leftMps;
+    let right = wheels.blockedRight ? 0 : this.rightMps;
     let heading = this.headingRad;
     let turn = 0;
     let xM = this.xM;
@@ -142,9 +142,14 @@ export class VehicleMotion {
   /** A joint of the floor. */
   private bump(): void {
     const { bumpEveryM, bumpLateralM, bumpHeadingRad } = this.parameters;
-    this.xM -= bumpLateralM * Math.sin(this.headingRad);
-    this.yM += bumpLateralM * Math.cos(this.headingRad);
-    this.headingRad += bumpHeadingRad;
+    this.push(bumpLateralM, bumpHeadingRad);
     this.toBumpM += bumpEveryM;
+  }
+
+  /** Shifts the vehicle, m to the left, and turns it, rad. */
+  protected push(shiftM: number, turnRad: number): void {
+    this.xM -= shiftM * Math.sin(this.headingRad);
+    this.yM += shiftM * Math.cos(this.headingRad);
+    this.headingRad += turnRad;
   }
 }

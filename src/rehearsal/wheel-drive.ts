@@ -27,6 +27,11 @@ export class WheelDrive {
   steadyRightMps = 0;
   /** Battery under load over nominal. */
   batteryFactor: number;
+  /** Battery without load over nominal. */
+  openFactor: number;
+  /** Wheels that something holds. */
+  blockedLeft = false;
+  blockedRight = false;
   private readonly startLeft: number;
   private readonly startRight: number;
   /** Top speeds of the motors as warm as they are, and when to look again, s. */
@@ -36,7 +41,7 @@ export class WheelDrive {
 
   constructor(private readonly parameters: Readonly<PlantParameters>) {
     const { startDuty, frictionLeft, frictionRight, driftLeft, driftRight } = parameters;
-    this.batteryFactor = parameters.batteryFactor;
+    this.batteryFactor = this.openFactor = parameters.batteryFactor;
     this.startLeft = Math.min(0.99, startDuty * frictionLeft);
     this.startRight = Math.min(0.99, startDuty * frictionRight);
     this.topLeft = parameters.topLeftMps;
@@ -69,8 +74,12 @@ export class WheelDrive {
       loadLeft = (drag * along) / 2 - turning;
       loadRight = (drag * along) / 2 + turning;
     }
-    this.steadyLeftMps = this.steady(left, this.startLeft, loadLeft, leftMps) * topLeft;
-    this.steadyRightMps = this.steady(right, this.startRight, loadRight, rightMps) * topRight;
+    this.steadyLeftMps = this.blockedLeft
+      ? 0
+      : this.steady(left, this.startLeft, loadLeft, leftMps) * topLeft;
+    this.steadyRightMps = this.blockedRight
+      ? 0
+      : this.steady(right, this.startRight, loadRight, rightMps) * topRight;
   }
 
   /** Motors get warmer by an exponential. */
@@ -84,8 +93,12 @@ export class WheelDrive {
 
   /** Battery under load; counter-voltages over nominal. */
   private sag(left: number, right: number, counterLeft: number, counterRight: number): void {
-    const { batteryFactor, batteryResistanceRatio } = this.parameters;
-    if (batteryResistanceRatio === 0) return;
+    const { batteryResistanceRatio } = this.parameters;
+    const batteryFactor = this.openFactor;
+    if (batteryResistanceRatio === 0) {
+      this.batteryFactor = batteryFactor;
+      return;
+    }
     let squares = 0;
     let back = 0;
     if (left * (left * batteryFactor - counterLeft) > 0) {

@@ -47,13 +47,13 @@ export async function driveRange(
   onRuns?: (done: number) => void,
   signal?: AbortSignal,
 ): Promise<RunResult[]> {
-  const { parts, course, laps } = study;
+  const { parts, course, laps, faults } = study;
   const engine = await engineFrom(parts);
   const lane = new Lane(course);
   const results: RunResult[] = [];
   for (let i = 0; i < runs; i++) {
     signal?.throwIfAborted();
-    results.push(await engine.run(runSetup(parts.vehicle, lane, first + i, laps, false)));
+    results.push(await engine.run(runSetup(parts.vehicle, lane, first + i, laps, false, faults)));
     onRuns?.(results.length);
     // a moment for signals and progress
     if (signal) await new Promise((resolve) => setImmediate(resolve));

@@ -20,6 +20,7 @@ describe('nominalPlant', () => {
     expect(nominal.positionsM).toHaveLength(6);
     expect(nominal).toMatchObject({
       seed: 0,
+      nominalV: 6,
       batteryFactor: 1,
       noiseShare: 0,
       startLateralM: 0,

@@ -19,6 +19,7 @@ export function plainPlant(changes: Partial<PlantParameters> = {}): PlantParamet
     frictionRight: 1,
     stiction: 1,
     castorDrag: 0,
+    nominalV: 6,
     batteryFactor: 1,
     batteryResistanceRatio: 0,
     grip: 0.7,
