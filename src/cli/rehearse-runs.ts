@@ -74,7 +74,7 @@ export async function rehearseRuns(
     return;
   }
   io.stdout(rehearsalText(report, course.lane, names));
-  if (options.fault !== undefined) io.stdout(`\n${endingText(report)}`);
+  if (options.fault !== undefined) io.stdout(`\n${endingText(report, loaded.design.controller)}`);
   for (const note of report.notes) io.stdout(`Note: ${note}\n`);
   if (run !== undefined && isPlotted) io.stdout(`\n${plotOf(run, io)}`);
   if (options.svg !== undefined) io.stdout(`\nPicture: ${visible(options.svg)}\n`);

@@ -71,7 +71,7 @@ export interface RunResult {
   loss?: Loss;
   /** Time of each full lap, s; the first one is from standing. */
   lapsS: number[];
-  /** Simulated time, s. */
+  /** Simulated time up to the finish or the loss, s. */
   timeS: number;
   /** Root mean square over time of the axle's distance from the lane, m. */
   rmsLateralM: number;

@@ -44,7 +44,7 @@ export const FAULT_FORMS: readonly { form: string; about: string }[] = [
     form: 'light=P%',
     about: 'light on all sensors, P % of the difference between line and ground; may be negative',
   },
-  { form: 'battery=U V', about: 'the battery has U volts without load, written 4.8V' },
+  { form: 'battery=UV', about: 'the battery has U volts without load, such as 4.8V' },
   { form: 'wheel=SIDE:blocked', about: 'a wheel, left or right, does not turn' },
   { form: 'line=gone', about: 'there is no line on the floor any more' },
   {
@@ -65,7 +65,7 @@ type What = Fault extends infer F ? (F extends Fault ? Omit<F, 'atS' | 'duration
 
 class BadFault extends Error {}
 
-function within(text: string | undefined, least: number, most: number, unit: string): number {
+function within(text: string | undefined, least: number, most: number, unit: string | undefined): number {
   const value = Number(text);
   if (value < least || value > most)
     throw new BadFault(`${withUnit(value, unit)} is outside ${least} to ${withUnit(most, unit)}`);
@@ -82,7 +82,7 @@ const READERS: readonly [RegExp, (parts: readonly (string | undefined)[]) => Wha
       const kind = SENSOR_FAULTS.find((each) => each === how);
       if (kind === undefined)
         throw new BadFault(`a sensor can be ${joinOr(SENSOR_FAULTS)}, not ${quote(how ?? '')}`);
-      return { kind: 'sensor', sensorIndex: within(number, 1, MOST_SENSORS, '') - 1, how: kind };
+      return { kind: 'sensor', sensorIndex: within(number, 1, MOST_SENSORS, undefined) - 1, how: kind };
     },
   ],
   [

@@ -47,6 +47,8 @@ export class MicroPythonRun implements Surroundings {
   private readonly led: number | undefined;
   private readonly reader = new LedReader();
   private ledLit = false;
+  /** The board has started anew: nobody presses the button again. */
+  private rebooted = false;
   private supplyBroke = false;
   /** After the motors went off: watched for so long, s; and whether one was driven again. */
   private watchedS = 0;
@@ -79,6 +81,7 @@ export class MicroPythonRun implements Surroundings {
   }
 
   level(gpio: number, timeS: number): boolean | undefined {
+    if (gpio === this.buttonPin && this.rebooted) return undefined;
     if (gpio === this.buttonPin) return timeS >= PRESS_S && timeS < RELEASE_S ? false : undefined;
     const sensor = this.sensorOfPin.get(gpio);
     return sensor === undefined ? this.encoders.level(gpio) : this.plant.count(sensor) === 1;
@@ -89,7 +92,11 @@ export class MicroPythonRun implements Surroundings {
   }
 
   hangs(): boolean {
-    return this.started && this.faults.some(({ kind, atS }) => kind === 'program' && this.plant.timeS >= atS);
+    return (
+      this.started &&
+      !this.rebooted &&
+      this.faults.some(({ kind, atS }) => kind === 'program' && this.plant.timeS >= atS)
+    );
   }
 
   drive(gpio: number, level: number): void {
@@ -156,6 +163,7 @@ export class MicroPythonRun implements Surroundings {
 
   /** Takes the pins back to where they are after a reset; the vehicle rolls on until the observer has seen it. */
   afterReset(): void {
+    this.rebooted = true;
     this.motors.release();
     this.ledLit = false;
     while (!this.monitor.ended) this.roll(LOOK_S, true);

@@ -86,9 +86,11 @@ export class RunMonitor {
     const { plant } = this;
     const { sM, lateralM } = plant.place;
     const dtS = plant.timeS - this.previousS;
-    this.squareSum += lateralM * lateralM * dtS;
     const distanceM = Math.abs(lateralM);
-    if (distanceM > this.maxLateralM) this.maxLateralM = distanceM;
+    if (this.loss === undefined) {
+      this.squareSum += lateralM * lateralM * dtS;
+      if (distanceM > this.maxLateralM) this.maxLateralM = distanceM;
+    }
 
     if (sM > this.furthestM + PROGRESS_M) {
       this.furthestM = sM;
@@ -110,7 +112,7 @@ export class RunMonitor {
 
   /** The outcome; to be called when the run has ended. */
   result(): RunResult {
-    const { timeS } = this.plant;
+    const timeS = this.loss?.timeS ?? this.plant.timeS;
     return {
       seed: this.plant.parameters.seed,
       ...(this.loss === undefined ? {} : { loss: this.loss }),

@@ -1,4 +1,6 @@
 /** How runs with faults ended, for the terminal. */
+import type { ControllerConstants } from '../controller/constants.js';
+import { lineLossBoundS } from '../design/line-loss.js';
 import { reasonWords } from '../firmware/header.js';
 import type { Ending } from '../rehearsal/ending.js';
 import type { RehearsalReport } from '../rehearsal/metrics.js';
@@ -15,7 +17,7 @@ function motorsWords({ motorsOff, reactionS, restarted }: Ending): string {
 }
 
 /** A table of the runs, each line ended. */
-export function endingText({ list }: RehearsalReport): string {
+export function endingText({ list }: RehearsalReport, controller: ControllerConstants): string {
   const told = list.flatMap(({ seed, finished, ending }) => (ending ? [{ seed, finished, ending }] : []));
   const rows = told.slice(0, MOST_TOLD).map(({ seed, finished, ending }) => {
     const reason = ending.reason === null ? '' : reasonWords(ending.reason);
@@ -27,5 +29,5 @@ export function endingText({ list }: RehearsalReport): string {
     off.length > 1
       ? `Motors off in ${off.length} runs, after at most ${sToMs(Math.max(...off)).toFixed(0)} ms.\n`
       : '';
-  return `${table([['Seed', 'finished', 'motors', 'reason'], ...rows])}\n${more}${slowest}`;
+  return `${table([['Seed', 'finished', 'motors', 'reason'], ...rows])}\n${more}${slowest}Line lost for good at class speed: motors off within ${lineLossBoundS(controller).toFixed(2)} s, by the memory of the line.\n`;
 }
