@@ -26,7 +26,7 @@ export interface Surroundings {
   /** Makes the next edge that waits on a pin; returns whether there was one. */
   edge?(gpio: number): boolean;
   /** Whether the program hangs from now on; without it, never. */
-  hangs?(): boolean;
+  hangs?: () => boolean;
   isSensor(gpio: number): boolean;
   isMotor(gpio: number): boolean;
 }
@@ -59,10 +59,7 @@ export class MicroPythonChip {
     private readonly surroundings: Surroundings,
     private readonly cause: number = RESET_CAUSE.powerOn,
   ) {
-    this.clock = new MicroPythonClock(
-      (durationS) => surroundings.advance(durationS),
-      () => surroundings.hangs?.() ?? false,
-    );
+    this.clock = new MicroPythonClock((durationS) => surroundings.advance(durationS), surroundings.hangs);
   }
 
   private touch(): void {

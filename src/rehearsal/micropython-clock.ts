@@ -45,7 +45,7 @@ export class MicroPythonClock {
    */
   constructor(
     private readonly advance: (durationS: number) => void,
-    private readonly hangs: () => boolean = () => false,
+    private readonly hangs?: () => boolean,
   ) {}
 
   /** Time since power-on, s. */
@@ -75,7 +75,7 @@ export class MicroPythonClock {
     if (behindS <= 0) return;
     this.worldUs = this.nowUs;
     this.advance(behindS);
-    if (this.hanging || !this.hangs()) return;
+    if (this.hanging || this.hangs?.() !== true) return;
     this.hanging = true;
     for (;;) this.spend(LONGEST_BEHIND_US / 1e6);
   }

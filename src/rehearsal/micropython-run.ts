@@ -91,13 +91,10 @@ export class MicroPythonRun implements Surroundings {
     return this.encoders.edge(gpio);
   }
 
-  hangs(): boolean {
-    return (
-      this.started &&
-      !this.rebooted &&
-      this.faults.some(({ kind, atS }) => kind === 'program' && this.plant.timeS >= atS)
-    );
-  }
+  readonly hangs = (): boolean =>
+    this.started &&
+    !this.rebooted &&
+    this.faults.some(({ kind, atS }) => kind === 'program' && this.plant.timeS >= atS);
 
   drive(gpio: number, level: number): void {
     if (gpio === this.led) this.ledLit = level > 0;

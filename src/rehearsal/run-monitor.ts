@@ -24,7 +24,7 @@ const SET_OFF_M = 0.02;
 /** Time for start-up, countdown and calibration, s. */
 const START_S = 15;
 /** With faults: time after a loss in which the firmware may still stop the vehicle, s. */
-const GIVE_UP_S = 30;
+const GIVE_UP_S = 10;
 /** Below this speed the vehicle counts as standing, m/s. */
 const STANDING_MPS = 0.005;
 

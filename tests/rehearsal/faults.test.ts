@@ -13,10 +13,10 @@ import { MICROPYTHON_CARTS } from '../firmware/micropython-carts.js';
 
 const { lane } = await loadCourse('examples/tray-cart/nursery-lane.json');
 const rows: string[] = [];
-afterAll(() => console.log(['Faults and reactions:', ...rows].join('\n')));
+afterAll(() => process.stdout.write(['Faults and reactions:', ...rows, ''].join('\n')));
 
 const avr = quickDesign(cart());
-const python = quickDesign(cart(Object.values(MICROPYTHON_CARTS)[0]!));
+const python = quickDesign(cart(Object.values(MICROPYTHON_CARTS)[0]));
 const engines: [string, typeof avr, Engine][] = [
   ['twin', avr, twinEngine(avr.vehicle, avr.controller)],
   ['chip', avr, await chipEngine(SHEET, avr)],
