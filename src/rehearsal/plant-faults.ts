@@ -64,7 +64,7 @@ export class PlantFaults {
   }
 
   /** What a sensor reads in place of a healthy reading; 0 to `most`, counts or a level. */
-  reading(index: number, healthyCount: number, most: number): number {
+  faultyCount(index: number, healthyCount: number, most: number): number {
     const count = this.faulty(this.sensors[index], healthyCount, most);
     this.countBefore = count;
     return count;

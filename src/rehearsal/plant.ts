@@ -96,7 +96,7 @@ export class Plant extends VehicleMotion {
     const healthy = this.healthyReading(i, this.faults?.lineGone === true ? 0 : covered);
     if (this.faults === undefined) return healthy;
     const { kind, adcMaxCount } = this.parameters;
-    return this.faults.reading(i, healthy, kind === 'digital' ? 1 : adcMaxCount);
+    return this.faults.faultyCount(i, healthy, kind === 'digital' ? 1 : adcMaxCount);
   }
 
   private healthyReading(i: number, covered: number): number {
