@@ -2,7 +2,7 @@
  * Compiles a rendered sketch for a board with an AVR chip as the usual IDE does: same compiler, core and flags (platform.txt of the
  * Arduino AVR core 1.8: -Os, link-time optimisation, gnu++11, no exceptions).
  *
- * The core is compiled once for each version and set of flags, and kept; the sketch's own files are compiled with -Wall -Wextra,
+ * The core is compiled once for each version and set of flags, and kept; the sketch's own files are compiled with -Wall -Wextra -Wconversion -Wshadow,
  * and their warnings are told apart from those of the core's headers.
  */
 import { createHash } from 'node:crypto';
@@ -31,7 +31,7 @@ const CPP_FLAGS = ['-std=gnu++11', '-fno-exceptions', '-fno-threadsafe-statics']
 /** What the core's sources need beyond; its own warnings are nobody's concern here. WString.cpp misses DECIMAL_DIG. */
 const CORE_CPP_FLAGS = ['-w', '-fpermissive', '-DDECIMAL_DIG=17'];
 const LINK_FLAGS = ['-Os', '-flto', '-fuse-linker-plugin', '-Wl,--gc-sections'];
-const OWN_WARNINGS = ['-Wall', '-Wextra', '-fdiagnostics-color=never'];
+const OWN_WARNINGS = ['-Wall', '-Wextra', '-Wconversion', '-Wshadow', '-fdiagnostics-color=never'];
 
 function flagsFor(core: ArduinoCore): string[] {
   return [
