@@ -25,6 +25,43 @@ describe('C++ on the host equals the twin', () => {
   });
 });
 
+describe('the sanitisers report', () => {
+  it.each([
+    [
+      'a sum that leaves 32 bits',
+      'steering.speedQ29 += 0x7f000000L;',
+      /harness ended with .*signed integer overflow/,
+    ],
+    [
+      'a shift too far',
+      'steering.speedQ29 = 1L << (steering.speedQ29 + 70);',
+      /harness ended with .*shift exponent/,
+    ],
+    [
+      'a place just behind a table',
+      'lag = (&SPEED_CLASSES[CLASS_COUNT - 1].curvaturePerMQ8)[lag * 0 + sizeof(SpeedClass) / 2];',
+      /harness ended with .*insufficient space/,
+    ],
+    [
+      'a place behind a store, by a pointer',
+      'static int16_t store[4]; int16_t* volatile place = store; lag = place[4];',
+      /harness ended with [^]*global-buffer-overflow/,
+    ],
+  ])('%s, planted in the control law', async (_, planted, words) => {
+    const design = quickDesign(cart());
+    const begin = 'void advance() {\n';
+    const files = (await renderFirmware(SHEET, design)).map((file) => ({
+      ...file,
+      text: file.text.replace(begin, `${begin}  ${planted}\n`),
+    }));
+    expect(files.some(({ text }) => text.includes(planted))).toBe(true);
+    const { input } = reference(design, 100, 11);
+    expect(() =>
+      runOnHost(files, join(folder, `planted-${words.source.replaceAll(/\W/g, '')}`), input),
+    ).toThrow(words);
+  });
+});
+
 describe('the traces', () => {
   it('take the controller through every phase and every class', () => {
     const { expected } = reference(quickDesign(cart()), STEPS, 11);

@@ -1,6 +1,6 @@
 /**
- * Twin = C++ = MicroPython, bit for bit, on random sound sheets of all features; the C++ under the sanitisers for undefined behaviour
- * and for addresses.
+ * Twin = C++ = MicroPython, bit for bit, on random sound sheets of all features; the C++ on the host under the sanitisers for undefined
+ * behaviour and for addresses, and the first steps of each sheet on the emulated chip too.
  *
  * FAIRLEAD_PARITY_SHEETS names another number of sheets: `npm run bench -- parity` takes 200, which is 10^6 steps.
  */
@@ -15,12 +15,16 @@ import { checkSheet } from '../../src/sheet/check.js';
 import { toVehicle } from '../../src/sheet/to-vehicle.js';
 import { SHEET, quickDesign } from '../firmware/cart.js';
 import { validSheets } from '../properties/valid-sheets.js';
+import { runOnChip } from './chip-program.js';
+import { compileForChip } from './compile.js';
 import { runOnHost } from './host-program.js';
 import { runInMicroPython } from './micropython-program.js';
 import { firstDifference, reference } from './reference.js';
 
 const SHEETS = Number(process.env['FAIRLEAD_PARITY_SHEETS'] ?? 24);
 const STEPS = 5000;
+/** Fewer on the chip, which is emulated instruction by instruction. */
+const CHIP_STEPS = 500;
 const SEED = 8;
 const LONGEST_MS_PER_SHEET = 10_000;
 
@@ -48,6 +52,11 @@ describe('the language of the sheet equals the twin', () => {
           ? runOnHost(files, join(folder, String(i)), wanted.input)
           : await runInMicroPython(files, wanted.input, wanted.expected.length);
       expect(firstDifference(wanted, got), shown).toBeUndefined();
+      if (vehicle.language === 'arduino') {
+        const start = reference(design, CHIP_STEPS, SEED + i);
+        const { numbers } = runOnChip(compileForChip(files, join(folder, `chip-${i}`)), start.input);
+        expect(firstDifference(start, numbers), shown).toBeUndefined();
+      }
     }
   });
 
