@@ -7,16 +7,13 @@
  * step takes from the heap has to be collected one day, in the middle of a bend: there the limit is one bit less.
  */
 import {
-  CALIBRATION_BITS,
+  CLASS_SPEED_BITS,
   COEFFICIENT_BITS,
   CURVATURE_BITS,
   type ControllerConstants,
-  EDGE_BITS,
   FILTER_BITS,
   FRACTION_BITS,
-  FULL_COVERAGE,
   FULL_SPEED,
-  GAP_HALF_BITS,
   INTEGRAL_BITS,
   INTEGRAL_SPEED_BITS,
   LARGEST_CURVATURE,
@@ -27,67 +24,33 @@ import {
   TRACK_BITS,
 } from '../controller/constants.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
+import { type Bound, largest } from './bound.js';
+import { INT16_MAX } from './scales.js';
+import { sensingBounds } from './sensing-bounds.js';
 import { wheelLoopBounds } from './wheel-loop-bounds.js';
 
 export const INT32_MAX = 2 ** 31 - 1;
 const SMALL_INT_MAX = 2 ** 30 - 1;
-const INT16_MAX = 2 ** 15 - 1;
 
-/** Largest magnitude of one intermediate. */
-export interface Bound {
-  name: string;
-  magnitude: number;
-  /** Largest magnitude allowed where it is less than the machine's integers, for what C++ stores in 16 bits. */
-  limit?: number;
-}
-
-const largest = (values: readonly number[]) => Math.max(0, ...values.map(Math.abs));
-
-/** Largest place of an edge beside the middle of its gap, offset units. */
-function shiftBound({ sensing }: ControllerConstants): number {
-  return (largest(sensing.gapHalf) * largest(sensing.edgeTable)) / 2 ** (EDGE_BITS + GAP_HALF_BITS);
-}
-
-/** Largest offset that sensing can report, offset units. */
-function offsetBound(constants: ControllerConstants): number {
-  const { sensing } = constants;
-  return Math.ceil(largest(sensing.gapMiddle) + shiftBound(constants) + sensing.halfLine);
-}
-
-function sensingBounds(constants: ControllerConstants, adcMaxCount: number): Bound[] {
-  const { sensing } = constants;
-  const gain = sensing.digital ? 0 : largest(sensing.gain);
-  const steps = sensing.edgeTable.slice(1).map((value, i) => value - (sensing.edgeTable[i] as number));
-  return [
-    { name: 'calibration gain', magnitude: gain, limit: INT16_MAX },
-    { name: 'reading times calibration gain', magnitude: adcMaxCount * gain },
-    {
-      name: 'coverage before its limits',
-      magnitude: (adcMaxCount * gain) >> CALIBRATION_BITS,
-      limit: INT16_MAX,
-    },
-    { name: 'half gap', magnitude: largest(sensing.gapHalf), limit: INT16_MAX },
-    { name: 'step of the edge table', magnitude: largest(steps), limit: INT16_MAX },
-    { name: 'half gap times edge table', magnitude: largest(sensing.gapHalf) * largest(sensing.edgeTable) },
-    { name: 'offset', magnitude: offsetBound(constants), limit: INT16_MAX },
-    { name: 'sum of coverages', magnitude: sensing.sensorCount * FULL_COVERAGE, limit: INT16_MAX },
-  ];
-}
-
-function steeringBounds({ steering, classes, rules }: ControllerConstants): Bound[] {
+function steeringBounds({ steering, classes, rules, integral }: ControllerConstants): Bound[] {
   const proportional = largest(classes.map((each) => each.proportional));
   const derivative = largest(classes.map((each) => each.derivative));
   const demanded = largest(classes.map((each) => each.curvature));
   const curvature = Math.max(steering.curvatureLimit, steering.searchCurvature, demanded);
+  const asked =
+    Math.ceil((INT16_MAX * (proportional + derivative)) / 2 ** steering.gainBits) + (integral?.limit ?? 0);
   const difference = rules ? largest(rules.right.map((right, i) => right - (rules.left[i] as number))) : 0;
   const tabled = difference * (rules?.curvatureFactor ?? 0);
   return [
-    { name: 'proportional and derivative sum', magnitude: INT16_MAX * proportional + INT16_MAX * derivative },
+    { name: 'proportional and derivative sum', magnitude: INT16_MAX * (proportional + derivative) },
     { name: 'filter product', magnitude: INT16_MAX * INT16_MAX },
     { name: 'filtered input', magnitude: (INT16_MAX << FILTER_BITS) * 2 },
     { name: 'curvature', magnitude: curvature, limit: INT16_MAX },
     { name: 'change of curvature', magnitude: 2 * curvature, limit: INT16_MAX },
     { name: 'filtered curvature', magnitude: curvature * 2 ** COEFFICIENT_BITS + 2 ** COEFFICIENT_BITS },
+    { name: 'curvature asked for', magnitude: asked },
+    { name: 'curvature cut off', magnitude: asked + steering.curvatureLimit },
+    { name: 'difference of a rule', magnitude: difference, limit: INT16_MAX },
     { name: 'curvature of the rule table', magnitude: tabled },
     { name: 'curvature factor of the rule table', magnitude: rules?.curvatureFactor ?? 0, limit: INT16_MAX },
     { name: 'curvature of a rule', magnitude: tabled / 2 ** RULE_CURVATURE_BITS, limit: INT16_MAX },
@@ -113,6 +76,12 @@ function integralBounds({ integral, classes }: ControllerConstants): Bound[] {
   ];
 }
 
+/** How much less curvature than a class's own there can be while it is in force. */
+function bendBelow(classes: ControllerConstants['classes'], i: number): number {
+  const wider = i === 0 ? 0 : classes[i - 1]!.curvature;
+  return classes[i]!.curvature - wider;
+}
+
 function driveBounds({ steering, drive, classes, rules }: ControllerConstants): Bound[] {
   const curvature = Math.max(steering.curvatureLimit, steering.searchCurvature);
   const target = Math.max(drive.searchSpeed, largest(classes.map((each) => each.speed)));
@@ -123,22 +92,38 @@ function driveBounds({ steering, drive, classes, rules }: ControllerConstants): 
   const base = rules
     ? Math.max(ahead, Math.min(2 * FULL_SPEED, (ahead * sums) >> (FRACTION_BITS + 1)))
     : ahead;
-  const perSpeed = (curvature * drive.halfTrack) / 2 ** CURVATURE_BITS;
-  const half = (FULL_SPEED * perSpeed) / 2 ** TRACK_BITS;
+  // a shift to the right rounds down, so that what is negative may grow by one
+  const perSpeed = Math.ceil((curvature * drive.halfTrack) / 2 ** CURVATURE_BITS);
+  const half = Math.ceil((FULL_SPEED * perSpeed) / 2 ** TRACK_BITS);
+  const gained = largest(
+    classes.map(
+      (each, i) => each.speed + Math.floor((bendBelow(classes, i) * each.speedSlope) / 2 ** drive.slopeBits),
+    ),
+  );
   const duty = Math.max(drive.slopeLeft, drive.slopeRight);
   return [
     { name: 'speed of a class', magnitude: target, limit: INT16_MAX },
     { name: 'speed slope', magnitude: slope, limit: INT16_MAX },
     { name: 'speed slope product', magnitude: demanded * slope },
+    { name: 'speed of a class with what its slope gains', magnitude: gained, limit: INT16_MAX },
+    {
+      name: 'lead before its limits',
+      magnitude: Math.max(target, gained, 2 ** CLASS_SPEED_BITS - 1),
+      limit: INT16_MAX,
+    },
     { name: 'lead', magnitude: Math.max(drive.leadUp, drive.leadDown), limit: INT16_MAX },
+    { name: 'sum of a rule', magnitude: sums, limit: INT16_MAX },
     { name: 'speed times rule', magnitude: ahead * sums },
     { name: 'curvature times half track', magnitude: curvature * drive.halfTrack },
-    { name: 'turn for each speed', magnitude: Math.floor(perSpeed), limit: INT16_MAX },
+    { name: 'turn for each speed', magnitude: perSpeed, limit: INT16_MAX },
+    { name: 'speed times turn', magnitude: FULL_SPEED * perSpeed },
+    { name: 'inner wheel behind the outer one', magnitude: Math.max(FULL_SPEED, 2 * half), limit: INT16_MAX },
     { name: 'half track', magnitude: drive.halfTrack, limit: INT16_MAX },
     { name: 'wheel speed before its limits', magnitude: base + half, limit: INT16_MAX },
     { name: 'change of speed', magnitude: 4 * FULL_SPEED, limit: INT16_MAX },
     { name: 'change of speed times motor step', magnitude: 4 * FULL_SPEED * drive.motorStep },
-    { name: 'modelled speed', magnitude: 2 ** SPEED_MODEL_BITS },
+    // the last step before full speed ends short of it: what is missing is multiplied by less than one
+    { name: 'modelled speed', magnitude: 2 ** SPEED_MODEL_BITS - 1 },
     { name: 'duty slope', magnitude: duty, limit: INT16_MAX },
     { name: 'duty product', magnitude: FULL_SPEED * duty },
     {

@@ -5,9 +5,8 @@ import {
   WHEEL_MODEL_BITS,
   type ControllerConstants,
 } from '../controller/constants.js';
-import type { Bound } from './intervals.js';
-
-const INT16_MAX = 2 ** 15 - 1;
+import type { Bound } from './bound.js';
+import { INT16_MAX } from './scales.js';
 
 /** None without encoders. */
 export function wheelLoopBounds({ wheelLoop, drive }: ControllerConstants): Bound[] {
@@ -21,6 +20,7 @@ export function wheelLoopBounds({ wheelLoop, drive }: ControllerConstants): Boun
   const beyond = part + correctionLimit;
   return [
     { name: 'edges in the window', magnitude: edges, limit: INT16_MAX },
+    { name: 'edges in the window before one leaves it', magnitude: edges + edgeLimit, limit: INT16_MAX },
     { name: 'edges times speed', magnitude: edges * speedPerEdge },
     { name: 'wanted speeds in the window', magnitude: FULL_SPEED * 2 ** windowBits },
     { name: 'modelled wheel speed', magnitude: 2 ** WHEEL_MODEL_BITS },

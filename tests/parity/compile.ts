@@ -12,20 +12,30 @@ const PURE = /^(arithmetic|constants|rule_table|sensing|steering|wheel_loop|cali
 
 const WARNINGS = ['-Wall', '-Wextra', '-Wconversion', '-Wshadow', '-Werror'];
 
-function writePure(files: readonly RenderedFile[], folder: string): string[] {
+function writePure(
+  files: readonly RenderedFile[],
+  folder: string,
+  change = (text: string) => text,
+): string[] {
   mkdirSync(folder, { recursive: true });
   const pure = files.filter(({ path }) => PURE.test(basename(path)));
-  for (const { path, text } of pure) writeFileSync(join(folder, basename(path)), text);
+  for (const { path, text } of pure) writeFileSync(join(folder, basename(path)), change(text));
   // The harness includes sensing.cpp itself.
   return pure
     .map(({ path }) => basename(path))
     .filter((name) => name.endsWith('.cpp') && name !== 'sensing.cpp');
 }
 
-/** A program for this machine that fails on undefined behaviour and on access out of bounds; returns its path. */
+/** Casts to 16 bits, each of which has to leave the number as it is (cpp/host/exact.h). */
+const watchCasts = (text: string): string => text.replaceAll('static_cast<int16_t>(', 'exact<int16_t>(');
+
+/**
+ * A program for this machine that fails on undefined behaviour, on access out of bounds, and on a number that a cast to 16 bits would
+ * change; returns its path.
+ */
 export function compileForHost(files: readonly RenderedFile[], folder: string): string {
-  const sources = writePure(files, folder);
-  const includes = [`-I${cpp('host')}`, `-I${folder}`];
+  const sources = writePure(files, folder, watchCasts);
+  const includes = [`-I${cpp('host')}`, `-I${folder}`, '-include', cpp('host/exact.h')];
   const flags = [
     '-std=gnu++11',
     '-O1',

@@ -25,12 +25,17 @@ describe('C++ on the host equals the twin', () => {
   });
 });
 
-describe('the sanitisers report', () => {
+describe('the host reports', () => {
   it.each([
     [
       'a sum that leaves 32 bits',
       'steering.speedQ29 += 0x7f000000L;',
       /harness ended with .*signed integer overflow/,
+    ],
+    [
+      'a number cut to 16 bits',
+      'lag = static_cast<int16_t>(lag + 32767 + (lag <= 0));',
+      /-?\d+ does not fit its type/,
     ],
     [
       'a shift too far',

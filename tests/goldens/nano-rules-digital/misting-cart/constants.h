@@ -208,8 +208,27 @@ constexpr bool slopesFit(uint8_t i) {
 static_assert(slopesFit(1), "speed of a class with what its slope gains");
 static_assert(fits16(2L * CURVATURE_LIMIT_PER_M_Q8), "change of curvature");
 static_assert(fits16(2L * SEARCH_CURVATURE_PER_M_Q8), "curvature of the search");
-static_assert(fits16(3L * FULL_SPEED_Q13 + LEAD_UP_SPEED_Q13 + 1), "wheel speed before its limits");
-static_assert(fits16(3L * FULL_SPEED_Q13 + LEAD_DOWN_SPEED_Q13 + 1), "the same, backward");
+constexpr int64_t largerOf(int64_t a, int64_t b) {
+  return a > b ? a : b;
+}
+// Divided by 2^bits, rounded up.
+constexpr int64_t shiftedUp(int64_t value, uint8_t bits) {
+  return (value + (int64_t{1} << bits) - 1) >> bits;
+}
+constexpr int64_t largestTurnQ14() {
+  return shiftedUp(largerOf(CURVATURE_LIMIT_PER_M_Q8, SEARCH_CURVATURE_PER_M_Q8) * HALF_TRACK_M_Q14,
+                   CURVATURE_BITS);
+}
+constexpr int64_t largestHalfQ13() {
+  return shiftedUp(FULL_SPEED_Q13 * largestTurnQ14(), TRACK_BITS);
+}
+constexpr int64_t largestBaseQ13() {
+  return largerOf(2L * FULL_SPEED_Q13,
+                  FULL_SPEED_Q13 + largerOf(LEAD_UP_SPEED_Q13, LEAD_DOWN_SPEED_Q13));
+}
+static_assert(fits16(largestTurnQ14()), "turn for each speed");
+static_assert(fits16(2 * largestHalfQ13()), "inner wheel behind the outer one");
+static_assert(fits16(largestBaseQ13() + largestHalfQ13()), "wheel speed before its limits");
 static_assert(fits16(4L * FULL_SPEED_Q13), "change of speed");
 static_assert(fits(GAP_SPEED_Q13_SAMPLES + FULL_SPEED_Q13), "way in a gap");
 static_assert(fits(CORNER_SPEED_Q13_SAMPLES + FULL_SPEED_Q13), "way after a corner");
