@@ -38,9 +38,9 @@ export const LISTED: readonly Listed[] = [
   {
     why: 'the same integers on their way into text and tables, and the limits of their types',
     where:
-      /^(firmware\/(constant|literals|view|view-classes)|design\/(scales|bound|edge-table|class-constants|integral-constants|bar-view))\.ts$/,
+      /^(firmware\/(constant|literals|view|view-classes)|design\/(scales|bound|intervals|edge-table|class-constants|integral-constants|bar-view))\.ts$/,
     names:
-      words(`value values left right curvature speed speedSlope derivativeFilter proportional derivative magnitude limit
+      words(`value values largest left right curvature speed speedSlope derivativeFilter proportional derivative magnitude limit
       INT16_MAX INT32_MAX edgeTable highCoverage coefficientOf
       integral integralGain`),
   },
