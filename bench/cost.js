@@ -64,5 +64,19 @@ for (const kind of ['pid', 'rules']) {
       ` sampled to PWM ${(tutorial.pwm.mean / ours.pwm.mean).toFixed(1)} mean, ${(tutorial.pwm.max / ours.pwm.max).toFixed(1)} max`,
   );
 }
-const { flashBytes, ramBytes } = await image(demo);
-console.log(`demo sheet: flash ${flashBytes} bytes (limit 8192), RAM ${ramBytes} bytes (limit 600)`);
+const built = await image(demo);
+const { flashBytes, ramBytes, stack, program } = built;
+const seen = measureSteps(
+  program,
+  wanderingLine(demo.sensors.count),
+  { ...SPAN, sensorCount: demo.sensors.count },
+  ramBytes,
+);
+const used = ramBytes + stack.bytes;
+console.log(
+  `demo sheet: flash ${flashBytes} bytes (limit 8192), RAM ${ramBytes} static + ${stack.bytes} stack = ${used} bytes (limit 600), head-room ${2048 - used} of 2048`,
+);
+console.log(
+  `  deepest stack, by the compiler: ${stack.chain.join(' > ')}, ${stack.bytes - stack.interruptBytes} bytes, and on top of it the interrupt ${stack.interruptChain.join(' > ')}, ${stack.interruptBytes} bytes;` +
+    ` by paint on the emulated chip: ${seen.stackBytes} bytes`,
+);

@@ -1,6 +1,8 @@
 export interface StepCosts {
   /** Measured steps. */
   steps: number;
+  /** How deep the stack came, by what is left of the paint above the static use. */
+  stackBytes: number;
   /** From the first conversion of a scan to the last write to the motors, cycles; one entry a step, as in all lists. */
   stepCycles: number[];
   /** Spent in interrupts since the step before. */
@@ -15,6 +17,7 @@ export function measureSteps(
   program: Uint8Array,
   reading: (channel: number, timeS: number) => number,
   span: { sensorCount: number; fromS: number; toS: number },
+  staticBytes?: number,
 ): StepCosts;
 
 export function wanderingLine(sensorCount: number): (channel: number, timeS: number) => number;

@@ -23,6 +23,11 @@ import {
 
 const CLOCK_HZ = 16e6;
 const RETI = 0x9518;
+/** Data sheet of the ATmega328P: 2048 bytes of RAM behind registers and input/output. */
+const RAM_START = 0x100;
+const RAM_BYTES = 2048;
+/** A byte that stack and data seldom hold. */
+const PAINT = 0xc5;
 const VECTORS_END = 0x34; // words; data sheet, Interrupt Vectors in ATmega328P: 26 vectors of two words
 /** OCR0A, OCR0B, OCR1A, OCR1B (low and high byte), OCR2A, OCR2B, and what connects them: TCCR0A, TCCR1A, TCCR2A. */
 const MOTOR_REGISTERS = [0x47, 0x48, 0x88, 0x89, 0x8a, 0x8b, 0xb3, 0xb4, 0x44, 0x80, 0xb0];
@@ -31,12 +36,14 @@ const MOTOR_REGISTERS = [0x47, 0x48, 0x88, 0x89, 0x8a, 0x8b, 0xb3, 0xb4, 0x44, 0
  * @param {Uint8Array} program flash memory from address 0
  * @param {(channel: number, timeS: number) => number} reading counts of a channel at a time
  * @param {{ sensorCount: number, fromS: number, toS: number }} span sensors, and the time that is measured; the button is pressed at 0.1 s
- * @returns {{ steps: number, stepCycles: number[], interruptCycles: number[], pwmCycles: number[], scanCycles: number[] }}
+ * @param {number} staticBytes of RAM, so that the paint above it shows how deep the stack came
+ * @returns {{ steps: number, stackBytes: number, stepCycles: number[], interruptCycles: number[], pwmCycles: number[], scanCycles: number[] }}
  */
-export function measureSteps(program, reading, { sensorCount, fromS, toS }) {
+export function measureSteps(program, reading, { sensorCount, fromS, toS }, staticBytes = 0) {
   const flash = new Uint16Array(0x4000);
   new Uint8Array(flash.buffer).set(program);
-  const cpu = new CPU(flash, 2048);
+  const cpu = new CPU(flash, RAM_BYTES);
+  cpu.data.fill(PAINT, RAM_START);
   cpu.data[0x54] = 1;
   new AVRIOPort(cpu, portBConfig);
   new AVRIOPort(cpu, portCConfig);
@@ -51,7 +58,14 @@ export function measureSteps(program, reading, { sensorCount, fromS, toS }) {
   let interrupts = 0;
   let interruptsBefore = 0;
   let written = 0;
-  const result = { steps: 0, stepCycles: [], interruptCycles: [], pwmCycles: [], scanCycles: [] };
+  const result = {
+    steps: 0,
+    stackBytes: 0,
+    stepCycles: [],
+    interruptCycles: [],
+    pwmCycles: [],
+    scanCycles: [],
+  };
   const endStep = () => {
     if (sampledAt === 0 || written <= sampledAt) return;
     if (scanBegan > fromS * CLOCK_HZ) {
@@ -102,6 +116,8 @@ export function measureSteps(program, reading, { sensorCount, fromS, toS }) {
     if (inInterrupt) interrupts += cpu.cycles - began;
     if (opcode === RETI) inInterrupt = false;
   }
+  const deepest = cpu.data.findIndex((byte, address) => address >= RAM_START + staticBytes && byte !== PAINT);
+  result.stackBytes = RAM_START + RAM_BYTES - deepest;
   return result;
 }
 

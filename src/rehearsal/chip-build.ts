@@ -12,6 +12,7 @@ import { tmpdir } from 'node:os';
 import { basename, join } from 'node:path';
 import type { RenderedFile } from '../firmware/render.js';
 import type { BoardId } from '../vehicle/board-facts.js';
+import { type StackUse, deepestStack } from './chip-stack.js';
 import { type ArduinoCore, cacheFolder, findCore, inPairs, runTool } from './chip-tools.js';
 
 /** A compiled sketch. */
@@ -21,6 +22,8 @@ export interface ChipImage {
   /** Flash and static RAM used, as the IDE reports them, bytes. */
   flashBytes: number;
   ramBytes: number;
+  /** The deepest that the stack can get. */
+  stack: StackUse;
   /** The compiler's warnings about the sketch's own files. */
   warnings: string[];
 }
@@ -30,7 +33,15 @@ const COMMON_FLAGS = ['-c', '-Os', '-ffunction-sections', '-fdata-sections', '-f
 const CPP_FLAGS = ['-std=gnu++11', '-fno-exceptions', '-fno-threadsafe-statics'];
 /** What the core's sources need beyond; its own warnings are nobody's concern here. WString.cpp misses DECIMAL_DIG. */
 const CORE_CPP_FLAGS = ['-w', '-fpermissive', '-DDECIMAL_DIG=17'];
-const LINK_FLAGS = ['-Os', '-flto', '-fuse-linker-plugin', '-Wl,--gc-sections'];
+/** Optimising at link time makes the functions: there the compiler says how much stack each takes, in files that it would put elsewhere. */
+const LINK_FLAGS = [
+  '-Os',
+  '-flto',
+  '-fuse-linker-plugin',
+  '-Wl,--gc-sections',
+  '-fstack-usage',
+  '-save-temps',
+];
 const OWN_WARNINGS = ['-Wall', '-Wextra', '-Wconversion', '-Wshadow', '-fdiagnostics-color=never'];
 
 function flagsFor(core: ArduinoCore): string[] {
@@ -118,6 +129,15 @@ async function writeSketch(files: readonly RenderedFile[], folder: string): Prom
   return sources;
 }
 
+/** What the compiler wrote about the functions' stacks when it linked. */
+async function stackUsage(folder: string): Promise<string> {
+  const names = (await readdir(folder)).filter((name) => /ltrans.*\.su$/.test(name));
+  return (await Promise.all(names.map((name) => readFile(join(folder, name), 'utf8')))).join('\n');
+}
+
+/** Bytes of a return address: chips with more than 128 KiB of flash have a program counter of three. */
+const returnBytes = (mcu: string): number => (/^atmega256/.test(mcu) ? 3 : 2);
+
 /**
  * Compiles and links a sketch.
  *
@@ -150,11 +170,14 @@ export async function buildSketch(files: readonly RenderedFile[], board: BoardId
       folder,
     );
     await runTool('avr-objcopy', ['-O', 'binary', '-R', '.eeprom', 'sketch.elf', 'sketch.bin'], folder);
+    const listing = (await runTool('avr-objdump', ['-dC', '--no-show-raw-insn', 'sketch.elf'], folder))
+      .stdout;
     const sizes = (await runTool('avr-size', ['-A', 'sketch.elf'], folder)).stdout;
     return {
       program: new Uint8Array(await readFile(join(folder, 'sketch.bin'))),
       flashBytes: sectionBytes(sizes, ['.text', '.data', '.bootloader']),
       ramBytes: sectionBytes(sizes, ['.data', '.bss', '.noinit']),
+      stack: deepestStack(listing, await stackUsage(folder), returnBytes(core.mcu)),
       warnings: outputs.flatMap(({ stderr }) => ownWarnings(stderr, folder)),
     };
   } finally {

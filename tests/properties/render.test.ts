@@ -8,6 +8,7 @@ import { checkSheet } from '../../src/sheet/check.js';
 import type { Sheet } from '../../src/sheet/sheet-types.js';
 import { toVehicle } from '../../src/sheet/to-vehicle.js';
 import type { BoardId } from '../../src/vehicle/board-facts.js';
+import { BOARDS } from '../../src/vehicle/boards.js';
 import { SHEET, quickDesign } from '../firmware/cart.js';
 import { validSheets } from './valid-sheets.js';
 
@@ -48,9 +49,10 @@ describe('random sound sheets', () => {
     expect(sketches).toHaveLength(COMPILED);
     for (const sheet of sketches) {
       const { files, board } = await render(sheet);
-      const { warnings, flashBytes } = await buildSketch(files, board);
+      const { warnings, flashBytes, ramBytes, stack } = await buildSketch(files, board);
       expect(warnings, JSON.stringify(sheet)).toEqual([]);
       expect(flashBytes).toBeGreaterThan(2000);
+      expect(ramBytes + stack.bytes, JSON.stringify(sheet)).toBeLessThan(BOARDS[board].ramBytes! / 2);
     }
   });
 });
