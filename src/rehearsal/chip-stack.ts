@@ -4,7 +4,8 @@
  *
  * An interrupt of an AVR chip shuts out the others (data sheet, Reset and Interrupt Handling), unless its code lets them in (`sei`): then
  * all of them are taken to lie on top of each other. What is called by address is taken to be any function that nothing calls by name. What
- * the compiler has no figure for is assembly of its library: there pushes are counted.
+ * the compiler has no figure for is assembly of its library: there pushes are counted, and a ring of calls is taken for what it is there, a
+ * function that drops its return address and goes on in another.
  */
 
 export interface StackUse {
@@ -20,7 +21,11 @@ export interface StackUse {
 interface Code {
   name: string;
   ownBytes: number;
+  /** By the compiler, not of its library. */
+  compiled: boolean;
   calls: readonly number[];
+  /** Out of the function: what has been called returns for it, so that a ring of jumps takes no stack. */
+  jumps: readonly number[];
   indirect: boolean;
   lets: boolean;
 }
@@ -74,10 +79,11 @@ function codeOf(listing: string, stackUsage: string, returnBytes: number): Map<n
       const code: Code = {
         name: plainName(name),
         ownBytes: known.get(plainName(name)) ?? pushes,
-        // a jump within a function stays there; one out of it is a call whose return serves both
-        // and the one to address 0 is a reset
-        calls: targets
-          .filter(({ isCall, to }) => to > 0 && (isCall || to < start || to >= end))
+        compiled: known.has(plainName(name)),
+        calls: targets.filter(({ isCall }) => isCall).map(({ to }) => to),
+        // one to address 0 is a reset
+        jumps: targets
+          .filter(({ isCall, to }) => !isCall && to > 0 && (to < start || to >= end))
           .map(({ to }) => to),
         indirect: /\se?icall\b/.test(body),
         lets: /\ssei\b/.test(body),
@@ -103,11 +109,12 @@ class Descent {
     const code = this.code.get(start);
     // a jump to the middle of a function is one into a shared ending, which takes nothing off the stack's top
     if (code === undefined) return { bytes: 0, chain: [] };
+    if (this.open.has(start) && !code.compiled) return { bytes: 0, chain: [] };
     if (this.open.has(start)) throw new Error(`${code.name} calls itself: its stack has no bound.`);
     this.open.add(start);
     let deepest: Deepest = { bytes: 0, chain: [] };
-    const indirect = code.indirect ? this.byAddress.filter((to) => !this.open.has(to)) : [];
-    for (const to of [...code.calls, ...indirect]) {
+    const others = [...code.jumps, ...(code.indirect ? this.byAddress : [])];
+    for (const to of [...code.calls, ...others.filter((each) => !this.open.has(each))]) {
       const below = this.from(to);
       if (below.bytes > deepest.bytes) deepest = below;
     }
@@ -126,7 +133,7 @@ class Descent {
  */
 export function deepestStack(listing: string, stackUsage: string, returnBytes: number): StackUse {
   const code = codeOf(listing, stackUsage, returnBytes);
-  const called = new Set([...code.values()].flatMap(({ calls }) => calls));
+  const called = new Set([...code.values()].flatMap(({ calls, jumps }) => [...calls, ...jumps]));
   const find = (test: (code: Code) => boolean) =>
     [...code].filter(([, each]) => test(each)).map(([at]) => at);
   const isVector = ({ name }: Code) => /^__vector_\d+$/.test(name);
