@@ -2,7 +2,7 @@
  * Calibration by sweep, in the firmware's integers: while the bar turns across the line, the least and the
  * largest reading of each sensor are kept; afterwards they give ground and gain.
  *
- * At the start the bar stands over the line, so that its two end sensors see ground: what they read first,
+ * At the start the bar stands over the line, so that its outermost analog sensors see ground: what they read first,
  * beside what they read at most and at least, tells whether the line reads higher or lower than the ground.
  */
 import { CALIBRATION_BITS, FULL_COVERAGE } from './constants.js';
@@ -25,10 +25,12 @@ export class SweepCalibration {
   /**
    * @param sensorCount number of sensors
    * @param minSpan least difference between line and ground that counts as contrast, counts
+   * @param levels which sensors are digital: those read higher over the line, whatever the analog ones do
    */
   constructor(
     private readonly sensorCount: number,
     private readonly minSpan: number,
+    private readonly levels: readonly boolean[] = [],
   ) {
     this.least = new Int32Array(sensorCount);
     this.most = new Int32Array(sensorCount);
@@ -48,8 +50,8 @@ export class SweepCalibration {
 
   /** Ground and gain of each sensor from what was seen. */
   finish(): SweepOutcome {
-    const last = this.sensorCount - 1;
-    const rise = this.riseOf(0) + this.riseOf(last);
+    const analog = Array.from({ length: this.sensorCount }, (_, i) => i).filter((i) => !this.levels[i]);
+    const rise = this.riseOf(analog[0] as number) + this.riseOf(analog.at(-1) as number);
     const ground = new Int32Array(this.sensorCount);
     const gain = new Int32Array(this.sensorCount);
     let flatSensor = -1;
@@ -61,8 +63,9 @@ export class SweepCalibration {
       }
       // up, so that the line itself is a full coverage
       const scale = Math.floor(((FULL_COVERAGE << CALIBRATION_BITS) + span - 1) / span);
-      ground[i] = rise >= 0 ? (this.least[i] as number) : (this.most[i] as number);
-      gain[i] = rise >= 0 ? scale : -scale;
+      const higher = rise >= 0 || this.levels[i] === true;
+      ground[i] = higher ? (this.least[i] as number) : (this.most[i] as number);
+      gain[i] = higher ? scale : -scale;
     }
     return { ok: flatSensor < 0, flatSensor, ground, gain };
   }

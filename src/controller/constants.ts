@@ -10,10 +10,16 @@ export type Phase = (typeof PHASE)[keyof typeof PHASE];
 
 export interface SensingConstants {
   sensorCount: number;
+  /** Every sensor is digital, and its reading 0 or 1. */
   digital: boolean;
+  /**
+   * Which sensors are digital, leftmost first. Beside analog ones they read 0 over ground and the converter's full scale over the line,
+   * so that one arithmetic serves both kinds.
+   */
+  levels: readonly boolean[];
   /** Digital sensors: level of the pin over the line. */
   lineLevelHigh: boolean;
-  /** Readings over ground, counts; leftmost first. Unused for digital sensors. */
+  /** Readings over ground, counts; leftmost first. Unused in a bar of digital sensors. */
   ground: readonly number[];
   /** Coverage per count above ground, negative where the line reads lower, in 1/2^CALIBRATION_BITS. */
   gain: readonly number[];

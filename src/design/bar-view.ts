@@ -27,8 +27,12 @@ export function weakestPeak(vehicle: Vehicle): number {
   return weakest;
 }
 
-/** Coverage 0..255 from which a sensor counts as on the line: half, or less where the line can slip between two. */
+/**
+ * Coverage 0..255 from which a sensor counts as on the line: half, or less where the line can slip between two analog ones. A digital
+ * sensor switches at half; in a mixed bar the analog ones do as it does, so that every sensor sees as far.
+ */
 export function highCoverage(vehicle: Vehicle): number {
+  if (vehicle.bar.kind !== 'analog') return (FULL_COVERAGE + 1) >> 1;
   const weakest = Math.round(weakestPeak(vehicle) * FULL_COVERAGE);
   return Math.max(16, (weakest + 1) >> 1);
 }

@@ -137,7 +137,7 @@ export function controllerConstants(
   };
   const wheelLoop = wheelLoopDesign(vehicle)?.constants;
   if (wheelLoop) constants.wheelLoop = wheelLoop;
-  if (vehicle.bar.calibration.mode === 'sweep' && vehicle.bar.kind === 'analog') {
+  if (vehicle.bar.calibration.mode === 'sweep' && vehicle.bar.kind !== 'digital') {
     constants.sweep = sweepConstants(vehicle, drive);
   }
   if (vehicle.control.kind === 'rules') {

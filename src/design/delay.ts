@@ -17,11 +17,12 @@ export function controlS({ board, encoders }: Vehicle): number {
 export function delayBudget(vehicle: Vehicle): { shares: DelayShare[]; totalS: number } {
   const { board, bar } = vehicle;
   const count = bar.positionsM.length;
-  const readS = bar.kind === 'analog' ? board.adcReadS : board.digitalReadS;
+  const analog = bar.kinds.filter((kind) => kind === 'analog').length;
+  const scanS = analog * board.adcReadS + (count - analog) * board.digitalReadS;
   const shares: DelayShare[] = [
     {
       name: 'scan',
-      delayS: (count * readS) / 2,
+      delayS: scanS / 2,
       source: `half of ${count} ${bar.kind} readings one after the other`,
     },
     { name: 'compute', delayS: controlS(vehicle), source: 'control arithmetic, worst case of the board' },

@@ -33,7 +33,7 @@ export function brakingMps2(vehicle: Vehicle): number {
 
 /** Filter on the curvature demand: with analog sensors only noise, with on-off readings also their steps. */
 export function demandFilterS(vehicle: Vehicle): number {
-  const stepped = vehicle.bar.kind === 'digital' || vehicle.control.kind === 'rules';
+  const stepped = vehicle.bar.kind !== 'analog' || vehicle.control.kind === 'rules';
   return Math.max(vehicle.board.samplePeriodS, stepped ? 0.025 : 0.006);
 }
 

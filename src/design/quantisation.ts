@@ -15,6 +15,7 @@ import {
   FULL_DUTY,
   fullSpeedMps,
 } from '../controller/constants.js';
+import type { Vehicle } from '../vehicle/vehicle.js';
 import type { Design } from './design.js';
 
 /** One constant. */
@@ -35,7 +36,7 @@ function quantised(name: string, unit: string, wanted: number, held: number): Qu
 export function quantisedConstants({ vehicle, classes, controller }: Design): Quantised[] {
   const { drive, bar, board } = vehicle;
   const { sensing, drive: held } = controller;
-  const rows = bar.kind === 'digital' ? [] : gainsOfSensors(bar.calibration, sensing.gain);
+  const rows = gainsOfSensors(bar, sensing.gain);
   const slope = ((1 - drive.startDuty) * FULL_DUTY) / (1 << SPEED_BITS);
   rows.push(
     quantised('half track width', 'm', drive.trackM / 2, held.halfTrack / 2 ** TRACK_BITS),
@@ -98,12 +99,14 @@ export function quantisedConstants({ vehicle, classes, controller }: Design): Qu
 }
 
 function gainsOfSensors(
-  { ground, line }: { ground: readonly number[]; line: readonly number[] },
+  { kinds, calibration: { ground, line } }: Vehicle['bar'],
   gain: readonly number[],
 ): Quantised[] {
-  return gain.map((held, i) => {
+  return gain.flatMap((held, i): Quantised[] => {
+    if (kinds[i] === 'digital') return [];
     const wanted = FULL_COVERAGE / ((line[i] as number) - (ground[i] as number));
-    return quantised(`sensor ${i + 1}: coverage per count`, '1/255', wanted, held / 2 ** CALIBRATION_BITS);
+    const name = `sensor ${i + 1}: coverage per count`;
+    return [quantised(name, '1/255', wanted, held / 2 ** CALIBRATION_BITS)];
   });
 }
 

@@ -37,7 +37,7 @@ function wideCoverage(vehicle: Vehicle): number {
 }
 
 export function sensingConstants(vehicle: Vehicle): SensingConstants {
-  const { positionsM, spotRadiusM, kind, lineLevel, calibration } = vehicle.bar;
+  const { positionsM, spotRadiusM, kind, kinds, lineLevel, calibration } = vehicle.bar;
   const count = positionsM.length;
   const pitch = meanPitchM(positionsM);
   const middles: number[] = [];
@@ -52,9 +52,14 @@ export function sensingConstants(vehicle: Vehicle): SensingConstants {
   return {
     sensorCount: count,
     digital: kind === 'digital',
+    levels: kinds.map((each) => each === 'digital'),
     lineLevelHigh: lineLevel === 'high',
     ground: calibration.ground,
-    gain: spans.map((span) => Math.round((FULL_COVERAGE << CALIBRATION_BITS) / span)),
+    gain: spans.map((span, i) => {
+      const gain = (FULL_COVERAGE << CALIBRATION_BITS) / span;
+      // a level over the line is a full coverage, no less
+      return kinds[i] === 'digital' ? Math.ceil(gain) : Math.round(gain);
+    }),
     gapMiddle: middles,
     gapHalf: halves,
     edgeTable: edgeTable(spotRadiusM, pitch),

@@ -46,6 +46,26 @@ export function givenGains(vehicle: Vehicle): SteeringGains | undefined {
   return { ...rest, filterCoefficient };
 }
 
+/**
+ * Uncertainty of the offset while the line is held, m. Of a mixed bar only the gaps count in which the edges of a line then lie, within
+ * half a pitch of the middle: what digital sensors further out say comes once and is no noise.
+ */
+function offsetNoiseM({ bar, line, control }: Vehicle): number {
+  const { positionsM, kinds } = bar;
+  const pitchM = meanPitchM(positionsM);
+  if (control.kind === 'rules') return OFFSET_NOISE_SHARE.digital * pitchM;
+  if (bar.kind !== 'mixed') return OFFSET_NOISE_SHARE[bar.kind] * pitchM;
+  const [nearM, farM] = [line.widthM / 2 - pitchM / 2, line.widthM / 2 + pitchM / 2];
+  const noises = positionsM.slice(1).flatMap((right, i) => {
+    const left = positionsM[i] as number;
+    const held = (left > nearM && right < farM) || (right < -nearM && left > -farM);
+    const kind = kinds[i] === 'digital' || kinds[i + 1] === 'digital' ? 'digital' : 'analog';
+    return held ? [OFFSET_NOISE_SHARE[kind] * (left - right)] : [];
+  });
+  // a bar narrower than the line is steered by its end sensors
+  return noises.length > 0 ? Math.max(...noises) : OFFSET_NOISE_SHARE.digital * pitchM;
+}
+
 /** Law with a given derivative time; its filter is as fast as noise allows. */
 function lawWith(
   vehicle: Vehicle,
@@ -54,9 +74,8 @@ function lawWith(
   derivativeTimeS: number,
   integralRad: number | undefined,
 ): SteeringGains {
-  const { bar, drive, board } = vehicle;
-  const reading = vehicle.control.kind === 'rules' ? 'digital' : bar.kind;
-  const noiseM = OFFSET_NOISE_SHARE[reading] * meanPitchM(bar.positionsM);
+  const { drive, board } = vehicle;
+  const noiseM = offsetNoiseM(vehicle);
   const perUnit = speedMps * (drive.trackM / 2) * proportional * noiseM;
   const allowed = (NOISE_SHARE * drive.topSpeedMps) / perUnit - 1;
   const fastest = 1 - Math.exp(-1 / FASTEST_FILTER_SAMPLES);

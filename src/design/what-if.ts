@@ -39,6 +39,7 @@ function widerBar(vehicle: Vehicle): Vehicle {
     bar: {
       ...bar,
       positionsM,
+      kinds: ends(bar.kinds),
       pins: ends(bar.pins),
       calibration: { ...calibration, ground: ends(calibration.ground), line: ends(calibration.line) },
     },

@@ -4,8 +4,12 @@ import type { Vehicle } from '../vehicle/vehicle.js';
 
 /** What this vehicle has; the templates' only conditions. */
 export interface Features {
+  /** Some sensors, or all, read a voltage. */
   analog: boolean;
+  /** Every sensor reads a level. */
   digital: boolean;
+  /** Some read a voltage, some a level. */
+  mixed: boolean;
   pid: boolean;
   rules: boolean;
   /** The steering law has an integral part. */
@@ -49,6 +53,7 @@ export function featuresOf(
   return {
     analog: !sensing.digital,
     digital: sensing.digital,
+    mixed: !sensing.digital && sensing.levels.includes(true),
     pid: kind === 'pid',
     rules: kind === 'rules',
     integral: controller.integral !== undefined,

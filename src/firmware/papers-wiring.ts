@@ -37,14 +37,16 @@ function row(pin: PinFacts, role: PinRole, to: string, about: string): PinRow {
 }
 
 function sensorRows({ bar, board }: Vehicle): PinRow[] {
-  const { kind, lineLevel } = bar;
+  const { kinds, lineLevel } = bar;
   return bar.pins.map((pin, i) => {
     const mm = Math.round(bar.positionsM[i]! * 1e4) / 10;
     const place =
       mm === 0 ? 'in the middle' : `${Math.abs(mm)} mm ${mm > 0 ? 'left' : 'right'} of the middle`;
-    const about = kind === 'analog' ? `0 to ${board.logicV} V` : `${lineLevel} over the line`;
-    const to = `output of sensor ${i + 1} of ${bar.pins.length}, ${place}`;
-    return row(pin, kind === 'analog' ? 'analog sensor' : 'digital sensor', to, `${about}.`);
+    const analog = kinds[i] === 'analog';
+    const about = analog ? `0 to ${board.logicV} V` : `${lineLevel} over the line`;
+    const what = bar.kind === 'mixed' ? `${kinds[i]} sensor` : 'sensor';
+    const to = `output of ${what} ${i + 1} of ${bar.pins.length}, ${place}`;
+    return row(pin, analog ? 'analog sensor' : 'digital sensor', to, `${about}.`);
   });
 }
 

@@ -2,7 +2,14 @@
 import { fileName } from './identifiers.js';
 import type { FirmwareDesign, Rendering, SheetIdentity, TemplateFile } from './render.js';
 import { type EncoderView, encoderView } from './view-encoders.js';
-import { type PinLine, directionLines, hasFreeLed, pinLines, sensorPinCodes } from './view-pins.js';
+import {
+  type PinLine,
+  directionLines,
+  hasFreeLed,
+  pinLines,
+  sensorPinCodes,
+  sensorPlaces,
+} from './view-pins.js';
 import { type RegisterView, registerView } from './view-registers.js';
 import { type CommonView, commonView } from './view.js';
 
@@ -13,6 +20,8 @@ interface ArduinoView extends CommonView, RegisterView, EncoderView {
   standby: boolean;
   /** Pins of the sensors, leftmost first, as text for a list. */
   sensorPins: readonly string[];
+  /** Places of the analog sensors, from 0. */
+  analogPlaces: readonly number[];
   pins: readonly PinLine[];
   /** Levels of the direction pins for forward; with pwm-dir only. */
   directions: readonly { name: string; level: 'HIGH' | 'LOW'; about: string }[];
@@ -32,6 +41,7 @@ function arduinoView(sheet: SheetIdentity, design: FirmwareDesign): ArduinoView 
     dualPwm: scheme === 'dual-pwm',
     standby: standby !== undefined,
     sensorPins: sensorPinCodes(vehicle),
+    analogPlaces: sensorPlaces(vehicle, 'analog'),
     pins: pinLines(vehicle),
     directions: directionLines(vehicle).map(({ name, high, about }) => ({
       name,

@@ -5,7 +5,14 @@ import { copyCommands } from './papers-loading.js';
 import { fileName } from './identifiers.js';
 import type { IntegerType } from './literals.js';
 import type { FirmwareDesign, Rendering, SheetIdentity, TemplateFile } from './render.js';
-import { type PinLine, directionLines, hasFreeLed, pinLines, sensorPinCodes } from './view-pins.js';
+import {
+  type PinLine,
+  directionLines,
+  hasFreeLed,
+  pinLines,
+  sensorPinCodes,
+  sensorPlaces,
+} from './view-pins.js';
 import { type CommonView, commonView } from './view.js';
 
 /** Type codes of MicroPython's arrays. */
@@ -30,6 +37,9 @@ interface MicroPythonView extends Omit<CommonView, 'groups' | 'reasons'> {
   /** The converter has an attenuator that has to be set. */
   attenuated: boolean;
   sensorPins: readonly string[];
+  /** Places of the analog and the digital sensors, from 0. */
+  analogPlaces: readonly number[];
+  digitalPlaces: readonly number[];
   pins: readonly PinLine[];
   directions: readonly { name: string; level: number; about: string }[];
   ledCode: string;
@@ -91,6 +101,8 @@ function micropythonView(
     standby: standby !== undefined,
     attenuated: vehicle.board.adcAttenuated === true,
     sensorPins: sensorPinCodes(vehicle),
+    analogPlaces: sensorPlaces(vehicle, 'analog'),
+    digitalPlaces: sensorPlaces(vehicle, 'digital'),
     pins: pinLines(vehicle),
     directions: directionLines(vehicle).map(({ name, high, about }) => ({
       name,

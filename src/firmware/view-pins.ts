@@ -79,7 +79,12 @@ export function hasFreeLed(vehicle: Vehicle): boolean {
 
 /** The sensors' pins as the firmware's language names them, leftmost first. */
 export function sensorPinCodes({ bar }: Vehicle): string[] {
-  return bar.pins.map((pin) => (bar.kind === 'analog' ? pin.adc?.code : undefined) ?? pin.code);
+  return bar.pins.map((pin, i) => (bar.kinds[i] === 'analog' ? pin.adc?.code : undefined) ?? pin.code);
+}
+
+/** Places, from 0, of the sensors of a kind. */
+export function sensorPlaces({ bar }: Vehicle, kind: 'analog' | 'digital'): number[] {
+  return bar.kinds.flatMap((each, i) => (each === kind ? [i] : []));
 }
 
 /** All pins but the sensors'. */

@@ -2,6 +2,7 @@
 import type { PinFacts, TickFacts } from '../vehicle/board-facts.js';
 import { modeOf, motorTimers } from '../vehicle/pwm-modes.js';
 import type { MotorWiring, Vehicle } from '../vehicle/vehicle.js';
+import { sensorPlaces } from './view-pins.js';
 
 /** A PWM output of a motor. */
 interface PwmOutput {
@@ -32,12 +33,12 @@ export interface RegisterView {
   pwmSetUp: readonly string[];
   pwmOutputs: readonly PwmOutput[];
   levelOutputs: readonly LevelOutput[];
-  /** Converter channels of the sensors, leftmost first, and whether each is one of the upper eight. */
+  /** Converter channels of the analog sensors, leftmost first, and whether each is one of the upper eight. */
   channels: readonly number[];
   upperChannels: readonly boolean[];
   someUpperChannels: boolean;
-  /** Register and bit of each digital sensor, leftmost first. */
-  inputs: readonly { register: string; bit: number }[];
+  /** Register and bit of each digital sensor, leftmost first, and its place among all, from 0. */
+  inputs: readonly { register: string; bit: number; place: number }[];
   button: { register: string; bit: number };
 }
 
@@ -99,7 +100,7 @@ export function registerView(vehicle: Vehicle): RegisterView {
   if (tick === undefined) throw new Error(`${board.title} has no timer for the sample tick.`);
   const levels = outputs.filter(([name]) => !isPwm(name)).map(([name, pin]) => levelOf(name, pin));
   if (drive.standby !== undefined) levels.push(levelOf('Standby', drive.standby));
-  const channels = bar.kind === 'analog' ? bar.pins.map(({ adc }) => adc?.channel ?? 0) : [];
+  const channels = sensorPlaces(vehicle, 'analog').map((place) => bar.pins[place]?.adc?.channel ?? 0);
   return {
     tick,
     pwmSetUp: timers.filter(({ timer }) => used.has(timer)).flatMap((facts) => modeOf(facts, used).setUp),
@@ -108,7 +109,7 @@ export function registerView(vehicle: Vehicle): RegisterView {
     channels: channels.map((channel) => channel % CHANNELS_SELECTED),
     upperChannels: channels.map((channel) => channel >= CHANNELS_SELECTED),
     someUpperChannels: channels.some((channel) => channel >= CHANNELS_SELECTED),
-    inputs: bar.kind === 'digital' ? bar.pins.map(inputOf) : [],
+    inputs: sensorPlaces(vehicle, 'digital').map((place) => ({ ...inputOf(bar.pins[place]!), place })),
     button: inputOf(start.button),
   };
 }

@@ -33,6 +33,31 @@ function calibration(sensing: SensingConstants): Constant[] {
   ];
 }
 
+/** What makes digital sensors fit among analog ones. */
+function mixedConstants({ board }: Vehicle, { levels }: SensingConstants, features: Features): Constant[] {
+  const constants = [
+    constant(
+      'LEVEL_COUNTS',
+      'int16_t',
+      board.adcMaxCount,
+      'Reading that stands for a digital sensor over the line: as the converter would read a full voltage; 0 over ground. From target.board.',
+    ),
+  ];
+  if (!features.sweep) return constants;
+  const about = (end: string) => `The ${end} analog sensor, from 0. From sensors.kinds.`;
+  return [
+    ...constants,
+    constant('FIRST_ANALOG_INDEX', 'uint8_t', levels.indexOf(false), about('leftmost')),
+    constant('LAST_ANALOG_INDEX', 'uint8_t', levels.lastIndexOf(false), about('rightmost')),
+    table(
+      'LEVEL_FLAGS',
+      'uint8_t',
+      levels.map(Number),
+      'Digital sensors, 1, and analog ones, 0. From sensors.kinds.',
+    ),
+  ];
+}
+
 function edges(sensing: SensingConstants): Constant[] {
   return [
     table(
@@ -59,7 +84,7 @@ export function sensingConstants(
   const constants = [
     constant('SENSOR_COUNT', 'uint8_t', sensing.sensorCount, 'Sensors of the bar. From sensors.count.'),
   ];
-  if (features.digital) {
+  if (features.digital || features.mixed) {
     const level = sensing.lineLevelHigh ? 1 : 0;
     constants.push(
       constant(
@@ -70,6 +95,7 @@ export function sensingConstants(
       ),
     );
   }
+  if (features.mixed) constants.push(...mixedConstants(vehicle, sensing, features));
   if (features.stored) constants.push(...calibration(sensing));
   constants.push(
     table(

@@ -35,7 +35,8 @@ class ChipRun {
   private readonly monitor: RunMonitor;
   private readonly motors: ChipMotors;
   private readonly chip: AvrChip;
-  private readonly sensorPins: readonly number[];
+  /** Pins of the digital sensors, and which sensor each is. */
+  private readonly sensorPins: readonly (readonly [pin: number, sensor: number])[];
   private readonly buttonPin: number;
   private readonly encoders: ChipEncoders | undefined;
   private readonly broken = new Set<Fault>();
@@ -49,7 +50,9 @@ class ChipRun {
     this.monitor = new RunMonitor(this.plant, setup);
     this.motors = new ChipMotors(vehicle, STEP_CYCLES);
     const sensorOfChannel = new Map(vehicle.bar.pins.map((pin, i) => [pin.adc?.channel, i]));
-    this.sensorPins = vehicle.bar.kind === 'digital' ? vehicle.bar.pins.map(pinNumber) : [];
+    this.sensorPins = vehicle.bar.pins.flatMap((pin, i) =>
+      vehicle.bar.kinds[i] === 'digital' ? [[pinNumber(pin), i] as const] : [],
+    );
     this.buttonPin = pinNumber(vehicle.start.button);
     this.encoders = chipEncoders(vehicle);
     this.chip = new AvrChip(image.program, vehicle.board, {
@@ -64,7 +67,7 @@ class ChipRun {
   private step(index: number): void {
     const timeS = index * STEP_S;
     this.chip.setPin(this.buttonPin, !(timeS >= PRESS_S && timeS < RELEASE_S));
-    this.sensorPins.forEach((pin, i) => this.chip.setPin(pin, this.plant.count(i) === 1));
+    for (const [pin, i] of this.sensorPins) this.chip.setPin(pin, this.plant.count(i) === 1);
     const from = index * STEP_CYCLES;
     if (this.encoders) this.encoders.runThrough(this.chip, this.plant, from, STEP_CYCLES);
     else this.chip.runTo(from + STEP_CYCLES);

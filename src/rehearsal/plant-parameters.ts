@@ -48,7 +48,8 @@ export interface PlantParameters {
   /** Sensor positions left of the centre line, m; leftmost first. */
   positionsM: readonly number[];
   spotRadiusM: number;
-  kind: 'analog' | 'digital';
+  /** Kind of each sensor, leftmost first. */
+  kinds: readonly ('analog' | 'digital')[];
   /** Digital: level of the pin over the line. */
   lineLevel: 'high' | 'low';
   /** Analog: readings over ground and line, counts. */
@@ -108,7 +109,7 @@ export function nominalPlant(vehicle: Vehicle): PlantParameters {
     aheadM: bar.aheadM,
     positionsM: bar.positionsM,
     spotRadiusM: bar.spotRadiusM,
-    kind: bar.kind,
+    kinds: bar.kinds,
     lineLevel: bar.lineLevel,
     ground: bar.calibration.ground,
     line: bar.calibration.line,

@@ -23,6 +23,7 @@ export class Plant extends VehicleMotion {
   private readonly oneShare = new Float64Array(1);
   private readonly light: FloorLight;
   private readonly positionsM: Float64Array;
+  private readonly isDigital: Uint8Array;
   private readonly ground: Float64Array;
   private readonly line: Float64Array;
   private readonly noise: Random;
@@ -39,6 +40,7 @@ export class Plant extends VehicleMotion {
     this.positionsM = Float64Array.from(parameters.positionsM);
     this.spots = new Float64Array(2 * this.positionsM.length);
     this.shares = new Float64Array(this.positionsM.length);
+    this.isDigital = Uint8Array.from(parameters.kinds, (kind) => Number(kind === 'digital'));
     this.ground = Float64Array.from(parameters.ground);
     this.line = Float64Array.from(parameters.line);
     this.noise = new Random(parameters.seed, STREAM.noise);
@@ -95,15 +97,14 @@ export class Plant extends VehicleMotion {
   private reading(i: number, covered: number): number {
     const healthy = this.healthyReading(i, this.faults?.lineGone === true ? 0 : covered);
     if (this.faults === undefined) return healthy;
-    const { kind, adcMaxCount } = this.parameters;
-    return this.faults.faultyCount(i, healthy, kind === 'digital' ? 1 : adcMaxCount);
+    return this.faults.faultyCount(i, healthy, this.isDigital[i] === 1 ? 1 : this.parameters.adcMaxCount);
   }
 
   private healthyReading(i: number, covered: number): number {
-    const { kind, lineLevel, adcMaxCount, noiseShare } = this.parameters;
+    const { lineLevel, adcMaxCount, noiseShare } = this.parameters;
     const share = this.light.contrast * covered + this.light.ambient + (this.faults?.lightShare ?? 0);
     const noise = noiseShare === 0 ? 0 : noiseShare * this.noise.noise();
-    if (kind === 'digital') return share + noise > 0.5 === (lineLevel === 'high') ? 1 : 0;
+    if (this.isDigital[i] === 1) return share + noise > 0.5 === (lineLevel === 'high') ? 1 : 0;
     const ground = this.ground[i]!;
     const counts = Math.round(ground + share * (this.line[i]! - ground) + noise * adcMaxCount);
     return counts < 0 ? 0 : counts > adcMaxCount ? adcMaxCount : counts;

@@ -8,7 +8,7 @@
 import { FULL_DUTY } from '../controller/constants.js';
 import type { Engine, RunResult, RunSetup } from './engine.js';
 import { Plant } from './plant.js';
-import { STREAM } from './plant-parameters.js';
+import { type PlantParameters, STREAM } from './plant-parameters.js';
 import { Random } from './random.js';
 import { RunMonitor } from './run-monitor.js';
 import type { ControlState } from './trace-recorder.js';
@@ -19,7 +19,7 @@ const STEP_S = 5e-3;
 
 /** A controller that can be stepped once a sample period. */
 export interface ControlStep {
-  /** @param counts one reading a sensor, leftmost first: counts, or pin levels 0 and 1 of digital sensors */
+  /** @param counts one reading a sensor, leftmost first: counts; pin levels 0 and 1 of a digital bar */
   step(counts: Int32Array): void;
   /** The wheel loops, with encoders. */
   readonly wheels?: { count(left: number, right: number): void; readonly blocked: boolean } | undefined;
@@ -71,10 +71,12 @@ export class TwinEngine implements Engine {
     const plant = new Plant(setup.plant, setup.lane, setup.faults);
     const monitor = new RunMonitor(plant, setup);
     const counts = new Int32Array(plant.sensorCount);
+    const mixed = new Set(setup.plant.kinds).size > 1;
     const state: ControlState = { dutyLeft: 0, dutyRight: 0, classIndex: -1, phase: -1 };
 
     while (!monitor.ended) {
       plant.readCounts(counts);
+      if (mixed) levelsToCounts(counts, setup.plant);
       if (edges && control.wheels) {
         edges.look(plant);
         control.wheels.count(edges.left, edges.right);
@@ -92,6 +94,13 @@ export class TwinEngine implements Engine {
     }
     return withReason(monitor.result(), control);
   }
+}
+
+/** In a mixed bar the firmware reads a level as the converter would: full scale over the line, 0 over ground. */
+function levelsToCounts(counts: Int32Array, { kinds, lineLevel, adcMaxCount }: PlantParameters): void {
+  const onLine = lineLevel === 'high' ? 1 : 0;
+  for (let i = 0; i < counts.length; i++)
+    if (kinds[i] === 'digital') counts[i] = counts[i] === onLine ? adcMaxCount : 0;
 }
 
 /** The twin itself knows why it stopped. */

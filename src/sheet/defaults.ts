@@ -20,7 +20,7 @@ export type SpeedClass = GivenClass & { minRadiusMm: number };
 export interface ResolvedSheet extends Required<Omit<Sheet, 'encoders'>> {
   encoders?: Sheet['encoders'] & {};
   line: Required<Sheet['line']>;
-  sensors: Filled<Sheet['sensors'], 'pitchMm' | 'positionsMm'>;
+  sensors: Filled<Sheet['sensors'], 'pitchMm' | 'positionsMm' | 'kinds'>;
   drive: Omit<Required<Drive>, 'motor' | 'driver' | 'trim'> & {
     motor: Required<Drive['motor']>;
     driver: Omit<Drive['driver'], 'left' | 'right'> & { left: Motor; right: Motor };

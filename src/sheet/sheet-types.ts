@@ -73,9 +73,18 @@ export interface Sheet {
    */
   sensors: {
     /**
-     * analog: a voltage that follows the reflection. digital: one level over line, the other over ground.
+     * analog: a voltage that follows the reflection. digital: one level over line, the other over ground. mixed: some of each, as kinds lists them.
      */
-    kind: 'analog' | 'digital';
+    kind: 'analog' | 'digital' | 'mixed';
+    /**
+     * Mixed bars only: analog or digital, leftmost sensor first; such as digital ones at the sides of an analog middle.
+     *
+     * @minItems 2
+     * @maxItems 16
+     *
+     * Items: analog or digital.
+     */
+    kinds?: ('analog' | 'digital')[];
     /**
      * Number of sensors in the row. [1]
      */
@@ -109,7 +118,7 @@ export interface Sheet {
      */
     pins: Pin[];
     /**
-     * Digital sensors only: the level of the pin while the sensor is over the line.
+     * Digital sensors, also those of a mixed bar: the level of the pin while the sensor is over the line.
      */
     lineLevel?: 'high' | 'low';
     /**

@@ -6,6 +6,7 @@ import { DRIVERS } from '../vehicle/drivers.js';
 import type { MotorWiring, Vehicle } from '../vehicle/vehicle.js';
 import type { ResolvedSheet } from './defaults.js';
 import { positionsOf } from './positions.js';
+import { analogPlaces, kindsOf } from './sensor-kinds.js';
 import { topSpeedMps } from './top-speed.js';
 import { typicalReadings } from './typical-readings.js';
 import { mmToM, msToS, percentToFraction } from './units.js';
@@ -14,7 +15,7 @@ import { mmToM, msToS, percentToFraction } from './units.js';
  * The vehicle that a sheet describes.
  *
  * `sheet` has passed `checkSheet`; on any other an Error is thrown, which is then a defect of ours. Speed classes come out
- * tightest first. A digital sensor reads 0 over ground and 1 over the line, whatever its level.
+ * tightest first. A digital sensor reads 0 over ground and 1 over the line, beside analog ones full scale, whatever its level.
  */
 export function toVehicle(sheet: ResolvedSheet): Vehicle {
   const board = BOARDS[sheet.target.board];
@@ -78,6 +79,7 @@ function barOf(sheet: ResolvedSheet, board: BoardFacts): Vehicle['bar'] {
     throw new Error('the sensor positions are contradictory; the sheet was not checked');
   return {
     kind: sensors.kind,
+    kinds: kindsOf(sensors),
     positionsM: positions.map(mmToM),
     aheadM: mmToM(sensors.aheadOfAxleMm),
     spotRadiusM: mmToM(sensors.spotRadiusMm),
@@ -89,13 +91,20 @@ function barOf(sheet: ResolvedSheet, board: BoardFacts): Vehicle['bar'] {
 
 function calibrationOf(sheet: ResolvedSheet, board: BoardFacts): Vehicle['bar']['calibration'] {
   const { kind, count, calibration } = sheet.sensors;
+  const places = analogPlaces(sheet.sensors);
   const all = (reading: number): number[] => Array.from({ length: count }, () => reading);
   if (kind === 'digital') return { mode: 'stored', ground: all(0), line: all(1) };
+  // a list of the sheet holds the analog sensors' readings only
+  const placed = (readings: readonly number[], level: number): number[] => {
+    const whole = all(level);
+    places.forEach((place, i) => (whole[place] = readings[i] ?? level));
+    return whole;
+  };
   const typical = typicalReadings(board, sheet.line.polarity);
   return {
     mode: calibration.mode,
-    ground: calibration.ground ?? all(typical.ground),
-    line: calibration.line ?? all(typical.line),
+    ground: placed(calibration.ground ?? all(typical.ground), 0),
+    line: placed(calibration.line ?? all(typical.line), board.adcMaxCount),
   };
 }
 

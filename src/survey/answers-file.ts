@@ -11,6 +11,7 @@ import { describeValue } from '../sheet/words.js';
 import { assemble } from './assemble.js';
 import { Facts, IS_READING } from './facts.js';
 import { isObject, type Json, type JsonObject, leavesOf, sameJson, valueAt, withValue } from './json-tree.js';
+import { readKinds } from './kinds-question.js';
 import { readClasses, readValues, spread } from './lists.js';
 import { ABOUT_PINS, IS_PIN, planProblem } from './pins.js';
 import type { Read } from './question.js';
@@ -64,6 +65,7 @@ function readText(pointer: string, value: Json): Read {
   if (typeof value !== 'string') return { value };
   const node = schemaAt(SCHEMAS.sheet, pointer);
   if (pointer === '/speeds/classes') return readClasses(pointer, value);
+  if (pointer === '/sensors/kinds') return readKinds(value);
   if (node?.items?.type === 'number' || node?.items?.type === 'integer') {
     const read = readValues(pointer, value);
     return 'problem' in read ? read : { value: read.values };
@@ -116,7 +118,7 @@ function refused(facts: Facts): Problem[] {
 /** Values that the sheet does not hold in the end, as other answers rule them out. */
 function withoutEffect(given: readonly Given[], facts: Facts, sheet: JsonObject): Problem[] {
   return given.flatMap(([pointer, value]): Problem[] => {
-    const wanted = IS_READING.test(pointer) ? spread(value, facts.count) : value;
+    const wanted = IS_READING.test(pointer) ? spread(value, facts.analogCount) : value;
     if (sameJson(valueAt(sheet, pointer), wanted)) return [];
     const message = `${describeValue(value)} has no effect here: the other answers leave no room for it.`;
     return [

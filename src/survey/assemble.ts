@@ -17,7 +17,7 @@ export function assemble(facts: Facts): JsonObject {
   for (const { id, make } of entriesFor(facts)) {
     if (id.startsWith('#') || IS_PIN.test(id)) continue;
     const value = make(facts).defaultValue;
-    sheet = withValue(sheet, id, IS_READING.test(id) ? spread(value, facts.count) : value);
+    sheet = withValue(sheet, id, IS_READING.test(id) ? spread(value, facts.analogCount) : value);
   }
   for (const [pointer, pin] of pinValues(facts)) sheet = withValue(sheet, pointer, pin);
   return inOrder(sheet, '') as JsonObject;
@@ -28,7 +28,9 @@ function outOfPlace(facts: Facts): string[] {
   const readings = ['/sensors/calibration/ground', '/sensors/calibration/line'];
   return [
     facts.row === 'even' ? '/sensors/positionsMm' : '/sensors/pitchMm',
-    ...(facts.analog ? ['/sensors/lineLevel'] : ['/sensors/calibration']),
+    ...(facts.sensorKind === 'analog' ? ['/sensors/lineLevel'] : []),
+    ...(facts.sensorKind === 'digital' ? ['/sensors/calibration'] : []),
+    ...(facts.sensorKind === 'mixed' ? [] : ['/sensors/kinds']),
     // A sweep measures anew; readings at hand stay as long as they fit.
     ...readings.filter((pointer) => facts.given(pointer) === undefined),
     ...(hasEncoders(facts) ? [] : ['/encoders']),

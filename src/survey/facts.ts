@@ -1,6 +1,7 @@
 /** What is known at some point of the questionnaire: answers first, then the sheet at hand, then the schema's defaults. */
 import type { BoardFacts, BoardId } from '../vehicle/board-facts.js';
 import { BOARDS } from '../vehicle/boards.js';
+import { type SensorKind, usualKinds } from '../sheet/sensor-kinds.js';
 import { evenPositions } from '../vehicle/sensor-bar.js';
 import { type Json, type JsonObject, valueAt } from './json-tree.js';
 import { nodeAt } from './schema-node.js';
@@ -57,12 +58,27 @@ export class Facts {
     return before !== undefined && before.adcMaxCount !== this.board.adcMaxCount;
   }
 
-  get analog(): boolean {
-    return this.text('/sensors/kind') === 'analog';
+  get sensorKind(): 'analog' | 'digital' | 'mixed' {
+    const kind = this.text('/sensors/kind');
+    return kind === 'digital' || kind === 'mixed' ? kind : 'analog';
+  }
+
+  /** Kind of each sensor; a mixed bar, until it is told, is a usual one. */
+  get kinds(): SensorKind[] {
+    const { sensorKind, count } = this;
+    if (sensorKind !== 'mixed') return new Array<SensorKind>(count).fill(sensorKind);
+    const listed = this.given('/sensors/kinds');
+    if (!Array.isArray(listed) || listed.length !== count) return usualKinds(count);
+    return listed.map((kind) => (kind === 'digital' ? 'digital' : 'analog'));
+  }
+
+  /** Number of sensors with readings to calibrate. */
+  get analogCount(): number {
+    return this.kinds.filter((kind) => kind === 'analog').length;
   }
 
   get stored(): boolean {
-    return this.analog && this.text('/sensors/calibration/mode') === 'stored';
+    return this.sensorKind !== 'digital' && this.text('/sensors/calibration/mode') === 'stored';
   }
 
   /** Number of sensors; the usual one while an impossible one is given. */

@@ -63,7 +63,7 @@ function typicalReading(pointer: string, facts: Facts): number {
 export function readingsQuestion(pointer: string, facts: Facts): Question {
   const node = nodeAt(pointer);
   const item = { ...nodeAt(`${pointer}/0`), maximum: facts.board.adcMaxCount };
-  const { count } = facts;
+  const count = facts.analogCount;
   const forms = `one for all, or ${count} with blanks between`;
   const judged = (value: Json): Read => {
     if (!Array.isArray(value)) return judgedNumber(item, value);
@@ -91,7 +91,7 @@ function shortened(value: Json): Json {
   return value.every((each) => each === value[0]) ? (value[0] ?? null) : value;
 }
 
-/** The readings as the sheet holds them: one for each sensor. */
+/** The readings as the sheet holds them: one for each analog sensor. */
 export function spread(value: Json, count: number): Json {
   return typeof value === 'number' ? new Array<Json>(count).fill(value) : value;
 }

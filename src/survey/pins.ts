@@ -42,12 +42,13 @@ export function hasStandby(facts: Facts): boolean {
 
 /** Every pin that the vehicle needs, in the order in which people wire them. */
 export function pinNeeds(facts: Facts): PinNeed[] {
+  const { kinds } = facts;
   const sensors = Array.from({ length: facts.count }, (_, index): PinNeed => {
     const title = `Sensor ${index + 1} of ${facts.count}, ${nodeAt('/sensors/pins/0').title.toLowerCase()}`;
     return {
       pointer: `/sensors/pins/${index}`,
       title,
-      role: facts.analog ? 'analog sensor' : 'digital sensor',
+      role: kinds[index] === 'analog' ? 'analog sensor' : 'digital sensor',
     };
   });
   const motors = ['left', 'right'].flatMap((side) =>
@@ -89,7 +90,8 @@ export function planWith(
   board: BoardId = facts.board.id,
 ): PinPlan | Problem {
   const request: PinRequest = {
-    sensorKind: facts.analog ? 'analog' : 'digital',
+    sensorKind: facts.sensorKind,
+    ...(facts.sensorKind === 'mixed' && { sensorKinds: facts.kinds }),
     sensorCount: facts.count,
     scheme: schemeOf(facts),
     standby: hasStandby(facts),
@@ -112,6 +114,9 @@ export function planProblem(facts: Facts): Problem | undefined {
 export function keptPinsFit(facts: Facts): boolean {
   const { base } = facts;
   const deciding = ['/target/board', '/sensors/kind', '/sensors/count', '/drive/driver/scheme'];
+  const sameKinds =
+    JSON.stringify(valueAt(base, '/sensors/kinds')) === JSON.stringify(facts.get('/sensors/kinds'));
+  if (facts.sensorKind === 'mixed' && !sameKinds) return false;
   if (hasEncoders(facts)) deciding.push('/encoders/channels');
   return (
     deciding.every((pointer) => valueAt(base, pointer) === facts.get(pointer)) &&
@@ -175,7 +180,7 @@ export function waysOut(facts: Facts): { answers: Record<string, Json>; label: s
   const fewer = Array.from({ length: facts.count - 2 }, (_, index) => facts.count - 1 - index);
   const most = fewer.find((sensorCount) => works({ sensorCount }));
   return [
-    ...(facts.analog && works({ sensorKind: 'digital' })
+    ...(facts.sensorKind !== 'digital' && works({ sensorKind: 'digital' })
       ? [{ answers: { '/sensors/kind': 'digital' }, label: 'digital sensors' }]
       : []),
     ...boards

@@ -6,6 +6,7 @@ import { hasEncoders } from './encoders.js';
 import type { Facts } from './facts.js';
 import { choiceQuestion, common, fieldQuestion, yesNoQuestion } from './fields.js';
 import { valueAt } from './json-tree.js';
+import { kindsQuestion } from './kinds-question.js';
 import { classesQuestion, positionsQuestion, readingsQuestion } from './lists.js';
 import { fitQuestion, pinQuestion, planQuestion } from './pin-questions.js';
 import { hasStandby, keptPinsFit, pinMode, pinNeeds, planProblem, schemeOf } from './pins.js';
@@ -62,6 +63,7 @@ function sensorEntries(facts: Facts): Entry[] {
     const id = `/sensors/calibration/${side}`;
     return { id, group, make: (now) => readingsQuestion(id, now) };
   });
+  const kinds: Entry = { id: '/sensors/kinds', group, make: kindsQuestion };
   const positions: Entry = {
     id: '/sensors/positionsMm',
     group,
@@ -72,12 +74,14 @@ function sensorEntries(facts: Facts): Entry[] {
   return [
     field(group, '/sensors/kind'),
     field(group, '/sensors/count'),
+    ...(facts.sensorKind === 'mixed' ? [kinds] : []),
     ...fitEntries(facts, group, '#fit'),
     { id: '#row', group, make: rowQuestion, settled: hasRow },
     facts.row === 'even' ? field(group, '/sensors/pitchMm') : positions,
     field(group, '/sensors/aheadOfAxleMm'),
     field(group, '/sensors/spotRadiusMm'),
-    field(group, facts.analog ? '/sensors/calibration/mode' : '/sensors/lineLevel'),
+    ...(facts.sensorKind === 'digital' ? [] : [field(group, '/sensors/calibration/mode')]),
+    ...(facts.sensorKind === 'analog' ? [] : [field(group, '/sensors/lineLevel')]),
     ...(facts.stored ? readings : []),
   ];
 }

@@ -21,6 +21,7 @@ export function mirroredVehicle(vehicle: Vehicle): Vehicle {
     bar: {
       ...bar,
       positionsM: bar.positionsM.map((p) => 0 - p).toReversed(),
+      kinds: bar.kinds.toReversed(),
       pins: bar.pins.toReversed(),
       calibration: { ...bar.calibration, ground: ground.toReversed(), line: line.toReversed() },
     },
@@ -47,7 +48,16 @@ function sides({ bar, drive, control }: Vehicle): number[] {
     .map(({ first, last, left, right }) => [first, last, left, right])
     .toSorted((a, b) => a[0]! - b[0]! || a[1]! - b[1]!);
   const { ground, line } = bar.calibration;
-  return [drive.trimLeft, drive.trimRight, ...bar.positionsM, ...ground, ...line, ...overrides.flat()];
+  const digital = bar.kinds.map((kind) => Number(kind === 'digital'));
+  return [
+    drive.trimLeft,
+    drive.trimRight,
+    ...bar.positionsM,
+    ...digital,
+    ...ground,
+    ...line,
+    ...overrides.flat(),
+  ];
 }
 
 /** Whether of a vehicle and its image it is the image: what is found by rehearsal is found on the other one, and holds for both. */

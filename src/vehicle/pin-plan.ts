@@ -1,14 +1,17 @@
 /** Proposes a wiring: which pin for which sensor, motor input and button; or says why the board cannot have one. */
+import { type SensorKind, usualKinds } from '../sheet/sensor-kinds.js';
 import type { Problem } from '../sheet/problem.js';
 import { counted, joinOr, withUnit } from '../sheet/words.js';
-import type { BoardFacts, BoardId } from './board-facts.js';
+import type { BoardFacts, BoardId, PinFacts } from './board-facts.js';
 import { BOARDS, listPins, sheetLabel } from './boards.js';
 import { DRIVERS, type DriverSchemeId, type MotorPinKey } from './drivers.js';
 import { bestAssignment, type Assignment, type Need } from './pin-match.js';
 import { isAble } from './pin-roles.js';
 
 export interface PinRequest {
-  sensorKind: 'analog' | 'digital';
+  sensorKind: 'analog' | 'digital' | 'mixed';
+  /** Kind of each sensor of a mixed bar, leftmost first. */
+  sensorKinds?: readonly SensorKind[];
   /** 1 to 16. */
   sensorCount: number;
   scheme: DriverSchemeId;
@@ -42,11 +45,20 @@ export function proposePins(boardId: BoardId, request: PinRequest): PinPlan | Pr
   return assignment ? planOf(board, request, assignment) : impossible(board, request);
 }
 
-function needsOf({ sensorKind, sensorCount, scheme, standby, encoderChannels = 0 }: PinRequest): Need[] {
+/** Kind of each sensor; a mixed bar of another length than its list is a usual one. */
+function kindsOf({ sensorKind, sensorKinds, sensorCount }: PinRequest): readonly SensorKind[] {
+  if (sensorKind !== 'mixed') return new Array<SensorKind>(sensorCount).fill(sensorKind);
+  return sensorKinds?.length === sensorCount ? sensorKinds : usualKinds(sensorCount);
+}
+
+function needsOf(request: PinRequest): Need[] {
+  const { scheme, standby, encoderChannels = 0 } = request;
   const { motorPins, standby: hasStandby } = DRIVERS[scheme];
-  const sensors = Array.from({ length: sensorCount }, (_, index): Need => {
-    return { key: `sensor${index}`, role: sensorKind === 'analog' ? 'analog sensor' : 'digital sensor' };
-  });
+  const sensors = kindsOf(request).map((kind, index): Need => ({
+    key: `sensor${index}`,
+    role: kind === 'analog' ? 'analog sensor' : 'digital sensor',
+  }));
+  const ofRole = (role: Need['role']) => sensors.filter((sensor) => sensor.role === role);
   const motors = (['left', 'right'] as const).flatMap((side) =>
     motorPins.map(({ key, pwm }): Need => ({ key: `${side}.${key}`, role: pwm ? 'PWM output' : 'output' })),
   );
@@ -58,9 +70,7 @@ function needsOf({ sensorKind, sensorCount, scheme, standby, encoderChannels = 0
       .map((key): Need => ({ key: `encoder.${side}.${key}`, role: 'encoder' })),
   );
   // Digital inputs can go nearly anywhere, so they choose last.
-  return sensorKind === 'analog'
-    ? [...sensors, ...motors, ...others, ...encoders]
-    : [...motors, ...others, ...sensors, ...encoders];
+  return [...ofRole('analog sensor'), ...motors, ...others, ...ofRole('digital sensor'), ...encoders];
 }
 
 function planOf(board: BoardFacts, request: PinRequest, assignment: Assignment): PinPlan {
@@ -75,10 +85,18 @@ function planOf(board: BoardFacts, request: PinRequest, assignment: Assignment):
     a: labelOf(`encoder.${name}.a`),
     ...(assignment.has(`encoder.${name}.b`) ? { b: labelOf(`encoder.${name}.b`) } : {}),
   });
-  // Neighbouring sensors get neighbouring pins.
-  const sensorPins = board.pins.filter((pin) =>
-    [...assignment].some(([key, own]) => own === pin && /^sensor/.test(key)),
-  );
+  // Neighbouring sensors of a kind get neighbouring pins.
+  const kinds = kindsOf(request);
+  const sensorPins = new Array<PinFacts>(kinds.length);
+  for (const wanted of ['analog', 'digital'] as const) {
+    const places = kinds.flatMap((kind, place) => (kind === wanted ? [place] : []));
+    const own = new Set(places.map((place) => assignment.get(`sensor${place}`)));
+    board.pins
+      .filter((pin) => own.has(pin))
+      .forEach((pin, i) => {
+        sensorPins[places[i]!] = pin;
+      });
+  }
   return {
     sensorPins: sensorPins.map(sheetLabel),
     driver: {
@@ -99,17 +117,18 @@ function isPossible(board: BoardFacts, request: PinRequest): boolean {
 
 function impossible(board: BoardFacts, request: PinRequest): Problem {
   const { sensorKind, sensorCount, scheme } = request;
+  const measured = kindsOf(request).filter((kind) => kind === 'analog').length;
   const usable = board.pins.filter((pin) => pin.reserved === undefined);
   const analog = usable.filter((pin) => isAble(pin, 'analog sensor'));
-  const tooFewAnalog = sensorKind === 'analog' && analog.length < sensorCount;
+  const tooFewAnalog = analog.length < measured;
   const message = tooFewAnalog
-    ? `${board.title} has ${counted(analog.length, 'analog pin')} (${listPins(analog)}), too few for ${counted(sensorCount, 'analog sensor')}.`
-    : `${board.title} has ${counted(usable.length, 'usable pin')}; ${counted(sensorCount, `${sensorKind} sensor`)}, the ${scheme} driver and the button need ${counted(needsOf(request).length, 'pin')} of the right kinds.`;
+    ? `${board.title} has ${counted(analog.length, 'analog pin')} (${listPins(analog)}), too few for ${counted(measured, 'analog sensor')}.`
+    : `${board.title} has ${counted(usable.length, 'usable pin')}; ${counted(sensorCount, sensorKind === 'mixed' ? 'sensor' : `${sensorKind} sensor`)}, the ${scheme} driver and the button need ${counted(needsOf(request).length, 'pin')} of the right kinds.`;
   const fewer = Array.from({ length: sensorCount - 1 }, (_, index) => sensorCount - 1 - index);
   const most = fewer.find((count) => isPossible(board, { ...request, sensorCount: count }));
   const others = Object.values(BOARDS).filter((other) => isPossible(other, request));
   const ways = [
-    ...(sensorKind === 'analog' && isPossible(board, { ...request, sensorKind: 'digital' })
+    ...(sensorKind !== 'digital' && isPossible(board, { ...request, sensorKind: 'digital' })
       ? ['take digital sensors']
       : []),
     ...(most === undefined ? [] : [`take ${counted(most, 'sensor')} at most`]),

@@ -24,7 +24,9 @@ export interface Vehicle {
     crossings: boolean;
   };
   bar: {
-    kind: 'analog' | 'digital';
+    kind: 'analog' | 'digital' | 'mixed';
+    /** Kind of each sensor, leftmost first. */
+    kinds: readonly ('analog' | 'digital')[];
     /** Position of each sensor left of the centre line, m; leftmost first, so descending. */
     positionsM: readonly number[];
     /** Distance from axle to bar, m. */
@@ -35,7 +37,10 @@ export interface Vehicle {
     lineLevel: 'high' | 'low';
     calibration: {
       mode: 'stored' | 'sweep';
-      /** Readings over ground and line, counts; with a sweep and none given, those of a typical sensor. */
+      /**
+       * Readings over ground and line, counts; with a sweep and none given, those of a typical sensor. Digital sensors: 0 and 1; beside
+       * analog ones 0 and full scale, whatever their level.
+       */
       ground: readonly number[];
       line: readonly number[];
     };

@@ -59,6 +59,11 @@ const PWM_DIR = {
 };
 const SWEEP = { '/sensors/calibration': { mode: 'sweep' } };
 const DIGITAL = { '/sensors/kind': 'digital', '/sensors/calibration': undefined };
+const MIXED = {
+  '/sensors/kind': 'mixed',
+  '/sensors/kinds': ['digital', 'analog', 'analog', 'analog', 'analog', 'digital'],
+  '/sensors/pins': [3, 'A1', 'A2', 'A3', 'A4', 4],
+};
 const RULES = { '/control/kind': 'rules' };
 const NO_CROSSINGS = { '/line/crossings': false, '/line/longestGapMm': 0 };
 const EIGHT = {
@@ -86,6 +91,12 @@ export const CARTS: Readonly<Record<string, Changes>> = {
   'a sweep, dark line, and rules': { ...SWEEP, ...PWM_DIR, ...RULES, '/line/polarity': 'dark-on-light' },
   'eight sensors, dark line': EIGHT,
   'eight sensors, dark line and rules': { ...EIGHT, ...RULES },
+  'mixed sensors, a sweep, dark line': {
+    ...MIXED,
+    ...SWEEP,
+    '/sensors/lineLevel': 'low',
+    '/line/polarity': 'dark-on-light',
+  },
   'one speed for all': ONE_SPEED,
   'an integral part': UNEQUAL,
   'uneven bar without crossings': { ...UNEVEN, ...NO_CROSSINGS },

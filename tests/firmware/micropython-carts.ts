@@ -43,6 +43,11 @@ const DARK_6 = {
   '/line/polarity': 'dark-on-light',
 };
 const SWEEP = { '/sensors/calibration': { mode: 'sweep' } };
+const MIXED = {
+  '/sensors/kind': 'mixed',
+  '/sensors/kinds': ['digital', 'analog', 'analog', 'analog', 'analog', 'digital'],
+  '/sensors/lineLevel': 'low',
+};
 const RULES = { '/control/kind': 'rules' };
 const ONE_CLASS = { '/speeds/classes': [{ name: 'all', minRadiusMm: 120, speedMps: 0.4 }] };
 const UNEQUAL = { '/control/integral': 'always', '/tolerances/motorGainPercent': 20 };
@@ -87,6 +92,7 @@ export const MICROPYTHON_CARTS: Readonly<Record<string, Changes>> = {
   'pico, three analog, sweep': { ...PICO, ...THREE_ANALOG, ...SWEEP, ...PICO_IN_IN },
   'pico, digital, one class': { ...PICO, ...EIGHT_DIGITAL, ...PICO_DIR, ...ONE_CLASS },
   'pico, digital, rules': { ...PICO, ...EIGHT_DIGITAL, ...PICO_IN_IN, ...RULES },
+  'esp32, mixed, sweep': { ...ESP32, ...SIX_ANALOG, ...MIXED, ...SWEEP, ...ESP32_DUAL },
   'esp32, encoders': {
     ...ESP32,
     ...SIX_ANALOG,

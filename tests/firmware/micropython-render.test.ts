@@ -8,7 +8,8 @@ import { SHEET, cart, quickDesign } from './cart.js';
 import { MICROPYTHON_CARTS } from './micropython-carts.js';
 import { boardFiles } from './micropython-stand.js';
 
-const UNITS = /_(Q\d+|255THS|US|SAMPLES|COUNTS|BITS|ENTRIES|COUNT|LEVEL|LIMIT|EDGE|CLASSES|CLASS)$/;
+const UNITS =
+  /_(Q\d+|255THS|US|SAMPLES|COUNTS|BITS|ENTRIES|COUNT|LEVEL|LIMIT|EDGE|CLASSES|INDEX|FLAGS|CLASS)$/;
 /** What the board's interpreter brings. */
 const BUILT_IN = ['array', 'gc', 'machine', 'micropython', 'time'];
 

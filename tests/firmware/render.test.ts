@@ -8,7 +8,7 @@ import { type RenderedFile, fillTemplates, renderFirmware } from '../../src/firm
 import { VERSION } from '../../src/version.js';
 import { CARTS, SHEET, cart, quickDesign } from './cart.js';
 
-const UNITS = /_(Q\d+|255THS|US|SAMPLES|COUNTS|BITS|ENTRIES|COUNT|LEVEL|LIMIT|EDGE|CLASSES)$/;
+const UNITS = /_(Q\d+|255THS|US|SAMPLES|COUNTS|BITS|ENTRIES|COUNT|LEVEL|LIMIT|EDGE|CLASSES|INDEX|FLAGS)$/;
 
 describe.each(Object.keys(CARTS))('the sketch of %s', (name) => {
   let files: RenderedFile[];

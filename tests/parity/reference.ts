@@ -38,7 +38,11 @@ export function reference(design: FirmwareDesign, steps: number, seed: number): 
   const expected: number[] = [];
   let constants = controller;
   if (controller.sweep !== undefined) {
-    const calibration = new SweepCalibration(controller.sensing.sensorCount, controller.sweep.minSpan);
+    const calibration = new SweepCalibration(
+      controller.sensing.sensorCount,
+      controller.sweep.minSpan,
+      controller.sensing.levels,
+    );
     input.push(SWEEP_SAMPLES);
     for (const counts of trace.sweep(SWEEP_SAMPLES)) {
       calibration.observe(counts);

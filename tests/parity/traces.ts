@@ -58,6 +58,7 @@ export class BarTrace {
     const most = bar.kind === 'digital' ? 1 : board.adcMaxCount;
     if (this.scene === 'rubbish') return Math.floor(this.random.uniform(0, most + 1));
     const share = this.share(bar.positionsM[i]!);
+    if (bar.kind === 'mixed' && bar.kinds[i] === 'digital') return share > 0.5 ? most : 0;
     if (bar.kind === 'digital') return share > 0.5 === (bar.lineLevel === 'high') ? 1 : 0;
     const ground = bar.calibration.ground[i]!;
     const noise = 4 * this.random.normal();

@@ -22,6 +22,7 @@ interface Spot {
 /** Line and bar that fit: the line cannot hide, is narrower than the bar, and stays in view in its tightest bend. */
 export function geometry(request: PinRequest, kind: Sheet['control']['kind']): fc.Arbitrary<Geometry> {
   const { sensorCount, sensorKind } = request;
+  // a mixed bar is judged by its digital sensors
   const share = sensorKind === 'analog' && kind === 'pid' ? 0.25 : 0.5;
   return decimal(8, 50)
     .chain((widthMm) =>

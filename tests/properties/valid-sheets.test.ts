@@ -20,12 +20,12 @@ test('they are of every board, kind, scheme, controller and length', () => {
   const sheets = fc.sample(validSheets, { numRuns: 1000, seed: SEED });
   const seen = (of: (sheet: (typeof sheets)[number]) => unknown): number => new Set(sheets.map(of)).size;
   expect(seen(({ target }) => target.board)).toBe(BOARD_IDS.length);
-  // two kinds of sensors and three schemes on each board
+  // three kinds of bars and three schemes on each board
   expect(seen(({ target, sensors, drive }) => `${target.board} ${sensors.kind} ${drive.driver.scheme}`)).toBe(
-    2 * 3 * BOARD_IDS.length,
+    3 * 3 * BOARD_IDS.length,
   );
   expect(seen(({ sensors }) => sensors.count)).toBe(15);
-  expect(seen(({ control, sensors }) => `${control.kind} ${sensors.kind}`)).toBe(4);
+  expect(seen(({ control, sensors }) => `${control.kind} ${sensors.kind}`)).toBe(6);
   expect(seen(({ sensors }) => sensors.calibration?.mode)).toBe(3);
   expect(seen(({ sensors }) => sensors.positionsMm === undefined)).toBe(2);
   expect(seen(({ encoders }) => encoders?.channels)).toBe(3);

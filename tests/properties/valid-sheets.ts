@@ -6,6 +6,7 @@
  */
 import fc from 'fast-check';
 import { checkSheet } from '../../src/sheet/check.js';
+import { usualKinds } from '../../src/sheet/sensor-kinds.js';
 import type { Sheet } from '../../src/sheet/sheet-types.js';
 import { BOARDS, BOARD_IDS } from '../../src/vehicle/boards.js';
 import type { DriverSchemeId } from '../../src/vehicle/drivers.js';
@@ -20,13 +21,29 @@ const ENCODER_CHANNELS = [0, 1, 2];
 
 const SCHEMES: readonly DriverSchemeId[] = ['pwm-dir', 'pwm-in-in', 'dual-pwm'];
 
+type Kinds = Pick<PinRequest, 'sensorKind' | 'sensorKinds'>;
+
+/** Kinds of the sensors of a bar, by their number: all alike, or mixed in several ways. */
+const BAR_KINDS: readonly ((count: number) => Kinds)[] = [
+  () => ({ sensorKind: 'analog' }),
+  () => ({ sensorKind: 'digital' }),
+  (count) => ({ sensorKind: 'mixed', sensorKinds: usualKinds(count) }),
+  (count) => mixedBar(count, (place) => place % 2 === 1),
+  (count) => mixedBar(count, (place) => place >= Math.floor(count / 2)),
+];
+
+function mixedBar(count: number, isDigital: (place: number) => boolean): Kinds {
+  const sensorKinds = Array.from({ length: count }, (_, place) => (isDigital(place) ? 'digital' : 'analog'));
+  return { sensorKind: 'mixed', sensorKinds };
+}
+
 /** Every wiring that the boards allow; every encoder where there is room for one. */
 const WIRINGS: readonly Wiring[] = BOARD_IDS.flatMap((board) =>
   SCHEMES.flatMap((scheme) =>
-    (['analog', 'digital'] as const).flatMap((sensorKind) =>
+    BAR_KINDS.flatMap((kindsOf) =>
       [false, ...(scheme === 'pwm-in-in' ? [true] : [])].flatMap((standby) =>
         Array.from({ length: 15 * ENCODER_CHANNELS.length }, (_, index): PinRequest => ({
-          sensorKind,
+          ...kindsOf((index % 15) + 2),
           sensorCount: (index % 15) + 2,
           scheme,
           standby,
@@ -48,9 +65,10 @@ const wiring: fc.Arbitrary<Wiring> = fc
 /** Readings with contrast, all to the same side; or none, for a sweep. */
 function calibration({ board, request }: Wiring): fc.Arbitrary<Pick<Sheet['sensors'], 'calibration'>> {
   if (request.sensorKind === 'digital') return fc.constant({});
+  const count = request.sensorKinds?.filter((kind) => kind === 'analog').length ?? request.sensorCount;
   const full = BOARDS[board].adcMaxCount;
   const list = (min: number, max: number): fc.Arbitrary<number[]> =>
-    fc.array(fc.integer({ min, max }), { minLength: request.sensorCount, maxLength: request.sensorCount });
+    fc.array(fc.integer({ min, max }), { minLength: count, maxLength: count });
   const readings = fc
     .integer({ min: Math.ceil(0.15 * full), max: Math.floor(0.85 * full) })
     .chain((middle) => {
@@ -59,8 +77,15 @@ function calibration({ board, request }: Wiring): fc.Arbitrary<Pick<Sheet['senso
     })
     .map(([low, high, swap]) => (swap ? { ground: high, line: low } : { ground: low, line: high }));
   const mode = fc.constantFrom('stored' as const, 'sweep' as const);
+  // of a mixed bar only readings are sure to fit: a sweep asks for analog sensors beside the line
+  const weight = request.sensorKind === 'mixed' ? 6 : 1;
   return fc.oneof(
-    fc.tuple(mode, readings).map(([how, lists]) => ({ calibration: { mode: how, ...lists } })),
+    {
+      weight,
+      arbitrary: fc
+        .tuple(weight > 1 ? fc.constant('stored' as const) : mode, readings)
+        .map(([how, lists]) => ({ calibration: { mode: how, ...lists } })),
+    },
     fc.constantFrom({ calibration: { mode: 'sweep' as const } }, {}),
   );
 }
@@ -126,10 +151,11 @@ export const sheetCandidates: fc.Arbitrary<Sheet> = fc
         line,
         sensors: {
           kind: request.sensorKind,
+          ...(request.sensorKinds && { kinds: [...request.sensorKinds] }),
           count: request.sensorCount,
           ...bar,
           pins: plan.sensorPins,
-          ...(request.sensorKind === 'digital' ? { lineLevel: rest.lineLevel } : {}),
+          ...(request.sensorKind !== 'analog' ? { lineLevel: rest.lineLevel } : {}),
           ...calibrated,
         },
         drive: {

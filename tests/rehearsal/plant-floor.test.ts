@@ -53,7 +53,7 @@ describe('light and wear', () => {
   });
 
   it('leave a digital sensor right until half the contrast is gone', () => {
-    const digital = { kind: 'digital', ground: [0], line: [1] } as const;
+    const digital = { kinds: ['digital'], ground: [0], line: [1] } as const;
     expect(readings({ ...digital, wearShare: 0.49 })).toEqual([1, 1]);
     expect(readings({ ...digital, wearShare: 0.51 })).toEqual([0, 1]);
   });

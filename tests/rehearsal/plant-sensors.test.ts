@@ -12,6 +12,8 @@ function makePlant(changes: Partial<PlantParameters> = {}): Plant {
   return new Plant(plainPlant(changes), lane);
 }
 
+const DIGITAL = new Array<'digital'>(6).fill('digital');
+
 describe('sensors', () => {
   const counts = new Int32Array(6);
 
@@ -60,12 +62,12 @@ describe('sensors', () => {
     ['high', [0, 0, 1, 1, 0, 0]],
     ['low', [1, 1, 0, 0, 1, 1]],
   ] as const)('give the level of the pin when digital, %s over the line', (lineLevel, levels) => {
-    makePlant({ kind: 'digital', lineLevel }).readCounts(counts);
+    makePlant({ kinds: DIGITAL, lineLevel }).readCounts(counts);
     expect([...counts]).toEqual(levels);
   });
 
   it('switch at half the spot when digital', () => {
-    expect(makePlant({ kind: 'digital', startLateralM: 0.0044 }).count(2)).toBe(1);
-    expect(makePlant({ kind: 'digital', startLateralM: 0.0046 }).count(2)).toBe(0);
+    expect(makePlant({ kinds: DIGITAL, startLateralM: 0.0044 }).count(2)).toBe(1);
+    expect(makePlant({ kinds: DIGITAL, startLateralM: 0.0046 }).count(2)).toBe(0);
   });
 });

@@ -26,7 +26,7 @@ export function plainPlant(changes: Partial<PlantParameters> = {}): PlantParamet
     aheadM: 0.075,
     positionsM: [0.025, 0.015, 0.005, -0.005, -0.015, -0.025],
     spotRadiusM: 0.004,
-    kind: 'analog',
+    kinds: ['analog', 'analog', 'analog', 'analog', 'analog', 'analog'],
     lineLevel: 'high',
     ground: [100, 100, 100, 100, 100, 100],
     line: [900, 900, 900, 900, 900, 900],

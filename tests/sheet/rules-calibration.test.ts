@@ -5,7 +5,44 @@ const readings = (ground: number[], line: number[], mode = 'stored'): Record<str
   '/sensors/calibration': { mode, ground, line },
 });
 
+const MIXED = {
+  '/sensors/kind': 'mixed',
+  '/sensors/kinds': ['digital', 'analog', 'analog', 'analog', 'analog', 'digital'],
+  '/sensors/pins': [3, 'A1', 'A2', 'A3', 'A4', 4],
+};
+
 testRules({
+  'sensor-kinds': [
+    {
+      when: 'a mixed bar without its kinds',
+      changes: { '/sensors/kind': 'mixed' },
+      want: ['/sensors/kinds: A mixed bar needs the kind of each sensor.'],
+    },
+    {
+      when: 'a mixed bar of one kind',
+      changes: { ...MIXED, '/sensors/kinds': new Array<string>(6).fill('digital') },
+      want: ['/sensors/kinds: Every sensor of the mixed bar is digital.'],
+    },
+    { when: 'digital sensors at the ends', changes: MIXED, want: [] },
+  ],
+  'sweep-sees-ground': [
+    {
+      when: 'analog sensors clear of the line',
+      changes: { ...MIXED, '/sensors/calibration': undefined },
+      want: [],
+    },
+    {
+      when: 'all analog sensors over the line at the start',
+      changes: {
+        ...MIXED,
+        '/sensors/kinds': ['digital', 'digital', 'analog', 'analog', 'digital', 'digital'],
+        '/sensors/calibration': { mode: 'sweep' },
+      },
+      want: [
+        '/sensors/calibration/mode: Sensor 3, the outermost analog one, sees the line on which the vehicle stands when a sweep begins; the sweep then cannot tell whether the line reads higher or lower.',
+      ],
+    },
+  ],
   'calibration-contrast': [
     {
       when: 'stored mode without readings',

@@ -14,7 +14,8 @@ describe('the prompt for a choice', () => {
         '  Analog sensors place the line between two sensors and so steer more finely.',
         '> 1 analog: a voltage that follows the reflection',
         '  2 digital: one level over line, the other over ground',
-        '  3 back: the question before',
+        '  3 mixed: some of each, as kinds lists them',
+        '  4 back: the question before',
         'arrows or number, then Enter, ?: more, <: back',
       ].join('\n'),
     );

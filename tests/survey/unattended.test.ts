@@ -2,6 +2,7 @@ import { mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import type { Sheet } from '../../src/sheet/sheet-types.js';
 import { surveyUnattended } from '../../src/survey/unattended.js';
 
 let folder: string;
@@ -32,6 +33,23 @@ describe('surveyUnattended', () => {
     await rm(first.file);
     await survey();
     expect(await readFile(first.file)).toEqual(bytes);
+  });
+
+  it('plans pins for a mixed bar, kinds and readings of the analog sensors as told', async () => {
+    const answers = {
+      '/sensors/kind': 'mixed',
+      '/sensors/kinds': 'd a a a a d',
+      '/sensors/calibration/mode': 'stored',
+      '/sensors/calibration/ground': '110 120 130 140',
+    };
+    await writeFile(join(folder, 'a.json'), JSON.stringify(answers));
+    const { file } = await survey({ answers: 'a.json' });
+    const { sensors } = JSON.parse(await readFile(file, 'utf8')) as Sheet;
+    expect(sensors.kinds).toEqual(['digital', 'analog', 'analog', 'analog', 'analog', 'digital']);
+    expect(sensors.calibration?.ground).toEqual([110, 120, 130, 140]);
+    expect(sensors.calibration?.line).toHaveLength(4);
+    expect(sensors.pins.slice(1, 5).every((pin) => String(pin).startsWith('A'))).toBe(true);
+    expect(sensors.lineLevel).toBe('high');
   });
 
   it('leaves a sheet alone that says something else, and says what differs', async () => {

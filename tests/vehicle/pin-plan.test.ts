@@ -10,7 +10,7 @@ const SCHEMES: readonly DriverSchemeId[] = ['pwm-dir', 'pwm-in-in', 'dual-pwm'];
 
 interface Combination {
   board: BoardId;
-  request: Required<PinRequest>;
+  request: Required<Omit<PinRequest, 'sensorKinds'>>;
 }
 
 /** Every board, kind, count and scheme, with a standby pin where there is one. */

@@ -1,4 +1,5 @@
 import type { Problem } from '../problem.js';
+import { analogPlaces } from '../sensor-kinds.js';
 import { pointerTo, withUnit } from '../words.js';
 import type { RuleContext, SheetRule } from './rule.js';
 
@@ -10,14 +11,14 @@ export const rule: SheetRule = {
   level: 'problem',
   why: 'The offset is measured between the readings over ground and over line; without contrast there is nothing to measure.',
   check(context) {
-    const { kind, calibration } = context.sheet.sensors;
-    if (kind === 'digital') return [];
-    return [...missing(context), ...beyondRange(context), ...weak(context), ...mixed(calibration)];
+    if (context.sheet.sensors.kind === 'digital') return [];
+    return [...missing(context), ...beyondRange(context), ...weak(context), ...unlike(context)];
   },
 };
 
 function missing({ sheet }: RuleContext): Problem[] {
-  const { calibration, count } = sheet.sensors;
+  const { calibration } = sheet.sensors;
+  const count = analogPlaces(sheet.sensors).length;
   const { mode } = calibration;
   return (['ground', 'line'] as const).flatMap((key): Problem[] => {
     const other = key === 'ground' ? 'line' : 'ground';
@@ -29,7 +30,7 @@ function missing({ sheet }: RuleContext): Problem[] {
         message: `Calibration mode ${mode} ${mode === 'stored' ? 'needs' : 'takes both or none of'} the readings; ${key} is missing.`,
         got: 'nothing',
         allowed: `${count} readings`,
-        fix: `Add one reading over the ${key} for each sensor, or write "mode": "sweep" and no readings.`,
+        fix: `Add one reading over the ${key} for each ${sheet.sensors.kind === 'mixed' ? 'analog sensor' : 'sensor'}, or write "mode": "sweep" and no readings.`,
       },
     ];
   });
@@ -68,7 +69,7 @@ function weak({ sheet, board }: RuleContext): Problem[] {
     return [
       {
         pointer: pointerTo('sensors', 'calibration', 'line', index),
-        message: `Sensor ${index + 1} tells line from ground by ${got} only; ${allowed} are needed.`,
+        message: `Sensor ${numberOf(sheet, index)} tells line from ground by ${got} only; ${allowed} are needed.`,
         got,
         allowed,
         fix: 'Check its wiring and its height above the floor (about 3 mm), then take the readings again.',
@@ -77,9 +78,14 @@ function weak({ sheet, board }: RuleContext): Problem[] {
   });
 }
 
-/** All sensors are of one kind, so all readings change to the same side over the line. */
-function mixed(calibration: RuleContext['sheet']['sensors']['calibration']): Problem[] {
-  const all = contrasts(calibration);
+/** Number, from 1, of the sensor whose readings stand at a place of the lists. */
+function numberOf({ sensors }: RuleContext['sheet'], index: number): number {
+  return (analogPlaces(sensors)[index] ?? index) + 1;
+}
+
+/** All analog sensors are of one kind, so all readings change to the same side over the line. */
+function unlike({ sheet }: RuleContext): Problem[] {
+  const all = contrasts(sheet.sensors.calibration);
   const rising = all.filter((contrast) => contrast > 0).length;
   const falling = all.filter((contrast) => contrast < 0).length;
   if (rising === 0 || falling === 0) return [];
@@ -91,7 +97,7 @@ function mixed(calibration: RuleContext['sheet']['sensors']['calibration']): Pro
     return [
       {
         pointer: pointerTo('sensors', 'calibration', 'line', index),
-        message: `Over the line the reading of sensor ${index + 1} ${way}, while most others ${others}.`,
+        message: `Over the line the reading of sensor ${numberOf(sheet, index)} ${way}, while most others ${others}.`,
         got: withUnit(contrast, 'counts'),
         allowed: `readings that all ${others} over the line`,
         fix: 'Check whether its two readings are swapped, or its sensor is of another kind.',

@@ -23,12 +23,14 @@ import { rule as pwmTimers } from './pwm-timers.js';
 import { rule as ruleOverrides } from './rule-overrides.js';
 import type { SheetRule } from './rule.js';
 import { rule as sensorCounts } from './sensor-counts.js';
+import { rule as sensorKinds } from './sensor-kinds.js';
 import { rule as sensorPositions } from './sensor-positions.js';
 import { rule as slowClass } from './slow-class.js';
 import { rule as classBends } from './class-bends.js';
 import { rule as speedClasses } from './speed-classes.js';
 import { rule as spotFitsLine } from './spot-fits-line.js';
 import { rule as startDuty } from './start-duty.js';
+import { rule as sweepSeesGround } from './sweep-sees-ground.js';
 import { rule as topSpeed } from './top-speed.js';
 import { rule as voltageOrder } from './voltage-order.js';
 import { rule as withoutEffect } from './without-effect.js';
@@ -36,6 +38,7 @@ import { rule as withoutEffect } from './without-effect.js';
 export const RULES: readonly SheetRule[] = [
   languageFitsBoard,
   sensorCounts,
+  sensorKinds,
   sensorPositions,
   pinsExist,
   pinsUsedOnce,
@@ -52,6 +55,7 @@ export const RULES: readonly SheetRule[] = [
   bendInView,
   gapIsBridged,
   calibrationContrast,
+  sweepSeesGround,
   voltageOrder,
   startDuty,
   topSpeed,

@@ -10,6 +10,7 @@ import { DRIVERS } from '../../vehicle/drivers.js';
 import type { PinRole } from '../../vehicle/pin-roles.js';
 import type { ResolvedSheet } from '../defaults.js';
 import { positionsOf } from '../positions.js';
+import { kindsOf } from '../sensor-kinds.js';
 import type { Problem } from '../problem.js';
 import type { Sheet } from '../sheet-types.js';
 import { pointerTo } from '../words.js';
@@ -59,9 +60,10 @@ function pinUses(sheet: ResolvedSheet, board: BoardFacts): PinUse[] {
   const add = (pointer: string, label: number | string, role: PinRole, what: string): void => {
     uses.push({ pointer, label, pin: findPin(board, label), role, what });
   };
-  const sensorRole = sheet.sensors.kind === 'analog' ? 'analog sensor' : 'digital sensor';
+  const kinds = kindsOf(sheet.sensors);
   sheet.sensors.pins.forEach((label, index) => {
-    add(pointerTo('sensors', 'pins', index), label, sensorRole, `sensor ${index + 1}`);
+    const role = (kinds[index] ?? sheet.sensors.kind) === 'digital' ? 'digital sensor' : 'analog sensor';
+    add(pointerTo('sensors', 'pins', index), label, role, `sensor ${index + 1}`);
   });
   const { driver } = sheet.drive;
   const scheme = DRIVERS[driver.scheme];

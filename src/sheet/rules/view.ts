@@ -2,7 +2,7 @@
  * How far the bar of a sheet sees: the ground that the rules of geometry share. Lengths in mm.
  *
  * A sensor takes part in steering while the line covers enough of its spot. A digital sensor, and an analog one whose reading a rule table
- * turns into a bit, switch at half contrast. Feedback also uses a weaker reading; a quarter of the contrast stands clear of
+ * turns into a bit, switch at half contrast; a mixed bar is judged by its digital sensors, which see least. Feedback also uses a weaker reading; a quarter of the contrast stands clear of
  * noise (our assumption).
  */
 import { seeingReach } from '../../vehicle/sensor-bar.js';

@@ -6,7 +6,7 @@ export const rule: SheetRule = {
   level: 'note',
   why: 'A value that nothing reads was perhaps meant for something else.',
   check({ given }) {
-    const { kind, calibration, lineLevel } = given.sensors;
+    const { kind, kinds, calibration, lineLevel } = given.sensors;
     const notes: Problem[] = [];
     if (kind === 'digital' && calibration !== undefined) {
       const message = 'Digital sensors have no readings to calibrate, so the calibration has no effect.';
@@ -15,6 +15,10 @@ export const rule: SheetRule = {
     if (kind === 'analog' && lineLevel !== undefined) {
       const message = 'The level over the line is for digital sensors, so it has no effect.';
       notes.push({ pointer: '/sensors/lineLevel', message, fix: 'Remove it, or write "kind": "digital".' });
+    }
+    if (kind !== 'mixed' && kinds !== undefined) {
+      const message = 'Kinds of single sensors are for a mixed bar, so they have no effect.';
+      notes.push({ pointer: '/sensors/kinds', message, fix: 'Remove them, or write "kind": "mixed".' });
     }
     const { kind: controller, stateMemory, swingMm } = given.control;
     if (controller === 'pid' && (stateMemory !== undefined || swingMm !== undefined)) {
