@@ -83,8 +83,13 @@ export const LISTED: readonly Listed[] = [
     why: 'pins, converter channels, timers and causes of a reset by their numbers, levels 0 and 1, ticks of a clock that wraps',
     where: /^(vehicle\/|sheet\/(sheet-types|rules\/rule)|rehearsal\/(chip|micropython)-.*|survey\/)/,
     names:
-      words(`place sensorPlaces analogPlaces digitalPlaces label sheetLabel pins sensorPins buttonPin standbyPin pinNumber pwm dir in1 in2 gpio number channel timer clockTimer unit
+      words(`label sheetLabel pins sensorPins buttonPin standbyPin pinNumber pwm dir in1 in2 gpio number channel timer clockTimer unit
       level cause resetCause lastDriven cycles sample ticks ticksAdd ticksDiff change start end`),
+  },
+  {
+    why: 'places of sensors in the bar, from 0',
+    where: /^(firmware\/view-(pins|registers|arduino|micropython)|sheet\/sensor-kinds)\.ts$/,
+    names: words('place sensorPlaces analogPlaces'),
   },
   {
     why: 'registers, bits, vectors and sizes of a chip, as its data sheet numbers them',
