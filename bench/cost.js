@@ -7,7 +7,7 @@ import { renderFirmware } from '../dist/firmware/render.js';
 import { buildSketch } from '../dist/rehearsal/chip-build.js';
 import { checkSheet } from '../dist/sheet/check.js';
 import { toVehicle } from '../dist/sheet/to-vehicle.js';
-import { meanAndMax, measureSteps, wanderingLine } from './cost/measure.js';
+import { harshReadings, meanAndMax, measureSteps, wanderingLine } from './cost/measure.js';
 
 const file = (name) => fileURLToPath(new URL(name, import.meta.url));
 const SPAN = { sensorCount: 8, fromS: 1, toS: 4 };
@@ -58,7 +58,13 @@ const tutorial = row(
   false,
 );
 for (const kind of ['pid', 'rules']) {
-  const ours = row(`generated, ${kind}`, await image(eight(kind)), true);
+  const built = await image(eight(kind));
+  const ours = row(`generated, ${kind}`, built, true);
+  const harsh = measureSteps(built.program, harshReadings(SPAN.sensorCount), { ...SPAN, toS: 9 });
+  const longest = meanAndMax(harsh.pwmCycles).max / CYCLES_PER_US;
+  console.log(
+    `  on readings that no line gives, ${harsh.steps} steps: sampled to PWM ${longest.toFixed(1)} max us`,
+  );
   console.log(
     `  tutorial / generated: step ${(tutorial.step.mean / ours.step.mean).toFixed(1)} mean, ${(tutorial.step.max / ours.step.max).toFixed(1)} max;` +
       ` sampled to PWM ${(tutorial.pwm.mean / ours.pwm.mean).toFixed(1)} mean, ${(tutorial.pwm.max / ours.pwm.max).toFixed(1)} max`,

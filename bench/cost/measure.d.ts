@@ -20,6 +20,8 @@ export function measureSteps(
   staticBytes?: number,
 ): StepCosts;
 
+export function harshReadings(sensorCount: number): (channel: number, timeS: number) => number;
+
 export function wanderingLine(sensorCount: number): (channel: number, timeS: number) => number;
 
 export function meanAndMax(values: readonly number[]): { mean: number; max: number };

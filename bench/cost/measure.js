@@ -134,6 +134,32 @@ export function wanderingLine(sensorCount) {
   };
 }
 
+/**
+ * Counts that no line gives: every sensor at one end or the other or between, several runs of sensors at once, held for some samples, with
+ * a wandering line between. They look for the longest way through the control step; repeatable.
+ */
+export function harshReadings(sensorCount) {
+  const line = wanderingLine(sensorCount);
+  let state = 1;
+  const random = () => {
+    state = (Math.imul(state, 1103515245) + 12345) >>> 0;
+    return state / 2 ** 32;
+  };
+  let held = 0;
+  let pattern = [];
+  return (channel, timeS) => {
+    if (channel === 0) {
+      if (held-- <= 0) held = Math.floor(random() * 30);
+      const kind = random();
+      pattern = Array.from({ length: sensorCount }, (_, i) => {
+        if (kind < 0.5) return i % 2 === (kind < 0.25 ? 0 : 1) ? 123 : 839;
+        return random() < 0.1 ? Math.floor(random() * 1024) : random() < 0.5 ? 123 : 839;
+      });
+    }
+    return held % 3 === 0 ? line(channel, timeS) : pattern[channel];
+  };
+}
+
 /** Mean and largest of a list. */
 export function meanAndMax(values) {
   let sum = 0;

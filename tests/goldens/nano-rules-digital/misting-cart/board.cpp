@@ -25,6 +25,12 @@ volatile uint16_t overrunCount;
 bool buttonDown = true;
 uint8_t buttonDiffers;
 
+// The core's clock counts with an interrupt each 1024 us. It waits, less than that, while the motors
+// wait for a sample.
+inline void holdClock() {
+  TIMSK0 = static_cast<uint8_t>(TIMSK0 & ~_BV(TOIE0));
+}
+
 // Set before main() and therefore not to be cleared by it.
 uint8_t resetFlags __attribute__((section(".noinit")));
 
@@ -40,6 +46,10 @@ void keepResetFlags() {
   wdt_disable();
 }
 
+void letClockGo() {
+  TIMSK0 = static_cast<uint8_t>(TIMSK0 | _BV(TOIE0));
+}
+
 ISR(TIMER2_COMPA_vect) {
   if (pending) {
     if (overrunCount < UINT16_MAX) overrunCount = overrunCount + 1;
@@ -47,6 +57,7 @@ ISR(TIMER2_COMPA_vect) {
   }
   pending = true;
   taken = 0;
+  holdClock();
   readings[0] = bit_is_set(PINC, 0) ? 1 : 0;
   readings[1] = bit_is_set(PINC, 1) ? 1 : 0;
   readings[2] = bit_is_set(PINC, 2) ? 1 : 0;
@@ -69,6 +80,7 @@ bool sampleDue() {
   if (working) {
     working = false;
     pending = false;
+    letClockGo();
   }
   if (!pending) return false;
   uint8_t next = taken;

@@ -73,10 +73,10 @@ void measure(uint8_t first, uint8_t last) {
 void takeWidestRun() {
   uint8_t widest = 0;
   uint8_t i = 0;
-  for (unsigned rest = onLine; rest != 0;) {
-    for (; (rest & 1) == 0; rest >>= 1) i++;
+  for (SensorBits rest = onLine; rest != 0;) {
+    for (; (rest & 1) == 0; rest = static_cast<SensorBits>(rest >> 1)) i++;
     const uint8_t first = i;
-    for (; (rest & 1) != 0; rest >>= 1) i++;
+    for (; (rest & 1) != 0; rest = static_cast<SensorBits>(rest >> 1)) i++;
     const uint8_t width = static_cast<uint8_t>(i - first);
     if (width > widest) {
       widest = width;

@@ -28,6 +28,12 @@ volatile uint16_t overrunCount;
 bool buttonDown = true;
 uint8_t buttonDiffers;
 
+// The core's clock counts with an interrupt each 1024 us. It waits, less than that, while the motors
+// wait for a sample.
+inline void holdClock() {
+  TIMSK0 = static_cast<uint8_t>(TIMSK0 & ~_BV(TOIE0));
+}
+
 // Set before main() and therefore not to be cleared by it.
 uint8_t resetFlags __attribute__((section(".noinit")));
 
@@ -41,6 +47,10 @@ void keepResetFlags() {
   resetFlags = MCUSR;
   MCUSR = 0;
   wdt_disable();
+}
+
+void letClockGo() {
+  TIMSK0 = static_cast<uint8_t>(TIMSK0 | _BV(TOIE0));
 }
 
 ISR(TIMER1_COMPA_vect) {
@@ -62,6 +72,8 @@ ISR(ADC_vect) {
   if (i + 1 < SENSOR_COUNT) {
     ADMUX = SELECT[i + 1];
     ADCSRA |= _BV(ADSC);
+  } else {
+    holdClock();
   }
 }
 
@@ -81,6 +93,7 @@ bool sampleDue() {
   if (working) {
     working = false;
     pending = false;
+    letClockGo();
   }
   if (!pending) return false;
   uint8_t next = taken;

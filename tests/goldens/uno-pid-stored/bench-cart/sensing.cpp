@@ -147,10 +147,10 @@ uint16_t distanceOf(uint8_t first, uint8_t last) {
 void takeNearestRun() {
   uint16_t nearest = 0;
   uint8_t i = 0;
-  for (unsigned rest = onLine; rest != 0;) {
-    for (; (rest & 1) == 0; rest >>= 1) i++;
+  for (SensorBits rest = onLine; rest != 0;) {
+    for (; (rest & 1) == 0; rest = static_cast<SensorBits>(rest >> 1)) i++;
     const uint8_t first = i;
-    for (; (rest & 1) != 0; rest >>= 1) i++;
+    for (; (rest & 1) != 0; rest = static_cast<SensorBits>(rest >> 1)) i++;
     const uint8_t last = static_cast<uint8_t>(i - 1);
     // The only run, most often, needs no distance.
     if (sight.found) {

@@ -54,6 +54,7 @@ void run() {
   }
   // What can wait comes after the motors.
   setMotors(steering.dutyLeftQ12, steering.dutyRightQ12);
+  letClockGo();
   advance();
   samples++;
   if (samples >= RUN_LIMIT_SAMPLES) {
