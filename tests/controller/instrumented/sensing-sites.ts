@@ -4,8 +4,7 @@ import { BYTE, type Proof, TWO_COVERAGES, after } from './proof.js';
 
 export const CALIBRATION: Record<string, Proof> = {
   'i++': BYTE,
-  'sensorCount - 1': BYTE,
-  'riseOf(0) + riseOf(last)': 'rise of two sensors in a sweep',
+  'riseOf(analog[0]) + riseOf(analog.at(-1))': 'rise of two sensors in a sweep',
   '(most[i]) - (least[i])': 'reading above ground',
   'FULL_COVERAGE << CALIBRATION_BITS': 'full coverage over a span',
   '(FULL_COVERAGE << CALIBRATION_BITS) + span': 'full coverage over a span',
