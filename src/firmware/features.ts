@@ -31,7 +31,7 @@ export interface Features {
   encoders: boolean;
   /** The encoders tell the direction. */
   quadrature: boolean;
-  /** The board has an LED that this vehicle does not use otherwise. */
+  /** There is an LED: the vehicle's own, or the board's on a pin that the vehicle leaves free. */
   led: boolean;
   /** The firmware can tell a start after the supply broke down from switching on; MicroPython does not say. */
   brownOut: boolean;
@@ -40,7 +40,7 @@ export interface Features {
 /**
  * What the controller's constants say the vehicle has.
  *
- * @param led whether the board has an LED that the vehicle leaves free
+ * @param led whether there is an LED
  */
 export function featuresOf(
   controller: ControllerConstants,

@@ -63,7 +63,7 @@ function motorRows(side: 'left' | 'right', wiring: MotorWiring): PinRow[] {
   return rows;
 }
 
-function otherRows({ drive, start, board }: Vehicle): PinRow[] {
+function otherRows({ drive, start, board, led }: Vehicle): PinRow[] {
   const rows = [
     row(
       start.button,
@@ -74,6 +74,11 @@ function otherRows({ drive, start, board }: Vehicle): PinRow[] {
   ];
   if (drive.standby !== undefined)
     rows.unshift(row(drive.standby, 'output', 'driver: standby input', 'High lets the driver work.'));
+  if (led !== undefined) {
+    const [from, to] = led.activeLow ? ['supply', 'pin'] : ['pin', 'ground'];
+    const about = `In series with its resistor, from ${from} to ${to}; some milliamperes, see the data sheet of the board.`;
+    rows.push(row(led.pin, 'output', 'LED that shows state and faults', about));
+  }
   rows.push({ pin: 'GND', to: 'ground of sensors, driver and battery', note: 'One common point.' });
   rows.push({
     pin: `${board.logicV} V`,

@@ -2,14 +2,7 @@
 import { fileName } from './identifiers.js';
 import type { FirmwareDesign, Rendering, SheetIdentity, TemplateFile } from './render.js';
 import { type EncoderView, encoderView } from './view-encoders.js';
-import {
-  type PinLine,
-  directionLines,
-  hasFreeLed,
-  pinLines,
-  sensorPinCodes,
-  sensorPlaces,
-} from './view-pins.js';
+import { type PinLine, directionLines, pinLines, sensorPinCodes, sensorPlaces } from './view-pins.js';
 import { type RegisterView, registerView } from './view-registers.js';
 import { type CommonView, commonView } from './view.js';
 
@@ -33,7 +26,7 @@ function arduinoView(sheet: SheetIdentity, design: FirmwareDesign): ArduinoView 
   const { vehicle } = design;
   const { scheme, standby } = vehicle.drive;
   return {
-    ...commonView(sheet, design, hasFreeLed(vehicle)),
+    ...commonView(sheet, design),
     ...registerView(vehicle),
     ...encoderView(vehicle),
     pwmDir: scheme === 'pwm-dir',

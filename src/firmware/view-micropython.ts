@@ -8,7 +8,7 @@ import type { FirmwareDesign, Rendering, SheetIdentity, TemplateFile } from './r
 import {
   type PinLine,
   directionLines,
-  hasFreeLed,
+  ledLine,
   pinLines,
   sensorPinCodes,
   sensorPlaces,
@@ -42,8 +42,6 @@ interface MicroPythonView extends Omit<CommonView, 'groups' | 'reasons'> {
   digitalPlaces: readonly number[];
   pins: readonly PinLine[];
   directions: readonly { name: string; level: number; about: string }[];
-  ledCode: string;
-  ledAbout: string;
   pwmHz: number;
   /** Encoders: whether their pins have pull-ups, and whether they count backward. */
   /** The port lets a handler run at once, not when the interpreter comes to it. */
@@ -82,7 +80,7 @@ function micropythonView(
 ): MicroPythonView {
   const { vehicle } = design;
   const { scheme, standby } = vehicle.drive;
-  const common = commonView(sheet, design, hasFreeLed(vehicle));
+  const common = commonView(sheet, design);
   return {
     ...common,
     header: [...common.header, ...handlingParagraphs(files)],
@@ -109,8 +107,6 @@ function micropythonView(
       level: high ? 1 : 0,
       about,
     })),
-    ledCode: vehicle.board.led.code,
-    ledAbout: vehicle.board.led.about,
     pwmHz: vehicle.board.pwmHz,
     // MicroPython documentation, Pin.irq: hard is for ports that have it, rp2 among them; esp32 has not
     hardInterrupts: vehicle.board.id === 'pico',
@@ -163,7 +159,7 @@ export function micropythonRendering(sheet: SheetIdentity, design: FirmwareDesig
     rules: controller.kind === 'rules',
     encoders: controller.wheelLoop !== undefined,
     sweep: controller.sweep !== undefined,
-    led: hasFreeLed(vehicle),
+    led: ledLine(vehicle) !== undefined,
   };
   const files = filesOf(vehicle.name, wanted);
   // main.py comes last: if the copying is interrupted, the board has no program that lacks half its modules.

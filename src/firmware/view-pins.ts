@@ -72,9 +72,26 @@ function usedPins({ drive, bar, start, encoders }: Vehicle): PinFacts[] {
   return [...motors, ...counted, ...bar.pins, start.button, drive.standby].filter((pin) => pin !== undefined);
 }
 
-/** Whether the board has its LED on a pin that the vehicle leaves free. */
-export function hasFreeLed(vehicle: Vehicle): boolean {
-  return usedPins(vehicle).every((pin) => pin.label !== vehicle.board.led.label);
+/** The LED that shows state and faults. */
+export interface LedLine {
+  /** Label of its pin on the board. */
+  label: string;
+  /** As the firmware's language names the pin. */
+  code: string;
+  activeLow: boolean;
+  about: string;
+}
+
+/** The vehicle's own LED, else the board's where its pin is free; undefined where there is none. */
+export function ledLine(vehicle: Vehicle): LedLine | undefined {
+  const { led, board } = vehicle;
+  if (led !== undefined) {
+    const lit = led.activeLow ? 'low' : 'high';
+    const about = `LED that shows state and faults, lit while ${lit}. From led.`;
+    return { label: led.pin.label, code: led.pin.code, activeLow: led.activeLow, about };
+  }
+  if (usedPins(vehicle).some((pin) => pin.label === board.led.label)) return undefined;
+  return { ...board.led, activeLow: false };
 }
 
 /** The sensors' pins as the firmware's language names them, leftmost first. */

@@ -10,6 +10,7 @@ import { type Features, featuresOf } from './features.js';
 import { type Reason, headerParagraphs, reasonsOf } from './header.js';
 import type { FirmwareDesign, SheetIdentity } from './render.js';
 import { type ClassRow, classRows } from './view-classes.js';
+import { ledLine } from './view-pins.js';
 import { driveConstants, memoryConstants, steeringConstants } from './view-drive.js';
 import { sensingConstants } from './view-sensing.js';
 import { wheelLoopConstants } from './view-wheel-loop.js';
@@ -31,6 +32,10 @@ export interface CommonView extends Features {
   origin: string;
   /** One line for the head of the user's own files. */
   hooks: string;
+  /** The LED's pin as the language names it, with a word about it; empty without one. */
+  ledCode: string;
+  ledAbout: string;
+  ledActiveLow: boolean;
   reasons: readonly Reason[];
   groups: readonly ConstantGroup[];
   classes: readonly ClassRow[];
@@ -54,14 +59,11 @@ function ruleLines(controller: ControllerConstants): RuleLine[] {
   return lines;
 }
 
-/**
- * The part of the view model that does not depend on the language.
- *
- * @param led whether the board has an LED that the vehicle leaves free
- */
-export function commonView(sheet: SheetIdentity, design: FirmwareDesign, led: boolean): CommonView {
+/** The part of the view model that does not depend on the language. */
+export function commonView(sheet: SheetIdentity, design: FirmwareDesign): CommonView {
   const { vehicle, controller } = design;
-  const features = featuresOf(controller, vehicle.language, led);
+  const led = ledLine(vehicle);
+  const features = featuresOf(controller, vehicle.language, led !== undefined);
   const groups: ConstantGroup[] = [
     { title: 'Time', constants: timeConstants(vehicle, controller, features) },
     { title: 'Scales of the integers', constants: scaleConstants(controller, features) },
@@ -79,6 +81,9 @@ export function commonView(sheet: SheetIdentity, design: FirmwareDesign, led: bo
     header: headerParagraphs(sheet, vehicle, features),
     origin: `Part of the firmware of ${vehicle.name}. Written by fairlead ${VERSION}; change the build sheet, not this file.`,
     hooks: `Yours: code of your own for ${vehicle.name}. fairlead wrote this file once and leaves it alone.`,
+    ledCode: led?.code ?? '',
+    ledAbout: led?.about ?? '',
+    ledActiveLow: led?.activeLow ?? false,
     reasons: reasonsOf(features),
     groups,
     classes: classRows(design),

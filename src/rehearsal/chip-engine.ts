@@ -113,7 +113,7 @@ class ChipRun {
     const until = from + WATCHED_S / STEP_S;
     for (let index = from; index < until && reader.flashes === undefined; index++) {
       this.step(index);
-      if (led !== undefined) reader.look(chip.isHigh(pinNumber(led)), index * STEP_S);
+      if (led !== undefined) reader.look(chip.isHigh(pinNumber(led.pin)) !== led.activeLow, index * STEP_S);
     }
     return { ...ending, reason: reader.reason, restarted: motors.lastDriven > lastDriven };
   }

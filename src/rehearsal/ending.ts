@@ -4,7 +4,7 @@
  * The LED is read as a person reads it, from its light alone: flashes of 0.2 s, 0.6 s dark before a detail, 1.2 s dark after a code.
  */
 import { reasonOfFlashes } from '../firmware/header.js';
-import { hasFreeLed } from '../firmware/view-pins.js';
+import { ledLine } from '../firmware/view-pins.js';
 import type { PinFacts } from '../vehicle/board-facts.js';
 import { findPin } from '../vehicle/boards.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
@@ -64,7 +64,9 @@ export class LedReader {
 /** Time for which a vehicle is watched after its motors went off, s: at least two of the longest codes. */
 export const WATCHED_S = 14;
 
-/** The pin of the LED that shows the reason, where the vehicle leaves it free. */
-export function ledPin(vehicle: Vehicle): PinFacts | undefined {
-  return hasFreeLed(vehicle) ? findPin(vehicle.board, vehicle.board.led.label) : undefined;
+/** The pin of the LED that shows the reason, and whether it is lit while low; undefined without one. */
+export function ledPin(vehicle: Vehicle): { pin: PinFacts; activeLow: boolean } | undefined {
+  const led = ledLine(vehicle);
+  const pin = led && findPin(vehicle.board, led.label);
+  return pin && { pin, activeLow: led.activeLow };
 }

@@ -45,6 +45,7 @@ export class MicroPythonRun implements Surroundings {
 
   private readonly faults: readonly Fault[];
   private readonly led: number | undefined;
+  private readonly ledActiveLow: boolean;
   private readonly reader = new LedReader();
   private ledLit = false;
   /** The board has started anew: nobody presses the button again. */
@@ -57,7 +58,8 @@ export class MicroPythonRun implements Surroundings {
   constructor(vehicle: Vehicle, setup: RunSetup) {
     this.faults = setup.faults ?? [];
     const led = ledPin(vehicle);
-    this.led = led && Number(led.code);
+    this.led = led && Number(led.pin.code);
+    this.ledActiveLow = led?.activeLow ?? false;
     this.plant = new Plant(setup.plant, setup.lane, setup.faults);
     this.monitor = new RunMonitor(this.plant, setup);
     this.motors = new MicroPythonMotors(vehicle);
@@ -97,7 +99,7 @@ export class MicroPythonRun implements Surroundings {
     this.faults.some(({ kind, atS }) => kind === 'program' && this.plant.timeS >= atS);
 
   drive(gpio: number, level: number): void {
-    if (gpio === this.led) this.ledLit = level > 0;
+    if (gpio === this.led) this.ledLit = level > 0 !== this.ledActiveLow;
     this.motors.drive(gpio, level);
     if (this.motors.dutyLeft !== 0 || this.motors.dutyRight !== 0) this.started = true;
   }

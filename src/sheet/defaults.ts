@@ -17,8 +17,9 @@ type GivenClass = Exclude<Sheet['speeds']['classes'], 'auto'>[number];
 export type SpeedClass = GivenClass & { minRadiusMm: number };
 
 /** A sheet with every default filled in. What has none stays optional. */
-export interface ResolvedSheet extends Required<Omit<Sheet, 'encoders'>> {
+export interface ResolvedSheet extends Required<Omit<Sheet, 'encoders' | 'led'>> {
   encoders?: Sheet['encoders'] & {};
+  led?: Required<NonNullable<Sheet['led']>>;
   line: Required<Sheet['line']>;
   sensors: Filled<Sheet['sensors'], 'pitchMm' | 'positionsMm' | 'kinds'>;
   drive: Omit<Required<Drive>, 'motor' | 'driver' | 'trim'> & {

@@ -223,6 +223,19 @@ export interface Sheet {
     right: EncoderPins;
   };
   /**
+   * An LED of your own that shows state and fault codes; left out, it is the board's own, where its pin is free.
+   */
+  led?: {
+    /**
+     * A pin's label as printed on the board: a number, or text such as A0 or GP26.
+     */
+    pin: number | string;
+    /**
+     * Whether the LED lights while the pin is low: wired from the supply to the pin instead of from the pin to ground.
+     */
+    activeLow?: boolean;
+  };
+  /**
    * The battery, as it arrives at the motor driver.
    */
   power: {

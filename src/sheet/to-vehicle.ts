@@ -47,6 +47,7 @@ export function toVehicle(sheet: ResolvedSheet): Vehicle {
       trimRight: percentToFraction(drive.trim.rightPercent),
     },
     ...(sheet.encoders && { encoders: encodersOf(sheet.encoders, board) }),
+    ...(sheet.led && { led: { pin: pinOf(board, sheet.led.pin), activeLow: sheet.led.activeLow } }),
     power: { ...sheet.power },
     control: controlOf(sheet.control),
     speeds: {

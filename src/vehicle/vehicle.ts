@@ -69,6 +69,8 @@ export interface Vehicle {
   };
   /** Wheel encoders, where the vehicle has them. */
   encoders?: Encoders;
+  /** An LED of the vehicle's own, in place of the board's. */
+  led?: { pin: PinFacts; activeLow: boolean };
   power: { nominalV: number; fullV: number; emptyV: number };
   control: {
     kind: 'pid' | 'rules';

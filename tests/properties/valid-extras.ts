@@ -2,7 +2,7 @@
 import fc from 'fast-check';
 import type { Sheet } from '../../src/sheet/sheet-types.js';
 import type { BoardId } from '../../src/vehicle/board-facts.js';
-import { BOARDS } from '../../src/vehicle/boards.js';
+import { BOARDS, sheetLabel } from '../../src/vehicle/boards.js';
 import type { PinPlan, PinRequest } from '../../src/vehicle/pin-plan.js';
 import { decimal } from './decimal.js';
 import type { Drive } from './valid-drive.js';
@@ -60,4 +60,15 @@ export function encoders(
       right: { ...pins.right, ...(quadrature && { inverted: right }) },
     },
   }));
+}
+
+/** An LED of its own on a free pin, or none. */
+export function led({ board, plan }: Wiring): fc.Arbitrary<Pick<Sheet, 'led'>> {
+  const used = new Set(JSON.stringify(plan).match(/[\w]+/g));
+  const free = BOARDS[board].pins.filter(
+    ({ label, output, reserved }) => output && reserved === undefined && !used.has(label),
+  );
+  if (free.length === 0) return fc.constant({});
+  const own = fc.record({ pin: fc.constantFrom(...free.map(sheetLabel)), activeLow: fc.boolean() });
+  return fc.option(own, { nil: undefined }).map((each) => (each ? { led: each } : {}));
 }

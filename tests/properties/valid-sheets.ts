@@ -12,7 +12,7 @@ import { BOARDS, BOARD_IDS } from '../../src/vehicle/boards.js';
 import type { DriverSchemeId } from '../../src/vehicle/drivers.js';
 import { proposePins, type PinRequest } from '../../src/vehicle/pin-plan.js';
 import { decimal } from './decimal.js';
-import { control, encoders, type Wiring } from './valid-extras.js';
+import { control, encoders, led, type Wiring } from './valid-extras.js';
 import { drive } from './valid-drive.js';
 import { geometry } from './valid-geometry.js';
 
@@ -136,6 +136,7 @@ export const sheetCandidates: fc.Arbitrary<Sheet> = fc
         lineLevel: fc.constantFrom<'high' | 'low'>('high', 'low'),
         inverted: fc.tuple(inverted, inverted),
         encoded: encoders(wired, driven),
+        lit: led(wired),
         countdownS: decimal(0, 5),
         runLimitS: fc.integer({ min: 1, max: 3600 }),
         tolerances: fc.record({
@@ -169,6 +170,7 @@ export const sheetCandidates: fc.Arbitrary<Sheet> = fc
         },
         power,
         ...rest.encoded,
+        ...rest.lit,
         control: controlled,
         speeds: rest.speeds,
         start: { buttonPin: plan.buttonPin, countdownS: rest.countdownS, runLimitS: rest.runLimitS },

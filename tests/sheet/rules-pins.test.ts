@@ -66,6 +66,11 @@ testRules({
       want: ['/start/buttonPin: Pin A0 is taken twice: by sensor 1 (/sensors/pins/0) and by start button.'],
     },
     {
+      when: 'an LED on the pin of a sensor',
+      changes: { '/led': { pin: 'A0' } },
+      want: ['/led/pin: Pin A0 is taken twice: by sensor 1 (/sensors/pins/0) and by LED.'],
+    },
+    {
       when: 'one pin for both motors',
       changes: { '/drive/driver/right/pwm': 5 },
       want: [

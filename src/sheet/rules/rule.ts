@@ -85,6 +85,7 @@ function pinUses(sheet: ResolvedSheet, board: BoardFacts): PinUse[] {
       add(pointerTo('encoders', side, key), label, 'encoder', `${side} encoder ${key}`);
     }
   }
+  if (sheet.led !== undefined) add(pointerTo('led', 'pin'), sheet.led.pin, 'output', 'LED');
   add(pointerTo('start', 'buttonPin'), sheet.start.buttonPin, 'button', 'start button');
   return uses;
 }

@@ -28,3 +28,6 @@ constexpr uint8_t RIGHT_BACKWARD_PIN = 9;
 
 // Start button, to ground, with the internal pull-up. From start.buttonPin.
 constexpr uint8_t BUTTON_PIN = 2;
+
+// The board's own LED.
+constexpr uint8_t LED_PIN = LED_BUILTIN;

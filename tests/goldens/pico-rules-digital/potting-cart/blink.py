@@ -32,11 +32,12 @@ class Blink:
         self._samples = 0
         self._tick += 1
         if state == COUNTDOWN:
-            self._led.value(self._tick & 1)
+            lit = self._tick & 1 == 1
         elif is_moving(state):
-            self._led.value(1)
+            lit = True
         else:
-            self._led.value(self._code(reason))
+            lit = self._code(reason)
+        self._led.value(lit)
 
     def _code(self, flashes):
         if self._tick >= 2 * flashes + _PAUSE_TICKS:

@@ -25,7 +25,7 @@ bool code(uint8_t flashes) {
 }  // namespace
 
 void setupBlink() {
-  pinMode(LED_BUILTIN, OUTPUT);
+  pinMode(LED_PIN, OUTPUT);
 }
 
 void blink() {
@@ -40,5 +40,5 @@ void blink() {
   } else if (!isMoving(state)) {
     lit = code(static_cast<uint8_t>(lastReason()));
   }
-  digitalWrite(LED_BUILTIN, lit);
+  digitalWrite(LED_PIN, lit);
 }
