@@ -11,6 +11,7 @@
 #include "sensing.h"
 
 #include "arithmetic.h"
+#include "constants.h"
 
 // The arithmetic here and in steering.cpp shifts negative numbers to the right.
 static_assert((-1 >> 1) == -1, "shifts to the right keep the sign");

@@ -13,6 +13,8 @@
 #include "steering.h"
 
 #include "arithmetic.h"
+#include "constants.h"
+#include "sensing.h"
 
 namespace {
 

@@ -6,8 +6,6 @@
 
 #include <stdint.h>
 
-#include "constants.h"
-
 void setupBoard();
 
 // Whether a sample is to begin now. A timer of the chip ticks once a period; a tick that finds the

@@ -6,8 +6,6 @@
 
 #include <stdint.h>
 
-#include "constants.h"
-
 struct Sight {
   bool found;  // the line is under the bar
   int16_t

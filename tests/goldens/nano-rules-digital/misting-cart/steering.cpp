@@ -13,7 +13,9 @@
 #include "steering.h"
 
 #include "arithmetic.h"
+#include "constants.h"
 #include "rule_table.h"
+#include "sensing.h"
 
 namespace {
 

@@ -2,7 +2,9 @@
 // this file.
 #include "blink.h"
 
-#include "pins.h"
+#include <Arduino.h>
+
+#include "constants.h"
 #include "supervisor.h"
 
 namespace {

@@ -9,6 +9,7 @@
 #include <avr/wdt.h>
 #include <util/atomic.h>
 
+#include "constants.h"
 #include "pins.h"
 #include "sensing.h"
 

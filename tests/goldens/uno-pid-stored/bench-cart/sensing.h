@@ -6,8 +6,6 @@
 
 #include <stdint.h>
 
-#include "constants.h"
-
 struct Sight {
   bool found;  // the line is under the bar
   bool wide;   // the bar lies on a crossing

@@ -6,9 +6,6 @@
 
 #include <stdint.h>
 
-#include "constants.h"
-#include "sensing.h"
-
 // Where in the course of following a line the vehicle is; numbers as in a run log.
 enum class Phase : uint8_t {
   Follow = 0,

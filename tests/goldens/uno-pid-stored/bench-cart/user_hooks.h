@@ -1,9 +1,10 @@
 // Yours: code of your own for bench-cart. fairlead wrote this file once and leaves it alone.
 // The firmware calls these functions; fill them in user_hooks.cpp. Keep them short and never wait
-// in them: reading, steering and hooks share one sample period (SAMPLE_PERIOD_US). supervisor.h
-// tells the state and the last reason.
+// in them: reading, steering and hooks share one sample period (SAMPLE_PERIOD_US). steering.h tells
+// the speed class in force, supervisor.h the state and the last reason.
 #pragma once
 
+#include "constants.h"
 #include "steering.h"
 #include "supervisor.h"
 
