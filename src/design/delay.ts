@@ -5,7 +5,7 @@
  * that a reading is on average half a scan older than the end of the scan; the end of the scan starts the arithmetic;
  * a new duty takes effect on average half a PWM period after it is written, that of the slowest timer that serves a motor. The hold over one sample is part of the sampled plant, not of this delay.
  */
-import { motorPwmHz } from '../vehicle/pwm-modes.js';
+import { motorPwmHz, pwmWords } from '../vehicle/pwm-modes.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import type { DelayShare } from './design.js';
 
@@ -26,7 +26,11 @@ export function delayBudget(vehicle: Vehicle): { shares: DelayShare[]; totalS: n
       source: `half of ${count} ${bar.kind} readings one after the other`,
     },
     { name: 'compute', delayS: controlS(vehicle), source: 'control arithmetic, worst case of the board' },
-    { name: 'pwm', delayS: 0.5 / motorPwmHz(vehicle), source: 'half a PWM period until the new duty acts' },
+    {
+      name: 'pwm',
+      delayS: 0.5 / motorPwmHz(vehicle),
+      source: `half a PWM period until the new duty acts; ${pwmWords(vehicle)}`,
+    },
   ];
   return { shares, totalS: shares.reduce((sum, share) => sum + share.delayS, 0) };
 }

@@ -2,6 +2,7 @@
 import type { PinFacts } from '../vehicle/board-facts.js';
 import { type PinRole, cautionsOf } from '../vehicle/pin-roles.js';
 import type { MotorWiring, Vehicle } from '../vehicle/vehicle.js';
+import { pwmWords } from '../vehicle/pwm-modes.js';
 import { VERSION } from '../version.js';
 import { CAUTIONS } from './header.js';
 
@@ -50,10 +51,13 @@ function sensorRows({ bar, board }: Vehicle): PinRow[] {
   });
 }
 
-function motorRows(side: 'left' | 'right', wiring: MotorWiring): PinRow[] {
+function motorRows(side: 'left' | 'right', vehicle: Vehicle): PinRow[] {
+  const wiring: MotorWiring = vehicle.drive[side];
+  const about = `PWM of ${pwmWords(vehicle)}.`;
   const rows: PinRow[] = [];
   const add = (pin: PinFacts | undefined, role: PinRole, input: string): void => {
-    if (pin !== undefined) rows.push(row(pin, role, `driver, ${side} motor: ${input}`, ''));
+    if (pin !== undefined)
+      rows.push(row(pin, role, `driver, ${side} motor: ${input}`, role === 'PWM output' ? about : ''));
   };
   add(wiring.pwm, 'PWM output', 'PWM input');
   add(wiring.dir, 'output', 'direction input');
@@ -135,15 +139,15 @@ function cautions({ board }: Vehicle): string[] {
 }
 
 export function wiringView(vehicle: Vehicle): WiringView {
-  const { drive, board } = vehicle;
+  const { board } = vehicle;
   return {
     name: vehicle.name,
     origin: `Written by fairlead ${VERSION}; change the build sheet, not this file.`,
     boardTitle: board.title,
     pins: [
       ...sensorRows(vehicle),
-      ...motorRows('left', drive.left),
-      ...motorRows('right', drive.right),
+      ...motorRows('left', vehicle),
+      ...motorRows('right', vehicle),
       ...otherRows(vehicle),
     ],
     supply: supplyRows(vehicle),

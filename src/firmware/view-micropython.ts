@@ -1,4 +1,5 @@
 /** The view model of the MicroPython program: pins, what board and driver need, and the files to write. */
+import { motorPwmHz, pwmWords } from '../vehicle/pwm-modes.js';
 import type { EncoderWiring } from '../vehicle/encoder.js';
 import type { Constant, ConstantGroup } from './constant.js';
 import { copyCommands } from './papers-loading.js';
@@ -43,6 +44,8 @@ interface MicroPythonView extends Omit<CommonView, 'groups' | 'reasons'> {
   pins: readonly PinLine[];
   directions: readonly { name: string; level: number; about: string }[];
   pwmHz: number;
+  /** The same in words, and why. */
+  pwmAbout: string;
   /** Encoders: whether their pins have pull-ups, and whether they count backward. */
   /** The port lets a handler run at once, not when the interpreter comes to it. */
   hardInterrupts: boolean;
@@ -107,7 +110,8 @@ function micropythonView(
       level: high ? 1 : 0,
       about,
     })),
-    pwmHz: vehicle.board.pwmHz,
+    pwmHz: Math.floor(motorPwmHz(vehicle)),
+    pwmAbout: `${pwmWords(vehicle)}. From drive.driver.maxPwmKhz.`,
     // MicroPython documentation, Pin.irq: hard is for ports that have it, rp2 among them; esp32 has not
     hardInterrupts: vehicle.board.id === 'pico',
     leftPullUp: hasPullUps(vehicle.encoders?.left),

@@ -1,6 +1,6 @@
 /** The AVR registers behind a vehicle's pins: sample tick, converter channels, motor outputs, digital inputs. */
 import type { PinFacts, TickFacts } from '../vehicle/board-facts.js';
-import { modeOf, motorTimers } from '../vehicle/pwm-modes.js';
+import { modeOf, pwmDemand, pwmWords } from '../vehicle/pwm-modes.js';
 import type { MotorWiring, Vehicle } from '../vehicle/vehicle.js';
 import { sensorPlaces } from './view-pins.js';
 
@@ -29,6 +29,8 @@ interface LevelOutput {
 export interface RegisterView {
   /** What ticks once a sample. */
   tick: TickFacts;
+  /** The PWM frequency of the motors, and why. */
+  pwmAbout: string;
   /** Set-up of the timers whose PWM serves a motor. */
   pwmSetUp: readonly string[];
   pwmOutputs: readonly PwmOutput[];
@@ -78,12 +80,13 @@ export function registerView(vehicle: Vehicle): RegisterView {
   const outputs = [...outputsOf('Left', drive.left), ...outputsOf('Right', drive.right)];
   const isPwm = (name: string) => name.endsWith('Pwm') || drive.scheme === 'dual-pwm';
   const pwm = outputs.filter(([name]) => isPwm(name));
-  const used = motorTimers(vehicle);
+  const demand = pwmDemand(vehicle);
+  const used = demand.serving;
   const pwmOutputs = pwm.map(([name, pin]): PwmOutput => {
     const facts = timers.find(({ timer }) => timer === pin.pwm?.timer);
     if (facts === undefined || pin.pwm === undefined) throw new Error(`Pin ${pin.label} has no timer.`);
     const { timer, channel } = pin.pwm;
-    const mode = modeOf(facts, used);
+    const mode = modeOf(demand, timer);
     return {
       ...levelOf(name, pin),
       compare: `OCR${timer}${channel}`,
@@ -103,7 +106,10 @@ export function registerView(vehicle: Vehicle): RegisterView {
   const channels = sensorPlaces(vehicle, 'analog').map((place) => bar.pins[place]?.adc?.channel ?? 0);
   return {
     tick,
-    pwmSetUp: timers.filter(({ timer }) => used.has(timer)).flatMap((facts) => modeOf(facts, used).setUp),
+    pwmAbout: `PWM of ${pwmWords(vehicle)}. From drive.driver.`,
+    pwmSetUp: timers
+      .filter(({ timer }) => used.has(timer))
+      .flatMap(({ timer }) => modeOf(demand, timer).setUp),
     pwmOutputs,
     levelOutputs: levels,
     channels: channels.map((channel) => channel % CHANNELS_SELECTED),

@@ -6,7 +6,7 @@
  * speed line are stated for. So it is the pins' signal itself that drives the plant, not a register.
  */
 import type { PinFacts } from '../vehicle/board-facts.js';
-import { motorTimers, timerHz } from '../vehicle/pwm-modes.js';
+import { pwmDemand, timerHz } from '../vehicle/pwm-modes.js';
 import type { MotorWiring, Vehicle } from '../vehicle/vehicle.js';
 import { type AvrChip, CLOCK_HZ, pinNumber } from './chip-avr.js';
 
@@ -39,7 +39,7 @@ function pwmPeriodCycles(vehicle: Vehicle, wiring: MotorWiring): number {
   const pin = wiring.pwm ?? wiring.in1;
   const timer = pin?.pwm?.timer;
   const { board } = vehicle;
-  const hz = timer === undefined ? board.pwmHz : timerHz(board, timer, motorTimers(vehicle));
+  const hz = timer === undefined ? board.pwmHz : timerHz(pwmDemand(vehicle), timer);
   return CLOCK_HZ / hz;
 }
 

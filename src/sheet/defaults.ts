@@ -24,7 +24,11 @@ export interface ResolvedSheet extends Required<Omit<Sheet, 'encoders' | 'led'>>
   sensors: Filled<Sheet['sensors'], 'pitchMm' | 'positionsMm' | 'kinds'>;
   drive: Omit<Required<Drive>, 'motor' | 'driver' | 'trim'> & {
     motor: Required<Drive['motor']>;
-    driver: Omit<Drive['driver'], 'left' | 'right'> & { left: Motor; right: Motor };
+    driver: Omit<Drive['driver'], 'left' | 'right' | 'maxPwmKhz'> & {
+      left: Motor;
+      right: Motor;
+      maxPwmKhz: number;
+    };
     trim: Required<NonNullable<Drive['trim']>>;
   };
   control: Sheet['control'] & { stateMemory: boolean; swingMm: number } & {

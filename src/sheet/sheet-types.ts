@@ -192,6 +192,10 @@ export interface Sheet {
        * A pin's label as printed on the board: a number, or text such as A0 or GP26.
        */
       standbyPin?: number | string;
+      /**
+       * Highest PWM frequency that the driver takes, by its data sheet. [kHz]
+       */
+      maxPwmKhz?: number;
     };
     /**
      * Factor on each wheel's commanded duty, for a vehicle that pulls to one side.

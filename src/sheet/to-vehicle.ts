@@ -9,7 +9,7 @@ import { positionsOf } from './positions.js';
 import { analogPlaces, kindsOf } from './sensor-kinds.js';
 import { topSpeedMps } from './top-speed.js';
 import { typicalReadings } from './typical-readings.js';
-import { mmToM, msToS, percentToFraction } from './units.js';
+import { khzToHz, mmToM, msToS, percentToFraction } from './units.js';
 
 /**
  * The vehicle that a sheet describes.
@@ -43,6 +43,7 @@ export function toVehicle(sheet: ResolvedSheet): Vehicle {
       stallCurrentA: drive.motor.stallCurrentA,
       windingOhm: drive.motor.ratedVoltageV / drive.motor.stallCurrentA,
       ...wiringOf(sheet, board),
+      maxPwmHz: khzToHz(drive.driver.maxPwmKhz),
       trimLeft: percentToFraction(drive.trim.leftPercent),
       trimRight: percentToFraction(drive.trim.rightPercent),
     },

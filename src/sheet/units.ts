@@ -11,6 +11,8 @@ export const msToS = (ms: number): number => ms / 1000;
 export const sToMs = (s: number): number => s * 1000;
 export const percentToFraction = (percent: number): number => percent / 100;
 export const fractionToPercent = (fraction: number): number => fraction * 100;
+export const khzToHz = (khz: number): number => khz * 1000;
+export const hzToKhz = (hz: number): number => hz / 1000;
 export const degToRad = (deg: number): number => (deg * Math.PI) / 180;
 export const radToDeg = (rad: number): number => (rad * 180) / Math.PI;
 export const rpmToRadPerS = (rpm: number): number => (rpm * 2 * Math.PI) / 60;
@@ -28,6 +30,7 @@ const FACTORS = {
   'm/s': { 'm/s': 1, 'mm/s': 0.001, 'cm/s': 0.01, 'km/h': 1 / 3.6, 'in/s': 0.0254 },
   '%': { '%': 1, percent: 1 },
   deg: { deg: 1, rad: 180 / Math.PI, '°': 1, degrees: 1 },
+  kHz: { kHz: 1, Hz: 0.001 },
   counts: { counts: 1, count: 1 },
   '1/m^2': { '1/m^2': 1, '1/m2': 1 },
   '1': {},
@@ -55,6 +58,7 @@ const EXAMPLES: Readonly<Record<Unit, string>> = {
   'm/s': '0.5, 0.5 m/s or 50 cm/s',
   '%': '10 or 10 %',
   deg: '30 or 30 deg',
+  kHz: '20, 20 kHz or 20000 Hz',
   counts: '500',
   '1': '0.7',
 };

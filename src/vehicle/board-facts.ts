@@ -53,13 +53,21 @@ export interface PwmMode {
   setUp: readonly string[];
 }
 
+/** Frequencies to which a timer can be set up. */
+export interface FreePwm {
+  /** The one fast frequency of an 8-bit timer, Hz; a 16-bit timer can have any. */
+  fixedHz?: number;
+  /** The mode with the frequency next to `pwmHz`, not above it. */
+  at(pwmHz: number): PwmMode;
+}
+
 /** A timer of an AVR chip, as the firmware uses it. */
 export interface TimerFacts {
   timer: number;
   /** Mode beside other timers that serve motors: their frequencies agree. */
   pwm: PwmMode;
-  /** Mode where this timer alone serves the motors, where that can be a better one. */
-  pwmAlone?: PwmMode;
+  /** Modes at other frequencies, for timers that the firmware may set up anew. */
+  free?: FreePwm;
   /** Control registers of channels whose output is not connected in TCCRnA. */
   controls?: Readonly<Record<string, string>>;
   /** How it ticks once a sample while none of its outputs is PWM; absent where it must not be retimed. */

@@ -63,6 +63,8 @@ export interface Vehicle {
     left: MotorWiring;
     right: MotorWiring;
     standby?: PinFacts;
+    /** Highest PWM frequency that the driver takes, Hz. */
+    maxPwmHz: number;
     /** Factor on each wheel's duty, 1 = none. */
     trimLeft: number;
     trimRight: number;

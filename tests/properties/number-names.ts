@@ -6,7 +6,7 @@ const words = (text: string) => text.trim().split(/\s+/);
 
 /** Units at the end of a camel-case name or of a CONSTANT_NAME. */
 const UNITS =
-  words(`M Mm S Ms Us Mps Mps2 Rad RadS RadPerS Deg V A Ohm N Kg Hz Rpm PerM PerM2 PerTick Percent Bytes Px
+  words(`M Mm S Ms Us Mps Mps2 Rad RadS RadPerS Deg V A Ohm N Kg Hz Rpm PerM PerM2 PerTick Percent Khz Bytes Px
   Count Counts Samples Cycles`);
 /** Last words of names that are pure numbers; Units are the firmware's, by the scales of controller/constants.ts. */
 const PURE = words('Share Shares Fraction Factor Ratio Coefficient Bits Index Steps Units');
@@ -70,7 +70,7 @@ export const LISTED: readonly Listed[] = [
   {
     why: 'the units themselves, as parameters of their conversions',
     where: /^sheet\/units\.ts$/,
-    names: words('m mm s ms deg rad rpm percent'),
+    names: words('m mm s ms deg rad rpm percent khz hz'),
   },
   {
     why: 'places in a text and limits of a schema, in the unit of its field',

@@ -28,6 +28,29 @@ testRules({
       want: [],
     },
   ],
+  'pwm-limit': [
+    {
+      when: 'the timer of the clock, beyond a slow driver',
+      changes: { '/drive/driver/maxPwmKhz': 0.6 },
+      want: [
+        '/drive/driver/maxPwmKhz: PWM comes at 0.977 kHz, more than the driver takes: timer 0 keeps the clock and its frequency.',
+      ],
+    },
+    {
+      when: 'timer 1, which can be as slow as the driver',
+      changes: {
+        '/drive/driver/maxPwmKhz': 0.6,
+        '/drive/driver/left/pwm': 9,
+        '/drive/driver/right': { pwm: 10, in1: 4, in2: 12 },
+      },
+      want: [],
+    },
+    {
+      when: 'a Pico and a slow driver',
+      changes: { ...PICO, ...dualPwm(['GP0', 'GP3'], ['GP6', 'GP11']), '/drive/driver/maxPwmKhz': 0.5 },
+      want: [],
+    },
+  ],
   'pwm-timers': [
     {
       when: 'both motors on the timer of the clock',

@@ -18,6 +18,7 @@ import { rule as pinCautions } from './pin-cautions.js';
 import { rule as pinsAble } from './pins-able.js';
 import { rule as pinsExist } from './pins-exist.js';
 import { rule as pinsUsedOnce } from './pins-used-once.js';
+import { rule as pwmLimit } from './pwm-limit.js';
 import { rule as pwmOutputsDistinct } from './pwm-outputs-distinct.js';
 import { rule as pwmTimers } from './pwm-timers.js';
 import { rule as ruleOverrides } from './rule-overrides.js';
@@ -48,6 +49,7 @@ export const RULES: readonly SheetRule[] = [
   encoderRate,
   encoderResolution,
   pwmOutputsDistinct,
+  pwmLimit,
   spotFitsLine,
   lineCannotHide,
   lineNarrowerThanBar,

@@ -5,12 +5,12 @@
  * the others phase-correct. The frequencies follow by the formulas of the chips' data sheets: 16 MHz / (64 * 256) = 976.6 Hz and
  * 16 MHz / (64 * 510) = 490.2 Hz.
  *
- * What the firmware changes: a 16-bit timer that alone serves the motors runs phase-correct up to a top of 400,
- * 16 MHz / (2 * 400) = 20 kHz, above hearing and within what drivers take; beside others timer 1 keeps near their frequency,
- * 16 MHz / (2 * 64 * 250) = 500 Hz, so that its period is one sample. An 8-bit timer stays: its next frequency, 3.9 kHz, is the
- * most audible of all, and the one after, 31.4 kHz, more than some drivers take. Timer 0 must stay, because the clock counts it.
+ * What the firmware changes (pwm-modes.ts chooses): a 16-bit timer runs phase-correct up to a top that gives any frequency, 20 kHz
+ * with a top of 400. An 8-bit timer has, with its clock undivided, 16 MHz / 510 = 31.4 kHz; divided by 8 it would be 3.9 kHz, the most
+ * audible of all. Where neither can be had, timer 1 keeps near the core's frequency, 16 MHz / (2 * 64 * 250) = 500 Hz, so that its
+ * period is one sample. Timer 0 must stay, because the clock counts it. The clock of timer 4 of the ATmega32U4 stays as the core has it.
  */
-import type { BoardFacts, PwmMode, TimerFacts } from '../board-facts.js';
+import type { BoardFacts, FreePwm, PwmMode, TimerFacts } from '../board-facts.js';
 
 const CLOCK_HZ = 16e6;
 const TIMER_PRESCALER = 64;
@@ -20,15 +20,21 @@ const PHASE_CORRECT_PWM_HZ = CLOCK_HZ / (TIMER_PRESCALER * 510);
 
 const SAMPLE_PERIOD_S = 2e-3;
 
-/** Top of the 16-bit timers at 20 kHz, and of timer 1 at 500 Hz. */
-const ALONE_TOP = 400;
+/** Largest top of a free 16-bit timer: times 16 it fits 16 bits, as the firmware's duty takes it. */
+const LARGEST_TOP = 2047;
+/** Top of timer 1 at 500 Hz. */
 const SAMPLE_TOP = 250;
 
 const CORE_PWM: PwmMode = { pwmHz: PHASE_CORRECT_PWM_HZ, dutySteps: 255, fastPwm: false, setUp: [] };
 
 /** Mode 10 of a 16-bit timer (data sheet, Waveform Generation Mode): phase-correct up to ICRn. */
-function phaseCorrect(timer: number, dutySteps: number, prescaler: 1 | 64): PwmMode {
-  const clock = prescaler === 1 ? `_BV(CS${timer}0)` : `_BV(CS${timer}1) | _BV(CS${timer}0)`;
+function phaseCorrect(timer: number, dutySteps: number, prescaler: 1 | 8 | 64): PwmMode {
+  const clocks = {
+    1: `_BV(CS${timer}0)`,
+    8: `_BV(CS${timer}1)`,
+    64: `_BV(CS${timer}1) | _BV(CS${timer}0)`,
+  };
+  const clock = clocks[prescaler];
   return {
     pwmHz: CLOCK_HZ / (2 * prescaler * dutySteps),
     dutySteps,
@@ -41,12 +47,23 @@ function phaseCorrect(timer: number, dutySteps: number, prescaler: 1 | 64): PwmM
   };
 }
 
+/** Any frequency of a 16-bit timer, with as many steps as there can be. */
+function freeWide(timer: number): FreePwm {
+  return {
+    at(pwmHz) {
+      const topAt = (prescaler: number) => Math.ceil(CLOCK_HZ / (2 * prescaler * pwmHz) - 1e-9);
+      const prescaler = ([1, 8, 64] as const).find((each) => topAt(each) <= LARGEST_TOP) ?? 64;
+      return phaseCorrect(timer, topAt(prescaler), prescaler);
+    },
+  };
+}
+
 /** A 16-bit timer: mode 4 clears it on a compare match. */
 export function wideTimer(timer: number): TimerFacts {
   return {
     timer,
     pwm: CORE_PWM,
-    pwmAlone: phaseCorrect(timer, ALONE_TOP, 1),
+    free: freeWide(timer),
     tick: {
       vector: `TIMER${timer}_COMPA_vect`,
       setUp: [
@@ -66,10 +83,20 @@ export const TIMER_1: TimerFacts = {
   pwmTick: { vector: 'TIMER1_OVF_vect', setUp: ['TIMSK1 = _BV(TOIE1);'] },
 };
 
+/** Mode 1 of timer 2, phase-correct up to 255, with its clock undivided. */
+const UNDIVIDED_HZ = CLOCK_HZ / 510;
+const UNDIVIDED_PWM_2: PwmMode = {
+  pwmHz: UNDIVIDED_HZ,
+  dutySteps: 255,
+  fastPwm: false,
+  setUp: ['TCCR2A = _BV(WGM20);', 'TCCR2B = _BV(CS20);'],
+};
+
 /** The 8-bit timer 2: mode 2 clears it on a compare match. */
 export const TIMER_2: TimerFacts = {
   timer: 2,
   pwm: CORE_PWM,
+  free: { fixedHz: UNDIVIDED_HZ, at: () => UNDIVIDED_PWM_2 },
   tick: {
     vector: 'TIMER2_COMPA_vect',
     setUp: [

@@ -18,7 +18,8 @@ from pins import (
     STANDBY_PIN,
 )
 
-_PWM_HZ = const(20000)  # above hearing
+# 20 kHz: above hearing. From drive.driver.maxPwmKhz.
+_PWM_HZ = const(20000)
 _FULL_PWM = const(65535)  # of duty_u16()
 _DUTY_BITS = const(12)  # a full duty is 2^12
 

@@ -84,6 +84,7 @@ void setupMotors() {
     digitalWrite(pin, LOW);
     pinMode(pin, OUTPUT);
   }
+  // PWM of 20 kHz: above hearing. From drive.driver.
   TCCR1A = _BV(WGM11);
   TCCR1B = _BV(WGM13) | _BV(CS10);
   ICR1 = 400;

@@ -95,6 +95,7 @@ void setupMotors() {
     digitalWrite(pin, LOW);
     pinMode(pin, OUTPUT);
   }
+  // PWM of 500 Hz and 976.6 Hz: timer 0 keeps the clock and its frequency. From drive.driver.
   TCCR1A = _BV(WGM11);
   TCCR1B = _BV(WGM13) | _BV(CS11) | _BV(CS10);
   ICR1 = 250;

@@ -98,6 +98,7 @@ void setupMotors() {
     digitalWrite(pin, LOW);
     pinMode(pin, OUTPUT);
   }
+  // PWM of 976.6 Hz: timer 0 keeps the clock and its frequency. From drive.driver.
 }
 
 // All outputs are written at once: no interrupt comes between the wheels.
