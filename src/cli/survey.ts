@@ -1,6 +1,7 @@
 /** `fairlead survey [SHEET]`: the questionnaire, or a sheet from a file of answers. */
 import type { Command } from 'commander';
 import { FairleadError } from '../sheet/problem.js';
+import { shellWord } from '../report/shell-word.js';
 import type { Io } from './io.js';
 
 const HELP = `
@@ -88,7 +89,7 @@ async function interactive(sheetFile: string | undefined, asJson: boolean, io: I
     return;
   }
   const { draftFile, interrupted } = result;
-  const again = ['fairlead survey', ...(sheetFile === undefined ? [] : [sheetFile])].join(' ');
+  const again = ['fairlead survey', ...(sheetFile === undefined ? [] : [shellWord(sheetFile)])].join(' ');
   const message =
     draftFile === undefined
       ? 'Stopped. There was no answer to keep.'
@@ -99,5 +100,5 @@ async function interactive(sheetFile: string | undefined, asJson: boolean, io: I
 }
 
 function writtenText(file: string): string {
-  return `Written: ${file}\nBeside it, for editors: sheet.schema.json\nNext, type: fairlead derive ${file}\n`;
+  return `Written: ${file}\nBeside it, for editors: sheet.schema.json\nNext, type: fairlead derive ${shellWord(file)}\n`;
 }

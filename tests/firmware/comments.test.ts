@@ -6,25 +6,7 @@ import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
 import { comment, inertText } from '../../src/firmware/comments.js';
 import { formatCode } from '../../src/firmware/format.js';
-
-const HOSTILE = [
-  '*/ int x = system("x"); /*',
-  '*/ system("x") /*',
-  'ends in a backslash \\',
-  'ends in a trigraph backslash ??/',
-  'line\nint stray;\r\nnext\u2028int other;\u2029',
-  'bell \u0007, null \u0000, escape \u001b[31m, delete \u007f',
-  'right to left \u202e tfel, emoji \u{1f331}, lone \ud800 surrogate',
-  'quotes """ and \'\'\' and """"""',
-  '# -*- coding: no-such-codec -*-',
-  'coding=no-such-codec',
-  '#include "nowhere.h"',
-  '%:define int',
-  '// clang-format off',
-  '-'.repeat(300),
-  '/**//**/*/*//',
-  '',
-] as const;
+import { HOSTILE } from './hostile-texts.js';
 
 describe('inert text', () => {
   it.each<[string, string]>([

@@ -65,7 +65,7 @@ it('names an analog input as both sides of the board do', async () => {
 it.each([
   ['a | b', 'a \\| b'],
   ['<script>', '\\<script\\>'],
-  ['[x](http://y)', '\\[x\\](http://y)'],
+  ['[x](http://y)', '\\[x\\](http\\://y)'],
   ['`code` *b* _i_', '\\`code\\` \\*b\\* \\_i\\_'],
   ['end\\', 'end\\<U+005C\\>'],
   ['two\n# lines', 'two\\<U+000A\\>\\# lines'],

@@ -1,10 +1,6 @@
 /** The command that drives one run of the report alone. */
+import { shellWord } from '../shell-word.js';
 import type { ReportData } from './report-data.js';
-
-/** A word as a POSIX shell takes it. */
-function shellWord(word: string): string {
-  return /^[\w./-]+$/.test(word) && !word.startsWith('-') ? word : `'${word.replaceAll("'", "'\\''")}'`;
-}
 
 export function repeatCommand({ sheetFile, names, report }: ReportData, seed: number): string {
   const engine = report.engine === 'twin' ? '' : ` --on ${report.engine}`;
