@@ -78,11 +78,11 @@ const seen = measureSteps(
   { ...SPAN, sensorCount: demo.sensors.count },
   ramBytes,
 );
-const used = ramBytes + stack.bytes;
+const used = ramBytes + stack.deepestBytes;
 console.log(
-  `demo sheet: flash ${flashBytes} bytes (limit 8192), RAM ${ramBytes} static + ${stack.bytes} stack = ${used} bytes (limit 600), head-room ${2048 - used} of 2048`,
+  `demo sheet: flash ${flashBytes} bytes (limit 8192), RAM ${ramBytes} static + ${stack.deepestBytes} stack = ${used} bytes (limit 600), head-room ${2048 - used} of 2048`,
 );
 console.log(
-  `  deepest stack, by the compiler: ${stack.chain.join(' > ')}, ${stack.bytes - stack.interruptBytes} bytes, and on top of it the interrupt ${stack.interruptChain.join(' > ')}, ${stack.interruptBytes} bytes;` +
+  `  deepest stack, by the compiler: ${stack.chain.join(' > ')}, ${stack.deepestBytes - stack.interruptBytes} bytes, and on top of it the interrupt ${stack.interruptChain.join(' > ')}, ${stack.interruptBytes} bytes;` +
     ` by paint on the emulated chip: ${seen.stackBytes} bytes`,
 );

@@ -10,7 +10,7 @@
 
 export interface StackUse {
   /** Deepest, interrupts included, bytes. */
-  bytes: number;
+  deepestBytes: number;
   /** Of that, the interrupts' share, bytes. */
   interruptBytes: number;
   /** The functions on the deepest way from main(), and of the deepest interrupt. */
@@ -149,5 +149,5 @@ export function deepestStack(listing: string, stackUsage: string, returnBytes: n
     ? vectors.reduce((sum, { bytes }) => sum + bytes, 0)
     : worst.bytes;
   const { bytes, chain } = descent.from(main);
-  return { bytes: bytes + interruptBytes, interruptBytes, chain, interruptChain: worst.chain };
+  return { deepestBytes: bytes + interruptBytes, interruptBytes, chain, interruptChain: worst.chain };
 }
