@@ -5,6 +5,7 @@
 #include <Arduino.h>
 
 #include "constants.h"
+#include "pins.h"
 #include "supervisor.h"
 
 namespace {
