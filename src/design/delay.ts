@@ -7,6 +7,7 @@
  */
 import { motorPwmHz, pwmWords } from '../vehicle/pwm-modes.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
+import { adcClockOf, adcClockWords } from './adc-clock.js';
 import type { DelayShare } from './design.js';
 
 /** Time for the control arithmetic, worst case, s; with encoders that of the wheel loops too. */
@@ -17,13 +18,14 @@ export function controlS({ board, encoders }: Vehicle): number {
 export function delayBudget(vehicle: Vehicle): { shares: DelayShare[]; totalS: number } {
   const { board, bar } = vehicle;
   const count = bar.positionsM.length;
+  const clock = adcClockOf(vehicle);
   const analog = bar.kinds.filter((kind) => kind === 'analog').length;
-  const scanS = analog * board.adcReadS + (count - analog) * board.digitalReadS;
+  const scanS = analog * (clock?.readS ?? board.adcReadS) + (count - analog) * board.digitalReadS;
   const shares: DelayShare[] = [
     {
       name: 'scan',
       delayS: scanS / 2,
-      source: `half of ${count} ${bar.kind} readings one after the other`,
+      source: `half of ${count} ${bar.kind} readings one after the other${clock ? `, converter at ${adcClockWords(clock)}` : ''}`,
     },
     { name: 'compute', delayS: controlS(vehicle), source: 'control arithmetic, worst case of the board' },
     {

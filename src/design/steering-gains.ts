@@ -11,16 +11,15 @@
  */
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { HELD_VIEW_SHARE, LEAST_RADIUS_AHEAD_RATIO } from '../vehicle/sensor-bar.js';
-import { axleCurvaturePerM, bendOffsetM, meanPitchM, viewM } from './bar-view.js';
+import { axleCurvaturePerM, bendOffsetM, viewM } from './bar-view.js';
 import type { Margins } from './design.js';
 import { leastBetween } from './golden-section.js';
+import { offsetNoiseM } from './offset-noise.js';
 import { type SteeringGains, controllerOf, loopPeak } from './steering-loop.js';
 import { keeps, lanePlantOf, toleranceCorners, worstMargins } from './tolerance-box.js';
 
 /** Largest share of the wheel-speed range that one step of measurement noise may ask for through the gains. */
 const NOISE_SHARE = 0.4;
-/** Uncertainty of a measured offset: share of the pitch, analog and digital sensors. */
-const OFFSET_NOISE_SHARE = { analog: 0.03, digital: 0.5 } as const;
 /** Fastest derivative filter: two samples. */
 export const FASTEST_FILTER_SAMPLES = 2;
 /** Steps of the golden-section search for the derivative time. */
@@ -44,26 +43,6 @@ export function givenGains(vehicle: Vehicle): SteeringGains | undefined {
   const { filterTimeS, ...rest } = gains;
   const filterCoefficient = -Math.expm1(-vehicle.board.samplePeriodS / filterTimeS);
   return { ...rest, filterCoefficient };
-}
-
-/**
- * Uncertainty of the offset while the line is held, m. Of a mixed bar only the gaps count in which the edges of a line then lie, within
- * half a pitch of the middle: what digital sensors further out say comes once and is no noise.
- */
-function offsetNoiseM({ bar, line, control }: Vehicle): number {
-  const { positionsM, kinds } = bar;
-  const pitchM = meanPitchM(positionsM);
-  if (control.kind === 'rules') return OFFSET_NOISE_SHARE.digital * pitchM;
-  if (bar.kind !== 'mixed') return OFFSET_NOISE_SHARE[bar.kind] * pitchM;
-  const [nearM, farM] = [line.widthM / 2 - pitchM / 2, line.widthM / 2 + pitchM / 2];
-  const noises = positionsM.slice(1).flatMap((right, i) => {
-    const left = positionsM[i] as number;
-    const held = (left > nearM && right < farM) || (right < -nearM && left > -farM);
-    const kind = kinds[i] === 'digital' || kinds[i + 1] === 'digital' ? 'digital' : 'analog';
-    return held ? [OFFSET_NOISE_SHARE[kind] * (left - right)] : [];
-  });
-  // a bar narrower than the line is steered by its end sensors
-  return noises.length > 0 ? Math.max(...noises) : OFFSET_NOISE_SHARE.digital * pitchM;
 }
 
 /** Law with a given derivative time; its filter is as fast as noise allows. */

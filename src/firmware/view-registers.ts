@@ -1,4 +1,5 @@
 /** The AVR registers behind a vehicle's pins: sample tick, converter channels, motor outputs, digital inputs. */
+import { adcClockOf, adcClockWords } from '../design/adc-clock.js';
 import type { PinFacts, TickFacts } from '../vehicle/board-facts.js';
 import { modeOf, pwmDemand, pwmWords } from '../vehicle/pwm-modes.js';
 import type { MotorWiring, Vehicle } from '../vehicle/vehicle.js';
@@ -35,6 +36,9 @@ export interface RegisterView {
   pwmSetUp: readonly string[];
   pwmOutputs: readonly PwmOutput[];
   levelOutputs: readonly LevelOutput[];
+  /** Clock of the converter: its bits in ADCSRA, and why; empty without analog sensors. */
+  adcSelect: string;
+  adcAbout: string;
   /** Converter channels of the analog sensors, leftmost first, and whether each is one of the upper eight. */
   channels: readonly number[];
   upperChannels: readonly boolean[];
@@ -104,8 +108,13 @@ export function registerView(vehicle: Vehicle): RegisterView {
   const levels = outputs.filter(([name]) => !isPwm(name)).map(([name, pin]) => levelOf(name, pin));
   if (drive.standby !== undefined) levels.push(levelOf('Standby', drive.standby));
   const channels = sensorPlaces(vehicle, 'analog').map((place) => bar.pins[place]?.adc?.channel ?? 0);
+  const clock = adcClockOf(vehicle);
   return {
     tick,
+    adcSelect: clock?.select ?? '',
+    adcAbout: clock
+      ? `Converter clock ${board.clockHz / 1e6} MHz / ${clock.prescaler} = ${adcClockWords(clock)}. From sensors.`
+      : '',
     pwmAbout: `PWM of ${pwmWords(vehicle)}. From drive.driver.`,
     pwmSetUp: timers
       .filter(({ timer }) => used.has(timer))

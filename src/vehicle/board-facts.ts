@@ -42,6 +42,19 @@ export interface PinFacts {
   caution?: string;
 }
 
+/** A clock of an AVR chip's converter. */
+export interface AdcClock {
+  clockHz: number;
+  /** Divides the chip's clock. */
+  prescaler: number;
+  /** Bits of ADCSRA that select it. */
+  select: string;
+  /** Largest error of a reading, counts. */
+  errorCounts: number;
+  /** Time of one reading, s. */
+  readS: number;
+}
+
 /** How an AVR timer makes PWM. */
 export interface PwmMode {
   pwmHz: number;
@@ -95,8 +108,10 @@ export interface BoardFacts {
   logicV: number;
   /** Largest reading of the converter as the firmware reads it, counts. */
   adcMaxCount: number;
-  /** Time of one analog reading as the firmware does it, s. */
+  /** Time of one analog reading as the firmware does it, s; with several clocks that of the fastest. */
   adcReadS: number;
+  /** Clocks of the converter that the firmware chooses from, fastest first; none in other languages. */
+  adcClocks?: readonly AdcClock[];
   /** Time of one digital reading, s. */
   digitalReadS: number;
   /** Time of counting one encoder edge, interrupt and all, s. */

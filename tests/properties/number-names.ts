@@ -94,7 +94,7 @@ export const LISTED: readonly Listed[] = [
   {
     why: 'registers, bits, vectors and sizes of a chip, as its data sheet numbers them',
     where: /^(rehearsal\/chip-model(s|-parts)|vehicle\/board-facts)\.ts$/,
-    names: words('bit pinAddress group a b c base capture vector flashWords ramStart mux5'),
+    names: words('bit pinAddress group a b c base capture vector flashWords ramStart mux5 prescaler'),
   },
   {
     why: 'shares and factors with a name of their own in the trade: grip and duty -1..1, trims, relative errors, Ms, margins',

@@ -5,9 +5,7 @@
  * variants/standard/pins_arduino.h (pin numbers, PWM timers, interrupts), cores/arduino/wiring.c (timer set-up) and
  * boards.txt (memory left by the boot loader).
  *
- * Converter as the firmware sets it up: prescaler 32 gives 16 MHz / 32 = 500 kHz, a conversion takes 13 clocks = 26 us.
- * That is faster than the 200 kHz for full resolution; what is lost in the lowest bits is far below sensor noise.
- * Timers: avr.ts.
+ * Converter clocks and timers: avr.ts.
  */
 import type { BoardFacts, PinFacts } from '../board-facts.js';
 import { AVR_16_MHZ, TIMER_0, TIMER_2, TIMER_1, timerPwmHz } from './avr.js';

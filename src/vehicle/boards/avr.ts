@@ -10,7 +10,7 @@
  * audible of all. Where neither can be had, timer 1 keeps near the core's frequency, 16 MHz / (2 * 64 * 250) = 500 Hz, so that its
  * period is one sample. Timer 0 must stay, because the clock counts it. The clock of timer 4 of the ATmega32U4 stays as the core has it.
  */
-import type { BoardFacts, FreePwm, PwmMode, TimerFacts } from '../board-facts.js';
+import type { AdcClock, BoardFacts, FreePwm, PwmMode, TimerFacts } from '../board-facts.js';
 
 const CLOCK_HZ = 16e6;
 const TIMER_PRESCALER = 64;
@@ -117,6 +117,31 @@ export const TIMER_0: TimerFacts = {
 /** Timer 4 of the ATmega32U4, as the core sets it up; channel D has a control register of its own. */
 export const TIMER_4_OF_32U4: TimerFacts = { timer: 4, pwm: CORE_PWM, controls: { D: 'TCCR4C' } };
 
+/**
+ * The converter's error by its clock: 2 counts up to 200 kHz, 4.5 at 1 MHz (Atmel 8161D, ADC Characteristics, table 28-7: absolute
+ * accuracy); between them a straight line, our assumption.
+ */
+function adcErrorCounts(clockHz: number): number {
+  return 2 + (2.5 * Math.max(0, clockHz - 200e3)) / 800e3;
+}
+
+/** One conversion takes 13 clocks (data sheet, Prescaling and Conversion Timing); the interrupts around it some 4 us. */
+function adcClock(prescaler: number, select: string): AdcClock {
+  const clockHz = CLOCK_HZ / prescaler;
+  const errorCounts = adcErrorCounts(clockHz);
+  return { clockHz, prescaler, select, errorCounts, readS: 13 / clockHz + 4e-6 };
+}
+
+/**
+ * Full resolution needs 50 to 200 kHz, less resolution may do with more (data sheet, same section). 500 kHz is the most taken here:
+ * the input has to charge in one and a half clocks, and sensors are no strong sources.
+ */
+const ADC_CLOCKS = [
+  adcClock(32, '_BV(ADPS2) | _BV(ADPS0)'),
+  adcClock(64, '_BV(ADPS2) | _BV(ADPS1)'),
+  adcClock(128, '_BV(ADPS2) | _BV(ADPS1) | _BV(ADPS0)'),
+];
+
 /** PWM frequencies of timers beside each other, Hz. */
 export function timerPwmHz(timers: readonly TimerFacts[]): Record<number, number> {
   return Object.fromEntries(timers.map(({ timer, pwm }) => [timer, pwm.pwmHz]));
@@ -127,8 +152,8 @@ export const AVR_16_MHZ = {
   clockHz: CLOCK_HZ,
   logicV: 5,
   adcMaxCount: 1023,
-  // 26 us of conversion and the call around it.
-  adcReadS: 30e-6,
+  adcClocks: ADC_CLOCKS,
+  adcReadS: ADC_CLOCKS[0]!.readS,
   // some 60 cycles of interrupt, with the call around it
   edgeS: 5e-6,
   digitalReadS: 5e-6,
