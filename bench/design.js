@@ -42,7 +42,7 @@ function withSensors(count, kind) {
   const { ground, line } = demo.bar.calibration;
   return {
     ...demo,
-    control: { kind },
+    control: { ...demo.control, kind },
     bar: {
       ...demo.bar,
       positionsM,

@@ -128,6 +128,7 @@ export class Paint {
     const { grid, strips: s, halfWidthM: halfM } = this;
     const { left, bottom, perM, columns, rows, starts, items } = grid;
     const r = spotRadiusM;
+    const reachM = halfM + r;
     for (let spot = 0; spot < shares.length; spot++) {
       const xM = spotsM[2 * spot]!;
       const yM = spotsM[2 * spot + 1]!;
@@ -135,10 +136,11 @@ export class Paint {
       const column = Math.floor((xM - left) * perM);
       const row = Math.floor((yM - bottom) * perM);
       if (!(column >= 0 && column < columns && row >= 0 && row < rows)) continue;
-      const cell = row * columns + column;
+      // whole numbers by |: as doubles they would be checked at every use
+      const cell = (row * columns + column) | 0;
       const last = starts[cell + 1]!;
       let most = 0;
-      for (let i = starts[cell]!; i < last && most < 1; i++) {
+      for (let i = starts[cell]! | 0; i < last && most < 1; i++) {
         const at = items[i]! * F.size;
         const dx0 = xM - s[at + F.x0]!;
         const dy0 = yM - s[at + F.y0]!;
@@ -146,12 +148,16 @@ export class Paint {
         let sideM: number;
         if (radius === 0) {
           sideM = Math.abs(dy0 * s[at + F.tx0]! - dx0 * s[at + F.ty0]!);
+          if (sideM >= reachM) continue;
         } else {
           const cx = xM - s[at + F.centreX]!;
           const cy = yM - s[at + F.centreY]!;
-          sideM = Math.abs(Math.sqrt(cx * cx + cy * cy) - radius);
+          const square = cx * cx + cy * cy;
+          const outerM = radius + reachM;
+          if (square >= outerM * outerM) continue;
+          sideM = Math.abs(Math.sqrt(square) - radius);
+          if (sideM >= reachM) continue;
         }
-        if (sideM >= halfM + r) continue;
         const afterStart = dx0 * s[at + F.tx0]! + dy0 * s[at + F.ty0]!;
         const joined0 = s[at + F.joined0] === 1;
         if (afterStart < (joined0 ? -1e-9 : -r)) continue;

@@ -5,8 +5,8 @@
  * unseen bend follows), and `share`, a factor on the classes below it (how near the grip limit bends are
  * taken). Both are found in two stages:
  *
- * Screening: for each share the largest cap at which the most demanding of SCREENED drawn vehicles all finish, by bisection; the pair
- * with the shortest mean time of typical vehicles is taken.
+ * Screening: for each share the largest cap at which the most demanding of SCREENED drawn vehicles all finish, by bisection; of that
+ * cap and two below it, the one with the shortest mean time of typical vehicles; of the shares, the one with the shortest.
  * Confirmation: other vehicles, as many as it takes to show the target with 95 % confidence when none of them is lost (Clopper and
  * Pearson 1934; 598 for 99.5 %), drive at those speeds, the most demanding first. When one is lost, speeds are lowered a step
  * and all drive again, the lost one first. Where a vehicle that is lost at one speed is lost at every higher one, the speeds that are found are too
@@ -24,11 +24,9 @@ import type { Proof } from './design.js';
 import { type DrawnVehicle, VehicleDraws, demandRatio } from './drawn-vehicles.js';
 import { LOWEST_TOP_SHARE, SHARES, type SpeedScale, type Timed, quickestScale } from './speed-search.js';
 
-/** Samples that screening and confirmation may take, about: two times a second on a machine of today's. */
-const SCREENING_SAMPLES = 1.8e6;
+/** Samples that one trial of the screening and the confirmation may take, about: together a second or two on a machine of today's. */
+const TRIAL_SAMPLES = 6e4;
 const CONFIRMATION_SAMPLES = 7.5e5;
-/** Trials that a full screening takes, about. */
-const TRIALS = 30;
 /** Vehicles drawn for screening; how many of the most demanding every trial must finish, and how many typical ones are timed. */
 const SCREENED = 200;
 const DEMANDING = 12;
@@ -38,9 +36,12 @@ const FEW_SHARES = [1, 0.84, 0.7];
 const USUAL_TOP_SHARE = 0.5;
 const FEWEST_RUNS = 4;
 const FEWEST_CONFIRMING = 40;
-/** Speeds are lowered by this factor at a time until the confirmation passes, so often at most. */
+/**
+ * Speeds are lowered by this factor until the confirmation passes; the step grows by its own size every other time, so that a
+ * vehicle that has to be much slower is not driven dozens of times.
+ */
 const STEP_DOWN = 0.975;
-const MOST_STEPS = 30;
+const MOST_STEPS = 20;
 /** Simulated time allowed for the proving lane, in times of driving it at the lowest cap. */
 const PATIENCE = 4;
 /** Seed of the first vehicle of the confirmation: other vehicles than those of the screening. */
@@ -71,7 +72,7 @@ export class Proving {
       byDemand(Array.from({ length: runs }, (_, i) => draws.drawn(first + i)));
     const { topSpeedMps } = vehicle.drive;
     const samples = draws.lengthM / (USUAL_TOP_SHARE * topSpeedMps) / vehicle.board.samplePeriodS;
-    const runs = Math.max(FEWEST_RUNS, Math.floor(SCREENING_SAMPLES / TRIALS / samples));
+    const runs = Math.max(FEWEST_RUNS, Math.floor(TRIAL_SAMPLES / samples));
     const demandingRuns = Math.min(DEMANDING, Math.ceil(runs / 2));
     const screened = many(1, SCREENED);
     this.demanding = screened.slice(0, demandingRuns);
@@ -93,7 +94,7 @@ export class Proving {
     return this.typicalTimeS(controller);
   }
 
-  /** Mean time of those typical vehicles that finish, s; undefined when one does not. */
+  /** Mean time of the typical vehicles, s; undefined when one does not finish. */
   private typicalTimeS(controller: ControllerConstants): number | undefined {
     const timeOf = this.timing(controller);
     let sum = 0;
@@ -128,8 +129,10 @@ export class Proving {
     controllerAt: (scale: SpeedScale) => ControllerConstants,
   ): { scale: SpeedScale; proof: Proof } | undefined {
     const { topSpeedMps } = this.vehicle.drive;
-    const timeAt = (scale: SpeedScale) => this.meanTimeS(controllerAt(scale));
-    const screened: Timed | undefined = quickestScale(this.shares, topSpeedMps, timeAt);
+    const screened: Timed | undefined = quickestScale(this.shares, topSpeedMps, {
+      passes: (scale) => finishAll(this.demanding, this.timing(controllerAt(scale))),
+      timeS: (scale) => this.typicalTimeS(controllerAt(scale)),
+    });
     if (screened === undefined) return undefined;
     const slowest = slowestScale(this.vehicle);
     let { scale } = screened;
@@ -137,7 +140,8 @@ export class Proving {
       if (finishAll(this.confirming, this.timing(controllerAt(scale))))
         return { scale, proof: this.proofOf(this.confirming.length, this.confirming.length) };
       if (scale.top <= slowest.top) return undefined;
-      scale = this.lowered(scale, slowest.top, controllerAt);
+      const factor = STEP_DOWN ** (1 + Math.floor(step / 2));
+      scale = this.lowered(scale, factor, slowest.top, controllerAt);
     }
     return undefined;
   }
@@ -145,10 +149,11 @@ export class Proving {
   /** A step down: of the cap or of the share alone where that saves the vehicle that was lost, else of both. */
   private lowered(
     { top, share }: SpeedScale,
+    factor: number,
     slowestTop: number,
     controllerAt: (scale: SpeedScale) => ControllerConstants,
   ): SpeedScale {
-    const lower = { top: Math.max(slowestTop, top * STEP_DOWN), share: share * STEP_DOWN };
+    const lower = { top: Math.max(slowestTop, top * factor), share: share * factor };
     const lost = this.confirming[0]!;
     const saves = (scale: SpeedScale) => this.timing(controllerAt(scale))(lost) !== undefined;
     return (

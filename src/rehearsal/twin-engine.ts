@@ -64,6 +64,8 @@ export class TwinEngine implements Engine {
   /** The same without a promise. */
   runNow(setup: RunSetup): RunResult {
     const { samplePeriodS, delayS, pwmSteps } = this.timing;
+    const earliestS = 0.01 * samplePeriodS;
+    const latestS = 0.995 * samplePeriodS;
     const { loopJitterS } = setup.plant;
     const jitter = new Random(setup.plant.seed, STREAM.jitter);
     const control = this.makeControl();
@@ -83,13 +85,17 @@ export class TwinEngine implements Engine {
       }
       control.step(counts);
       const lateS = loopJitterS === 0 ? 0 : jitter.uniform(-loopJitterS, loopJitterS);
-      const actS = Math.min(Math.max(delayS + lateS, 0.01 * samplePeriodS), 0.995 * samplePeriodS);
-      drive(plant, state, actS);
+      const actS = Math.min(Math.max(delayS + lateS, earliestS), latestS);
+      // short times directly: a number handed on to a function would be put on the heap
+      if (actS <= STEP_S) plant.step(state.dutyLeft, state.dutyRight, actS);
+      else drive(plant, state, actS);
       state.dutyLeft = inPwmSteps(control.dutyLeft, pwmSteps);
       state.dutyRight = inPwmSteps(control.dutyRight, pwmSteps);
       state.classIndex = control.classIndex;
       state.phase = control.phase;
-      drive(plant, state, samplePeriodS - actS);
+      const restS = samplePeriodS - actS;
+      if (restS <= STEP_S) plant.step(state.dutyLeft, state.dutyRight, restS);
+      else drive(plant, state, restS);
       monitor.observe(state, control.stopped || (control.wheels?.blocked ?? false));
     }
     return withReason(monitor.result(), control);
@@ -112,7 +118,8 @@ function withReason(result: RunResult, { stopped, wheels }: ControlStep): RunRes
 
 /** A duty, -1 to 1, as the PWM can give it: the same steps forward and in reverse. */
 function inPwmSteps(duty: number, pwmSteps: number): number {
-  return (Math.sign(duty) * Math.round((Math.abs(duty) / FULL_DUTY) * pwmSteps)) / pwmSteps;
+  const steps = Math.floor((Math.abs(duty) / FULL_DUTY) * pwmSteps + 0.5) / pwmSteps;
+  return duty < 0 ? -steps : steps;
 }
 
 /** Lets time pass with constant duties, in steps that the plant can take. */

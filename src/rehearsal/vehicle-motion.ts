@@ -39,7 +39,12 @@ export class VehicleMotion {
   /** Whether the vehicle has moved since place and spots were last worked out. */
   protected placeIsOld = true;
   protected spotsAreOld = true;
+  /** Cosine and sine of the heading, carried from step to step: rounding makes them differ from it by 1e-15 a step at most. */
+  protected cosHeading: number;
+  protected sinHeading: number;
   private readonly gripMps2: number;
+  /** 1 over the track width, 1/m. */
+  private readonly perTrack: number;
   protected readonly wheels: WheelDrive;
   /** Distance to the next joint of the floor, m. */
   private toBumpM: number;
@@ -52,6 +57,9 @@ export class VehicleMotion {
     this.xM = start.xM - parameters.startLateralM * Math.sin(start.headingRad);
     this.yM = start.yM + parameters.startLateralM * Math.cos(start.headingRad);
     this.headingRad = start.headingRad + parameters.startHeadingRad;
+    this.cosHeading = Math.cos(this.headingRad);
+    this.sinHeading = Math.sin(this.headingRad);
+    this.perTrack = 1 / parameters.trackM;
     this.gripMps2 = parameters.grip * STANDARD_GRAVITY_MPS2;
     this.wheels = new WheelDrive(parameters);
     this.toBumpM = parameters.bumpEveryM > 0 ? parameters.bumpEveryM : Infinity;
@@ -74,23 +82,26 @@ export class VehicleMotion {
     if (!(dtS > 0 && dtS <= LONGEST_STEP_S + 1e-12))
       throw new RangeError(`A plant step lasts up to 5 ms, not ${dtS} s.`);
     const { wheels } = this;
-    const { lagS, trackM } = this.parameters;
     wheels.update(dutyLeft, dutyRight, this.leftMps, this.rightMps, this.timeS);
     const { steadyLeftMps: steadyLeft, steadyRightMps: steadyRight } = wheels;
-    const substeps = Math.ceil(dtS / SUBSTEP_S - 1e-9);
+    const substeps = dtS <= SUBSTEP_S ? 1 : Math.ceil(dtS / SUBSTEP_S - 1e-9);
     const h = dtS / substeps;
-    const kept = Math.exp(-h / lagS);
-    const keptMean = ((1 - kept) * lagS) / h;
-    const grip = this.gripMps2;
+    const lags = h / this.parameters.lagS;
+    const keptMean = meanDecay(lags);
+    const kept = 1 - lags * keptMean;
+    const { gripMps2: grip, perTrack } = this;
     // All in this one loop: numbers handed from function to function would each be put on the heap.
     let left = wheels.blockedLeft ? 0 : this.leftMps;
     let right = wheels.blockedRight ? 0 : this.rightMps;
-    let heading = this.headingRad;
+    let cos = this.cosHeading;
+    let sin = this.sinHeading;
+    let turned = 0;
     let turn = 0;
     let xM = this.xM;
     let yM = this.yM;
     let rolledM = 0;
     let apartM = 0;
+    const most = grip * h;
     for (let i = 0; i < substeps; i++) {
       const awayLeft = left - steadyLeft;
       const awayRight = right - steadyRight;
@@ -101,8 +112,7 @@ export class VehicleMotion {
       const meanLeft = steadyLeft + awayLeft * keptMean;
       const meanRight = steadyRight + awayRight * keptMean;
       let speed = (meanLeft + meanRight) / 2;
-      turn = (meanRight - meanLeft) / trackM;
-      const most = grip * h;
+      turn = (meanRight - meanLeft) * perTrack;
       if (change > most || change < -most) {
         const held = change > 0 ? most : -most;
         left += held - change;
@@ -118,11 +128,19 @@ export class VehicleMotion {
       }
       rolledM += speed * h;
       apartM += ((meanRight - meanLeft) / 2) * h;
+      // Along the chord, in the direction half way; then the rest of the turn. The direction is kept as cosine and sine.
       const half = (turn * h) / 2;
-      const chord = speed * h * sinc(half);
-      xM += chord * Math.cos(heading + half);
-      yM += chord * Math.sin(heading + half);
-      heading += turn * h;
+      const flat = sinc(half);
+      const sinHalf = half * flat;
+      const cosHalf = Math.sqrt(1 - sinHalf * sinHalf);
+      const chord = speed * h * flat;
+      const cosMiddle = cos * cosHalf - sin * sinHalf;
+      const sinMiddle = sin * cosHalf + cos * sinHalf;
+      xM += chord * cosMiddle;
+      yM += chord * sinMiddle;
+      cos = cosMiddle * cosHalf - sinMiddle * sinHalf;
+      sin = sinMiddle * cosHalf + cosMiddle * sinHalf;
+      turned += turn * h;
     }
     this.leftMps = left;
     this.leftRolledM += rolledM - apartM;
@@ -130,7 +148,9 @@ export class VehicleMotion {
     this.rightMps = right;
     this.xM = xM;
     this.yM = yM;
-    this.headingRad = heading;
+    this.cosHeading = cos;
+    this.sinHeading = sin;
+    this.headingRad += turned;
     this.turnRadPerS = turn;
     this.timeS += dtS;
     this.toBumpM -= (Math.abs(left + right) / 2) * dtS;
@@ -148,8 +168,20 @@ export class VehicleMotion {
 
   /** Shifts the vehicle, m to the left, and turns it, rad. */
   protected push(shiftM: number, turnRad: number): void {
-    this.xM -= shiftM * Math.sin(this.headingRad);
-    this.yM += shiftM * Math.cos(this.headingRad);
+    this.xM -= shiftM * this.sinHeading;
+    this.yM += shiftM * this.cosHeading;
     this.headingRad += turnRad;
+    this.cosHeading = Math.cos(this.headingRad);
+    this.sinHeading = Math.sin(this.headingRad);
   }
+}
+
+/**
+ * Mean of exp(-t) for t from 0 to x, (1 - exp(-x))/x, x above 0. Below 0.1 the series: its first neglected term is under 3e-13.
+ */
+function meanDecay(x: number): number {
+  if (x > 0.1) return (1 - Math.exp(-x)) / x;
+  return (
+    1 - (x / 2) * (1 - (x / 3) * (1 - (x / 4) * (1 - (x / 5) * (1 - (x / 6) * (1 - (x / 7) * (1 - x / 8))))))
+  );
 }

@@ -34,9 +34,16 @@ export class WheelDrive {
   blockedRight = false;
   private readonly startLeft: number;
   private readonly startRight: number;
+  /** What does not change from step to step, worked out once: 1 over trims, 1 over 1 - start duty, (1 - start duty) over top speed, s/m. */
+  private readonly perTrimLeft: number;
+  private readonly perTrimRight: number;
+  private readonly perDriveLeft: number;
+  private readonly perDriveRight: number;
+  private counterLeft = 0;
+  private counterRight = 0;
   /** Top speeds of the motors as warm as they are, and when to look again, s. */
-  private topLeft: number;
-  private topRight: number;
+  private topLeft = 0;
+  private topRight = 0;
   private warmerS: number;
 
   constructor(private readonly parameters: Readonly<PlantParameters>) {
@@ -44,51 +51,54 @@ export class WheelDrive {
     this.batteryFactor = this.openFactor = parameters.batteryFactor;
     this.startLeft = Math.min(0.99, startDuty * frictionLeft);
     this.startRight = Math.min(0.99, startDuty * frictionRight);
-    this.topLeft = parameters.topLeftMps;
-    this.topRight = parameters.topRightMps;
+    this.perTrimLeft = 1 / parameters.trimLeft;
+    this.perTrimRight = 1 / parameters.trimRight;
+    this.perDriveLeft = 1 / (1 - this.startLeft);
+    this.perDriveRight = 1 / (1 - this.startRight);
+    this.setTop(parameters.topLeftMps, parameters.topRightMps);
     this.warmerS = driftLeft !== 0 || driftRight !== 0 ? 0 : Infinity;
   }
 
   /** To be called with the wheel speeds (m/s) and duties (-1 to 1) at the start of each step. */
   update(dutyLeft: number, dutyRight: number, leftMps: number, rightMps: number, timeS: number): void {
-    const { trimLeft, trimRight, castorDrag } = this.parameters;
+    const { castorDrag } = this.parameters;
     if (timeS >= this.warmerS) this.warmUp(timeS);
-    const topLeft = this.topLeft;
-    const topRight = this.topRight;
-    const left = dutyLeft / trimLeft;
-    const right = dutyRight / trimRight;
-    this.sag(
-      left,
-      right,
-      ((1 - this.startLeft) * leftMps) / topLeft,
-      ((1 - this.startRight) * rightMps) / topRight,
-    );
+    const left = dutyLeft * this.perTrimLeft;
+    const right = dutyRight * this.perTrimRight;
+    this.sag(left, right, leftMps * this.counterLeft, rightMps * this.counterRight);
     let loadLeft = 0;
     let loadRight = 0;
     if (castorDrag !== 0) {
       const { aheadM, trackM } = this.parameters;
       const along = (leftMps + rightMps) / 2;
-      const across = ((rightMps - leftMps) / trackM) * aheadM;
+      const leverRatio = aheadM / trackM;
+      const across = (rightMps - leftMps) * leverRatio;
       const drag = castorDrag / (Math.sqrt(along * along + across * across) + CASTOR_CREEP_MPS);
-      const turning = (drag * across * aheadM) / trackM;
+      const turning = drag * across * leverRatio;
       loadLeft = (drag * along) / 2 - turning;
       loadRight = (drag * along) / 2 + turning;
     }
     this.steadyLeftMps = this.blockedLeft
       ? 0
-      : this.steady(left, this.startLeft, loadLeft, leftMps) * topLeft;
+      : this.steady(left, this.startLeft, loadLeft, leftMps) * this.perDriveLeft * this.topLeft;
     this.steadyRightMps = this.blockedRight
       ? 0
-      : this.steady(right, this.startRight, loadRight, rightMps) * topRight;
+      : this.steady(right, this.startRight, loadRight, rightMps) * this.perDriveRight * this.topRight;
   }
 
   /** Motors get warmer by an exponential. */
   private warmUp(timeS: number): void {
     const { topLeftMps, topRightMps, driftLeft, driftRight } = this.parameters;
     const warm = 1 - Math.exp(-timeS / WARM_UP_S);
-    this.topLeft = topLeftMps * (1 + driftLeft * warm);
-    this.topRight = topRightMps * (1 + driftRight * warm);
+    this.setTop(topLeftMps * (1 + driftLeft * warm), topRightMps * (1 + driftRight * warm));
     this.warmerS = timeS + WARMER_S;
+  }
+
+  private setTop(leftMps: number, rightMps: number): void {
+    this.topLeft = leftMps;
+    this.topRight = rightMps;
+    this.counterLeft = (1 - this.startLeft) / leftMps;
+    this.counterRight = (1 - this.startRight) / rightMps;
   }
 
   /** Battery under load; counter-voltages over nominal. */
@@ -113,13 +123,13 @@ export class WheelDrive {
     this.batteryFactor = Math.max(0, factor);
   }
 
-  /** Steady speed over top speed. */
+  /** Steady speed over top speed, times 1 - start duty. */
   private steady(duty: number, start: number, load: number, speedMps: number): number {
     const drive = Math.abs(duty) * this.batteryFactor;
     const stands = speedMps < STANDING_MPS && speedMps > -STANDING_MPS;
     if (stands && drive <= start * this.parameters.stiction) return 0;
     const left = drive - start - (duty < 0 ? -load : load);
     if (left <= 0) return 0;
-    return (duty < 0 ? -left : left) / (1 - start);
+    return duty < 0 ? -left : left;
   }
 }

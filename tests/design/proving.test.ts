@@ -83,14 +83,15 @@ describe('drawn vehicles', () => {
 describe('quickestScale', () => {
   it('finds the cap and the share of a known optimum', () => {
     // passes while top + share <= 1.9; the time falls with both
-    const found = quickestScale(SHARES, 1.5, ({ top, share }) =>
-      top + share <= 1.9 ? 10 - 2 * top - share : undefined,
-    );
+    const found = quickestScale(SHARES, 1.5, {
+      passes: ({ top, share }) => top + share <= 1.9,
+      timeS: ({ top, share }) => (top + share <= 1.9 ? 10 - 2 * top - share : undefined),
+    });
     expect(found!.scale.share).toBe(0.7);
     expect(found!.scale.top).toBeCloseTo(1.2, 1);
   });
 
   it('is undefined where nothing passes', () => {
-    expect(quickestScale(SHARES, 1.5, () => undefined)).toBeUndefined();
+    expect(quickestScale(SHARES, 1.5, { passes: () => false, timeS: () => 1 })).toBeUndefined();
   });
 });

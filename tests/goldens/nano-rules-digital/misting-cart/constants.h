@@ -144,16 +144,16 @@ struct SpeedClass {
 
 // From speeds.classes, the fastest first.
 constexpr SpeedClass SPEED_CLASSES[] = {
-    // straight: bends from 3600 mm radius at 1.22 m/s, limited by the finish target
-    {71, 26624, 0, 5539, 3684, 5455},
-    // sweeping: bends from 960 mm radius at 1.22 m/s, limited by the finish target
-    {267, 26624, 0, 6386, 3813, 5290},
-    // wide: bends from 480 mm radius at 1.22 m/s, limited by the finish target
-    {533, 26624, 0, 7426, 3996, 5137},
-    // open: bends from 288 mm radius at 1.22 m/s, limited by the motors
-    {889, 26576, 34, 8960, 4230, 4935},
+    // straight: bends from 3600 mm radius at 1.19 m/s, limited by the finish target
+    {71, 26022, 0, 5539, 3684, 5455},
+    // sweeping: bends from 960 mm radius at 1.19 m/s, limited by the finish target
+    {267, 26022, 0, 6386, 3813, 5290},
+    // wide: bends from 480 mm radius at 1.19 m/s, limited by the finish target
+    {533, 26022, 0, 7426, 3996, 5137},
+    // open: bends from 288 mm radius at 1.19 m/s, limited by the finish target
+    {889, 26022, 0, 8960, 4230, 4935},
     // medium: bends from 180 mm radius at 1.1 m/s, limited by the motors
-    {1422, 24084, 1196, 11656, 4557, 4717},
+    {1422, 24084, 930, 11656, 4557, 4717},
     // tight: bends from 120 mm radius at 0.908 m/s, limited by grip
     {2133, 19830, 1531, 16384, 5396, 4619},
     // reserve: bends from 90 mm radius at 0.786 m/s, limited by grip

@@ -167,14 +167,14 @@ struct SpeedClass {
 
 // From speeds.classes, the fastest first.
 constexpr SpeedClass SPEED_CLASSES[] = {
-    // straight: bends from 3600 mm radius at 1.29 m/s, limited by the finish target
-    {71, 28160, 0, 11650, 11087, 12893},
-    // sweeping: bends from 960 mm radius at 1.29 m/s, limited by the finish target
-    {267, 28160, 0, 11633, 11160, 12893},
-    // wide: bends from 480 mm radius at 1.29 m/s, limited by the finish target
-    {533, 28160, 0, 11579, 11251, 12893},
+    // straight: bends from 3600 mm radius at 1.26 m/s, limited by the finish target
+    {71, 27482, 0, 11650, 11087, 12893},
+    // sweeping: bends from 960 mm radius at 1.26 m/s, limited by the finish target
+    {267, 27482, 0, 11633, 11160, 12893},
+    // wide: bends from 480 mm radius at 1.26 m/s, limited by the finish target
+    {533, 27482, 0, 11579, 11251, 12893},
     // open: bends from 288 mm radius at 1.22 m/s, limited by the motors
-    {889, 26576, 1139, 11450, 11354, 12893},
+    {889, 26576, 651, 11450, 11354, 12893},
     // medium: bends from 180 mm radius at 1.1 m/s, limited by the motors
     {1422, 24084, 1196, 11121, 11526, 12893},
     // tight: bends from 120 mm radius at 0.908 m/s, limited by grip
