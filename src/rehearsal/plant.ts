@@ -80,8 +80,8 @@ export class Plant extends VehicleMotion {
    */
   readCounts(out: Int32Array): void {
     this.placeSpots();
-    const { shares, ground, line, noise } = this;
-    const { spotRadiusM, kind, lineLevel, adcMaxCount, noiseShare } = this.parameters;
+    const { shares, ground, line, noise, isDigital } = this;
+    const { spotRadiusM, lineLevel, adcMaxCount, noiseShare } = this.parameters;
     this.lane.cover(this.spots, spotRadiusM, shares);
     if (this.faults !== undefined) {
       for (let i = 0; i < shares.length; i++) out[i] = this.reading(i, shares[i]!);
@@ -89,11 +89,10 @@ export class Plant extends VehicleMotion {
     }
     const { contrast, ambient } = this.light;
     const onLine = lineLevel === 'high' ? 1 : 0;
-    const digital = kind === 'digital';
     for (let i = 0; i < shares.length; i++) {
       const share = contrast * shares[i]! + ambient;
       const deviation = noiseShare === 0 ? 0 : noiseShare * noise.noise();
-      if (digital) {
+      if (isDigital[i] === 1) {
         out[i] = share + deviation > 0.5 ? onLine : 1 - onLine;
         continue;
       }

@@ -12,8 +12,8 @@ void setupBoard();
 // sample before not yet dealt with counts as an overrun, and no sample begins with it.
 bool sampleDue();
 
-// Lets the core's clock count again, which waits from a sample's last reading on: what comes after the
-// motors may be interrupted. At the latest the next sampleDue() does so.
+// Lets the core's clock count again, which waits from a sample's last reading on: what comes after
+// the motors may be interrupted. At the latest the next sampleDue() does so.
 void letClockGo();
 
 // Overruns since the last startOverruns().
