@@ -26,8 +26,8 @@ volatile uint16_t overrunCount;
 bool buttonDown = true;
 uint8_t buttonDiffers;
 
-// The core's clock counts with an interrupt each 1024 us. It waits, less than that, while the motors
-// wait for a sample.
+// The core's clock counts with an interrupt each 1024 us. It waits, less than that, while the
+// motors wait for a sample.
 inline void holdClock() {
   TIMSK0 = static_cast<uint8_t>(TIMSK0 & ~_BV(TOIE0));
 }
