@@ -10,7 +10,7 @@
  * back-calculation: Ti (Astrom and Hagglund, PID Controllers).
  */
 import type { WheelLoopConstants } from '../controller/constants.js';
-import { edgesPerM, windowBits } from '../vehicle/encoder.js';
+import { edgesPerS, windowBits } from '../vehicle/encoder.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { delayBudget } from './delay.js';
 import type { Margins } from './design.js';
@@ -117,7 +117,7 @@ export function wheelLoopDesign(vehicle: Vehicle): WheelLoopDesign | undefined {
   const { encoders, drive, board } = vehicle;
   if (encoders === undefined) return undefined;
   const periodS = board.samplePeriodS;
-  const edgesInSample = edgesPerM(encoders.linesPerTurn, drive.wheelDiameterM) * drive.topSpeedMps * periodS;
+  const edgesInSample = edgesPerS(encoders.linesPerTurn, drive.wheelDiameterM, drive.topSpeedMps) * periodS;
   const bits = windowBits(edgesInSample, drive.lagS, periodS);
   const windowSamples = 2 ** bits;
   const commandDelayS = delayBudget(vehicle).totalS;

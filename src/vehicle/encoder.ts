@@ -23,6 +23,11 @@ export function edgesPerM(linesPerTurn: number, wheelDiameterM: number): number 
   return (2 * linesPerTurn) / (Math.PI * wheelDiameterM);
 }
 
+/** Edges of one channel in each second at a wheel's surface speed. */
+export function edgesPerS(linesPerTurn: number, wheelDiameterM: number, speedMps: number): number {
+  return edgesPerM(linesPerTurn, wheelDiameterM) * speedMps;
+}
+
 /** Edges in a window at full speed that make a speed fine enough, 1. */
 const FINE_EDGES = 24;
 /** Longest window, as a share of the motor's time constant. */

@@ -2,9 +2,10 @@
 import { describe, expect, it } from 'vitest';
 import { compileCourse } from '../../src/course/lane.js';
 import { Plant } from '../../src/rehearsal/plant.js';
-import { mirroredPlant, nominalPlant, perturbedPlant } from '../../src/rehearsal/plant-parameters.js';
+import { nominalPlant, perturbedPlant } from '../../src/rehearsal/plant-parameters.js';
 import { spreads, stallForceN } from '../../src/rehearsal/plant-table.js';
 import { example, mirrored, open } from '../course/courses.js';
+import { mirroredPlant } from './mirrored-plant.js';
 import { trayCart } from './tray-cart.js';
 import { plainPlant } from './vehicles.js';
 

@@ -1,4 +1,4 @@
-import { edgesPerM } from '../../vehicle/encoder.js';
+import { edgesPerS } from '../../vehicle/encoder.js';
 import { topSpeedMps } from '../top-speed.js';
 import { mmToM } from '../units.js';
 import { withUnit } from '../words.js';
@@ -14,8 +14,7 @@ export const rule: SheetRule = {
   check({ sheet, board }) {
     const { encoders, drive } = sheet;
     if (encoders === undefined) return [];
-    const perM = edgesPerM(encoders.linesPerTurn, mmToM(drive.wheelDiameterMm));
-    const rate = 2 * perM * topSpeedMps(sheet);
+    const rate = 2 * edgesPerS(encoders.linesPerTurn, mmToM(drive.wheelDiameterMm), topSpeedMps(sheet));
     const largest = LARGEST_SHARE / board.edgeS;
     if (rate <= largest) return [];
     const most = Math.floor((encoders.linesPerTurn * largest) / rate);

@@ -1,4 +1,4 @@
-import { edgesPerM, windowBits } from '../../vehicle/encoder.js';
+import { edgesPerS, windowBits } from '../../vehicle/encoder.js';
 import { topSpeedMps } from '../top-speed.js';
 import { mmToM, msToS } from '../units.js';
 import { rounded, withUnit } from '../words.js';
@@ -15,8 +15,8 @@ export const rule: SheetRule = {
     const { encoders, drive } = sheet;
     if (encoders === undefined) return [];
     const periodS = board.samplePeriodS;
-    const perM = edgesPerM(encoders.linesPerTurn, mmToM(drive.wheelDiameterMm));
-    const inSample = perM * topSpeedMps(sheet) * periodS;
+    const perS = edgesPerS(encoders.linesPerTurn, mmToM(drive.wheelDiameterMm), topSpeedMps(sheet));
+    const inSample = perS * periodS;
     const windowSamples = 2 ** windowBits(inSample, msToS(drive.motor.timeConstantMs), periodS);
     const edges = inSample * windowSamples;
     if (edges >= FEWEST_EDGES) return [];
