@@ -66,12 +66,9 @@ export interface PwmMode {
   setUp: readonly string[];
 }
 
-/** Frequencies to which a timer can be set up. */
+/** Frequencies to which a timer can be set up: any of a 16-bit timer, or the one fast mode of an 8-bit timer. */
 export interface FreePwm {
-  /** The one fast frequency of an 8-bit timer, Hz; a 16-bit timer can have any. */
-  fixedHz?: number;
-  /** The mode with the frequency next to `pwmHz`, not above it. */
-  at(pwmHz: number): PwmMode;
+  fixed?: PwmMode;
 }
 
 /** A timer of an AVR chip, as the firmware uses it. */

@@ -5,6 +5,7 @@
  * frequency. Where the timers cannot be set up anew, they stay as the Arduino core has them.
  */
 import type { BoardFacts, PinFacts, PwmMode } from './board-facts.js';
+import { wideTimerPwm } from './boards/avr.js';
 import type { Vehicle } from './vehicle.js';
 
 /** The frequency that is wanted: what people hear ends below it. Common practice. */
@@ -50,7 +51,7 @@ function choose({ board, serving, maxPwmHz }: PwmDemand): Chosen {
   if (fixed) return { why: `timer ${fixed.timer} stays as the Arduino core sets it up` };
   if (!timers.some(({ timer, tick }) => tick && !serving.has(timer)))
     return { why: 'no timer is left for the sample tick, which is a PWM period then' };
-  const only = own.flatMap(({ free }) => free?.fixedHz ?? [])[0];
+  const only = own.flatMap(({ free }) => free?.fixed?.pwmHz ?? [])[0];
   if (only === undefined) return wanted;
   if (only > maxPwmHz)
     return { why: 'the next frequency of an 8-bit timer, 31.4 kHz, is more than the driver takes' };
@@ -62,7 +63,8 @@ export function modeOf(demand: PwmDemand, timer: number): PwmMode {
   const facts = demand.board.timers?.find((each) => each.timer === timer);
   if (facts === undefined) throw new Error(`${demand.board.title} has no timer ${timer}.`);
   const { pwmHz } = choose(demand);
-  return pwmHz === undefined || facts.free === undefined ? facts.pwm : facts.free.at(pwmHz);
+  if (pwmHz === undefined || facts.free === undefined) return facts.pwm;
+  return facts.free.fixed ?? wideTimerPwm(timer, pwmHz);
 }
 
 /** PWM frequency of one timer, Hz. */

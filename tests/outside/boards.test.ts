@@ -3,6 +3,7 @@
  */
 import { describe, expect, test } from 'vitest';
 import type { BoardFacts, PinFacts } from '../../src/vehicle/board-facts.js';
+import { wideTimerPwm } from '../../src/vehicle/boards/avr.js';
 import { BOARDS, findPin } from '../../src/vehicle/boards.js';
 
 const { uno, nano, pico } = BOARDS;
@@ -45,10 +46,10 @@ describe.each([uno, nano])('ATmega328P on $title', (board) => {
     const first = board.timers?.find(({ timer }) => timer === 1);
     expect(board.timerPwmHz?.[1]).toBe(16e6 / (2 * 64 * 250));
     expect(first?.pwm).toMatchObject({ pwmHz: 500, dutySteps: 250 });
-    expect(first?.free?.at(20e3)).toMatchObject({ pwmHz: 16e6 / (2 * 1 * 400), dutySteps: 400 });
+    expect(wideTimerPwm(1, 20e3)).toMatchObject({ pwmHz: 16e6 / (2 * 1 * 400), dutySteps: 400 });
     // the same with the prescaler 8, and timer 2 undivided: clock / 510
-    expect(first?.free?.at(1e3)).toMatchObject({ pwmHz: 16e6 / (2 * 8 * 1000), dutySteps: 1000 });
-    expect(board.timers?.find(({ timer }) => timer === 2)?.free?.fixedHz).toBeCloseTo(31372.549, 3);
+    expect(wideTimerPwm(1, 1e3)).toMatchObject({ pwmHz: 16e6 / (2 * 8 * 1000), dutySteps: 1000 });
+    expect(board.timers?.find(({ timer }) => timer === 2)?.free?.fixed?.pwmHz).toBeCloseTo(31372.549, 3);
     expect(board.timerPwmHz?.[2]).toBeCloseTo(490.196078, 6);
     // Arduino reference, analogWrite(): 490 Hz, pins 5 and 6 980 Hz; values 0 to 255.
     expect(Math.abs(board.pwmHz - 490)).toBeLessThan(1);

@@ -72,6 +72,10 @@ describe.each(Object.values(BOARDS))('$id', (board) => {
     expect(new Set(channels).size).toBe(channels.length);
   });
 
+  test('is plain data, which a worker thread can be handed', () => {
+    expect(structuredClone(board)).toEqual(board);
+  });
+
   test('reads all sensors and computes within half its sample period', () => {
     const analogPins = board.pins.filter(({ adc, reserved }) => adc && reserved === undefined).length;
     const analogS = Math.min(16, analogPins) * board.adcReadS;

@@ -10,7 +10,7 @@
  * audible of all. Where neither can be had, timer 1 keeps near the core's frequency, 16 MHz / (2 * 64 * 250) = 500 Hz, so that its
  * period is one sample. Timer 0 must stay, because the clock counts it. The clock of timer 4 of the ATmega32U4 stays as the core has it.
  */
-import type { AdcClock, BoardFacts, FreePwm, PwmMode, TimerFacts } from '../board-facts.js';
+import type { AdcClock, BoardFacts, PwmMode, TimerFacts } from '../board-facts.js';
 
 const CLOCK_HZ = 16e6;
 const TIMER_PRESCALER = 64;
@@ -47,15 +47,11 @@ function phaseCorrect(timer: number, dutySteps: number, prescaler: 1 | 8 | 64): 
   };
 }
 
-/** Any frequency of a 16-bit timer, with as many steps as there can be. */
-function freeWide(timer: number): FreePwm {
-  return {
-    at(pwmHz) {
-      const topAt = (prescaler: number) => Math.ceil(CLOCK_HZ / (2 * prescaler * pwmHz) - 1e-9);
-      const prescaler = ([1, 8, 64] as const).find((each) => topAt(each) <= LARGEST_TOP) ?? 64;
-      return phaseCorrect(timer, topAt(prescaler), prescaler);
-    },
-  };
+/** Mode of a 16-bit timer with the frequency next to `pwmHz`, not above it, and as many steps as there can be. */
+export function wideTimerPwm(timer: number, pwmHz: number): PwmMode {
+  const topAt = (prescaler: number) => Math.ceil(CLOCK_HZ / (2 * prescaler * pwmHz) - 1e-9);
+  const prescaler = ([1, 8, 64] as const).find((each) => topAt(each) <= LARGEST_TOP) ?? 64;
+  return phaseCorrect(timer, topAt(prescaler), prescaler);
 }
 
 /** A 16-bit timer: mode 4 clears it on a compare match. */
@@ -63,7 +59,7 @@ export function wideTimer(timer: number): TimerFacts {
   return {
     timer,
     pwm: CORE_PWM,
-    free: freeWide(timer),
+    free: {},
     tick: {
       vector: `TIMER${timer}_COMPA_vect`,
       setUp: [
@@ -96,7 +92,7 @@ const UNDIVIDED_PWM_2: PwmMode = {
 export const TIMER_2: TimerFacts = {
   timer: 2,
   pwm: CORE_PWM,
-  free: { fixedHz: UNDIVIDED_HZ, at: () => UNDIVIDED_PWM_2 },
+  free: { fixed: UNDIVIDED_PWM_2 },
   tick: {
     vector: 'TIMER2_COMPA_vect',
     setUp: [
