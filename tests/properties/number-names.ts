@@ -87,6 +87,11 @@ export const LISTED: readonly Listed[] = [
       level cause resetCause lastDriven cycles sample ticks ticksAdd ticksDiff change start end`),
   },
   {
+    why: 'cosine and sine of an angle, which an inner loop keeps',
+    where: /^rehearsal\/vehicle-motion\.ts$/,
+    names: words('cosHeading sinHeading'),
+  },
+  {
     why: 'places of sensors in the bar, from 0',
     where: /^(firmware\/view-(pins|registers|arduino|micropython)|sheet\/sensor-kinds)\.ts$/,
     names: words('place sensorPlaces analogPlaces'),
