@@ -41,3 +41,8 @@ export function delayBudget(vehicle: Vehicle): { shares: DelayShare[]; totalS: n
 export function twinDelayS(vehicle: Vehicle): number {
   return Math.min(delayBudget(vehicle).totalS, 0.99 * vehicle.board.samplePeriodS);
 }
+
+/** Longest time from the opening of the stop input's contact to motors off, s: it is read once a sample, before the motors. */
+export function stopBoundS(vehicle: Vehicle): number {
+  return vehicle.board.samplePeriodS + delayBudget(vehicle).totalS;
+}

@@ -31,6 +31,8 @@ export interface Features {
   encoders: boolean;
   /** The encoders tell the direction. */
   quadrature: boolean;
+  /** A contact stops the vehicle. */
+  stopInput: boolean;
   /** There is an LED: the vehicle's own, or the board's on a pin that the vehicle leaves free. */
   led: boolean;
   /** The firmware can tell a start after the supply broke down from switching on; MicroPython does not say. */
@@ -44,7 +46,7 @@ export interface Features {
  */
 export function featuresOf(
   controller: ControllerConstants,
-  language: Vehicle['language'],
+  { language, stopInput }: Pick<Vehicle, 'language' | 'stopInput'>,
   led: boolean,
 ): Features {
   const { sensing, sweep, kind } = controller;
@@ -67,6 +69,7 @@ export function featuresOf(
     manySensors: sensing.sensorCount > 8,
     encoders: controller.wheelLoop !== undefined,
     quadrature: controller.wheelLoop?.single === false,
+    stopInput: stopInput !== undefined,
     led,
     brownOut: language === 'arduino',
   };

@@ -20,6 +20,11 @@ const REASONS = [
   },
   { name: 'LineNotFound', flashes: 9, about: 'calibration refused: the line was not found again' },
   { name: 'WheelBlocked', flashes: 10, about: 'a wheel was driven and did not turn, or its encoder is dead' },
+  {
+    name: 'StopInput',
+    flashes: 11,
+    about: 'the stop input was open: the contact, or a wire to it',
+  },
 ] as const;
 
 export const CAUTIONS = [
@@ -58,6 +63,7 @@ export interface Reason {
 export function reasonsOf(features: Features): readonly Reason[] {
   return REASONS.filter(({ name }) => {
     if (name === 'WheelBlocked') return features.encoders;
+    if (name === 'StopInput') return features.stopInput;
     if (name === 'FlatSensor' || name === 'LineNotFound') return features.sweep;
     return name !== 'BrownOut' || features.brownOut;
   });

@@ -67,7 +67,7 @@ function motorRows(side: 'left' | 'right', vehicle: Vehicle): PinRow[] {
   return rows;
 }
 
-function otherRows({ drive, start, board, led }: Vehicle): PinRow[] {
+function otherRows({ drive, start, board, led, stopInput }: Vehicle): PinRow[] {
   const rows = [
     row(
       start.button,
@@ -76,6 +76,11 @@ function otherRows({ drive, start, board, led }: Vehicle): PinRow[] {
       'Internal pull-up, no resistor.',
     ),
   ];
+  if (stopInput !== undefined) {
+    const about =
+      'Closed while the vehicle may move; open, or with a broken wire, it stops the motors. Internal pull-up, no resistor. No emergency stop.';
+    rows.push(row(stopInput, 'stop input', 'stop input; the other contact to ground', about));
+  }
   if (drive.standby !== undefined)
     rows.unshift(row(drive.standby, 'output', 'driver: standby input', 'High lets the driver work.'));
   if (led !== undefined) {

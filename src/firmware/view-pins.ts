@@ -66,10 +66,12 @@ function encoderPins(side: Side, { encoders }: Vehicle): PinLine[] {
 }
 
 /** All pins that the vehicle uses. */
-function usedPins({ drive, bar, start, encoders }: Vehicle): PinFacts[] {
+function usedPins({ drive, bar, start, encoders, stopInput }: Vehicle): PinFacts[] {
   const counted = [encoders?.left, encoders?.right].flatMap((each) => [each?.a, each?.b]);
   const motors = [drive.left, drive.right].flatMap(({ pwm, dir, in1, in2 }) => [pwm, dir, in1, in2]);
-  return [...motors, ...counted, ...bar.pins, start.button, drive.standby].filter((pin) => pin !== undefined);
+  return [...motors, ...counted, ...bar.pins, start.button, stopInput, drive.standby].filter(
+    (pin) => pin !== undefined,
+  );
 }
 
 /** The LED that shows state and faults. */
@@ -122,5 +124,12 @@ export function pinLines(vehicle: Vehicle): PinLine[] {
     motor: false,
     about: 'Start button, to ground, with the internal pull-up. From start.buttonPin.',
   });
+  if (vehicle.stopInput !== undefined)
+    lines.push({
+      name: 'STOP_PIN',
+      code: vehicle.stopInput.code,
+      motor: false,
+      about: 'Stop input, low while the vehicle may move, with the internal pull-up. From stopPin.',
+    });
   return lines;
 }

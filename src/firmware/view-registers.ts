@@ -46,6 +46,8 @@ export interface RegisterView {
   /** Register and bit of each digital sensor, leftmost first, and its place among all, from 0. */
   inputs: readonly { register: string; bit: number; place: number }[];
   button: { register: string; bit: number };
+  /** The stop input; absent without one. */
+  stopContact?: { register: string; bit: number };
 }
 
 /** Channels that ADMUX tells apart; bit MUX5 of ADCSRB has the rest (data sheets of the larger chips). */
@@ -79,7 +81,7 @@ function outputsOf(side: 'Left' | 'Right', wiring: MotorWiring): [name: string, 
 
 /** Registers of a vehicle on an AVR board. */
 export function registerView(vehicle: Vehicle): RegisterView {
-  const { board, drive, bar, start } = vehicle;
+  const { board, drive, bar, start, stopInput } = vehicle;
   const timers = board.timers ?? [];
   const outputs = [...outputsOf('Left', drive.left), ...outputsOf('Right', drive.right)];
   const isPwm = (name: string) => name.endsWith('Pwm') || drive.scheme === 'dual-pwm';
@@ -126,5 +128,6 @@ export function registerView(vehicle: Vehicle): RegisterView {
     someUpperChannels: channels.some((channel) => channel >= CHANNELS_SELECTED),
     inputs: sensorPlaces(vehicle, 'digital').map((place) => ({ ...inputOf(bar.pins[place]!), place })),
     button: inputOf(start.button),
+    ...(stopInput && { stopContact: inputOf(stopInput) }),
   };
 }

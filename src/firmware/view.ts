@@ -63,7 +63,7 @@ function ruleLines(controller: ControllerConstants): RuleLine[] {
 export function commonView(sheet: SheetIdentity, design: FirmwareDesign): CommonView {
   const { vehicle, controller } = design;
   const led = ledLine(vehicle);
-  const features = featuresOf(controller, vehicle.language, led !== undefined);
+  const features = featuresOf(controller, vehicle, led !== undefined);
   const groups: ConstantGroup[] = [
     { title: 'Time', constants: timeConstants(vehicle, controller, features) },
     { title: 'Scales of the integers', constants: scaleConstants(controller, features) },

@@ -13,7 +13,7 @@ import { type ChipImage, buildSketch } from './chip-build.js';
 import { type ChipEncoders, chipEncoders } from './chip-encoders.js';
 import { ChipMotors } from './chip-motors.js';
 import { LedReader, WATCHED_S, ledPin, type Ending } from './ending.js';
-import type { Fault } from './fault.js';
+import { type Fault, stopIsOpen } from './fault.js';
 import type { Engine, RunResult, RunSetup } from './engine.js';
 import { Plant } from './plant.js';
 import { RunMonitor } from './run-monitor.js';
@@ -38,6 +38,7 @@ class ChipRun {
   /** Pins of the digital sensors, and which sensor each is. */
   private readonly sensorPins: readonly (readonly [pin: number, sensor: number])[];
   private readonly buttonPin: number;
+  private readonly stopPin: number | undefined;
   private readonly encoders: ChipEncoders | undefined;
   private readonly broken = new Set<Fault>();
 
@@ -54,6 +55,7 @@ class ChipRun {
       vehicle.bar.kinds[i] === 'digital' ? [[pinNumber(pin), i] as const] : [],
     );
     this.buttonPin = pinNumber(vehicle.start.button);
+    this.stopPin = vehicle.stopInput && pinNumber(vehicle.stopInput);
     this.encoders = chipEncoders(vehicle);
     this.chip = new AvrChip(image.program, vehicle.board, {
       sample: (channel) => {
@@ -67,6 +69,8 @@ class ChipRun {
   private step(index: number): void {
     const timeS = index * STEP_S;
     this.chip.setPin(this.buttonPin, !(timeS >= PRESS_S && timeS < RELEASE_S));
+    if (this.stopPin !== undefined)
+      this.chip.setPin(this.stopPin, stopIsOpen(this.setup.faults, this.plant.timeS));
     for (const [pin, i] of this.sensorPins) this.chip.setPin(pin, this.plant.count(i) === 1);
     const from = index * STEP_CYCLES;
     if (this.encoders) this.encoders.runThrough(this.chip, this.plant, from, STEP_CYCLES);

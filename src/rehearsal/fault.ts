@@ -25,6 +25,8 @@ export type Fault = { atS: number; durationS?: number } & (
   | { kind: 'bump'; shiftM: number; turnRad: number }
   /** The program hangs. */
   | { kind: 'program' }
+  /** The contact of the stop input opens. */
+  | { kind: 'stop' }
   /** The supply breaks down for a moment. */
   | { kind: 'supply' }
 );
@@ -51,6 +53,7 @@ export const FAULT_FORMS: readonly { form: string; about: string }[] = [
     form: 'bump=Xmm[:Ydeg]',
     about: 'the vehicle is pushed X mm to the left and turned by Y degrees to the left',
   },
+  { form: 'stop=open', about: 'the contact of the stop input is open; chip and micropython' },
   { form: 'program=hangs', about: 'the program hangs: the watchdog has to act; chip and micropython' },
   {
     form: 'supply=breaks',
@@ -106,6 +109,7 @@ const READERS: readonly [RegExp, (parts: readonly (string | undefined)[]) => Wha
       turnRad: within(turn ?? '0', -MOST_TURN_DEG, MOST_TURN_DEG, 'deg') * RAD_PER_DEG,
     }),
   ],
+  [/^stop=open$/, () => ({ kind: 'stop' })],
   [/^program=hangs$/, () => ({ kind: 'program' })],
   [/^supply=breaks$/, () => ({ kind: 'supply' })],
 ];
@@ -142,6 +146,20 @@ export function parseFault(text: string): Fault {
   );
 }
 
+/** What the twin, the controller without a board, lacks. */
+const BOARD_ONLY: Readonly<Partial<Record<Fault['kind'], string>>> = {
+  program: 'program that could hang',
+  supply: 'board that could start anew',
+  stop: 'stop input',
+};
+
+/** Whether the contact of the stop input is open at a time, s. */
+export function stopIsOpen(faults: readonly Fault[] | undefined, timeS: number): boolean {
+  return (faults ?? []).some(
+    ({ kind, atS, durationS = Infinity }) => kind === 'stop' && timeS >= atS && timeS < atS + durationS,
+  );
+}
+
 /** What of a vehicle or an engine does not go with the faults asked for. */
 function faultProblems(faults: readonly Fault[], vehicle: Vehicle, engine: EngineName): Problem[] {
   const sensorCount = vehicle.bar.pins.length;
@@ -154,10 +172,16 @@ function faultProblems(faults: readonly Fault[], vehicle: Vehicle, engine: Engin
         allowed: `sensor 1 to ${sensorCount}`,
         fix: 'Count from the left, beginning with 1.',
       });
-    if (engine === 'twin' && (fault.kind === 'program' || fault.kind === 'supply'))
+    if (fault.kind === 'stop' && vehicle.stopInput === undefined)
+      problems.push({
+        pointer: '/stopPin',
+        message: 'There is no stop input whose contact could open.',
+        fix: 'Give stopPin in the sheet, or leave the fault out.',
+      });
+    else if (engine === 'twin' && fault.kind in BOARD_ONLY)
       problems.push({
         pointer: '',
-        message: `The twin is the controller alone: it has no ${fault.kind === 'program' ? 'program that could hang' : 'board that could start anew'}.`,
+        message: `The twin is the controller alone: it has no ${BOARD_ONLY[fault.kind]}.`,
         fix: `Use --on ${vehicle.language === 'arduino' ? 'chip' : 'micropython'}.`,
       });
   }

@@ -9,7 +9,7 @@
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { LedReader, WATCHED_S, ledPin } from './ending.js';
 import type { RunResult, RunSetup } from './engine.js';
-import type { Fault } from './fault.js';
+import { type Fault, stopIsOpen } from './fault.js';
 import type { Surroundings } from './micropython-chip.js';
 import { ChipReset } from './micropython-clock.js';
 import { MicroPythonEncoders } from './micropython-encoders.js';
@@ -36,6 +36,7 @@ export class MicroPythonRun implements Surroundings {
   private readonly state: ControlState = { dutyLeft: 0, dutyRight: 0, classIndex: -1, phase: -1 };
   private readonly sensorOfPin: ReadonlyMap<number, number>;
   private readonly buttonPin: number;
+  private readonly stopPin: number | undefined;
   private readonly encoders: MicroPythonEncoders;
   private readonly setOffByS: number;
   /** Time before the first drive, s. */
@@ -65,6 +66,7 @@ export class MicroPythonRun implements Surroundings {
     this.motors = new MicroPythonMotors(vehicle);
     this.sensorOfPin = new Map(vehicle.bar.pins.map((pin, i) => [Number(pin.code), i]));
     this.buttonPin = Number(vehicle.start.button.code);
+    this.stopPin = vehicle.stopInput && Number(vehicle.stopInput.code);
     this.encoders = new MicroPythonEncoders(vehicle);
     this.setOffByS = RELEASE_S + vehicle.start.countdownS + SET_OFF_S;
   }
@@ -85,6 +87,7 @@ export class MicroPythonRun implements Surroundings {
   level(gpio: number, timeS: number): boolean | undefined {
     if (gpio === this.buttonPin && this.rebooted) return undefined;
     if (gpio === this.buttonPin) return timeS >= PRESS_S && timeS < RELEASE_S ? false : undefined;
+    if (gpio === this.stopPin) return stopIsOpen(this.faults, this.plant.timeS) ? undefined : false;
     const sensor = this.sensorOfPin.get(gpio);
     return sensor === undefined ? this.encoders.level(gpio) : this.plant.count(sensor) === 1;
   }
@@ -107,12 +110,24 @@ export class MicroPythonRun implements Surroundings {
   advance(durationS: number): void {
     if (this.monitor.ended) this.watch(durationS);
     else if (this.started) this.roll(durationS, false);
-    else this.standingS += durationS;
+    else this.stand(durationS);
     if (this.breaksSupply()) {
       this.supplyBroke = true;
       throw new ChipReset('The supply broke down.');
     }
-    if (this.watched || this.standingS > this.setOffByS) throw new PowerCut();
+    if (this.watched || this.standsForGood) throw new PowerCut();
+  }
+
+  /** Waits for the vehicle to set off; with faults it may not, and its LED says why. */
+  private stand(durationS: number): void {
+    this.standingS += durationS;
+    if (this.standingS > this.setOffByS) this.reader.look(this.ledLit, this.standingS);
+  }
+
+  private get standsForGood(): boolean {
+    if (this.started || this.standingS <= this.setOffByS) return false;
+    const seen = this.faults.length === 0 || this.reader.flashes !== undefined;
+    return seen || this.standingS > this.setOffByS + WATCHED_S;
   }
 
   /** Nothing more is to be learnt from this run. */

@@ -1,6 +1,8 @@
 /** The design as `derive --json` gives it. */
 import type { Design, Margins } from '../design/design.js';
 import { biasOffsetM, hasIntegral } from '../design/bias.js';
+import { stopBoundS } from '../design/delay.js';
+import { lineLossBoundS } from '../design/line-loss.js';
 import { cornerText } from '../design/law-binding.js';
 import { quantisedConstants } from '../design/quantisation.js';
 import { predictCycles } from '../design/rule-cycle.js';
@@ -50,6 +52,8 @@ export function designJson(design: Design) {
       targetPercent: fractionToPercent(design.proof.targetShare),
       confidencePercent: fractionToPercent(design.proof.confidenceShare),
     },
+    lineLossBoundS: lineLossBoundS(controller),
+    ...(vehicle.stopInput && { stopBoundS: stopBoundS(vehicle) }),
     biasOffsetMm: mToMm(biasOffsetM(design)),
     integral: hasIntegral(design),
     quantisation: quantisedConstants(design),

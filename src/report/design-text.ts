@@ -1,6 +1,8 @@
 /** The design as a person reads it: each number with its unit and where it comes from. */
 import { CLASS_SPEED_BITS, OFFSET_PER_M, fullSpeedMps } from '../controller/constants.js';
 import type { Design, DesignedClass } from '../design/design.js';
+import { lineLossBoundS } from '../design/line-loss.js';
+import { stopBoundS } from '../design/delay.js';
 import { LEAST_MARGINS } from '../design/tolerance-box.js';
 import { filterTimeS } from '../design/steering-loop.js';
 import { biasOffsetM, hasIntegral } from '../design/bias.js';
@@ -113,6 +115,20 @@ function vehicleLines(design: Design): string {
       `${((controller.drive.searchSpeed / (1 << CLASS_SPEED_BITS)) * fullSpeedMps(controller)).toFixed(2)} m/s`,
       'for a lost line',
     ],
+    [
+      'line lost for good',
+      `motors off within ${lineLossBoundS(controller).toFixed(2)} s`,
+      'longest gap at the slowest class, then the search',
+    ],
+    ...(vehicle.stopInput
+      ? [
+          [
+            'stop input opened',
+            `motors off within ${sToMs(stopBoundS(vehicle)).toFixed(1)} ms`,
+            'a sample period and the delay in all; on again only by the button',
+          ],
+        ]
+      : []),
     [
       'side memory from',
       `${mToMm(controller.memory.sideOffset / OFFSET_PER_M).toFixed(1)} mm`,

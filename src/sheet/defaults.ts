@@ -17,9 +17,10 @@ type GivenClass = Exclude<Sheet['speeds']['classes'], 'auto'>[number];
 export type SpeedClass = GivenClass & { minRadiusMm: number };
 
 /** A sheet with every default filled in. What has none stays optional. */
-export interface ResolvedSheet extends Required<Omit<Sheet, 'encoders' | 'led'>> {
+export interface ResolvedSheet extends Required<Omit<Sheet, 'encoders' | 'led' | 'stopPin'>> {
   encoders?: Sheet['encoders'] & {};
   led?: Required<NonNullable<Sheet['led']>>;
+  stopPin?: number | string;
   line: Required<Sheet['line']>;
   sensors: Filled<Sheet['sensors'], 'pitchMm' | 'positionsMm' | 'kinds'>;
   drive: Omit<Required<Drive>, 'motor' | 'driver' | 'trim'> & {

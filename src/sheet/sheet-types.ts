@@ -379,6 +379,10 @@ export interface Sheet {
     runLimitS?: number;
   };
   /**
+   * A pin's label as printed on the board: a number, or text such as A0 or GP26.
+   */
+  stopPin?: number | string;
+  /**
    * What the vehicle reports while it drives.
    */
   telemetry?: {

@@ -49,6 +49,7 @@ export function toVehicle(sheet: ResolvedSheet): Vehicle {
     },
     ...(sheet.encoders && { encoders: encodersOf(sheet.encoders, board) }),
     ...(sheet.led && { led: { pin: pinOf(board, sheet.led.pin), activeLow: sheet.led.activeLow } }),
+    ...(sheet.stopPin !== undefined && { stopInput: pinOf(board, sheet.stopPin) }),
     power: { ...sheet.power },
     control: controlOf(sheet.control),
     speeds: {

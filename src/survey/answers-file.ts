@@ -88,6 +88,7 @@ function factsFrom(given: readonly Given[], base: JsonObject): Facts {
     ...(has('/sensors/positionsMm') && { '#row': 'uneven' }),
     ...(given.some(([pointer]) => pointer.startsWith('/encoders/')) && { '#encoders': true }),
     ...(has('/drive/driver/standbyPin') && { '#standby': true }),
+    ...(has('/stopPin') && { '#stopInput': true }),
     ...(single.some(([pointer]) => IS_PIN.test(pointer)) && { '#pins': 'by-hand' }),
   });
   const asked = new Set(entriesFor(all).map(({ id }) => id));

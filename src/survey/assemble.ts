@@ -37,6 +37,7 @@ function outOfPlace(facts: Facts): string[] {
     ...['left', 'right'].flatMap((side) => ['a', 'b'].map((key) => `/encoders/${side}/${key}`)),
     '/sensors/pins',
     '/drive/driver/standbyPin',
+    '/stopPin',
     ...['left', 'right'].flatMap((side) =>
       ['pwm', 'dir', 'in1', 'in2'].map((key) => `/drive/driver/${side}/${key}`),
     ),

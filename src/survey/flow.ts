@@ -93,6 +93,7 @@ const DECIDES_PINS = new Set([
   '/drive/driver/scheme',
   '#standby',
   '#encoders',
+  '#stopInput',
   '/encoders/channels',
 ]);
 

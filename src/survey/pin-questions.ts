@@ -42,6 +42,7 @@ function planLines(pins: ReadonlyMap<string, Json>): string[] {
     ...single('/drive/driver/standbyPin'),
     ...['left', 'right'].flatMap((side) => encoder(side)),
     ...single('/start/buttonPin'),
+    ...single('/stopPin'),
   ];
 }
 

@@ -19,11 +19,11 @@ export interface PinNeed {
 
 /** Pointers of the pins. */
 export const IS_PIN =
-  /^\/(sensors\/pins|drive\/driver\/(left|right)\/(pwm|dir|in1|in2)|drive\/driver\/standbyPin|encoders\/(left|right)\/(a|b)|start\/buttonPin)(\/|$)/;
+  /^\/(sensors\/pins|drive\/driver\/(left|right)\/(pwm|dir|in1|in2)|drive\/driver\/standbyPin|encoders\/(left|right)\/(a|b)|start\/buttonPin|stopPin)(\/|$)/;
 
 /** Pointers of the pins and of what holds nothing else to ask for. */
 export const ABOUT_PINS =
-  /^\/(sensors\/pins|drive\/driver\/(left|right|standbyPin)|encoders\/(left|right)|start\/buttonPin)(\/|$)/;
+  /^\/(sensors\/pins|drive\/driver\/(left|right|standbyPin)|encoders\/(left|right)|start\/buttonPin|stopPin)(\/|$)/;
 
 /** How the pins come about: as proposed, as the sheet at hand has them, or one by one. */
 export type PinMode = 'proposed' | 'kept' | 'by-hand';
@@ -38,6 +38,12 @@ export function hasStandby(facts: Facts): boolean {
   if (!DRIVERS[schemeOf(facts)].standby) return false;
   const answer = facts.answers['#standby'];
   return typeof answer === 'boolean' ? answer : valueAt(facts.base, '/drive/driver/standbyPin') !== undefined;
+}
+
+/** Whether a contact is to stop the vehicle. */
+export function hasStopInput(facts: Facts): boolean {
+  const answer = facts.answers['#stopInput'];
+  return typeof answer === 'boolean' ? answer : valueAt(facts.base, '/stopPin') !== undefined;
 }
 
 /** Every pin that the vehicle needs, in the order in which people wire them. */
@@ -77,6 +83,7 @@ export function pinNeeds(facts: Facts): PinNeed[] {
     ...(hasStandby(facts) ? [single('/drive/driver/standbyPin', 'output')] : []),
     ...encoders,
     single('/start/buttonPin', 'button'),
+    ...(hasStopInput(facts) ? [single('/stopPin', 'stop input')] : []),
   ];
 }
 
@@ -96,6 +103,7 @@ export function planWith(
     scheme: schemeOf(facts),
     standby: hasStandby(facts),
     encoderChannels: encoderChannels(facts).length,
+    stopInput: hasStopInput(facts),
     ...changes,
   };
   const key = JSON.stringify([board, request]);
@@ -140,6 +148,7 @@ export function proposedPins(facts: Facts): Map<string, Json> {
     drive: { driver: { ...plan.driver } },
     ...(plan.encoders && { encoders: { ...plan.encoders } }),
     start: { buttonPin: plan.buttonPin },
+    ...(plan.stopPin !== undefined && { stopPin: plan.stopPin }),
   };
   for (const { pointer } of pinNeeds(facts)) {
     const label = valueAt(tree, pointer);

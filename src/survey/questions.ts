@@ -9,7 +9,7 @@ import { valueAt } from './json-tree.js';
 import { kindsQuestion } from './kinds-question.js';
 import { classesQuestion, positionsQuestion, readingsQuestion } from './lists.js';
 import { fitQuestion, pinQuestion, planQuestion } from './pin-questions.js';
-import { hasStandby, keptPinsFit, pinMode, pinNeeds, planProblem, schemeOf } from './pins.js';
+import { hasStandby, hasStopInput, keptPinsFit, pinMode, pinNeeds, planProblem, schemeOf } from './pins.js';
 import type { Question } from './question.js';
 import { nodeAt } from './schema-node.js';
 
@@ -121,12 +121,19 @@ function driveEntries(facts: Facts): Entry[] {
     make: (now) => yesNoQuestion(common(nodeAt('/encoders')), hasEncoders(now)),
     settled: (now) => Object.hasOwn(now.answers, '#encoders') || nodesGiven(now, '/drive/driver/scheme'),
   };
+  const stopInput: Entry = {
+    id: '#stopInput',
+    group,
+    make: (now) => yesNoQuestion({ ...common(nodeAt('/stopPin')), title: 'Stop input' }, hasStopInput(now)),
+    settled: (now) => Object.hasOwn(now.answers, '#stopInput') || nodesGiven(now, '/drive/driver/scheme'),
+  };
   const about = ['/encoders/channels', '/encoders/linesPerTurn'].map((id) => field(group, id));
   return [
     ...DRIVE.map((key) => field(group, `/drive/${key}`)),
     encoders,
     ...(hasEncoders(facts) ? about : []),
     ...(DRIVERS[schemeOf(facts)].standby ? [standby] : []),
+    stopInput,
     ...pinEntries(facts, group),
   ];
 }

@@ -1,4 +1,4 @@
-/** Proposes a wiring: which pin for which sensor, motor input and button; or says why the board cannot have one. */
+/** Proposes a wiring: which pin for which sensor, motor input and contact; or says why the board cannot have one. */
 import { type SensorKind, usualKinds } from '../sheet/sensor-kinds.js';
 import type { Problem } from '../sheet/problem.js';
 import { counted, joinOr, withUnit } from '../sheet/words.js';
@@ -19,6 +19,8 @@ export interface PinRequest {
   standby?: boolean;
   /** Channels of each wheel's encoder: 0 (none), 1 or 2. */
   encoderChannels?: number;
+  /** Whether to plan a stop input. */
+  stopInput?: boolean;
 }
 
 type Label = number | string;
@@ -34,6 +36,7 @@ export interface PinPlan {
   };
   encoders?: { left: EncoderLabels; right: EncoderLabels };
   buttonPin: Label;
+  stopPin?: Label;
 }
 
 type EncoderLabels = { a: Label; b?: Label };
@@ -52,7 +55,7 @@ function kindsOf({ sensorKind, sensorKinds, sensorCount }: PinRequest): readonly
 }
 
 function needsOf(request: PinRequest): Need[] {
-  const { scheme, standby, encoderChannels = 0 } = request;
+  const { scheme, standby, encoderChannels = 0, stopInput } = request;
   const { motorPins, standby: hasStandby } = DRIVERS[scheme];
   const sensors = kindsOf(request).map((kind, index): Need => ({
     key: `sensor${index}`,
@@ -63,6 +66,7 @@ function needsOf(request: PinRequest): Need[] {
     motorPins.map(({ key, pwm }): Need => ({ key: `${side}.${key}`, role: pwm ? 'PWM output' : 'output' })),
   );
   const others: Need[] = [{ key: 'button', role: 'button' }];
+  if (stopInput) others.push({ key: 'stop', role: 'stop input' });
   if (standby && hasStandby) others.unshift({ key: 'standby', role: 'output' });
   const encoders = ['left', 'right'].flatMap((side) =>
     ['a', 'b']
@@ -108,6 +112,7 @@ function planOf(board: BoardFacts, request: PinRequest, assignment: Assignment):
       ? { encoders: { left: encoder('left'), right: encoder('right') } }
       : {}),
     buttonPin: labelOf('button'),
+    ...(assignment.has('stop') ? { stopPin: labelOf('stop') } : {}),
   };
 }
 
@@ -116,14 +121,15 @@ function isPossible(board: BoardFacts, request: PinRequest): boolean {
 }
 
 function impossible(board: BoardFacts, request: PinRequest): Problem {
-  const { sensorKind, sensorCount, scheme } = request;
+  const { sensorKind, sensorCount, scheme, stopInput } = request;
+  const contacts = stopInput ? ', the button and the stop input' : ' and the button';
   const measured = kindsOf(request).filter((kind) => kind === 'analog').length;
   const usable = board.pins.filter((pin) => pin.reserved === undefined);
   const analog = usable.filter((pin) => isAble(pin, 'analog sensor'));
   const tooFewAnalog = analog.length < measured;
   const message = tooFewAnalog
     ? `${board.title} has ${counted(analog.length, 'analog pin')} (${listPins(analog)}), too few for ${counted(measured, 'analog sensor')}.`
-    : `${board.title} has ${counted(usable.length, 'usable pin')}; ${counted(sensorCount, sensorKind === 'mixed' ? 'sensor' : `${sensorKind} sensor`)}, the ${scheme} driver and the button need ${counted(needsOf(request).length, 'pin')} of the right kinds.`;
+    : `${board.title} has ${counted(usable.length, 'usable pin')}; ${counted(sensorCount, sensorKind === 'mixed' ? 'sensor' : `${sensorKind} sensor`)}, the ${scheme} driver${contacts} need ${counted(needsOf(request).length, 'pin')} of the right kinds.`;
   const fewer = Array.from({ length: sensorCount - 1 }, (_, index) => sensorCount - 1 - index);
   const most = fewer.find((count) => isPossible(board, { ...request, sensorCount: count }));
   const others = Object.values(BOARDS).filter((other) => isPossible(other, request));

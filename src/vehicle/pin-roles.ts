@@ -2,7 +2,8 @@
 import type { PinFacts } from './board-facts.js';
 
 /** What a pin has to do. */
-export type PinRole = 'analog sensor' | 'digital sensor' | 'PWM output' | 'output' | 'button' | 'encoder';
+export type PinRole =
+  'analog sensor' | 'digital sensor' | 'PWM output' | 'output' | 'button' | 'stop input' | 'encoder';
 
 /** Whether a pin can do what a role asks. */
 export function isAble(pin: PinFacts, role: PinRole): boolean {
@@ -18,6 +19,7 @@ export function isAble(pin: PinFacts, role: PinRole): boolean {
     case 'output':
       return pin.output;
     case 'button':
+    case 'stop input':
       return pin.input && pin.pullUp;
   }
 }

@@ -71,6 +71,8 @@ export interface Vehicle {
   };
   /** Wheel encoders, where the vehicle has them. */
   encoders?: Encoders;
+  /** A contact to ground, closed while the vehicle may move; where the vehicle has one. */
+  stopInput?: PinFacts;
   /** An LED of the vehicle's own, in place of the board's. */
   led?: { pin: PinFacts; activeLow: boolean };
   power: { nominalV: number; fullV: number; emptyV: number };

@@ -97,7 +97,7 @@ export const CARTS: Readonly<Record<string, Changes>> = {
     '/sensors/lineLevel': 'low',
     '/line/polarity': 'dark-on-light',
   },
-  'an LED of its own': { '/led': { pin: 4, activeLow: true } },
+  'an LED of its own and a stop input': { '/led': { pin: 4, activeLow: true }, '/stopPin': 12 },
   'one speed for all': ONE_SPEED,
   'an integral part': UNEQUAL,
   'uneven bar without crossings': { ...UNEVEN, ...NO_CROSSINGS },

@@ -93,12 +93,13 @@ export const MICROPYTHON_CARTS: Readonly<Record<string, Changes>> = {
   'pico, digital, one class': { ...PICO, ...EIGHT_DIGITAL, ...PICO_DIR, ...ONE_CLASS },
   'pico, digital, rules': { ...PICO, ...EIGHT_DIGITAL, ...PICO_IN_IN, ...RULES },
   'esp32, mixed, sweep': { ...ESP32, ...SIX_ANALOG, ...MIXED, ...SWEEP, ...ESP32_DUAL },
-  'pico, an LED of its own': {
+  'pico, an LED of its own and a stop input': {
     ...PICO,
     ...THREE_ANALOG,
     ...STORED_3,
     ...PICO_DIR,
     '/led': { pin: 'GP9', activeLow: true },
+    '/stopPin': 'GP10',
   },
   'esp32, encoders': {
     ...ESP32,

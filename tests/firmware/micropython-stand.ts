@@ -10,6 +10,8 @@ import { SHEET } from './cart.js';
 export interface Script {
   /** When the button is held down, s after power-on. */
   pressed?: readonly (readonly [fromS: number, toS: number])[];
+  /** When the contact of the stop input is open, s after power-on. */
+  opened?: readonly (readonly [fromS: number, toS: number])[];
   /** Share of sensor i that lies on the line, 0 to 1; by default the line lies under the middle. */
   share?: (sensor: number, timeS: number) => number;
   /** When the power is switched off, s. */
@@ -73,6 +75,8 @@ class Stand implements Surroundings {
 
   level(gpio: number, timeS: number): boolean | undefined {
     if (this.isSensor(gpio)) return this.share(gpio) > 0.5 === (this.vehicle.bar.lineLevel === 'high');
+    if (gpio === Number(this.vehicle.stopInput?.code))
+      return this.script.opened?.some(([from, to]) => timeS >= from && timeS < to) ? undefined : false;
     if (gpio !== Number(this.vehicle.start.button.code)) return undefined;
     return this.script.pressed?.some(([from, to]) => timeS >= from && timeS < to) ? false : undefined;
   }

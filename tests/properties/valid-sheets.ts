@@ -48,6 +48,7 @@ const WIRINGS: readonly Wiring[] = BOARD_IDS.flatMap((board) =>
           scheme,
           standby,
           encoderChannels: ENCODER_CHANNELS[Math.floor(index / 15)]!,
+          stopInput: index % 2 === 1,
         })).flatMap((request) => {
           const plan = proposePins(board, request);
           return 'sensorPins' in plan ? [{ board, request, plan }] : [];
@@ -174,6 +175,7 @@ export const sheetCandidates: fc.Arbitrary<Sheet> = fc
         control: controlled,
         speeds: rest.speeds,
         start: { buttonPin: plan.buttonPin, countdownS: rest.countdownS, runLimitS: rest.runLimitS },
+        ...(plan.stopPin !== undefined && { stopPin: plan.stopPin }),
         telemetry: { mode: 'off' },
         tolerances: rest.tolerances,
       }));

@@ -52,6 +52,12 @@ export class ChipBench {
       pinsChanged: () => this.motors.look(this.chip),
     });
     this.release();
+    this.openStop(false);
+  }
+
+  /** Opens or closes the contact of the stop input, where there is one. */
+  openStop(open: boolean): void {
+    if (this.vehicle.stopInput) this.chip.setPin(pinNumber(this.vehicle.stopInput), open);
   }
 
   get timeS(): number {

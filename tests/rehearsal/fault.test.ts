@@ -24,6 +24,7 @@ it.each([
   ['bump=-8mm:90deg@2s', { kind: 'bump', shiftM: -0.008, turnRad: Math.PI / 2, atS: 2 }],
   ['program=hangs@2s', { kind: 'program', atS: 2 }],
   ['supply=breaks@2s', { kind: 'supply', atS: 2 }],
+  ['stop=open@2s+0.1s', { kind: 'stop', atS: 2, durationS: 0.1 }],
 ])('reads %s', (text, fault) => expect(parseFault(text)).toEqual(fault));
 
 it.each([
@@ -33,6 +34,22 @@ it.each([
   ['bump=2mm@1s+1s', '"bump=2mm@1s+1s": this fault happens at a moment and has no duration.'],
   ['line=gone@-1s', '"line=gone@-1s": -1 s is outside 0 to 3600 s.'],
 ])('refuses %s', (text, message) => expect(() => parseFault(text)).toThrow(message));
+
+it('refuses a stop input on the twin, and where the vehicle has none', () => {
+  const problemsOf = (vehicle: ReturnType<typeof cart>, engine: 'twin' | 'chip'): string[] => {
+    try {
+      checkFaults([parseFault('stop=open@1s')], vehicle, engine);
+      return [];
+    } catch (error) {
+      return (error as FairleadError).problems.map(({ message }) => message);
+    }
+  };
+  expect(problemsOf(cart(), 'chip')).toEqual(['There is no stop input whose contact could open.']);
+  expect(problemsOf(cart({ '/stopPin': 12 }), 'twin')).toEqual([
+    'The twin is the controller alone: it has no stop input.',
+  ]);
+  expect(problemsOf(cart({ '/stopPin': 12 }), 'chip')).toEqual([]);
+});
 
 it('refuses what vehicle or engine do not have', () => {
   const faults = [parseFault('sensor=7:noisy@1s'), parseFault('program=hangs@1s')];

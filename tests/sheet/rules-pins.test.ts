@@ -71,6 +71,11 @@ testRules({
       want: ['/led/pin: Pin A0 is taken twice: by sensor 1 (/sensors/pins/0) and by LED.'],
     },
     {
+      when: 'the stop input on the pin of the button',
+      changes: { '/stopPin': 2 },
+      want: ['/stopPin: Pin 2 is taken twice: by start button (/start/buttonPin) and by stop input.'],
+    },
+    {
       when: 'one pin for both motors',
       changes: { '/drive/driver/right/pwm': 5 },
       want: [

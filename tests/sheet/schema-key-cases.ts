@@ -49,7 +49,7 @@ export const SCHEMA_KEY_CASES: SchemaProblemCase[] = [
         pointer: '/wheelDiameterMm',
         message: 'The key "wheelDiameterMm" is unknown in the file.',
         got: '"wheelDiameterMm"',
-        allowed: 'encoders or led',
+        allowed: 'encoders, led or stopPin',
         fix: 'Move it into /drive.',
       },
     ],

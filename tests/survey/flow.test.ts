@@ -1,4 +1,6 @@
 import { describe, expect, it } from 'vitest';
+import { assemble } from '../../src/survey/assemble.js';
+import { Facts } from '../../src/survey/facts.js';
 import { checkSheet } from '../../src/sheet/check.js';
 import { accept, back, begin, canGoBack, current, factsOf, jump, REVIEW } from '../../src/survey/flow.js';
 import { until, answering, ids, sheetOf } from './flow-steps.js';
@@ -65,6 +67,16 @@ describe('conditional questions', () => {
     const standby = until(REVIEW, answering('#standby', true));
     expect(sheetOf(standby)).toHaveProperty('drive.driver.standbyPin');
     expect(checkSheet(sheetOf(standby)).problems).toEqual([]);
+  });
+});
+
+describe('a stop input', () => {
+  it('gets a pin where it is wanted, and loses it where it is not any more', () => {
+    const wanted = sheetOf(until(REVIEW, answering('#stopInput', true)));
+    expect(wanted).toHaveProperty('stopPin');
+    expect(checkSheet(wanted).problems).toEqual([]);
+    expect(assemble(new Facts(wanted, { '#stopInput': false }))).not.toHaveProperty('stopPin');
+    expect(sheetOf(until(REVIEW, answering('#stopInput', false)))).not.toHaveProperty('stopPin');
   });
 });
 

@@ -52,6 +52,14 @@ describe('the pins that a vehicle needs', () => {
     expect(pinValues(facts).map(([pointer]) => pointer)).toContain('/drive/driver/standbyPin');
   });
 
+  it('include a stop input where one is wanted, in the sheet at hand or by the answer', () => {
+    const wanted = new Facts({}, { '#stopInput': true });
+    expect(pinValues(wanted).map(([pointer]) => pointer)).toContain('/stopPin');
+    expect(pinNeeds(new Facts({ stopPin: 12 }, {})).map(({ pointer }) => pointer)).toContain('/stopPin');
+    const dropped = new Facts({ stopPin: 12 }, { '#stopInput': false });
+    expect(pinNeeds(dropped).map(({ pointer }) => pointer)).not.toContain('/stopPin');
+  });
+
   it('of a sheet are kept as long as what decides them stays', () => {
     const base = {
       target: { board: 'uno' },

@@ -101,7 +101,7 @@ describe('changeQuestion', () => {
 
   it('asks which one is meant', () => {
     expect(question.read('voltage')).toEqual({
-      problem: 'Which one: 22 Rated voltage, 30 Nominal voltage, 31 Full voltage, 32 Empty voltage?',
+      problem: 'Which one: 22 Rated voltage, 31 Nominal voltage, 32 Full voltage, 33 Empty voltage?',
     });
     expect(question.read('99')).toEqual({ problem: 'No answer has that number or name.' });
     expect(question.read('0')).toEqual({ problem: 'No answer has that number or name.' });

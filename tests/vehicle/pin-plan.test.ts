@@ -20,7 +20,14 @@ const ALL: readonly Combination[] = BOARD_IDS.flatMap((board) =>
       [false, ...(DRIVERS[scheme].standby ? [true] : [])].flatMap((standby) =>
         Array.from({ length: 15 }, (_, index) => ({
           board,
-          request: { sensorKind, sensorCount: index + 2, scheme, standby, encoderChannels: 0 },
+          request: {
+            sensorKind,
+            sensorCount: index + 2,
+            scheme,
+            standby,
+            encoderChannels: 0,
+            stopInput: false,
+          },
         })),
       ),
     ),

@@ -25,5 +25,6 @@ export function plannedCart(board: BoardId, request: PinRequest): Changes {
         : undefined,
     '/drive/driver': { scheme: request.scheme, ...plan.driver },
     '/start/buttonPin': plan.buttonPin,
+    '/stopPin': plan.stopPin,
   };
 }

@@ -10,12 +10,13 @@ const LACK: Readonly<Record<PinRole, string>> = {
   output: 'cannot be an output',
   encoder: 'raises no interrupt when it changes',
   button: 'has no internal pull-up for the button',
+  'stop input': 'has no internal pull-up for the stop input',
 };
 
 export const rule: SheetRule = {
   name: 'pins-able',
   level: 'problem',
-  why: 'Not every pin can read a voltage, do PWM, drive an output or hold a button up.',
+  why: 'Not every pin can read a voltage, do PWM, drive an output or hold a contact up.',
   check({ board, uses }) {
     return uses.flatMap(({ pointer, pin, role, what }): Problem[] => {
       if (pin === undefined || pin.reserved !== undefined || isAble(pin, role)) return [];

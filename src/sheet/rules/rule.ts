@@ -87,5 +87,6 @@ function pinUses(sheet: ResolvedSheet, board: BoardFacts): PinUse[] {
   }
   if (sheet.led !== undefined) add(pointerTo('led', 'pin'), sheet.led.pin, 'output', 'LED');
   add(pointerTo('start', 'buttonPin'), sheet.start.buttonPin, 'button', 'start button');
+  if (sheet.stopPin !== undefined) add(pointerTo('stopPin'), sheet.stopPin, 'stop input', 'stop input');
   return uses;
 }
