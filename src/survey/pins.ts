@@ -8,6 +8,7 @@ import { encoderChannels, hasEncoders } from './encoders.js';
 import type { Facts } from './facts.js';
 import { type Json, valueAt } from './json-tree.js';
 import { nodeAt } from './schema-node.js';
+import { hasStopInput } from './stop-input.js';
 
 /** One pin that the vehicle needs. */
 export interface PinNeed {
@@ -38,12 +39,6 @@ export function hasStandby(facts: Facts): boolean {
   if (!DRIVERS[schemeOf(facts)].standby) return false;
   const answer = facts.answers['#standby'];
   return typeof answer === 'boolean' ? answer : valueAt(facts.base, '/drive/driver/standbyPin') !== undefined;
-}
-
-/** Whether a contact is to stop the vehicle. */
-export function hasStopInput(facts: Facts): boolean {
-  const answer = facts.answers['#stopInput'];
-  return typeof answer === 'boolean' ? answer : valueAt(facts.base, '/stopPin') !== undefined;
 }
 
 /** Every pin that the vehicle needs, in the order in which people wire them. */

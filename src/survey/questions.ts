@@ -9,9 +9,10 @@ import { valueAt } from './json-tree.js';
 import { kindsQuestion } from './kinds-question.js';
 import { classesQuestion, positionsQuestion, readingsQuestion } from './lists.js';
 import { fitQuestion, pinQuestion, planQuestion } from './pin-questions.js';
-import { hasStandby, hasStopInput, keptPinsFit, pinMode, pinNeeds, planProblem, schemeOf } from './pins.js';
+import { hasStandby, keptPinsFit, pinMode, pinNeeds, planProblem, schemeOf } from './pins.js';
 import type { Question } from './question.js';
 import { nodeAt } from './schema-node.js';
+import { hasStopInput } from './stop-input.js';
 
 export const GROUPS = {
   vehicle: 'Vehicle and board',

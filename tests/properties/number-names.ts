@@ -81,7 +81,7 @@ export const LISTED: readonly Listed[] = [
   },
   {
     why: 'pins, converter channels, timers and causes of a reset by their numbers, levels 0 and 1, ticks of a clock that wraps',
-    where: /^(vehicle\/|sheet\/(sheet-types|rules\/rule)|rehearsal\/(chip|micropython)-.*|survey\/)/,
+    where: /^(vehicle\/|sheet\/(sheet-types|defaults|rules\/rule)|rehearsal\/(chip|micropython)-.*|survey\/)/,
     names:
       words(`label sheetLabel pin pins sensorPins buttonPin stopPin standbyPin pinNumber pwm dir in1 in2 gpio number channel timer clockTimer unit
       level cause resetCause lastDriven cycles sample ticks ticksAdd ticksDiff change start end`),

@@ -7,11 +7,11 @@ import { loadCourse } from '../../src/course/load-course.js';
 import { stopBoundS } from '../../src/design/delay.js';
 import { chipEngine } from '../../src/rehearsal/chip-engine.js';
 import type { ChipImage } from '../../src/rehearsal/chip-build.js';
-import type { Ending } from '../../src/rehearsal/ending.js';
+import type { Engine } from '../../src/rehearsal/engine.js';
 import { parseFault } from '../../src/rehearsal/fault.js';
 import { micropythonEngine } from '../../src/rehearsal/micropython-engine.js';
 import { runSetup } from '../../src/rehearsal/runner.js';
-import { CARTS, SHEET, cart, quickDesign } from '../firmware/cart.js';
+import { SHEET, cart, quickDesign } from '../firmware/cart.js';
 import { MICROPYTHON_CARTS } from '../firmware/micropython-carts.js';
 import { drivenFromS, flashCodes, offFromS, onStand } from '../firmware/micropython-stand.js';
 import { plannedCart } from '../vehicle/planned-cart.js';
@@ -29,29 +29,28 @@ const onMega = plannedCart('mega2560', {
   stopInput: true,
 });
 
+/** On the chip each case costs seconds, so that each kind of opening is tried on one of the boards. */
 describe.each([
-  ['chip, uno', cart({ '/stopPin': 12 })],
-  ['chip, mega2560, planned', cart(onMega)],
-  ['micropython, esp32', cart({ ...MICROPYTHON_CARTS['esp32, analog'], '/stopPin': 18 })],
-])('%s', { timeout: 120_000 }, (_name, vehicle) => {
-  const design = quickDesign(vehicle);
-  let endingOf: (fault: string) => Promise<Ending>;
+  ['chip, uno', cart({ '/stopPin': 12 }), ['stop=open@1s+0.01s', 'stop=open@0s']],
+  ['chip, mega2560, planned', cart(onMega), ['stop=open@1s']],
+  [
+    'micropython, esp32',
+    cart({ ...MICROPYTHON_CARTS['esp32, analog'], '/stopPin': 18 }),
+    ['stop=open@1s', 'stop=open@1s+0.01s', 'stop=open@0s'],
+  ],
+])('%s', { timeout: 120_000 }, (_name, vehicle, faults) => {
+  let engine: Engine;
   beforeAll(async () => {
     const make = vehicle.language === 'arduino' ? chipEngine : micropythonEngine;
-    const engine = await make(SHEET, design);
-    endingOf = async (fault) =>
-      (await engine.run(runSetup(vehicle, lane, 0, 1, false, [parseFault(fault)]))).ending!;
+    engine = await make(SHEET, quickDesign(vehicle));
   });
 
-  it.each(['stop=open@1s', 'stop=open@1s+0.01s'])('%s: motors off at once, for good', async (fault) => {
-    const ending = await endingOf(fault);
+  it.each(faults)('%s: motors off at once, for good, with the reason', async (fault) => {
+    const { ending } = await engine.run(runSetup(vehicle, lane, 0, 1, false, [parseFault(fault)]));
     expect(ending).toMatchObject({ motorsOff: true, reason: 'StopInput', restarted: false });
-    expect(ending.reactionS).toBeLessThanOrEqual(stopBoundS(vehicle) + LOOK_S);
-  });
-
-  it('does not set off while it is open, and says why', async () => {
-    const ending = await endingOf('stop=open@0s');
-    expect(ending).toMatchObject({ motorsOff: true, reactionS: 0, reason: 'StopInput', restarted: false });
+    // a vehicle that does not set off was never driven
+    if (fault.endsWith('@0s')) expect(ending!.reactionS).toBe(0);
+    expect(ending!.reactionS).toBeLessThanOrEqual(stopBoundS(vehicle) + LOOK_S);
   });
 });
 
@@ -99,14 +98,15 @@ describe('on the chip, after a stop', { timeout: 120_000 }, () => {
   });
 
   it('stops the sweep of a calibration too', async () => {
-    const sweeping = cart({ ...CARTS['a sweep'], '/stopPin': 12 });
+    const sweeping = cart({ '/sensors/calibration': { mode: 'sweep' }, '/stopPin': 12 });
     const rig = new ChipBench(await imageOf(quickDesign(sweeping)), sweeping, lineAt(sweeping, 0));
     rig.start();
     expect(rig.isDriven).toBe(true);
     rig.openStop(true);
     rig.run(0.1);
+    rig.openStop(false);
+    rig.run(0.5);
     expect(rig.isDriven).toBe(false);
-    expect(rig.flashes()).toContain(STOP_FLASHES);
   });
 });
 
