@@ -15,6 +15,9 @@ import { FRACTION_BITS } from '../controller/constants.js';
 import type { Vehicle } from '../vehicle/vehicle.js';
 import { switchingDistanceM } from './bar-view.js';
 
+/** An interval no longer than this is the rounding of two sensors that switch at the same place, m. */
+const SLIVER_M = 1e-9;
+
 /**
  * Offsets of the line's middle that put exactly the sensors first..last on the line; undefined if none do.
  *
@@ -39,7 +42,7 @@ export function runInterval(
     (at(last) as number) + switchingM,
     previous === undefined ? Infinity : previous - switchingM,
   );
-  return from < to ? [from, to] : undefined;
+  return to - from > SLIVER_M ? [from, to] : undefined;
 }
 
 /** Action of one run: the offset it stands for and the wheels' fractions of base speed. */

@@ -65,6 +65,17 @@ export class VehicleMotion {
     this.toBumpM = parameters.bumpEveryM > 0 ? parameters.bumpEveryM : Infinity;
   }
 
+  /** Puts the vehicle elsewhere on the floor, its wheels running on. */
+  moveTo({ xM, yM, headingRad }: Pose): void {
+    this.xM = xM;
+    this.yM = yM;
+    this.headingRad = headingRad;
+    this.cosHeading = Math.cos(headingRad);
+    this.sinHeading = Math.sin(headingRad);
+    this.placeIsOld = true;
+    this.spotsAreOld = true;
+  }
+
   /** Speed of the axle's middle, m/s. */
   get speedMps(): number {
     return (this.leftMps + this.rightMps) / 2;
@@ -168,11 +179,11 @@ export class VehicleMotion {
 
   /** Shifts the vehicle, m to the left, and turns it, rad. */
   protected push(shiftM: number, turnRad: number): void {
-    this.xM -= shiftM * this.sinHeading;
-    this.yM += shiftM * this.cosHeading;
-    this.headingRad += turnRad;
-    this.cosHeading = Math.cos(this.headingRad);
-    this.sinHeading = Math.sin(this.headingRad);
+    this.moveTo({
+      xM: this.xM - shiftM * this.sinHeading,
+      yM: this.yM + shiftM * this.cosHeading,
+      headingRad: this.headingRad + turnRad,
+    });
   }
 }
 

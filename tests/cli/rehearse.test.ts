@@ -100,7 +100,7 @@ describe('fairlead rehearse', () => {
     [[], "required option '--course <file>' not specified"],
     [['--course', COURSE, '--shard', '5/4'], 'It takes K/N, part K of N'],
     [[SHEET, SHEET, '--course', COURSE], 'at most two sheets can be compared'],
-    [[SHEET, '--course', COURSE, '--shard', '1/2'], '--shard, --svg and --curve take one sheet'],
+    [[SHEET, '--course', COURSE, '--shard', '1/2'], '--shard, --svg, --curve and --fault take one sheet'],
     [['--course', COURSE, '--on-second', 'twin'], '--on-second goes with two sheets'],
     [['--course', COURSE, '--curve', '--on', 'chip'], '--curve drives the twin'],
     [['--course', COURSE, '--out', 'part.json'], '--out goes with --shard'],

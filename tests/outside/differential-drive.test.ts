@@ -11,7 +11,8 @@ const lane = compileCourse(open({ straightMm: 10000 }));
 /** A vehicle whose wheels run at given speeds from the start and keep them; full duty is 100 m/s. */
 function rolling(trackM: number, leftMps: number, rightMps: number, pose?: Pose): Plant {
   const plant = new Plant(plainPlant({ trackM, topLeftMps: 100, topRightMps: 100, grip: 1e9 }), lane);
-  Object.assign(plant, { leftMps, rightMps, ...pose });
+  Object.assign(plant, { leftMps, rightMps });
+  if (pose) plant.moveTo(pose);
   return plant;
 }
 

@@ -109,6 +109,7 @@ describe('a mirrored vehicle', () => {
         ...sensing,
         ground: sensing.ground.toReversed(),
         gain: sensing.gain.toReversed(),
+        levels: sensing.levels.toReversed(),
         gapMiddle: sensing.gapMiddle.toReversed().map((x) => 0 - x),
         gapHalf: sensing.gapHalf.toReversed(),
       });

@@ -19,7 +19,7 @@ it('asks of a rehearsal on the chip only what the chip needs', () => {
   const [forChip, forTests] = [missingTools(), missingForTests()];
   process.env['PATH'] = path;
   expect(forChip).toEqual(['gcc-avr', 'g++']);
-  expect(forTests).toEqual(['gcc-avr', 'g++', 'tmux', 'parallel']);
+  expect(forTests).toEqual(['gcc-avr', 'g++', 'cppcheck', 'tmux', 'parallel']);
 });
 
 it('says exactly what to type', () => {
